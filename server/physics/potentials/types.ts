@@ -1,0 +1,89 @@
+import type { Dimension } from '#shared/units/vocabulary.ts';
+import type { NumericalResult } from '#server/physics/numerics/result.ts';
+
+/** A complex number as it crosses module borders. */
+export interface Complex {
+  re: number;
+  im: number;
+}
+
+/**
+ * What a form may know of its surroundings. Internal units throughout: energy eV, length angstrom, masses as mc² in eV.
+ */
+export interface FormContext {
+  /** 2 mu / hbar² in 1/(eV angstrom²). */
+  twoMuOverHbar2: number;
+  /** Charge numbers of projectile and target. */
+  projectileCharge: number;
+  targetCharge: number;
+}
+
+/** Large-r behaviour of a shape: decides integrals, matching and what diverges. */
+export type Tail = 'compact' | 'exponential' | 'coulomb' | 'point';
+
+/**
+ * A term of the interaction, V(r) = strength · s(r): a complex strength and one real radial shape s.
+ * For `contact` and `deltaShell` V(r) is no function: `v` is then null with the reason in `noFunction`.
+ */
+export interface Term {
+  form: string;
+  /** eV, or eV·angstrom for deltaShell, or whatever makes strength · s(r) an energy. */
+  strength: Complex;
+  /** s(r), r > 0 in angstrom; null where V is no function of r. */
+  v: ((r: number) => number) | null;
+  noFunction?: string;
+  /**
+   * Closed-form transform of the shape: S(q) = ∫_0^∞ r² s(r) j0(qr) dr, q in 1/angstrom, q >= 0.
+   * So f1 = -(2 mu/hbar²) Σ strength · S(q), and L³ V_fi = 4π Σ strength · S(q).
+   * `error` is absolute and includes rounding. Infinity in `value` is allowed only where S diverges (bare Coulomb at q = 0).
+   */
+  closed: ((q: number) => NumericalResult) | null;
+  /** The same transform by oscillatory quadrature, the independent route; null where there is nothing to integrate (contact). */
+  quadrature: ((q: number) => NumericalResult) | null;
+  /** Part of the transform that is a bare Coulomb tail, c in c/q² (0 if none): needed for divergence and the floor. */
+  coulombTail: number;
+  /** ∫ r² |s(r)| dr of what is left after the Coulomb tail is subtracted (the floor of the numerical error rests on it). */
+  norm: number;
+  /** ∫ r s(r) dr over 0..∞ (eV-free; slow criterion); null where it diverges or has no meaning. */
+  firstMoment: number | null;
+  /** ∫ s(r) dr from `from` > 0 to ∞ (fast criterion); null where it diverges or has no meaning. */
+  lineIntegral: (from: number) => number | null;
+  /** Length that sets the scale, angstrom; null for forms without one (coulomb, contact). */
+  range: number | null;
+  tail: Tail;
+  /** s(r) is below 1e-17 of its scale beyond this radius; null for a Coulomb tail. */
+  reach: number | null;
+  /** Radii where s or its derivative jumps, angstrom, ascending. */
+  breakpoints: number[];
+}
+
+/** A parameter of a form, as the register publishes it. Values are in internal units. */
+export interface FormParameter {
+  key: string;
+  label: string;
+  symbol: string;
+  dimension: Dimension | 'number';
+  /** Bounds in internal units; absent means unbounded. `exclusive` marks an open lower bound. */
+  min?: number;
+  max?: number;
+  exclusiveMin?: boolean;
+  optional?: boolean;
+  integer?: boolean;
+  /** Default as a person would type it, unit included (a plain number for `number`). */
+  default: { value: number; unit: string } | number;
+  description: string;
+}
+
+/** One interaction form: everything the input panel, validation, the engine and the Reference page need. */
+export interface Form {
+  key: string;
+  label: string;
+  /** V(r) as TeX. */
+  formula: string;
+  /** Transform S(q) or amplitude as TeX, for display. */
+  transformFormula: string;
+  source: string;
+  parameters: FormParameter[];
+  /** Builds the term from parameter values in internal units. Throws DomainError('invalidInput', …) naming the parameter where a combination is refused. */
+  build: (values: Readonly<Record<string, number>>, context: FormContext) => Term;
+}
