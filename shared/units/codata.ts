@@ -11,3 +11,5 @@ export const BOHR_ANGSTROM = 0.529177210544;
 export const HARTREE_EV = 27.211386245981;
 /** Atomic mass unit, eV. */
 export const ATOMIC_MASS_EV = 931494103.72;
+/** hbar c = h c/(2 pi e), exact by the SI and rounded to the nearest double, eV·angstrom. */
+export const HBAR_C_EV_ANGSTROM = 1973.2698045930247;
