@@ -1,0 +1,307 @@
+import { z } from 'zod';
+import { quantitySchema } from '#shared/units/quantity.ts';
+import { UNITS } from '#shared/units/vocabulary.ts';
+
+/** The methods an estimate may ask for; those the engine cannot do yet answer `unavailable`. */
+export const METHODS = ['born1', 'born2', 'eikonal', 'partialWaves'] as const;
+export type Method = (typeof METHODS)[number];
+
+export const SPECIES = [
+  'electron',
+  'positron',
+  'muon-',
+  'muon+',
+  'proton',
+  'neutron',
+  'deuteron',
+  'triton',
+  'helion',
+  'alpha',
+] as const;
+export const speciesSchema = z.enum(SPECIES);
+export type Species = z.infer<typeof speciesSchema>;
+
+export const MAX_ANGLES = 5000;
+export const DEFAULT_ANGLES = { unit: 'deg', from: 0, to: 180, count: 181 } as const;
+
+const finite = (what: string) => z.number(`${what} must be a number.`);
+const chargeNumber = z.int('A charge is a whole number of elementary charges.').min(-200).max(200);
+const spin = z
+  .number()
+  .min(0)
+  .max(20)
+  .refine((s) => Number.isInteger(2 * s), 'A spin is a whole or half-whole number.');
+
+export const projectileSchema = z.union(
+  [
+    z.strictObject({ species: speciesSchema }),
+    z.strictObject({ nuclide: z.string().min(1).max(12) }),
+    z.strictObject({
+      species: z.literal('custom'),
+      mass: quantitySchema('mass'),
+      charge: chargeNumber,
+      spin,
+    }),
+  ],
+  'A projectile is {"species": "electron"} (or another known species), {"nuclide": "C-12"}, or {"species": "custom", "mass", "charge", "spin"}.',
+);
+export type Projectile = z.infer<typeof projectileSchema>;
+
+export const targetSchema = z.discriminatedUnion(
+  'kind',
+  [
+    z.strictObject({ kind: z.literal('fixed'), charge: chargeNumber }),
+    z.strictObject({ kind: z.literal('nuclide'), nuclide: z.string().min(1).max(12) }),
+    z.strictObject({ kind: z.literal('species'), species: speciesSchema }),
+    z.strictObject({
+      kind: z.literal('custom'),
+      mass: quantitySchema('mass'),
+      charge: chargeNumber,
+      spin,
+    }),
+  ],
+  'A target is of kind "fixed" (with charge), "nuclide", "species" or "custom" (with mass, charge and spin).',
+);
+export type Target = z.infer<typeof targetSchema>;
+
+const anyQuantity = z.strictObject({ value: finite('value'), unit: z.string().max(24) });
+
+/** A term as the browser knows it: a form and its parameters. The register on the server validates it strictly. */
+export const termSchema = z
+  .object({ form: z.string().min(1).max(40) })
+  .catchall(
+    z.union(
+      [anyQuantity, finite('A parameter'), z.string().max(40)],
+      'A parameter is a quantity {"value", "unit"}, a plain number or a name.',
+    ),
+  );
+export type InteractionTerm = z.infer<typeof termSchema>;
+
+export const interactionSchema = z.strictObject({
+  terms: z
+    .array(termSchema)
+    .min(1, 'An interaction needs at least one term.')
+    .max(12, 'An interaction may have at most 12 terms.'),
+});
+
+const angleUnit = z.enum(Object.keys(UNITS.angle) as [string, ...string[]]);
+export const anglesSchema = z.union(
+  [
+    z.strictObject({
+      unit: angleUnit.default('deg'),
+      values: z
+        .array(finite('An angle'))
+        .min(1, 'Give at least one angle.')
+        .max(MAX_ANGLES, `At most ${MAX_ANGLES} angles in one request.`),
+    }),
+    z.strictObject({
+      unit: angleUnit.default('deg'),
+      from: finite('from'),
+      to: finite('to'),
+      count: z
+        .int('count must be a whole number.')
+        .min(2, 'count must be at least 2.')
+        .max(MAX_ANGLES, `At most ${MAX_ANGLES} angles in one request.`),
+    }),
+  ],
+  `Angles are {"values": […]} or {"from", "to", "count"}, at most ${MAX_ANGLES}.`,
+);
+
+export const FRAMES = ['cm', 'lab'] as const;
+export const REGIMES = ['nonrelativistic', 'relativistic'] as const;
+
+const unitsChoice = z.strictObject({
+  length: z.enum(Object.keys(UNITS.length) as [string, ...string[]]).optional(),
+  area: z.enum(Object.keys(UNITS.area) as [string, ...string[]]).optional(),
+  energy: z.enum(Object.keys(UNITS.energy) as [string, ...string[]]).optional(),
+});
+export const DEFAULT_UNITS = { length: 'angstrom', area: 'angstrom2', energy: 'eV' } as const;
+
+const body = {
+  projectile: projectileSchema,
+  target: targetSchema,
+  energy: quantitySchema('energy').refine(
+    (q) => q.value > 0,
+    'The energy must be above zero: it is the kinetic energy of the projectile in the lab.',
+  ),
+  kinematics: z.enum(REGIMES).optional(),
+  interaction: interactionSchema,
+  methods: z
+    .array(z.enum(METHODS))
+    .min(1, 'Name at least one method, such as "born1".')
+    .max(METHODS.length)
+    .refine((m) => new Set(m).size === m.length, 'A method is named twice.'),
+  angles: anglesSchema.optional(),
+  frame: z.enum(FRAMES).optional(),
+  identical: z.boolean().optional(),
+  goldenRule: z
+    .strictObject({
+      theta: finite('theta').optional(),
+      boxSide: quantitySchema('length')
+        .refine((q) => q.value > 0, 'The box side must be above zero.')
+        .optional(),
+    })
+    .optional(),
+  units: unitsChoice.optional(),
+  /** What a person typed, by JSON Pointer; stored and shown, never computed with. */
+  entered: z
+    .record(z.string().max(200), z.string().max(200))
+    .refine((r) => Object.keys(r).length <= 100, 'entered may keep at most 100 texts.')
+    .optional(),
+};
+
+/** The body of an estimate without what only a document carries. */
+export const estimateBodySchema = z.strictObject(body);
+
+/** POST /api/estimates accepts and ignores `format` and `runPlan`, so that a saved document can be sent as it is. */
+export const estimateRequestSchema = z
+  .strictObject({ ...body, format: z.int().optional(), runPlan: z.unknown().optional() })
+  .meta({ id: 'EstimateRequest' });
+export type EstimateRequest = z.infer<typeof estimateRequestSchema>;
+
+/* The answer. */
+
+const quantity = z.object({ value: z.number(), unit: z.string() });
+const complexAmplitude = z.object({ re: z.number(), im: z.number() });
+
+const divergent = z.object({ divergent: z.literal(true), reason: z.string() });
+/** Exactly one of relativeError and absoluteError (in the value's unit) is given. */
+const integral = z.union([
+  quantity.extend({
+    relativeError: z.number().optional(),
+    absoluteError: z.number().optional(),
+  }),
+  divergent,
+]);
+export type Integral = z.infer<typeof integral>;
+
+const branch = z.object({
+  thetaCm: z.number(),
+  q: z.number(),
+  dcs: z.number().nullable(),
+  relativeError: z.number().optional(),
+  absoluteError: z.number().optional(),
+  amplitude: complexAmplitude.nullable(),
+});
+
+export const differentialPointSchema = z.object({
+  theta: z.number(),
+  q: z.number().optional(),
+  dcs: z.number().nullable(),
+  reason: z.string().optional(),
+  relativeError: z.number().optional(),
+  absoluteError: z.number().optional(),
+  amplitude: complexAmplitude.nullable().optional(),
+  branches: z.array(branch).optional(),
+});
+export type DifferentialPoint = z.infer<typeof differentialPointSchema>;
+
+export const unavailableSchema = z.object({ unavailable: z.literal(true), reason: z.string() });
+
+export const methodResultSchema = z.union([
+  z.object({
+    differential: z.array(differentialPointSchema),
+    elastic: integral,
+    absorption: integral,
+    total: integral,
+    momentumTransfer: integral,
+    viscosity: integral,
+  }),
+  unavailableSchema,
+]);
+export type MethodResult = z.infer<typeof methodResultSchema>;
+
+export const criterionSchema = z.object({
+  name: z.enum(['unitarity', 'secondOrder', 'slow', 'fast', 'eta']),
+  value: z.number(),
+  limits: z.object({ sound: z.number(), usable: z.number() }),
+  /** In words: what the number is. */
+  meaning: z.string(),
+  /** True for the one whose value decided. */
+  decides: z.boolean(),
+});
+export type Criterion = z.infer<typeof criterionSchema>;
+
+export const VERDICTS = ['sound', 'usable', 'notValid', 'unassessed'] as const;
+export const validitySchema = z.object({
+  verdict: z.enum(VERDICTS),
+  basis: z.enum(['exact', 'criteria']),
+  deviation: z.number().optional(),
+  reason: z.string().optional(),
+  criteria: z.array(criterionSchema),
+});
+export type Validity = z.infer<typeof validitySchema>;
+
+const noWindow = z.object({ none: z.string() });
+export const goldenRuleSchema = z.object({
+  theta: z.number(),
+  boxSide: quantity,
+  q: quantity,
+  matrixElementTimesVolume: complexAmplitude.extend({
+    unit: z.string(),
+    relativeError: z.number().optional(),
+    absoluteError: z.number().optional(),
+  }),
+  /** The same by quadrature, the independent route; left out where the form has none. */
+  quadratureCheck: z
+    .object({
+      re: z.number(),
+      im: z.number(),
+      unit: z.string(),
+      absoluteError: z.number(),
+      evaluations: z.int(),
+    })
+    .optional(),
+  densityOfStates: quantity,
+  rate: quantity,
+  flux: quantity,
+  dcs: quantity,
+  /** Factors that stand after the golden rule: exchange, incoherent, spin. */
+  factorsAfter: z.array(z.object({ name: z.string(), dcs: quantity })),
+  window: z.union([z.object({ t0Min: quantity, t0Max: quantity }), noWindow]),
+});
+export type GoldenRule = z.infer<typeof goldenRuleSchema>;
+
+export const warningSchema = z.object({
+  code: z.string(),
+  message: z.string(),
+  path: z.string().optional(),
+});
+export type Warning = z.infer<typeof warningSchema>;
+
+export const engineSchema = z.object({ name: z.literal('tallybarn'), version: z.string() });
+
+export const estimateSchema = z
+  .object({
+    engine: engineSchema,
+    kinematics: z.object({
+      k: quantity,
+      wavelength: quantity,
+      speed: quantity,
+      reducedMass: quantity,
+      energyCm: quantity,
+      beta: z.number(),
+    }),
+    identical: z.boolean(),
+    potential: z.union([
+      z.object({
+        r: z.array(z.number()),
+        v: z.array(z.union([z.number(), complexAmplitude])),
+        unit: z.object({ r: z.string(), v: z.string() }),
+      }),
+      unavailableSchema,
+    ]),
+    methods: z.partialRecord(z.enum(METHODS), methodResultSchema),
+    goldenRule: z.union([goldenRuleSchema, unavailableSchema]),
+    validity: validitySchema,
+    warnings: z.array(warningSchema),
+    units: z.object({
+      length: z.string(),
+      area: z.string(),
+      energy: z.string(),
+      angle: z.string(),
+    }),
+    frame: z.enum(FRAMES),
+  })
+  .meta({ id: 'Estimate' });
+export type Estimate = z.infer<typeof estimateSchema>;
