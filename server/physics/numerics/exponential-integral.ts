@@ -19,25 +19,16 @@ function series(x: number): NumericalResult {
   return { value, error: 4 * UNIT_ROUNDOFF * magnitude, evaluations: 0, status: 'converged' };
 }
 
-/** e^{-x}/(x+1-1/(x+3-4/(x+5-…))), evaluated forwards, for x above 1. */
+/**
+ * e^{-x}/(x+1-1/(x+3-4/(x+5-…))), for x above 1. The truncation error falls as exp(-4 sqrt(n x)), so the depth can be
+ * chosen beforehand and the fraction evaluated from its end, where rounding is damped.
+ */
 function continuedFraction(x: number): NumericalResult {
-  let b = x + 1;
-  let c = Infinity;
-  let d = 1 / b;
-  let fraction = d;
-  let n = 0;
-  let change: number;
-  do {
-    n += 1;
-    b += 2;
-    const a = -n * n;
-    d = 1 / (b + a * d);
-    c = b + a / c;
-    change = c * d;
-    fraction *= change;
-  } while (Math.abs(change - 1) > UNIT_ROUNDOFF && n < 500);
-  const value = fraction * Math.exp(-x);
-  const error = (20 + n / 4) * UNIT_ROUNDOFF * value + SMALLEST_NORMAL;
+  const depth = Math.ceil(100 / x) + 4;
+  let fraction = x + 2 * depth + 1;
+  for (let n = depth; n > 0; n--) fraction = x + 2 * n - 1 - (n * n) / fraction;
+  const value = Math.exp(-x) / fraction;
+  const error = 16 * UNIT_ROUNDOFF * value + SMALLEST_NORMAL;
   return { value, error, evaluations: 0, status: 'converged' };
 }
 

@@ -15,7 +15,9 @@ export interface PanelOptions {
 }
 
 const CALLS_PER_PANEL = 128;
-const MAX_CALLS_OF_A_BAD_PANEL = 20_000;
+const CALLS_OF_A_BAD_PANEL = 20_000;
+/** Eight periods a panel: x is known to about 3 u x, and f moves by 2 pi times that over a period. */
+const ARGUMENT_ROUNDING = 3 * UNIT_ROUNDOFF * 16 * Math.PI;
 
 /** Edges of [a, b]: breakpoints, and between them the multiples of `width` counted from 0. */
 function alignedEdges(a: number, b: number, width: number, breakpoints: readonly number[]) {
@@ -51,7 +53,7 @@ function twoOrders(f: (x: number) => number, a: number, b: number) {
  * @param b upper end, finite, a <= b
  * @param panelWidth width of the panels (> 0), up to eight periods of f; Infinity for none but the breakpoints. Panels
  *   start at its multiples, so with half-periods in it they end on zeros
- * @returns integral with a bound of its error: differences, rounding, noise of f. `limited` when the bound exceeds
+ * @returns integral with a bound of its error: differences, noise of f, rounding also of x (which blurs the phase far out). `limited` when the bound exceeds
  *   `relativeToAbsolute`·∫|f| and rounding; `failed` (value NaN) when the panels would need more calls than allowed or
  *   the integrand is not finite
  * @throws RangeError for ends or widths that are not such numbers
@@ -79,18 +81,20 @@ export function integratePanels(
   const panels = edges.slice(1).map((edge, i) => twoOrders(f, edges[i] ?? edge, edge));
   let evaluations = panels.length * CALLS_PER_PANEL;
   const absolute = panels.reduce((sum, panel) => sum + panel.absolute, 0);
-  const allowed = relativeToAbsolute * absolute;
+  const share = (relativeToAbsolute * absolute) / panels.length;
   const value = new NeumaierSum();
   let error = 0;
+  let rounding = SMALLEST_NORMAL;
   for (const panel of panels) {
+    const blur =
+      noise + ARGUMENT_ROUNDING * (Math.max(Math.abs(panel.a), Math.abs(panel.b)) / panelWidth);
     let part: { value: number; error: number } = panel;
-    if (panel.error > Math.max(allowed / panels.length, 8 * UNIT_ROUNDOFF * panel.absolute)) {
-      const share = allowed / panels.length;
+    if (panel.error > Math.max(share, 4 * blur * panel.absolute)) {
       const budget = {
         absolute: share,
         relative: 0,
-        noise,
-        maxEvaluations: MAX_CALLS_OF_A_BAD_PANEL,
+        noise: blur,
+        maxEvaluations: CALLS_OF_A_BAD_PANEL,
       };
       const refined = integrate(f, panel.a, panel.b, budget);
       evaluations += refined.evaluations;
@@ -98,11 +102,14 @@ export function integratePanels(
     }
     value.add(part.value);
     error += part.error;
+    rounding += (blur + 4 * UNIT_ROUNDOFF) * panel.absolute;
   }
-  const rounding = (noise + 4 * UNIT_ROUNDOFF) * absolute + SMALLEST_NORMAL;
   const result = { value: value.value, error: error + rounding, evaluations };
   if (!Number.isFinite(result.value + result.error)) {
     return { value: NaN, error: Infinity, evaluations, status: 'failed' };
   }
-  return { ...result, status: error <= 2 * (allowed + rounding) ? 'converged' : 'limited' };
+  return {
+    ...result,
+    status: error <= 2 * (share * panels.length + rounding) ? 'converged' : 'limited',
+  };
 }

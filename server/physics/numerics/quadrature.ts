@@ -28,7 +28,7 @@ interface Panel {
 
 /** Bisection at an end with an inverse square root leaves 2.4 times the difference of two rules: the factor covers it. */
 const SAFETY = 2.5;
-const MAX_ROUNDS = 60;
+const MAX_ROUNDS = 100;
 const CALLS_PER_PANEL = 48;
 
 /** Sixteen points on the whole against sixteen on either half; the finer one is kept. */
