@@ -9,13 +9,13 @@ const alphaOnProton: CaseDocument = {
   target: { kind: 'species', species: 'proton' },
   energy: { value: 100, unit: 'MeV' },
   kinematics: 'relativistic',
-  entered: { '/energy': '25 MeV/u', '/interaction/terms/1/a': '0.5 angstrom' },
+  entered: { '/energy': '25 MeV/u', '/interaction/terms/1/a': '6.5e-6 angstrom' },
   interaction: {
     terms: [
       { form: 'coulomb', chargeProduct: 2 },
       {
         form: 'woodsSaxon',
-        a: { value: 0.6, unit: 'fm' },
+        a: { value: 0.65, unit: 'fm' },
         R: { value: 4, unit: 'fm' },
         W0: { value: -3, unit: 'MeV' },
         V0: { value: -45.5, unit: 'MeV' },
@@ -42,7 +42,7 @@ describe('summarise', () => {
       beam: 'alpha, 25 MeV/u (100 MeV), relativistic',
       target: 'proton',
       interaction:
-        'Coulomb, Z₁Z₂ 2 + Woods–Saxon, V₀ −45.5 MeV, W₀ −3 MeV, R 4 fm, a 0.6 fm + contact, V-51',
+        'Coulomb, Z₁Z₂ 2 + Woods–Saxon, V₀ −45.5 MeV, W₀ −3 MeV, R 4 fm, a 6.5e-6 angstrom (0.65 fm) + contact, V-51',
       detectors: '181 angles, 0° to 180°, lab',
     });
   });
