@@ -9,6 +9,8 @@ export interface Draft<T = unknown> {
   key: string;
   /** What a person would call it. */
   title: string;
+  /** Where the page stands that takes it up again. */
+  href: string;
   savedAt: string;
   value: T;
 }
@@ -20,9 +22,10 @@ function parse(key: string, text: string | null): Draft | undefined {
   try {
     const draft: unknown = JSON.parse(text);
     if (typeof draft !== 'object' || draft === null || !('value' in draft)) return undefined;
-    const { title, savedAt } = draft as { title?: unknown; savedAt?: unknown };
+    const { title, href, savedAt } = draft as Record<string, unknown>;
     if (typeof title !== 'string' || typeof savedAt !== 'string') return undefined;
-    return { key, title, savedAt, value: draft.value };
+    if (typeof href !== 'string') return undefined;
+    return { key, title, href, savedAt, value: draft.value };
   } catch (damaged) {
     console.info(`The draft ${key} cannot be read`, damaged);
     return undefined;
@@ -31,9 +34,9 @@ function parse(key: string, text: string | null): Draft | undefined {
 
 /** False when the browser has no room or allows no storage: the page must then say that work is not kept. */
 export function saveDraft(accountId: string, draft: Omit<Draft, 'savedAt'>): boolean {
-  const { key, title, value } = draft;
+  const { key, title, href, value } = draft;
   try {
-    const text = JSON.stringify({ title, savedAt: new Date().toISOString(), value });
+    const text = JSON.stringify({ title, href, savedAt: new Date().toISOString(), value });
     localStorage.setItem(prefix(accountId) + key, text);
     return true;
   } catch (refused) {

@@ -1,0 +1,121 @@
+import type { ReactNode } from 'react';
+import { CircleAlert } from 'lucide-react';
+import { classNames } from '#src/lib/class-names.ts';
+
+export interface BeamLineStation {
+  key: string;
+  name: string;
+  main: string;
+  detail: string;
+  /** What is wrong here, in words; shown on the line. */
+  problem?: string | undefined;
+}
+
+interface BeamLineProps {
+  stations: readonly BeamLineStation[];
+  /** Without it the line is a picture to read, as in lists and on paper. */
+  onOpen?: (key: string) => void;
+  selected?: string | undefined;
+}
+
+const PICTURES: Record<string, ReactNode> = {
+  beam: (
+    <>
+      <path d="M3 12h12.5M11.5 7.5 16 12l-4.5 4.5" />
+      <circle cx="20" cy="12" r="1.2" />
+    </>
+  ),
+  target: (
+    <>
+      <circle cx="12" cy="12" r="2.4" />
+      <circle cx="12" cy="12" r="8.5" strokeDasharray="3 3" />
+    </>
+  ),
+  interaction: <path d="M3 6h18M4 6c5 0 5 13 9 13 4 0 3-9 8-10" />,
+  detectors: <path d="M4 18 18 6M4 18l16-2M4 18 9 4M18 6l2 2M20 16l-.5 2.6M9 4 6.6 3" />,
+};
+
+function Picture({ station, lit }: { station: BeamLineStation; lit: boolean }) {
+  return (
+    <span
+      className={classNames(
+        'relative grid size-11 shrink-0 place-items-center rounded-full border-2 bg-paper transition-colors',
+        station.problem ? 'border-fault' : lit ? 'border-barn bg-barn-soft' : 'border-line',
+        'group-hover:border-barn print:bg-sheet',
+      )}
+    >
+      <svg
+        viewBox="0 0 24 24"
+        className={classNames('size-5.5', station.problem ? 'text-fault' : 'text-barn')}
+        fill="none"
+        stroke="currentColor"
+        strokeWidth="2"
+        strokeLinecap="round"
+        strokeLinejoin="round"
+        aria-hidden="true"
+      >
+        {PICTURES[station.key]}
+      </svg>
+    </span>
+  );
+}
+
+function Words({ station, lit }: { station: BeamLineStation; lit: boolean }) {
+  return (
+    <span className="block min-w-0">
+      <span className="flex items-center gap-1.5 text-sm font-semibold text-muted">
+        {station.name}
+        {lit && (
+          <span className="rounded-full bg-barn-soft px-1.5 text-xs leading-4 font-semibold text-barn">
+            open
+          </span>
+        )}
+      </span>
+      <span className="block font-semibold">
+        {station.main} <span className="font-normal text-muted">{station.detail}</span>
+      </span>
+      {station.problem && (
+        <span className="mt-0.5 flex gap-1 text-sm text-fault">
+          <CircleAlert aria-hidden="true" className="mt-0.5 size-4 shrink-0" />
+          <span className="line-clamp-2">{station.problem}</span>
+        </span>
+      )}
+    </span>
+  );
+}
+
+const cell = 'group flex w-full gap-3 rounded text-left md:flex-col md:gap-2';
+
+/** The case as the apparatus it describes: four fixed stations along one line, upright on a narrow screen. */
+export function BeamLine({ stations, onOpen, selected }: BeamLineProps) {
+  return (
+    <ol
+      aria-label="Beam line"
+      className="relative grid gap-y-3 md:grid-cols-[1.05fr_0.9fr_1.25fr_1.1fr] md:gap-x-4 before:absolute before:top-2 before:bottom-2 before:left-[21px] before:border-l-2 before:border-barn/45 md:before:inset-x-2 md:before:top-[21px] md:before:bottom-auto md:before:border-t-2 md:before:border-l-0"
+    >
+      {stations.map((station) => {
+        const lit = station.key === selected;
+        return (
+          <li key={station.key} className="relative min-w-0">
+            {onOpen ? (
+              <button
+                type="button"
+                className={cell}
+                aria-current={lit ? 'true' : undefined}
+                onClick={() => onOpen(station.key)}
+              >
+                <Picture station={station} lit={lit} />
+                <Words station={station} lit={lit} />
+              </button>
+            ) : (
+              <span className={cell}>
+                <Picture station={station} lit={lit} />
+                <Words station={station} lit={lit} />
+              </span>
+            )}
+          </li>
+        );
+      })}
+    </ol>
+  );
+}
