@@ -1,0 +1,29 @@
+import { contact } from './contact.ts';
+import { coulomb } from './coulomb.ts';
+import { deltaShell } from './delta-shell.ts';
+import { exponential } from './exponential.ts';
+import { gaussian } from './gaussian.ts';
+import { screenedCoulomb } from './screened-coulomb.ts';
+import { squareWell } from './square-well.ts';
+import type { Form } from './types.ts';
+import { woodsSaxon } from './woods-saxon.ts';
+import { yukawa } from './yukawa.ts';
+
+/** Every form there is, in the order in which pages list them. A new form is one file and one line here. */
+export const FORMS: readonly Form[] = [
+  yukawa,
+  coulomb,
+  screenedCoulomb,
+  squareWell,
+  gaussian,
+  exponential,
+  woodsSaxon,
+  deltaShell,
+  contact,
+];
+
+const byKey = new Map(FORMS.map((form) => [form.key, form]));
+
+export function formByKey(key: string): Form | undefined {
+  return byKey.get(key);
+}
