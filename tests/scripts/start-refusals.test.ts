@@ -16,12 +16,10 @@ async function start(env: Record<string, string>) {
     env: { ...process.env, ...env },
     stdio: ['ignore', 'pipe', 'pipe'],
   });
-  const [out, err, [code]] = await Promise.all([
-    text(child.stdout),
-    text(child.stderr),
-    once(child, 'close'),
-  ]);
-  return { code: code as number, out, err };
+  const closed = once(child, 'close');
+  const [out, err] = await Promise.all([text(child.stdout), text(child.stderr)]);
+  await closed;
+  return { code: child.exitCode, out, err };
 }
 
 test('a taken port ends the start at once, by name, before anything is made', async () => {
