@@ -19,9 +19,9 @@ const rooms = [
   { type: 'physics', partialMatch: false, pattern: 'server/physics/*.ts' },
   { type: 'server', partialMatch: false, pattern: 'server/**' },
   { type: 'feature', partialMatch: false, pattern: 'src/features/*/**', capture: ['feature'] },
-  { type: 'app', partialMatch: false, pattern: 'src/*' },
   { type: 'layouts', partialMatch: false, pattern: 'src/layouts/**' },
-  { type: 'src', partialMatch: false, pattern: 'src/**' },
+  { type: 'src', partialMatch: false, pattern: 'src/{components,lib,styles}/**' },
+  { type: 'app', partialMatch: false, pattern: 'src' },
   { type: 'tests', partialMatch: false, pattern: 'tests/**' },
   { type: 'scripts', partialMatch: false, pattern: 'scripts/**' },
 ];

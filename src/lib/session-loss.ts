@@ -1,51 +1,59 @@
+import { useSyncExternalStore } from 'react';
+
 /**
- * A session can end under a page: requests then wait here while the person signs in again, and are repeated, so that nothing
- * typed is lost. The shell shows the dialog and settles the wait.
+ * A session can end under a page. Requests then wait here while the shell asks the person to sign in again, and are repeated, so
+ * that nothing typed is lost. One who declines is not asked again by every request that follows.
  */
-type Listener = () => void;
+type SessionLoss = 'none' | 'asking' | 'declined';
 
+let state: SessionLoss = 'none';
 let waiting: Array<(regained: boolean) => void> = [];
-const listeners = new Set<Listener>();
-/** Only a page inside the shell can ask; elsewhere a refusal goes straight back. */
-let asker = false;
-/** Stays until it is settled: requests that are given up meanwhile do not bring the session back. */
-let lost = false;
+/** Only the shell can ask; where it does not stand, a refusal goes straight back. */
+const listeners = new Set<() => void>();
 
-function announce(): void {
+function become(next: SessionLoss): void {
+  state = next;
   for (const listener of listeners) listener();
 }
 
-/** Resolves true once the person has signed in again, false when they decline, at once where nobody can be asked. */
+function settle(regained: boolean): void {
+  const settled = waiting;
+  waiting = [];
+  for (const resolve of settled) resolve(regained);
+}
+
+/** True once the person has signed in again; false when they decline or nobody can be asked. */
 export function regainSession(signal?: AbortSignal): Promise<boolean> {
-  if (!asker) return Promise.resolve(false);
+  if (listeners.size === 0 || state === 'declined') return Promise.resolve(false);
   return new Promise((resolve) => {
     signal?.addEventListener('abort', () => {
       waiting = waiting.filter((entry) => entry !== resolve);
       resolve(false);
     });
     waiting = [...waiting, resolve];
-    lost = true;
-    announce();
+    become('asking');
   });
 }
 
-export function settleSessionLoss(regained: boolean): void {
-  const settled = waiting;
-  waiting = [];
-  lost = false;
-  for (const settle of settled) settle(regained);
-  announce();
+export function sessionRegained(): void {
+  become('none');
+  settle(true);
 }
 
-export function isSessionLost(): boolean {
-  return lost;
+export function sessionDeclined(): void {
+  become('declined');
+  settle(false);
 }
 
-export function subscribeToSessionLoss(listener: Listener): () => void {
+export function askForSession(): void {
+  become('asking');
+}
+
+function subscribe(listener: () => void): () => void {
   listeners.add(listener);
-  asker = true;
-  return () => {
-    listeners.delete(listener);
-    asker = listeners.size > 0;
-  };
+  return () => listeners.delete(listener);
+}
+
+export function useSessionLoss(): SessionLoss {
+  return useSyncExternalStore(subscribe, () => state);
 }

@@ -1,0 +1,138 @@
+import { Suspense, useMemo, useState } from 'react';
+import { Keyboard } from 'lucide-react';
+import { Link, Outlet, useLocation, useNavigate } from 'react-router-dom';
+import type { Session } from '#shared/contracts/auth.ts';
+import { ROLE_LABELS } from '#shared/roles.ts';
+import { IconButton } from '#src/components/button.tsx';
+import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
+import { ThemeSwitch } from '#src/components/theme-switch.tsx';
+import { mayEver } from '#src/lib/session.ts';
+import { useShortcuts } from '#src/lib/shortcuts.ts';
+import { Brand } from './brand.tsx';
+import { NarrowMenu } from './narrow-menu.tsx';
+import { Rooms } from './rooms.tsx';
+import { SessionLost } from './session-lost.tsx';
+import { ShortcutsDialog } from './shortcuts-dialog.tsx';
+import { SignOut } from './sign-out.tsx';
+
+function useKeys(session: Session, showKeys: () => void) {
+  const navigate = useNavigate();
+  const { pathname } = useLocation();
+  const research = mayEver(session, 'case.create');
+  useShortcuts(
+    useMemo(() => {
+      const always = { '?': showKeys };
+      if (!research) return always;
+      const search = () => {
+        const box = document.querySelector<HTMLInputElement>('#case-search');
+        if (box) box.focus();
+        else void navigate('/cases', { state: { focusSearch: true, keepFocus: true } });
+      };
+      const begin = () => pathname !== '/cases/new' && void navigate('/cases/new');
+      return { ...always, n: begin, '/': search };
+    }, [research, navigate, pathname, showKeys]),
+  );
+}
+
+function DemoBanner() {
+  return (
+    <p
+      data-screen-only
+      className="border-b border-line bg-straw-soft px-4 py-1 text-center text-sm text-ink"
+    >
+      <strong className="font-semibold">Demo:</strong> an invented facility; its cases and numbers
+      belong to no real measurement.
+    </p>
+  );
+}
+
+function PageWaiting() {
+  return (
+    <Waiting what="the page">
+      <Skeleton className="mb-4 h-8 w-72 max-w-full" />
+      <Skeleton className="mb-2 w-full" />
+      <Skeleton className="mb-2 w-5/6" />
+      <Skeleton className="w-2/3" />
+    </Waiting>
+  );
+}
+
+/** What stands around every page of a person who is signed in. */
+export function Shell({ session }: { session: Session }) {
+  const { user, demo } = session;
+  const [keysShown, setKeysShown] = useState(false);
+  const showKeys = useMemo(() => () => setKeysShown(true), []);
+  useKeys(session, showKeys);
+  const lab = demo ? 'Lowmoor Beam Hall' : window.location.host;
+  const who = (
+    <Link to="/account" className="rounded hover:text-ink" title={user.name}>
+      {ROLE_LABELS[user.role]}
+    </Link>
+  );
+  const keys = (
+    <IconButton label="Keys" onClick={showKeys} className="max-lg:hidden">
+      <Keyboard aria-hidden="true" className="size-4.5" strokeWidth={1.75} />
+    </IconButton>
+  );
+  return (
+    <div className="flex min-h-svh flex-col">
+      <a
+        href="#main"
+        className="absolute top-2 left-2 z-60 -translate-y-16 rounded bg-ink px-3 py-2 text-paper focus:translate-y-0"
+      >
+        Skip to the page
+      </a>
+      {demo && <DemoBanner />}
+      <div className="flex flex-1 lg:grid lg:grid-cols-[12.25rem_minmax(0,1fr)]">
+        <div
+          data-screen-only
+          className="sticky top-0 hidden max-h-svh flex-col gap-6 self-start overflow-y-auto border-r border-line px-3 py-4 lg:flex lg:h-svh"
+        >
+          <div className="px-1.5">
+            <Brand />
+          </div>
+          <Rooms session={session} />
+        </div>
+        <div className="flex min-w-0 flex-1 flex-col">
+          <header
+            data-screen-only
+            className="flex min-h-13 items-center justify-between gap-3 border-line px-4 text-sm text-muted max-lg:border-b lg:px-8 lg:pt-2"
+          >
+            <div className="lg:hidden">
+              <Brand />
+            </div>
+            <span className="truncate max-lg:hidden">{lab}</span>
+            <div className="flex items-center gap-3 max-lg:hidden">
+              {who}
+              {keys}
+              <ThemeSwitch iconsOnly />
+              <SignOut accountId={user.id} />
+            </div>
+            <NarrowMenu session={session}>
+              <span className="text-sm text-muted">
+                {lab} · {ROLE_LABELS[user.role]}
+              </span>
+              <ThemeSwitch />
+              <SignOut accountId={user.id} />
+            </NarrowMenu>
+          </header>
+          <SessionLost user={user} />
+          <main
+            id="main"
+            tabIndex={-1}
+            className="w-full max-w-[84rem] min-w-0 flex-1 px-4 pt-4 pb-12 lg:px-8 lg:pt-2"
+          >
+            <Suspense fallback={<PageWaiting />}>
+              <Outlet />
+            </Suspense>
+          </main>
+        </div>
+      </div>
+      <ShortcutsDialog
+        open={keysShown}
+        onOpenChange={setKeysShown}
+        research={mayEver(session, 'case.create')}
+      />
+    </div>
+  );
+}
