@@ -6,6 +6,7 @@ export const ERROR_CODES = [
   'signInFailed',
   'forbidden',
   'notFound',
+  'methodNotAllowed',
   'conflict',
   'staleVersion',
   'preconditionRequired',

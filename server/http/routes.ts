@@ -1,0 +1,13 @@
+import { authRoutes } from '#server/modules/auth/auth.routes.ts';
+import { healthRoutes } from '#server/modules/health/health.routes.ts';
+import { tokenRoutes } from '#server/modules/tokens/tokens.routes.ts';
+import { userRoutes } from '#server/modules/users/users.routes.ts';
+import type { Route } from './route.ts';
+
+/** Every route there is. The router, the OpenAPI document and the permission test read this list. */
+export const ROUTES: readonly Route[] = [
+  ...healthRoutes,
+  ...authRoutes,
+  ...tokenRoutes,
+  ...userRoutes,
+];

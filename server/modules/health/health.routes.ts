@@ -1,0 +1,38 @@
+import { z } from 'zod';
+import { DomainError } from '#shared/errors.ts';
+import { defineRoute } from '#server/http/route.ts';
+
+const healthSchema = z.object({
+  status: z.literal('ok'),
+  version: z.string(),
+  database: z.literal('ok'),
+  demo: z.boolean(),
+});
+
+export const healthRoutes = [
+  defineRoute({
+    method: 'get',
+    path: '/api/health',
+    operationId: 'getHealth',
+    summary: 'Whether the application and its database answer',
+    tag: 'Service',
+    access: 'public',
+    response: healthSchema,
+    async handler({ em, config, log }) {
+      try {
+        await em.getConnection().execute('select 1');
+      } catch (fault) {
+        log.warn({ err: fault }, 'the database does not answer');
+        throw new DomainError('unavailable', 'The database does not answer.', {
+          extra: { database: 'unreachable', version: config.version, retryAfter: 5 },
+        });
+      }
+      return {
+        status: 'ok' as const,
+        version: config.version,
+        database: 'ok' as const,
+        demo: config.demo,
+      };
+    },
+  }),
+];
