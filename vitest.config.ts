@@ -10,7 +10,7 @@ export default defineConfig({
       {
         test: {
           name: 'physics',
-          include: ['tests/physics/**/*.test.ts', 'tests/shared/**/*.test.ts'],
+          include: ['tests/{physics,reference,shared}/**/*.test.ts'],
           pool: 'threads',
           maxWorkers: 2,
           testTimeout: 30_000,

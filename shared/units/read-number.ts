@@ -67,7 +67,7 @@ function finish(value: number, rest: string, note?: string): NumberReading {
   if (!Number.isFinite(value)) {
     return { ok: false, message: 'The number is too large for a double-precision number.' };
   }
-  if (/^\s+[\d.,]/.test(rest)) {
+  if (/^\s+(?!1\/)[\d.,]/.test(rest)) {
     return { ok: false, message: 'There are spaces inside the number: write it in one piece.' };
   }
   const unit = rest.trim();

@@ -39,6 +39,7 @@ export interface CmAngle {
  * Error: a few ulps, but for the Jacobian near the edge of the cone, where 1 + rho cos(theta) itself loses digits (labToCm does not).
  */
 export function cmToLab(thetaCm: number, frame: Frame): LabAngle {
+  if (frame.rho === 0) return { thetaLab: thetaCm, jacobian: 1 };
   const cosHalf = Math.cos(thetaCm / 2);
   const cos = Math.cos(thetaCm);
   const { rho, rhoMinusOne, gamma } = frame;
@@ -80,6 +81,7 @@ export function labToCm(thetaLab: number, frame: Frame): CmAngle[] {
   const { rho, rhoMinusOne, gamma, thetaMax } = frame;
   const reachable = rhoMinusOne < 0 ? thetaLab <= Math.PI : thetaLab < thetaMax;
   if (!(thetaLab >= 0) || !reachable) return [];
+  if (rho === 0) return [{ thetaCm: thetaLab, jacobian: 1 }];
   const a = gamma * Math.sin(thetaLab);
   const b = Math.cos(thetaLab);
   const r2 = a * a + b * b;
