@@ -130,7 +130,7 @@ function check({ projectileMass, targetMass, energy }: TwoBodyInput): void {
  * Without relativity mu = m1 m2/(m1 + m2), E_cm = T m2/(m1 + m2), p = sqrt(2 mu E_cm). With it s = (m1 + m2)² + 2 m2 T, p = p_lab m2/sqrt(s),
  * E_cm = 2 m2 T/(sqrt(s) + m1 + m2), mu = E1 E2/(E1 + E2) with E1 = (m1 (m1 + m2) + m2 T)/sqrt(s), E2 = m2 (m1 + m2 + T)/sqrt(s).
  * @param input masses mc² and lab kinetic energy in eV, all > 0; targetMass Infinity for a fixed target
- * @returns see TwoBody; each value within 2e-15 of itself, checked against a table of 30 digits
+ * @returns see TwoBody; each value within 1e-15 of itself, checked against tests/reference/kinematics
  * @throws DomainError('invalidInput') for energies and masses that are not above zero or leave double precision
  * Validity: elastic, two bodies; the regime is the caller's choice.
  * Source: Review of Particle Physics, chapter Kinematics.
