@@ -24,6 +24,16 @@ function surfaceFactor(p: number): number {
   return sum * damping(p);
 }
 
+/** Bound of |p L'/L| for the factor above: 2p²/15 near 0, towards 1. */
+function surfaceSlope(p: number): number {
+  return Math.min(1, p * p);
+}
+
+/** |y A'(y)| in A: 4 y²/(n² + y²) term by term, twice that for the terms that cancel. */
+function tailSlope(y: number): number {
+  return 8 / (1 + 1 / (y * y));
+}
+
 /**
  * Transform of 1/(1 + exp((r-R)/a)).
  *
@@ -67,10 +77,10 @@ export function woodsSaxonTransform(R: number, a: number): (q: number) => Numeri
       (2 * a ** 3 * tail.error) / UNIT_ROUNDOFF +
       6 * Math.abs(tailValue);
     const slope =
-      (steep + 1) * parts +
+      steep * parts +
       volumePart * ball.slope +
-      surfacePart * shell.slope +
-      8 * Math.abs(tailValue);
-    return closedResult(value, rounding, q === 0 ? 0 : slope);
+      surfacePart * (shell.slope + surfaceSlope(p) * Math.abs(shell.value)) +
+      tailSlope(q * a) * Math.abs(tailValue);
+    return closedResult(value, rounding, slope);
   };
 }
