@@ -1,5 +1,5 @@
-/** ln 1e17: exp(-x) is below 1e-17 from here. */
-export const E_FOLDINGS = 39.2;
+/** exp(-x) is below 1e-17, also of one half, from here. */
+export const E_FOLDINGS = 40;
 
 /** Where integrals of exp(-r/a) are cut, in a, and the edges of their panels. */
 const CUT = 48;

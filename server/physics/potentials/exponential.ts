@@ -39,7 +39,7 @@ export const exponential: Form = {
   label: 'Exponential',
   formula: String.raw`V(r) = V_0\,e^{-r/a}`,
   transformFormula: String.raw`\int_0^\infty r^2 V(r)\,j_0(qr)\,dr = \frac{2 V_0\,a^3}{(1+q^2a^2)^2}`,
-  source: 'Textbook form; transform by differentiation of the one of Yukawa',
+  source: 'Textbook form; transform as the derivative of the one of H. Yukawa (1935) by 1/a',
   parameters,
   build(values) {
     const read = readParameters(parameters, values);

@@ -39,7 +39,7 @@ const CUT = 7.2;
  * @param q momentum transfer, 1/angstrom, >= 0
  * @returns S in angstrom³; relative error 1e-15 (1 + 3 (qa)²/4), what the exponent makes of its rounding
  *
- * Source: textbook; Fourier transform of a normal distribution.
+ * Source: textbook; Fourier transform of a normal distribution, e.g. I. N. Sneddon, Fourier Transforms (1951).
  */
 export function gaussianTransform(a: number, q: number) {
   const exponent = (q * a) ** 2 / 4;
@@ -52,7 +52,7 @@ export const gaussian: Form = {
   label: 'Gaussian',
   formula: String.raw`V(r) = (V_0 + iW_0)\,e^{-(r/a)^2}`,
   transformFormula: String.raw`\int_0^\infty r^2 V(r)\,j_0(qr)\,dr = (V_0+iW_0)\,\frac{\sqrt{\pi}}{4}\,a^3 e^{-q^2a^2/4}`,
-  source: 'Textbook form; transform of a normal distribution',
+  source: 'Textbook form; I. N. Sneddon, Fourier Transforms (1951), table of cosine transforms',
   parameters,
   build(values) {
     const read = readParameters(parameters, values);

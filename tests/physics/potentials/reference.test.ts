@@ -1,0 +1,71 @@
+import { describe, expect, it } from 'vitest';
+import { deviation, readReference, type Split } from '#tests/physics/numerics/reference-table.ts';
+import { transform, unitTerm } from './build-term.ts';
+
+interface Row extends Split {
+  R?: number;
+  a?: number;
+  q: number;
+  quadrature: boolean;
+}
+
+const FORMS = [
+  'yukawa',
+  'screenedCoulomb',
+  'squareWell',
+  'gaussian',
+  'exponential',
+  'woodsSaxon',
+  'deltaShell',
+];
+const UNIT = 2 ** -53;
+
+function rowsOf(form: string): Row[] {
+  return readReference<{ rows: Row[] }>(`potentials/${form}.json`).rows;
+}
+
+function termOf(form: string, { R, a }: Row) {
+  return unitTerm(form, { ...(R === undefined ? {} : { R }), ...(a === undefined ? {} : { a }) });
+}
+
+describe.each(FORMS)('%s against transforms of 30 digits', (form) => {
+  const rows = rowsOf(form);
+
+  it('has a table with q = 0, small, large and the zeros, and quadrature behind it', () => {
+    expect(rows.length).toBeGreaterThanOrEqual(56);
+    expect(rows.some((row) => row.q === 0)).toBe(true);
+    if (form !== 'deltaShell') {
+      expect(rows.filter((row) => row.quadrature).length).toBeGreaterThan(rows.length / 2);
+    }
+  });
+
+  it.each(['closed', 'quadrature'] as const)('%s: the error bounds the deviation', (route) => {
+    for (const row of rows) {
+      const { value, error, status } = transform(termOf(form, row), route, row.q);
+      expect(status).toBe('converged');
+      expect(deviation(value, row), JSON.stringify(row)).toBeLessThanOrEqual(error);
+    }
+  });
+
+  it('closed: the error is at most a hundred roundings of what has to be added up', () => {
+    for (const row of rows) {
+      const term = termOf(form, row);
+      const { error } = transform(term, 'closed', row.q);
+      // q carries 8 u, so the phase qR and the exponents π q a and (qa)²/4 decide where they are large.
+      const size = Math.abs(row.high);
+      const phase = form === 'woodsSaxon' || form === 'squareWell' || form === 'deltaShell';
+      const exponent = form === 'gaussian' ? (row.q * (row.a ?? 0)) ** 2 : 0;
+      const allowed = (100 + 10 * exponent) * UNIT * size + (phase ? 25 * UNIT * term.norm : 0);
+      expect(error, JSON.stringify(row)).toBeLessThanOrEqual(allowed + 2 ** -1022);
+    }
+  });
+
+  it('quadrature: the error stays below the blur of the phase', () => {
+    for (const row of rows) {
+      const term = termOf(form, row);
+      const { error } = transform(term, 'quadrature', row.q);
+      const blur = form === 'deltaShell' ? 1 + row.q * (term.range ?? 0) : 30;
+      expect(error, JSON.stringify(row)).toBeLessThanOrEqual(blur * 1e-15 * term.norm);
+    }
+  });
+});

@@ -1,0 +1,51 @@
+import katex from 'katex';
+import { describe, expect, it } from 'vitest';
+import { FORMS, formByKey } from '#server/physics/potentials/register.ts';
+import { UNITS } from '#shared/units/vocabulary.ts';
+import { CONTEXT } from './build-term.ts';
+
+describe('register of forms', () => {
+  it('lists every form once and finds it by key', () => {
+    expect(FORMS.map(({ key }) => key)).toEqual([
+      'yukawa',
+      'coulomb',
+      'screenedCoulomb',
+      'squareWell',
+      'gaussian',
+      'exponential',
+      'woodsSaxon',
+      'deltaShell',
+      'contact',
+    ]);
+    for (const form of FORMS) expect(formByKey(form.key)).toBe(form);
+    expect(formByKey('toString')).toBeUndefined();
+  });
+
+  it.each(FORMS)('$key: formulas typeset, every text is there', (form) => {
+    for (const tex of [form.formula, form.transformFormula]) {
+      expect(() =>
+        katex.renderToString(tex, { throwOnError: true, strict: 'error' }),
+      ).not.toThrow();
+    }
+    for (const parameter of form.parameters) {
+      expect(() => katex.renderToString(parameter.symbol, { throwOnError: true })).not.toThrow();
+      expect(parameter.description.length).toBeGreaterThan(10);
+    }
+    expect(form.source).toMatch(/\d{4}/);
+  });
+
+  it.each(FORMS)('$key: builds from its defaults, which lie in their bounds', (form) => {
+    const values = Object.fromEntries(
+      form.parameters.map(({ key, default: start, dimension }) => {
+        if (typeof start === 'number') return [key, start];
+        expect(dimension).not.toBe('number');
+        const units = dimension === 'number' ? {} : UNITS[dimension];
+        return [key, start.value * (units[start.unit] ?? NaN)];
+      }),
+    );
+    const term = form.build(values, CONTEXT);
+    expect(term.form).toBe(form.key);
+    expect(Number.isFinite(term.strength.re) && term.strength.re !== 0).toBe(true);
+    expect(term.closed?.(1).value).toBeGreaterThan(-Infinity);
+  });
+});
