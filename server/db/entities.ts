@@ -1,4 +1,7 @@
 import { Renewal, Session, SignInFailure } from '#server/modules/auth/session.entity.ts';
+import { Campaign, CampaignMember } from '#server/modules/campaigns/campaign.entity.ts';
+import { CaseVersion, VersionStatus } from '#server/modules/cases/case-version.entity.ts';
+import { Case } from '#server/modules/cases/case.entity.ts';
 import { PersonalToken } from '#server/modules/tokens/personal-token.entity.ts';
 import { Account } from '#server/modules/users/account.entity.ts';
 import { OutboxDelivery, OutboxMessage } from '#server/outbox/outbox.entity.ts';
@@ -10,6 +13,11 @@ export const ENTITIES = [
   Renewal,
   SignInFailure,
   PersonalToken,
+  Campaign,
+  CampaignMember,
+  Case,
+  CaseVersion,
+  VersionStatus,
   TrailEntry,
   OutboxMessage,
   OutboxDelivery,

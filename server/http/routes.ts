@@ -1,4 +1,5 @@
 import { authRoutes } from '#server/modules/auth/auth.routes.ts';
+import { campaignRoutes } from '#server/modules/campaigns/campaigns.routes.ts';
 import { healthRoutes } from '#server/modules/health/health.routes.ts';
 import { tokenRoutes } from '#server/modules/tokens/tokens.routes.ts';
 import { userRoutes } from '#server/modules/users/users.routes.ts';
@@ -10,4 +11,5 @@ export const ROUTES: readonly Route[] = [
   ...authRoutes,
   ...tokenRoutes,
   ...userRoutes,
+  ...campaignRoutes,
 ];
