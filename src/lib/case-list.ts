@@ -1,12 +1,7 @@
 import { keepPreviousData, queryOptions } from '@tanstack/react-query';
 import { z } from 'zod';
-import type {
-  caseListQuerySchema} from '#shared/contracts/cases.ts';
-import {
-  CASE_SORTS,
-  caseListItemSchema,
-  statusSchema,
-} from '#shared/contracts/cases.ts';
+import type { caseListQuerySchema } from '#shared/contracts/cases.ts';
+import { CASE_SORTS, caseListItemSchema, statusSchema } from '#shared/contracts/cases.ts';
 import { listSchema } from '#shared/contracts/list.ts';
 import { request } from './api.ts';
 

@@ -5,7 +5,8 @@ import type { User } from '#shared/contracts/users.ts';
 import { Button } from '#src/components/button.tsx';
 import { Field, TextInput } from '#src/components/field.tsx';
 import { Notice } from '#src/components/notice.tsx';
-import { ApiError, inWords } from '#src/lib/api.ts';
+import { inWords } from '#src/lib/api.ts';
+import { faultsFrom, faultsOf, focusFirstFault, type Faults } from '#src/lib/form-faults.ts';
 import { signIn, type Credentials } from '../api.ts';
 
 interface SignInFormProps {
@@ -14,30 +15,17 @@ interface SignInFormProps {
   onSignedIn: (user: User) => void;
 }
 
-type Faults = Partial<Record<keyof Credentials, string>>;
-
-function faultsOf(value: Credentials): Faults {
-  const parsed = signInSchema.safeParse(value);
-  const faults: Faults = {};
-  for (const issue of parsed.error?.issues ?? []) {
-    const key = issue.path[0];
-    if (key === 'email' || key === 'password') faults[key] ??= issue.message;
-  }
-  return faults;
-}
-
 export function SignInForm({ value, onChange, onSignedIn }: SignInFormProps) {
   const [faults, setFaults] = useState<Faults>({});
   const mutation = useMutation({ mutationFn: signIn, onSuccess: ({ user }) => onSignedIn(user) });
-  const refusal = mutation.error instanceof ApiError ? mutation.error : null;
+  const refused = faultsFrom(mutation.error);
 
   function submit(event: FormEvent<HTMLFormElement>) {
     event.preventDefault();
-    const found = faultsOf(value);
+    const found = faultsOf(signInSchema, value);
     setFaults(found);
-    const first = found.email ? 'email' : found.password ? 'password' : null;
-    if (first) event.currentTarget.querySelector<HTMLInputElement>(`[name=${first}]`)?.focus();
-    else if (!mutation.isPending) mutation.mutate(value);
+    if (focusFirstFault(event.currentTarget, found) || mutation.isPending) return;
+    mutation.mutate(value);
   }
 
   return (
@@ -47,7 +35,7 @@ export function SignInForm({ value, onChange, onSignedIn }: SignInFormProps) {
           {inWords(mutation.error)}
         </Notice>
       )}
-      <Field label="E-mail" error={faults.email ?? refusal?.at('/email')}>
+      <Field label="E-mail" error={faults['email'] ?? refused['email']}>
         {(control) => (
           <TextInput
             {...control}
@@ -59,7 +47,7 @@ export function SignInForm({ value, onChange, onSignedIn }: SignInFormProps) {
           />
         )}
       </Field>
-      <Field label="Password" error={faults.password ?? refusal?.at('/password')}>
+      <Field label="Password" error={faults['password'] ?? refused['password']}>
         {(control) => (
           <TextInput
             {...control}

@@ -1,3 +1,4 @@
+import { useCallback } from 'react';
 import { useQuery } from '@tanstack/react-query';
 import { X } from 'lucide-react';
 import { Link } from 'react-router-dom';
@@ -7,7 +8,7 @@ import { Segmented } from '#src/components/segmented.tsx';
 import { Select } from '#src/components/select.tsx';
 import { campaignsQuery } from '#src/lib/campaigns.ts';
 import type { CaseAddress } from '../address.ts';
-import { SearchBox } from './search-box.tsx';
+import { CaseSearch } from './case-search.tsx';
 
 const SORT_LABELS: Record<(typeof CASE_SORTS)[number], string> = {
   '-updated': 'Newest change first',
@@ -40,9 +41,10 @@ function CampaignFilter({ address }: { address: CaseAddress }) {
 
 export function Filters({ address }: { address: CaseAddress }) {
   const { query, change, hrefWith } = address;
+  const search = useCallback((q: string) => change({ q }, true), [change]);
   return (
     <div data-screen-only className="flex flex-wrap items-center gap-2">
-      <SearchBox value={query.q ?? ''} onSearch={(q) => change({ q }, true)} />
+      <CaseSearch value={query.q ?? ''} onSearch={search} />
       <Segmented
         label="Owner"
         size="normal"
