@@ -83,33 +83,44 @@ async function runTests(shutdown, filters) {
   return countTests(report, endedWell);
 }
 
-// npm test: everything. npm test -- FILTER …: the tests named alone, without the static checks.
-await live(async (shutdown) => {
-  checkNode();
-  const filters = process.argv.slice(2);
-  await installWhatIsMissing(shutdown);
-  await prepareClone(shutdown, { build: false });
+/**
+ * @param {Shutdown} shutdown
+ * @param {readonly string[]} filters
+ * @returns {Promise<{ passed: number, failed: number }>}
+ */
+async function checkEverything(shutdown, filters) {
   let passed = 0;
   let failed = 0;
-  if (filters.length === 0) {
-    for (const { name, command } of CHECKS) {
-      const options = { what: `${name}: see the lines below`, mend: '', cwd: ROOT };
-      const well = await passes(name, () =>
-        run(shutdown, process.execPath, command, { ...options, echo: true }),
-      );
-      if (well) passed += 1;
-      else failed += 1;
-    }
+  for (const { name, command } of filters.length === 0 ? CHECKS : []) {
+    const options = { what: `${name}: see the lines above`, mend: '', cwd: ROOT, echo: true };
+    if (await passes(name, () => run(shutdown, process.execPath, command, options))) passed += 1;
+    else failed += 1;
   }
   if (!(await passes('build', () => prepareClone(shutdown)))) failed += 1;
   const tests = await runTests(shutdown, filters);
-  passed += tests.passed;
-  failed += tests.failed;
+  if (tests.passed + tests.failed === 0) {
+    say('No test ran, which counts as failed.');
+    failed += 1;
+  }
   if (filters.length === 0 && tests.skipped > 0) {
     say(`${tests.skipped} tests were skipped, which counts as failed.`);
     failed += tests.skipped;
   }
-  if (tests.passed + tests.failed === 0) say('No test ran.');
-  say(`${passed} passed, ${failed} failed`);
-  return failed === 0 && tests.passed > 0 ? 0 : 1;
+  return { passed: passed + tests.passed, failed: failed + tests.failed };
+}
+
+// npm test: everything. npm test -- FILTER …: the tests named alone, without the static checks.
+await live(async (shutdown) => {
+  const counts = { passed: 0, failed: 1 };
+  try {
+    checkNode();
+    await installWhatIsMissing(shutdown);
+    await prepareClone(shutdown, { build: false });
+    Object.assign(counts, await checkEverything(shutdown, process.argv.slice(2)));
+  } catch (error) {
+    if (shutdown.isRequested) throw error;
+    say(describeFailure(error));
+  }
+  say(`${counts.passed} passed, ${counts.failed} failed`);
+  return counts.failed === 0 ? 0 : 1;
 });

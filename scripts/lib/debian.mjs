@@ -29,6 +29,38 @@ function systemClusters() {
 }
 
 /**
+ * @param {import('./shutdown.mjs').Shutdown} shutdown
+ * @param {string} what failed, if it does
+ * @param {string} mend
+ * @param {string} command
+ * @param {readonly string[]} args
+ */
+function quietly(shutdown, what, mend, command, args) {
+  return run(shutdown, command, args, {
+    what,
+    mend: `look at the lines above, then ${mend}`,
+    cwd: '/',
+    env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive', LC_ALL: 'C.UTF-8' },
+    heartbeat: 'installing Debian packages',
+    stopWith: GENTLY,
+    stopNotice: 'Waiting for the Debian packages to come to a safe stop …',
+    orphanSignal: 'INT',
+  });
+}
+
+/**
+ * Waits for another installation on the machine to end.
+ * @param {import('./shutdown.mjs').Shutdown} shutdown
+ * @param {string} what failed, if it does
+ * @param {string} mend
+ * @param {readonly string[]} args
+ */
+function aptGet(shutdown, what, mend, args) {
+  const patient = ['-o', 'DPkg::Lock::Timeout=120'];
+  return quietly(shutdown, what, mend, 'apt-get', [...patient, ...args]);
+}
+
+/**
  * Installs Debian packages as root; as anyone else says the command that is missing.
  * @param {import('./shutdown.mjs').Shutdown} shutdown
  * @param {readonly string[]} packages
@@ -46,38 +78,23 @@ export async function installDebianPackages(shutdown, packages) {
   }
   say(`Installing Debian packages: ${names} …`);
   const before = systemClusters();
-  const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive', LC_ALL: 'C.UTF-8' };
-  /**
-   * @param {string} what
-   * @param {string} command
-   * @param {...string} args
-   */
-  const quietly = (what, command, ...args) =>
-    run(shutdown, command, args, {
-      what,
-      mend: `look at the lines above, then ${mend}`,
-      cwd: '/',
-      env,
-      heartbeat: 'installing Debian packages',
-      stopWith: GENTLY,
-    });
-  await quietly('an interrupted installation could not be repaired', 'dpkg', '--configure', '-a');
-  const lockWait = ['-o', 'DPkg::Lock::Timeout=120'];
-  await quietly(
-    'the list of Debian packages could not be fetched',
-    'apt-get',
-    ...lockWait,
-    'update',
-  );
-  await quietly(
-    `Debian could not install ${names}`,
-    'apt-get',
-    ...lockWait,
-    'install',
-    '-y',
-    '--no-install-recommends',
-    ...packages,
-  );
+  await aptGet(shutdown, 'the list of Debian packages could not be fetched', mend, ['update']);
+  const install = () =>
+    aptGet(shutdown, `Debian could not install ${names}`, mend, [
+      ...['install', '-y', '--no-install-recommends'],
+      ...packages,
+    ]);
+  try {
+    await install();
+  } catch (error) {
+    if (!(error instanceof Failure && error.message.includes('dpkg --configure -a'))) throw error;
+    say('An earlier installation was cut short; it is finished first …');
+    await quietly(shutdown, 'that installation could not be finished', mend, 'dpkg', [
+      '--configure',
+      '-a',
+    ]);
+    await install();
+  }
   for (const cluster of systemClusters().filter((name) => !before.includes(name))) {
     // Debian starts an empty cluster of its own with the package; ours is private and does not need it.
     const [version = '', name = ''] = cluster.split(' ');

@@ -88,6 +88,9 @@ export async function ensurePackages(shutdown, root) {
       mend: 'check the network (behind a proxy: npm config set proxy) and the space on the disk, then run it again',
       cwd: root,
       heartbeat: 'installing npm packages',
+      // It is slow to heed a milder word, and what it leaves half done is done again from the start.
+      stopWith: [['SIGKILL', 5_000]],
+      orphanSignal: 'KILL',
     });
     say('npm packages are installed.');
   }

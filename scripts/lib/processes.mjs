@@ -56,7 +56,8 @@ export function endOf(child) {
  * @param {string} command
  * @param {readonly string[]} args
  * @param {{ what: string, mend: string, account?: Account | undefined, cwd?: string, env?: NodeJS.ProcessEnv,
- *   input?: string, echo?: boolean, heartbeat?: string, stopWith?: [NodeJS.Signals, number][] }} options
+ *   input?: string, echo?: boolean, heartbeat?: string, orphanSignal?: string,
+ *   stopNotice?: string,   stopWith?: [NodeJS.Signals, number][] }} options
  * @returns {Promise<string>} what it wrote
  */
 export async function run(shutdown, command, args, options) {
@@ -66,6 +67,7 @@ export async function run(shutdown, command, args, options) {
     account,
     cwd: cwd ?? process.cwd(),
     env: env ?? process.env,
+    orphanSignal: options.orphanSignal ?? 'TERM',
     stdio: [input === undefined ? 'ignore' : 'pipe', 'pipe', 'pipe'],
   });
   const ended = endOf(child);
@@ -74,6 +76,7 @@ export async function run(shutdown, command, args, options) {
     ['SIGKILL', 5_000],
   ];
   const forget = shutdown.onStop(async () => {
+    if (options.stopNotice !== undefined) say(options.stopNotice);
     if (child.pid !== undefined) await endProcess(child.pid, steps, true);
   });
   child.stdin?.end(input);

@@ -124,6 +124,7 @@ export async function live(work) {
     code = await work(shutdown);
   } catch (error) {
     if (shutdown.isRequested) {
+      await shutdown.stopAll();
       say(`Stopped before the end: ${await shutdown.requested}.`);
       code = 130;
     } else {
