@@ -25,7 +25,7 @@ export function describeFault(fault: unknown): unknown {
   if (!(fault instanceof Error)) return fault;
   const code = 'code' in fault && typeof fault.code === 'string' ? fault.code : undefined;
   const isSql = code !== undefined && /^[0-9A-Z]{5}$/.test(code);
-  const message = isSql ? fault.message.replace(/^[\s\S]* - (?=[^\n]*$)/, '') : fault.message;
+  const message = isSql ? fault.message.replace(/^[\s\S]* - /, '') : fault.message;
   return {
     type: fault.name,
     message,

@@ -41,11 +41,11 @@ export function clearSessionCookies({ config, addCookie }: CookieContext): void 
 }
 
 /** A further renewal token of a session; returns the secret, of which only the hash is kept. */
-export function addRenewal(em: EntityManager, sessionId: string, now: Date): string {
+export function addRenewal(em: EntityManager, session: Session, now: Date): string {
   const secret = newSecret();
   em.create(
     Renewal,
-    { id: randomUUID(), sessionId, tokenHash: hashSecret(secret), createdAt: now, usedAt: null },
+    { id: randomUUID(), session, tokenHash: hashSecret(secret), createdAt: now, usedAt: null },
     { persist: true },
   );
   return secret;

@@ -38,8 +38,9 @@ export async function renewSession(
 ): Promise<Session | undefined> {
   if (secret === undefined || secret === '') return undefined;
   const { em, now } = context;
-  const renewal = await em.findOne(Renewal, { tokenHash: hashSecret(secret) });
-  const session = renewal && (await em.findOne(Session, { id: renewal.sessionId }));
+  const tokenHash = hashSecret(secret);
+  const renewal = await em.findOne(Renewal, { tokenHash }, { populate: ['session'] });
+  const session = renewal?.session;
   if (!renewal || !session || !isLive(session, now)) return undefined;
   const fresh = await em.transactional(async (tx) => {
     const first = await tx.nativeUpdate(Renewal, { id: renewal.id, usedAt: null }, { usedAt: now });
@@ -48,7 +49,7 @@ export async function renewSession(
       const used = renewal.usedAt?.getTime() ?? 0;
       if (now.getTime() - used > TOLERANCE_MILLISECONDS) return undefined;
     }
-    return addRenewal(tx, session.id, now);
+    return addRenewal(tx, tx.getReference(Session, session.id), now);
   });
   if (fresh === undefined) {
     await revokeFamily(context, session);

@@ -22,7 +22,7 @@ export const Renewal = defineEntity({
   tableName: 'renewals',
   properties: (p) => ({
     id: p.uuid().primary(),
-    sessionId: p.uuid(),
+    session: () => p.manyToOne(Session),
     tokenHash: p.text().unique().hidden(),
     createdAt: p.datetime(),
     usedAt: p.datetime().nullable(),

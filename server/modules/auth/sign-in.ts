@@ -45,7 +45,7 @@ export async function signIn(context: RequestContext, given: Credentials): Promi
       subject: { type: 'session', id: made.id },
       now,
     });
-    return Promise.resolve({ session: made, renewal: addRenewal(tx, made.id, now) });
+    return Promise.resolve({ session: made, renewal: addRenewal(tx, made, now) });
   });
   await forgiveFailures(em, { email: given.email, address: context.address }, now);
   await forgetOldSessions(em, now);
