@@ -265,6 +265,8 @@ export type GoldenRule = z.infer<typeof goldenRuleSchema>;
 export const warningSchema = z.object({
   code: z.string(),
   message: z.string(),
+  /** `info` where nothing is wrong; anything else asks for a decision. */
+  level: z.enum(['caution', 'info']).optional(),
   path: z.string().optional(),
 });
 export type Warning = z.infer<typeof warningSchema>;

@@ -43,7 +43,8 @@ export function finalStates(
     const total = m1 + m2;
     const w = energy + total;
     const momentum =
-      Math.sqrt(energy * (energy + 2 * total)) * (Math.sqrt((w - m1 + m2) * (w + m1 - m2)) / (2 * w));
+      Math.sqrt(energy * (energy + 2 * total)) *
+      (Math.sqrt((w - m1 + m2) * (w + m1 - m2)) / (2 * w));
     return {
       k: momentum / HBAR_C_EV_ANGSTROM,
       reducedMass: Math.hypot(momentum, m1) * (Math.hypot(momentum, m2) / w),

@@ -1,0 +1,60 @@
+import type { Estimate, GoldenRule } from '#shared/contracts/estimates.ts';
+import type { EstimateResult, GoldenRuleSheet } from '#server/physics/estimate.ts';
+import type { MatrixElement } from '#server/physics/observables/golden-rule.ts';
+import type { AnswerUnits } from './answer-units.ts';
+import { errorOf, finite } from './answer-units.ts';
+
+const DIVERGES =
+  'The matrix element of a 1/r potential diverges in the forward direction; choose an angle above zero.';
+
+function elementOf({ re, im, error }: MatrixElement, units: AnswerUnits) {
+  const shown = { re: units.volumeEnergyOf(re), im: units.volumeEnergyOf(im) };
+  return {
+    ...shown,
+    unit: units.volumeEnergyUnit,
+    ...errorOf(Math.hypot(shown.re, shown.im), units.volumeEnergyOf(error)),
+  };
+}
+
+function checkOf({ re, im, error, evaluations }: MatrixElement, units: AnswerUnits) {
+  return {
+    re: units.volumeEnergyOf(re),
+    im: units.volumeEnergyOf(im),
+    unit: units.volumeEnergyUnit,
+    absoluteError: units.volumeEnergyOf(error),
+    evaluations,
+  };
+}
+
+function windowOf({ window }: GoldenRuleSheet): GoldenRule['window'] {
+  if ('none' in window) return window;
+  return {
+    t0Min: { value: finite(window.t0Min), unit: 's' },
+    t0Max: { value: finite(window.t0Max), unit: 's' },
+  };
+}
+
+export function presentGoldenRule(
+  { goldenRule: sheet }: EstimateResult,
+  theta: number,
+  units: AnswerUnits,
+): Estimate['goldenRule'] {
+  if (sheet === null) return { unavailable: true, reason: DIVERGES };
+  const density = `1/(${units.energy} sr)`;
+  return {
+    theta,
+    boxSide: units.lengthQuantity(sheet.boxSide),
+    q: units.inverseLengthQuantity(sheet.q),
+    matrixElementTimesVolume: elementOf(sheet.matrixElementTimesVolume, units),
+    ...(sheet.quadratureCheck && { quadratureCheck: checkOf(sheet.quadratureCheck, units) }),
+    densityOfStates: units.composed(sheet.densityOfStates, '1/(eV sr)', density),
+    rate: { value: finite(sheet.rate), unit: '1/(s sr)' },
+    flux: units.composed(sheet.flux, '1/(angstrom2 s)', `1/(${units.area} s)`),
+    dcs: units.dcsQuantity(sheet.dcs),
+    factorsAfter:
+      sheet.withExchange === null
+        ? []
+        : [{ name: 'exchange', dcs: units.dcsQuantity(sheet.withExchange) }],
+    window: windowOf(sheet),
+  };
+}

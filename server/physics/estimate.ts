@@ -1,0 +1,139 @@
+import type { FirstBorn } from './methods/born1.ts';
+import { firstBorn } from './methods/born1.ts';
+import { exchangeDcs } from './methods/exchange.ts';
+import { labToCm } from './kinematics/frames.ts';
+import type { Assessment } from './observables/assess.ts';
+import { assess } from './observables/assess.ts';
+import type { ConeSamples, Scales } from './observables/cone-samples.ts';
+import { sampleCone } from './observables/cone-samples.ts';
+import type { CrossSections } from './observables/integrals.ts';
+import { crossSections } from './observables/cross-sections.ts';
+import type { CmPoint, LabPoint } from './observables/differential.ts';
+import { cmPoint, labPoint } from './observables/differential.ts';
+import type { GoldenRule } from './observables/golden-rule.ts';
+import { goldenRule } from './observables/golden-rule.ts';
+import type { PotentialCurve } from './observables/potential-curve.ts';
+import { potentialCurve } from './observables/potential-curve.ts';
+import type { Window } from './observables/window.ts';
+import { goldenRuleWindow } from './observables/window.ts';
+import { finalStates } from './kinematics/final-states.ts';
+import type { Problem } from './problem.ts';
+
+export interface GoldenRuleSheet extends GoldenRule {
+  window: Window;
+  /** Cross section with exchange, angstrom²/sr; null for distinct particles or where it diverges. */
+  withExchange: number | null;
+}
+
+export interface FirstBornResult {
+  differential: { frame: 'cm'; points: CmPoint[] } | { frame: 'lab'; points: LabPoint[] };
+  integrals: CrossSections;
+}
+
+/** What the engine answers, in internal units throughout. */
+export interface EstimateResult {
+  problem: Problem;
+  potential: PotentialCurve;
+  firstBorn: FirstBornResult | null;
+  /** Null where the matrix element diverges. */
+  goldenRule: GoldenRuleSheet | null;
+  goldenRuleTheta: number;
+  assessment: Assessment;
+}
+
+export const RANGES_IN_A_BOX = 1000;
+
+const isActive = ({ strength }: { strength: { re: number; im: number } }) =>
+  strength.re !== 0 || strength.im !== 0;
+
+/** Lengths that decide how finely amplitudes are sampled. */
+export function scalesOf({ terms }: Pick<Problem, 'terms'>): Scales {
+  const active = terms.filter(isActive);
+  return {
+    range: Math.max(0, ...active.map((term) => term.range ?? 0)),
+    edge: Math.max(0, ...active.flatMap((term) => term.breakpoints)),
+    terms: Math.max(1, active.length),
+  };
+}
+
+/** The middle angle in the centre of mass; a lab angle by its forward branch. */
+function middleAngle({ angles, frame, collision }: Problem): number {
+  const middle = angles[(angles.length - 1) >> 1] ?? Math.PI / 2;
+  if (frame === 'cm') return middle;
+  return labToCm(middle, collision.frame)[0]?.thetaCm ?? middle;
+}
+
+function differential(problem: Problem, born: FirstBorn): FirstBornResult['differential'] {
+  const { angles, frame, exchangeSpin, collision } = problem;
+  const input = { born, k: collision.k, exchangeSpin };
+  if (frame === 'cm') return { frame, points: angles.map((theta) => cmPoint(input, theta)) };
+  return { frame, points: angles.map((theta) => labPoint(input, collision.frame, theta)) };
+}
+
+function exchangedDcs(problem: Problem, born: FirstBorn, theta: number): number | null {
+  if (problem.exchangeSpin === null) return null;
+  const { k } = problem.collision;
+  const direct = born.amplitude(2 * k * Math.sin(theta / 2));
+  const exchanged = born.amplitude(theta === Math.PI ? 0 : 2 * k * Math.cos(theta / 2));
+  if (direct === null || exchanged === null) return null;
+  return exchangeDcs(direct, exchanged, problem.exchangeSpin).value;
+}
+
+function goldenRuleSheet(
+  problem: Problem,
+  born: FirstBorn,
+  theta: number,
+  { range }: Scales,
+  samples: ConeSamples | null,
+): GoldenRuleSheet | null {
+  const { terms, collision, goldenRule: asked } = problem;
+  const hasTail = born.tail.re !== 0 || born.tail.im !== 0;
+  if (hasTail && theta === 0) return null;
+  const box = asked.boxSide ?? (range > 0 ? RANGES_IN_A_BOX * range : asked.boxWithoutRange);
+  const sheet = goldenRule(terms, collision, theta, box);
+  if (sheet === null) return null;
+  const window = goldenRuleWindow({
+    theta,
+    k: collision.k,
+    energyCm: collision.energyCm,
+    finalState: finalStates(problem.projectile.mass, problem.target.mass, problem),
+    strength: (q) => {
+      const f = born.amplitude(q);
+      return f === null ? null : f.re * f.re + f.im * f.im;
+    },
+    range,
+    totalRate: samples === null ? null : 8 * Math.PI * samples.moments[0] * sheet.flux,
+  });
+  return { ...sheet, window, withExchange: exchangedDcs(problem, born, theta) };
+}
+
+/**
+ * One estimate: amplitudes, observables, golden-rule sheet and verdict of a problem, by pure composition.
+ *
+ * @param problem in internal units
+ * @returns everything in internal units, each number with its error
+ * @throws DomainError('tooMuchWork') where the input cannot be computed to a millionth of itself or within reason,
+ *   DomainError('invalidInput') for a box that leaves double precision
+ */
+export function estimate(problem: Problem): EstimateResult {
+  const { terms, collision, exchangeSpin } = problem;
+  const { k, twoMuOverHbar2 } = collision;
+  const born = firstBorn(terms, twoMuOverHbar2);
+  const scales = scalesOf(problem);
+  const hasTail = born.tail.re !== 0 || born.tail.im !== 0;
+  const samples = hasTail ? null : sampleCone((q) => born.shortRange(q), k, scales);
+  const theta = problem.goldenRule.theta ?? middleAngle(problem);
+  return {
+    problem,
+    potential: potentialCurve(terms, collision.wavelength),
+    firstBorn: problem.wantsFirstBorn
+      ? {
+          differential: differential(problem, born),
+          integrals: crossSections({ born, k, scales, samples, exchangeSpin }),
+        }
+      : null,
+    goldenRule: goldenRuleSheet(problem, born, theta, scales, samples),
+    goldenRuleTheta: theta,
+    assessment: assess({ terms, born, k, twoMuOverHbar2, scales, samples }),
+  };
+}

@@ -1,0 +1,165 @@
+import type { FirstBorn } from '#server/physics/methods/born1.ts';
+import type { Term } from '#server/physics/potentials/types.ts';
+import { largestBornPhase } from './born-phases.ts';
+import type { ConeSamples, Scales } from './cone-samples.ts';
+import { sampleCone } from './cone-samples.ts';
+
+export type CriterionName = 'unitarity' | 'secondOrder' | 'slow' | 'fast' | 'eta';
+
+export interface Criterion {
+  name: CriterionName;
+  value: number;
+  /** In words: what the number is. */
+  meaning: string;
+}
+
+export type Verdict = 'sound' | 'usable' | 'notValid' | 'unassessed';
+
+export interface Assessment {
+  verdict: Verdict;
+  criteria: (Criterion & { decides: boolean; limits: { sound: number; usable: number } })[];
+  /** Why nothing could be judged. */
+  reason: string | null;
+}
+
+export interface AssessInput {
+  terms: readonly Term[];
+  born: FirstBorn;
+  k: number;
+  twoMuOverHbar2: number;
+  scales: Scales;
+  /** Samples of the short-range amplitude where they are at hand already. */
+  samples: ConeSamples | null;
+}
+
+/** Below the first the approximation is sound, below the second usable. */
+export const LIMITS = { sound: 0.1, usable: 1 } as const;
+
+const isShortRange = (term: Term) => !(term.tail === 'coulomb' && term.norm === 0);
+const isActive = ({ strength }: Term) => strength.re !== 0 || strength.im !== 0;
+
+function eta({ born, k }: AssessInput): Criterion | null {
+  const value = Math.hypot(born.tail.re, born.tail.im) / (2 * k);
+  if (value === 0) return null;
+  return {
+    name: 'eta',
+    value,
+    meaning:
+      "Sommerfeld's parameter |Z1 Z2| alpha c/v of the Coulomb tail. Above one the waves are far from plane; the first-order cross section of two bare, distinct point charges nevertheless equals the exact one.",
+  };
+}
+
+function unitarity(samples: ConeSamples, range: number): Criterion {
+  const { value, l, lMax } = largestBornPhase(samples, range);
+  return {
+    name: 'unitarity',
+    value,
+    meaning: `Largest first-order partial-wave amplitude |T_l|, at l = ${l} of those up to ${lMax}; the conservation of particles allows at most 1.`,
+  };
+}
+
+function secondOrder({ born, k }: AssessInput, samples: ConeSamples): Criterion | null {
+  const forward = born.shortRange(0);
+  const size = Math.hypot(forward.re, forward.im);
+  if (!(size > forward.error) || !(size > born.floor)) return null;
+  const elastic = 8 * Math.PI * samples.moments[0];
+  return {
+    name: 'secondOrder',
+    value: (k * elastic) / (4 * Math.PI * size),
+    meaning:
+      'Imaginary part of the second-order forward amplitude, which the first-order cross section fixes, as a fraction of the first-order one.',
+  };
+}
+
+/** Modulus of Σ strength · part over the terms that have such a part; null if none has. */
+function weighted(terms: readonly Term[], part: (term: Term) => number | null): number | null {
+  let re = 0;
+  let im = 0;
+  let found = false;
+  for (const term of terms) {
+    const value = part(term);
+    if (value === null) continue;
+    found = true;
+    re += term.strength.re * value;
+    im += term.strength.im * value;
+  }
+  return found ? Math.hypot(re, im) : null;
+}
+
+function strengthAtSpeed(input: AssessInput, terms: readonly Term[]): Criterion | null {
+  const { k, twoMuOverHbar2, scales } = input;
+  if (!(scales.range > 0)) return null;
+  if (k * scales.range < 1) {
+    const moment = weighted(terms, (term) => term.firstMoment);
+    if (moment === null) return null;
+    return {
+      name: 'slow',
+      value: twoMuOverHbar2 * moment,
+      meaning:
+        'Slow particles (k times the range below 1): (2 mu/hbar²) |∫ r V dr|, the wave at the centre changed by the potential.',
+    };
+  }
+  const line = weighted(terms, (term) => term.lineIntegral(1 / k));
+  if (line === null) return null;
+  return {
+    name: 'fast',
+    value: (twoMuOverHbar2 * line) / (2 * k),
+    meaning:
+      'Fast particles (k times the range above 1): |∫ V dr|/(hbar v) from r = 1/k outwards, the phase gathered on the way through.',
+  };
+}
+
+function shortRangeCriteria(input: AssessInput): (Criterion | null)[] {
+  const { terms, born, k, scales } = input;
+  const rest = terms.filter((term) => isActive(term) && isShortRange(term));
+  if (rest.length === 0) return [];
+  const samples = input.samples ?? sampleCone((q) => born.shortRange(q), k, scales);
+  return [
+    unitarity(samples, Math.max(scales.range, scales.edge)),
+    secondOrder(input, samples),
+    strengthAtSpeed(input, rest),
+  ];
+}
+
+function nothingThere(): Criterion {
+  return {
+    name: 'unitarity',
+    value: 0,
+    meaning: 'The interaction has no strength: nothing is left out.',
+  };
+}
+
+/**
+ * Is the first Born approximation to be trusted? Criteria, each with its number, and the verdict of the worst of them.
+ *
+ * Formula: max |T_l|; k sigma/(4 pi |f1(0)|); (2 mu/hbar²) |∫ r V dr| where k times the range is below one, else
+ * |∫_{1/k}^∞ V dr|/(hbar v); Sommerfeld's eta for a Coulomb tail, the others then judge what the tail leaves.
+ *
+ * @returns sound below 0.1, usable below 1, notValid above; unassessed with the reason where no criterion applies
+ *
+ * Validity: orders of magnitude, not error bars; an exact calculation overrules them.
+ *
+ * Source: textbook; e.g. L. I. Schiff, Quantum Mechanics, 3rd ed. (1968), sec. 38.
+ */
+export function assess(input: AssessInput): Assessment {
+  const found = input.terms.some(isActive)
+    ? [eta(input), ...shortRangeCriteria(input)]
+    : [nothingThere()];
+  const criteria = found.filter(
+    (entry): entry is Criterion => entry !== null && Number.isFinite(entry.value),
+  );
+  const worst = Math.max(...criteria.map(({ value }) => value));
+  if (criteria.length === 0) {
+    return {
+      verdict: 'unassessed',
+      criteria: [],
+      reason: 'None of the criteria applies to this interaction.',
+    };
+  }
+  const deciding = criteria.findIndex(({ value }) => value === worst);
+  return {
+    verdict: worst < LIMITS.sound ? 'sound' : worst < LIMITS.usable ? 'usable' : 'notValid',
+    criteria: criteria.map((entry, i) => ({ ...entry, limits: LIMITS, decides: i === deciding })),
+    reason: null,
+  };
+}

@@ -1,0 +1,56 @@
+import type { FirstBorn } from '#server/physics/methods/born1.ts';
+import { exchangeWeight } from '#server/physics/methods/exchange.ts';
+import type { ConeSamples, Scales } from './cone-samples.ts';
+import type { Computed, CrossSections } from './integrals.ts';
+import { DIVERGENCES, absorption, directIntegrals, exchangeIntegrals, sumOf } from './integrals.ts';
+
+export interface CrossSectionInput {
+  born: FirstBorn;
+  k: number;
+  scales: Scales;
+  /** Null where the interaction has a Coulomb tail: there is nothing to integrate then. */
+  samples: ConeSamples | null;
+  /** Spin of identical particles; null for distinct ones. */
+  exchangeSpin: number | null;
+}
+
+const plus = (a: Computed, b: Computed): Computed => ({
+  value: Math.max(0, a.value + b.value),
+  error: a.error + b.error,
+});
+
+/**
+ * Elastic, absorption, total, momentum-transfer and viscosity cross section, angstrom², or why there is none.
+ *
+ * Integrals and their weights use the centre-of-mass angle. For identical particles dσ/dΩ counts both, so half of the
+ * sphere's integral is taken for every one of them; the momentum-transfer weight then averages to one.
+ */
+export function crossSections(input: CrossSectionInput): CrossSections {
+  const { born, k, samples } = input;
+  const removed = absorption(born, k);
+  if (samples === null) {
+    return {
+      elastic: { divergent: DIVERGENCES.elastic },
+      absorption: removed,
+      total: { divergent: DIVERGENCES.total },
+      momentumTransfer: { divergent: DIVERGENCES.momentumTransfer },
+      viscosity: { divergent: DIVERGENCES.viscosity },
+    };
+  }
+  const [elastic, momentumTransfer, viscosity] = angular(input, samples);
+  const total = sumOf(elastic, removed);
+  return { elastic, absorption: removed, total, momentumTransfer, viscosity };
+}
+
+function angular(
+  { born, k, scales, exchangeSpin }: CrossSectionInput,
+  samples: ConeSamples,
+): [Computed, Computed, Computed] {
+  const [elastic, momentumTransfer, viscosity] = directIntegrals(samples);
+  if (exchangeSpin === null) return [elastic, momentumTransfer, viscosity];
+  const weight = exchangeWeight(exchangeSpin);
+  const f = (q: number) => born.shortRange(q, 0);
+  const [more, moreViscosity] = exchangeIntegrals(f, k, scales, weight);
+  const collisions = plus(elastic, more);
+  return [collisions, collisions, plus(viscosity, moreViscosity)];
+}

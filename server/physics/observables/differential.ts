@@ -1,0 +1,119 @@
+import type { Amplitude, FirstBorn } from '#server/physics/methods/born1.ts';
+import { exchangeDcs } from '#server/physics/methods/exchange.ts';
+import type { Frame } from '#server/physics/kinematics/frames.ts';
+import { labToCm } from '#server/physics/kinematics/frames.ts';
+import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
+import { DomainError } from '#shared/errors.ts';
+
+export interface DifferentialInput {
+  born: FirstBorn;
+  k: number;
+  /** Spin of identical particles; null for distinct ones. */
+  exchangeSpin: number | null;
+}
+
+/** Cross section at one centre-of-mass angle; lengths in angstrom. */
+export interface CmPoint {
+  thetaCm: number;
+  q: number;
+  /** The direct amplitude; null where it diverges. */
+  amplitude: Amplitude | null;
+  /** angstrom²/sr, with a bound of its error; null where it diverges. */
+  dcs: { value: number; error: number; belowFloor: boolean } | null;
+}
+
+/** Cross section at one lab angle: none, one or two ways to get there. */
+export interface LabPoint {
+  branches: CmPoint[];
+  /** Why there is no cross section at all; null where there is one. */
+  reason: string | null;
+}
+
+export const FORWARD_DIVERGENCE =
+  'The cross section of a 1/r potential diverges in the forward direction.';
+const EXCHANGED_DIVERGENCE =
+  'The exchanged amplitude of a 1/r potential diverges where the partner goes forward.';
+/** Angles and the edge of a cone are known to a few roundings. */
+const ANGLE_ROUNDING = 8 * UNIT_ROUNDOFF;
+const PROBE = 2 ** -24;
+
+/** An amplitude that is neither good to 1e-6 nor lost in the floor is refused: no silent wrong number. */
+function refuseCoarse(amplitude: Amplitude, floor: number): void {
+  const size = Math.hypot(amplitude.re, amplitude.im);
+  if (amplitude.error <= Math.max(1e-6 * size, floor)) return;
+  throw new DomainError(
+    'tooMuchWork',
+    'The amplitude cannot be computed to a millionth of itself: the product of wave number and range is too large for double precision. Lower the energy or the range, or check their units.',
+  );
+}
+
+export function reasonAt({ amplitude }: CmPoint): string {
+  return amplitude === null ? FORWARD_DIVERGENCE : EXCHANGED_DIVERGENCE;
+}
+
+/**
+ * dσ/dΩ at one angle of the centre of mass.
+ *
+ * Formula: |f(q)|², q = 2k sin(theta/2); for identical particles with the exchanged amplitude at 2k cos(theta/2).
+ *
+ * @param thetaCm rad, 0 to pi
+ * @param blur relative error of q beyond rounding
+ * @returns angstrom²/sr with a bound of its error, or null where a Coulomb tail diverges
+ * @throws DomainError('tooMuchWork') where the amplitude is neither good to 1e-6 nor below the floor
+ */
+export function cmPoint(input: DifferentialInput, thetaCm: number, blur = 0): CmPoint {
+  const { born, k, exchangeSpin } = input;
+  const q = 2 * k * Math.sin(thetaCm / 2);
+  const amplitude = born.amplitude(q, blur);
+  if (amplitude === null) return { thetaCm, q, amplitude, dcs: null };
+  refuseCoarse(amplitude, born.floor);
+  if (exchangeSpin === null) {
+    const size = Math.hypot(amplitude.re, amplitude.im);
+    const value = amplitude.re * amplitude.re + amplitude.im * amplitude.im;
+    const error = (2 * size + amplitude.error) * amplitude.error + 3 * UNIT_ROUNDOFF * value;
+    return { thetaCm, q, amplitude, dcs: { value, error, belowFloor: size <= born.floor } };
+  }
+  // At pi the partner goes forward: exactly 0, not the rounding of a cosine.
+  const exchanged = born.amplitude(thetaCm === Math.PI ? 0 : 2 * k * Math.cos(thetaCm / 2), blur);
+  if (exchanged === null) return { thetaCm, q, amplitude, dcs: null };
+  refuseCoarse(exchanged, born.floor);
+  const { value, error } = exchangeDcs(amplitude, exchanged, exchangeSpin);
+  return { thetaCm, q, amplitude, dcs: { value, error, belowFloor: value <= born.floor ** 2 } };
+}
+
+/**
+ * dσ/dΩ at one lab angle, branch by branch.
+ *
+ * Formula: dσ/dΩ_lab = dσ/dΩ_cm · dΩ_cm/dΩ_lab for each centre-of-mass angle that leads there.
+ *
+ * @param thetaLab rad, 0 to pi
+ * @returns branches, forward one first, each with q and amplitude of the centre of mass and the cross section of the lab;
+ *   none, with the reason, where the projectile cannot go
+ */
+export function labPoint(input: DifferentialInput, frame: Frame, thetaLab: number): LabPoint {
+  const found = labToCm(thetaLab, frame);
+  if (found.length === 0) return { branches: [], reason: outsideCone(frame) };
+  const beside = labToCm(thetaLab * (1 - PROBE), frame);
+  const branches = found.map(({ thetaCm, jacobian }, i) => {
+    const near = beside[i] ?? { thetaCm, jacobian };
+    const turn = (Math.abs(thetaCm - near.thetaCm) / PROBE) * ANGLE_ROUNDING;
+    const angleError = turn + 4 * UNIT_ROUNDOFF * thetaCm;
+    const stretch = (Math.abs(1 - near.jacobian / jacobian) / PROBE) * ANGLE_ROUNDING;
+    const blur = thetaCm > 0 ? angleError / (2 * Math.tan(thetaCm / 2)) : 0;
+    const point = cmPoint(input, thetaCm, Math.abs(blur));
+    const { dcs } = point;
+    if (dcs === null) return point;
+    const value = dcs.value * jacobian;
+    const relative = Number.isFinite(stretch) ? stretch + 8 * UNIT_ROUNDOFF : 8 * UNIT_ROUNDOFF;
+    return { ...point, dcs: { ...dcs, value, error: dcs.error * jacobian + value * relative } };
+  });
+  return { branches, reason: null };
+}
+
+function outsideCone({ rhoMinusOne, thetaMax }: Frame): string {
+  if (rhoMinusOne === 0) {
+    return 'A particle that meets one of its own mass is never scattered to 90 degrees or beyond in the lab.';
+  }
+  const degrees = (thetaMax * 180) / Math.PI;
+  return `The projectile is heavier than its target and never leaves a cone of ${degrees.toPrecision(6)} degrees in the lab; on its edge the cross section diverges.`;
+}

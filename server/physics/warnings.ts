@@ -1,0 +1,219 @@
+import { COULOMB_EV_ANGSTROM, BOHR } from './constants/codata2022.ts';
+import type { EstimateResult } from './estimate.ts';
+import { scalesOf } from './estimate.ts';
+import { twoBody } from './kinematics/two-body.ts';
+import type { Term } from './potentials/types.ts';
+import type { Problem } from './problem.ts';
+
+/** A caution in the words of the trade that says what to do; `info` where nothing is wrong. */
+export interface Warning {
+  code: string;
+  message: string;
+  level: 'caution' | 'info';
+  path?: string;
+}
+
+const FERMI = 1e-5;
+const DEGREE = Math.PI / 180;
+const ELECTROSTATIC = ['coulomb', 'screenedCoulomb'];
+const TEN_RANGES = 10;
+const FAST = 0.1;
+
+const percent = (fraction: number) => `${(100 * fraction).toPrecision(2)} %`;
+const degrees = (radians: number) => `${(radians / DEGREE).toPrecision(3)} degrees`;
+const isActive = ({ strength }: Term) => strength.re !== 0 || strength.im !== 0;
+
+function chargeForms({ terms }: Problem): Term[] {
+  return terms.filter(({ form }) => ELECTROSTATIC.includes(form));
+}
+
+/** Strength of all bare tails, eV angstrom: the charge product times e². */
+function tailOf({ terms }: Problem): number {
+  return terms.reduce((sum, { strength, coulombTail }) => sum + strength.re * coulombTail, 0);
+}
+
+function coulombTotal({ problem }: EstimateResult): Warning | null {
+  if (tailOf(problem) === 0) return null;
+  return {
+    code: 'coulombTotalDiverges',
+    level: 'info',
+    message:
+      'Integrals over all angles diverge for a bare 1/r potential. For a finite total use screenedCoulomb, or integrate the curve over the angles your detector sees.',
+    path: '/interaction/terms',
+  };
+}
+
+function exchangePhase({ problem }: EstimateResult): Warning | null {
+  if (problem.exchangeSpin === null || tailOf(problem) === 0) return null;
+  return {
+    code: 'coulombPhaseMissing',
+    level: 'caution',
+    message:
+      'First-order Coulomb amplitudes lack the phase eta ln sin²(theta/2), so the interference of the two identical particles is not that of the published (Mott) values. Trust the sum of the two directions, not its oscillation.',
+  };
+}
+
+function spinFactor({ problem }: EstimateResult): Warning | null {
+  const { projectile, regime, collision } = problem;
+  const charged = chargeForms(problem).some(isActive);
+  if (projectile.kind !== 'lepton' || regime !== 'relativistic' || !charged) return null;
+  const square = collision.betaLab ** 2;
+  return {
+    code: 'spinFactorMissing',
+    level: 'caution',
+    message: `The spin of the lepton is not in these numbers. Multiply dσ/dΩ by 1 − β² sin²(θ/2): ${(1 - square / 2).toPrecision(6)} at 90 degrees, ${(1 - square).toPrecision(6)} at 180 degrees (fixed or heavy target).`,
+  };
+}
+
+function noCharge({ problem }: EstimateResult): Warning | null {
+  const neutral = chargeForms(problem).find((term) => !isActive(term));
+  if (!neutral) return null;
+  return {
+    code: 'noCharge',
+    level: 'caution',
+    message: `The ${neutral.form} term has no strength, because projectile or target has no charge. Give the target its charge, or the term a chargeProduct.`,
+    path: '/interaction/terms',
+  };
+}
+
+function smallBox({ goldenRule, problem }: EstimateResult): Warning | null {
+  const { range } = scalesOf(problem);
+  if (goldenRule === null || !(goldenRule.boxSide < TEN_RANGES * range)) return null;
+  return {
+    code: 'boxTooSmall',
+    level: 'caution',
+    message: `The box is ${(goldenRule.boxSide / range).toPrecision(3)} ranges wide; the golden rule wants at least ten, so that the potential lies inside and momentum is nearly continuous.`,
+    path: '/goldenRule/boxSide',
+  };
+}
+
+/** Thomas-Fermi length of the electrons, angstrom. */
+const screeningLength = (charge: number) => (0.88534 * BOHR) / Math.cbrt(charge);
+
+function screening({ problem }: EstimateResult): Warning | null {
+  const { target, projectile, collision } = problem;
+  if (tailOf(problem) === 0 || projectile.charge === 0) return null;
+  if (target.massNumber === null || !(target.charge > 1)) return null;
+  const sine = 1 / (2 * collision.k * screeningLength(target.charge));
+  const where =
+    sine < 1 ? `below about ${degrees(2 * Math.asin(sine))} (centre of mass)` : 'at every angle';
+  return {
+    code: 'screeningLeftOut',
+    level: 'caution',
+    message: `The electrons of the atom are left out by a bare Coulomb potential. They matter ${where}; add their screening with screenedCoulomb (a about ${screeningLength(target.charge).toPrecision(3)} angstrom).`,
+    path: '/interaction/terms',
+  };
+}
+
+const radiusOf = (massNumber: number) => 1.2 * Math.cbrt(massNumber) * FERMI;
+
+/** Ions that come within the range of nuclear forces: head-on distance against the radii and three fermi. */
+function nuclearContact({ problem }: EstimateResult): Warning | null {
+  const { projectile, target, collision } = problem;
+  const product = projectile.charge * target.charge;
+  if (!chargeForms(problem).some(isActive) || projectile.kind !== 'hadron' || product === 0) {
+    return null;
+  }
+  if (projectile.massNumber === null || target.massNumber === null) return null;
+  const touching = radiusOf(projectile.massNumber) + radiusOf(target.massNumber) + 3 * FERMI;
+  const headOn = (product * COULOMB_EV_ANGSTROM) / collision.energyCm;
+  if (headOn > touching) return null;
+  const sine = 1 / ((2 * touching) / headOn - 1);
+  return {
+    code: 'nuclearForces',
+    level: 'caution',
+    message: `A head-on collision brings the nuclei to ${(headOn / FERMI).toPrecision(3)} fm, within reach of nuclear forces (${(touching / FERMI).toPrecision(3)} fm, radii and 3 fm). A Coulomb potential alone will not do beyond about ${degrees(2 * Math.asin(Math.min(1, sine)))} (centre of mass).`,
+  };
+}
+
+/** Leptons whose wave resolves the nucleus. */
+function finiteNucleus({ problem }: EstimateResult): Warning | null {
+  const { projectile, target, collision } = problem;
+  if (projectile.kind !== 'lepton' || target.massNumber === null || tailOf(problem) === 0) {
+    return null;
+  }
+  const largest = 2 * collision.k * radiusOf(target.massNumber);
+  if (!(largest > 0.5)) return null;
+  return {
+    code: 'pointNucleus',
+    level: 'caution',
+    message: `The nucleus is taken as a point, but q times its radius reaches ${largest.toPrecision(3)}: its form factor lowers the cross section at large angles.`,
+    path: '/interaction/terms',
+  };
+}
+
+function slowKinematics({ problem }: EstimateResult): Warning | null {
+  const { regime, projectile, target, energy, collision } = problem;
+  if (regime === 'relativistic') return null;
+  const exact = twoBody({
+    projectileMass: projectile.mass,
+    targetMass: target.mass,
+    energy,
+    regime: 'relativistic',
+  });
+  if (!(exact.betaLab > FAST)) return null;
+  const point = (c: { reducedMass: number; k: number }) => (c.reducedMass / c.k ** 2) ** 2;
+  const change = point(exact) / point(collision) - 1;
+  return {
+    code: 'nonrelativisticKinematics',
+    level: 'caution',
+    message: `The projectile moves at ${exact.betaLab.toPrecision(3)} c. Without relativity the wave number is ${percent(Math.abs(exact.k / collision.k - 1))} too small and a point-charge cross section ${percent(Math.abs(change))} too ${change > 0 ? 'small' : 'large'}; choose relativistic kinematics.`,
+    path: '/kinematics',
+  };
+}
+
+function boundLength({ problem }: EstimateResult): Warning | null {
+  const { terms, target, projectile } = problem;
+  if (!terms.some(({ form }) => form === 'contact') || target.mass === Infinity) return null;
+  const factor = target.mass / (projectile.mass + target.mass);
+  return {
+    code: 'freeLength',
+    level: 'info',
+    message: `The target recoils, so b is taken as the free scattering length. Tables list bound ones: multiply those by ${factor.toPrecision(6)}.`,
+    path: '/interaction/terms',
+  };
+}
+
+function notDrawn({ potential }: EstimateResult): Warning | null {
+  if ('unavailable' in potential || potential.note === null) return null;
+  return { code: 'potentialIncomplete', level: 'info', message: potential.note };
+}
+
+function identicalIntegrals({ problem }: EstimateResult): Warning | null {
+  if (problem.exchangeSpin === null) return null;
+  return {
+    code: 'identicalParticles',
+    level: 'info',
+    message:
+      'Projectile and target are identical: dσ/dΩ counts both, and every integral is half of that over the sphere, so that it counts collisions.',
+  };
+}
+
+function elasticOnly(): Warning {
+  return {
+    code: 'elasticOnly',
+    level: 'info',
+    message:
+      'Elastic scattering only: inelastic and reaction channels are not part of these numbers.',
+  };
+}
+
+/** Cautions about a result, few and in order of weight; codes are stable. */
+export function warningsOf(result: EstimateResult): Warning[] {
+  const found = [
+    nuclearContact(result),
+    slowKinematics(result),
+    spinFactor(result),
+    finiteNucleus(result),
+    exchangePhase(result),
+    noCharge(result),
+    screening(result),
+    smallBox(result),
+    coulombTotal(result),
+    boundLength(result),
+    identicalIntegrals(result),
+    notDrawn(result),
+    elasticOnly(),
+  ];
+  return found.filter((warning) => warning !== null);
+}
