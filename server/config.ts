@@ -35,7 +35,7 @@ const environmentSchema = z.object({
   SMTP_URL: optional.optional(),
   CLIENT_DIR: z.string().default('dist/client'),
   STOP_WITH_STDIN: flag.default('0'),
-  LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent']).default('info'),
+  LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent']).optional(),
 });
 
 /** What the application (not the process around it) is configured by. */
@@ -64,6 +64,7 @@ export interface ServerConfig extends Omit<AppConfig, 'signingKey'> {
   migrationDatabaseUrl: string | undefined;
   secretsFile: string;
   stopWithStdin: boolean;
+  /** Without one: what a terminal or a log needs. */
   logLevel: z.output<typeof environmentSchema>['LOG_LEVEL'];
 }
 

@@ -24,6 +24,8 @@ export function ormConfig({ databaseUrl, ownerUrl, poolSize = 10 }: OrmOptions) 
     entities: ENTITIES,
     extensions: [Migrator],
     ensureDatabase: false,
+    // The first query connects: a database that is away for a moment does not keep the server from starting.
+    connect: false,
     discovery: { warnWhenNoEntities: false, requireEntitiesArray: true },
     pool: { min: 0, max: poolSize, acquireTimeoutMillis: 10_000 },
     driverOptions: {

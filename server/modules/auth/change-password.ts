@@ -2,6 +2,7 @@ import type { z } from 'zod';
 import type { changePasswordSchema } from '#shared/contracts/auth.ts';
 import { DomainError } from '#shared/errors.ts';
 import type { VerbContext } from '#server/http/context.ts';
+import { checkPassword } from '#server/modules/users/check-password.ts';
 import { findAccount } from '#server/modules/users/find-account.ts';
 import { setPasswordHash } from '#server/modules/users/set-password-hash.ts';
 import { recordTrail } from '#server/trail/record-trail.ts';
@@ -21,6 +22,7 @@ export async function changePassword(
   { address, passwordCost }: Around,
 ): Promise<void> {
   if (actor.demo) throw new DomainError('forbidden', 'The demo accounts keep their password.');
+  checkPassword(given.newPassword, actor.email, '/newPassword');
   const attempt = { email: actor.email, address };
   const passwordHash = await inTurn(async () => {
     await checkThrottle(em, attempt, now);

@@ -12,7 +12,7 @@ type CookieContext = Pick<RequestContext, 'config' | 'now' | 'addCookie'>;
 
 export function isLive(session: Session, now: Date): boolean {
   return (
-    session.endedAt === null &&
+    !session.endedAt &&
     now.getTime() - session.lastSeenAt.getTime() < IDLE_MILLISECONDS &&
     now.getTime() - session.createdAt.getTime() < LONGEST_MILLISECONDS
   );

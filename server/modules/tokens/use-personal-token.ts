@@ -10,9 +10,9 @@ export async function usePersonalToken(
   secret: string,
 ): Promise<PersonalToken | undefined> {
   const token = await em.findOne(PersonalToken, { tokenHash: hashSecret(secret) });
-  if (!token || token.revokedAt !== null || token.expiresAt <= now) return undefined;
+  if (!token || token.revokedAt || token.expiresAt <= now) return undefined;
   const recently = new Date(now.getTime() - USED_EVERY_MILLISECONDS);
-  if (token.lastUsedAt === null || token.lastUsedAt < recently) {
+  if (!token.lastUsedAt || token.lastUsedAt < recently) {
     await em.nativeUpdate(PersonalToken, { id: token.id }, { lastUsedAt: now });
   }
   return token;

@@ -7,6 +7,7 @@ import { hashPassword, inTurn } from '#server/modules/auth/passwords.ts';
 import { recordTrail } from '#server/trail/record-trail.ts';
 import type { TrailActor } from '#server/trail/record-trail.ts';
 import { Account } from './account.entity.ts';
+import { checkPassword } from './check-password.ts';
 import { findAccountByEmail } from './find-account.ts';
 
 export interface CreateUserContext {
@@ -21,6 +22,7 @@ export async function createUser(
   { em, actor, now, passwordCost }: CreateUserContext,
   input: z.output<typeof createUserSchema> & { demo?: boolean },
 ): Promise<Account> {
+  if (input.demo !== true) checkPassword(input.password, input.email);
   const passwordHash = await inTurn(() => hashPassword(input.password, passwordCost));
   return em.transactional(async (tx) => {
     if (await findAccountByEmail(tx, input.email)) {

@@ -10,6 +10,7 @@ import { forgiveFailures } from '#server/modules/auth/throttle.ts';
 import { revokeTokensOf } from '#server/modules/tokens/revoke-tokens.ts';
 import { recordTrail } from '#server/trail/record-trail.ts';
 import { Account } from './account.entity.ts';
+import { checkPassword } from './check-password.ts';
 
 type Changes = z.output<typeof updateUserSchema>;
 type Config = Pick<AppConfig, 'passwordCost' | 'demoAccountsOpen'>;
@@ -44,6 +45,7 @@ function passwordOf(account: Account, changes: Changes, cost: number): Promise<s
   if (changes.password === undefined) return undefined;
   if (account.demo) throw new DomainError('forbidden', 'The demo accounts keep their password.');
   const { password } = changes;
+  checkPassword(password, account.email);
   return inTurn(() => hashPassword(password, cost));
 }
 
