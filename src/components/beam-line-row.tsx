@@ -18,10 +18,12 @@ export function BeamLineRow({ summary }: BeamLineRowProps) {
     <ul className="flex flex-wrap items-center gap-y-1 text-sm text-muted">
       {stations.map((station, index) => (
         <li key={station} className="flex min-w-0 items-center">
-          {index > 0 && <span aria-hidden="true" className="mx-2 h-px w-4 bg-barn/50 sm:w-6" />}
           <StationGlyph station={station} className="mr-1.5 size-4 shrink-0 text-barn" />
           <span className="sr-only">{LABELS[station]}: </span>
           <span className="min-w-0">{summary[station]}</span>
+          {index < stations.length - 1 && (
+            <span aria-hidden="true" className="mx-2 h-px w-4 shrink-0 bg-barn/50 sm:w-6" />
+          )}
         </li>
       ))}
     </ul>

@@ -10,7 +10,7 @@ export function CaseLine({ item }: { item: CaseListItem }) {
     <div className="flex flex-col gap-1 py-3">
       <div className="flex flex-wrap items-baseline justify-between gap-x-4 gap-y-1">
         <Link to={`/cases/${item.id}`} className="min-w-0 rounded font-semibold hover:underline">
-          <span className="mr-2 font-mono font-normal text-muted">{item.number}</span>
+          <span className="mr-2 font-mono text-sm font-normal text-muted">{item.number}</span>
           {item.title}
         </Link>
         <span className="flex items-center gap-3 text-sm text-muted">

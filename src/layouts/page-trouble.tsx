@@ -2,7 +2,7 @@ import { isRouteErrorResponse, useRouteError } from 'react-router-dom';
 import { Button, ButtonLink } from '#src/components/button.tsx';
 import { Notice } from '#src/components/notice.tsx';
 import { PageTitle } from '#src/components/page-title.tsx';
-import { NotFoundPage } from './not-found-page.tsx';
+import { NotFound } from '#src/components/not-found.tsx';
 
 function isStaleBuild(error: unknown): boolean {
   return error instanceof TypeError && /import|module/i.test(error.message);
@@ -11,7 +11,7 @@ function isStaleBuild(error: unknown): boolean {
 /** Where a page breaks: what happened, what was kept, what to do. */
 export function PageTrouble() {
   const error = useRouteError();
-  if (isRouteErrorResponse(error) && error.status === 404) return <NotFoundPage />;
+  if (isRouteErrorResponse(error) && error.status === 404) return <NotFound />;
   const stale = isStaleBuild(error);
   const reload = () => window.location.reload();
   return (

@@ -3,6 +3,7 @@ import { NavLink } from 'react-router-dom';
 import type { Session } from '#shared/contracts/auth.ts';
 import { classNames } from '#src/lib/class-names.ts';
 import { mayEver } from '#src/lib/session.ts';
+import { Brand } from './brand.tsx';
 
 interface Room {
   to: string;
@@ -39,11 +40,25 @@ function RoomLink({ room, onWalk }: { room: Room; onWalk: (() => void) | undefin
 }
 
 /** The rooms this person can enter; one that is not built, or not theirs, is not in the menu. */
-export function Rooms({ session, onWalk }: { session: Session; onWalk?: () => void }) {
+export function Rooms({
+  session,
+  brand = false,
+  onWalk,
+}: {
+  session: Session;
+  /** Head the rooms with the mark. */
+  brand?: boolean;
+  onWalk?: () => void;
+}) {
   const research = mayEver(session, 'case.list') ? [DESK, CASES] : [];
   const admin = mayEver(session, 'user.list') ? [PEOPLE] : [];
   return (
     <nav aria-label="Rooms" className="flex flex-1 flex-col gap-4">
+      {brand && (
+        <div className="px-1.5 pb-2">
+          <Brand />
+        </div>
+      )}
       {research.length > 0 && (
         <ul className="flex flex-col gap-0.5">
           {research.map((room) => (

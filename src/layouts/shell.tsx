@@ -36,13 +36,14 @@ function useKeys(session: Session, showKeys: () => void) {
 
 function DemoBanner() {
   return (
-    <p
+    <aside
+      aria-label="Demo"
       data-screen-only
       className="border-b border-line bg-straw-soft px-4 py-1 text-center text-sm text-ink"
     >
       <strong className="font-semibold">Demo:</strong> an invented facility; its cases and numbers
       belong to no real measurement.
-    </p>
+    </aside>
   );
 }
 
@@ -86,12 +87,9 @@ export function Shell({ session }: { session: Session }) {
       <div className="flex flex-1 lg:grid lg:grid-cols-[12.25rem_minmax(0,1fr)]">
         <div
           data-screen-only
-          className="sticky top-0 hidden max-h-svh flex-col gap-6 self-start overflow-y-auto border-r border-line px-3 py-4 lg:flex lg:h-svh"
+          className="sticky top-0 hidden max-h-svh flex-col self-start overflow-y-auto border-r border-line px-3 py-4 lg:flex lg:h-svh"
         >
-          <div className="px-1.5">
-            <Brand />
-          </div>
-          <Rooms session={session} />
+          <Rooms session={session} brand />
         </div>
         <div className="flex min-w-0 flex-1 flex-col">
           <header

@@ -27,11 +27,11 @@ export function DemoAccounts({ onChoose }: { onChoose: (credentials: Credentials
           password <span className="font-mono text-ink">{PASSWORD}</span>.
         </p>
       </div>
-      <ul className="grid gap-2 sm:grid-cols-2">
+      <ul className="grid grid-cols-2 gap-2">
         {ACCOUNTS.map(({ role, email, does }) => (
           <li key={role}>
             <Button
-              className="w-full flex-col items-start! gap-0! text-left"
+              className="w-full flex-col items-start! gap-0! text-left whitespace-normal!"
               onClick={() => onChoose({ email, password: PASSWORD })}
             >
               <span className="font-semibold">{ROLE_LABELS[role]}</span>

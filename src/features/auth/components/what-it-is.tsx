@@ -15,7 +15,7 @@ export function WhatItIs() {
         Cross sections in the Born approximation, each with its error and with how far it may be
         believed. Every case is kept, and comes out the same when it is opened again.
       </p>
-      <ol className="relative flex flex-col gap-4">
+      <ol className="relative flex flex-col gap-4 max-lg:hidden">
         <span aria-hidden="true" className="absolute inset-y-5 left-5 border-l-2 border-barn/45" />
         {STATIONS.map((station) => (
           <li key={station} className="relative flex items-center gap-4">

@@ -29,7 +29,7 @@ export default function SignInPage() {
 
   if (session.data) return <Navigate to={next} replace />;
   return (
-    <main className="mx-auto grid min-h-svh max-w-5xl content-center gap-10 px-5 py-10 lg:grid-cols-[1fr_24rem] lg:gap-16">
+    <main className="mx-auto grid min-h-svh max-w-5xl content-center gap-8 px-5 py-10 lg:grid-cols-[1fr_24rem] lg:gap-16">
       <div className="flex flex-col justify-center gap-6">
         <div className="flex items-center gap-3">
           <Mark className="size-11" />

@@ -70,13 +70,15 @@ function Tags({ tags, address }: { tags: readonly string[]; address: CaseAddress
 function Row({ item, address }: { item: CaseListItem; address: CaseAddress }) {
   return (
     <tr className="border-t border-line hover:bg-soft/60">
-      <td className={classNames(CELL, 'text-right font-mono text-muted max-md:hidden')}>
+      <td className={classNames(CELL, 'text-right font-mono text-sm text-muted max-md:hidden')}>
         {item.number}
       </td>
       <td className={CELL}>
         <div className="flex flex-col gap-1">
           <Link to={`/cases/${item.id}`} className="w-fit rounded font-semibold hover:underline">
-            <span className="mr-2 font-mono font-normal text-muted md:hidden">{item.number}</span>
+            <span className="mr-2 font-mono text-sm font-normal text-muted md:hidden">
+              {item.number}
+            </span>
             {item.title}
           </Link>
           <BeamLineRow summary={item.summary} />

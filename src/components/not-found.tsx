@@ -1,8 +1,8 @@
-import { ButtonLink } from '#src/components/button.tsx';
-import { PageTitle } from '#src/components/page-title.tsx';
+import { ButtonLink } from './button.tsx';
+import { PageTitle } from './page-title.tsx';
 
 /** No such address; also what a case looks like to those who may not read it. */
-export function NotFoundPage() {
+export function NotFound() {
   return (
     <div className="flex max-w-prose flex-col items-start gap-4 py-6">
       <PageTitle title="Not found" />
