@@ -242,7 +242,7 @@ export const goldenRuleSchema = z.object({
     relativeError: z.number().optional(),
     absoluteError: z.number().optional(),
   }),
-  /** The same by quadrature, the independent route; left out where the form has none. */
+  /** The same by quadrature, the independent route; left out where the form has none or q times its reach exceeds 20,000. */
   quadratureCheck: z
     .object({
       re: z.number(),

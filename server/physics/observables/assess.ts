@@ -142,9 +142,9 @@ function nothingThere(): Criterion {
  * Source: textbook; e.g. L. I. Schiff, Quantum Mechanics, 3rd ed. (1968), sec. 38.
  */
 export function assess(input: AssessInput): Assessment {
-  const found = input.terms.some(isActive)
-    ? [eta(input), ...shortRangeCriteria(input)]
-    : [nothingThere()];
+  const hasTail = input.born.tail.re !== 0 || input.born.tail.im !== 0;
+  const acts = hasTail || input.terms.some((term) => isActive(term) && isShortRange(term));
+  const found = acts ? [eta(input), ...shortRangeCriteria(input)] : [nothingThere()];
   const criteria = found.filter(
     (entry): entry is Criterion => entry !== null && Number.isFinite(entry.value),
   );

@@ -1,40 +1,106 @@
 import type { ConeSamples } from './cone-samples.ts';
 
-/** Phase a Legendre polynomial may run through on one half panel of 16 nodes; what turns faster averages to nothing. */
-const RESOLVED = 24;
-const MAX_PRODUCTS = 3e7;
-
 export interface LargestPhase {
   /** max_l |T_l| */
   value: number;
   /** The l it belongs to. */
   l: number;
-  /** Highest l looked at. */
+  /** Highest l looked at, or known to be smaller. */
   lMax: number;
 }
 
-interface Beam {
-  /** 2 t k weight f, real and imaginary. */
+/** Phase a Legendre polynomial may run through on one half panel of 16 nodes; what turns faster averages to nothing. */
+const RESOLVED = 24;
+const MAX_PRODUCTS = 3e7;
+/** Waves taken at a time. */
+const CHUNK = 64;
+
+/** Nodes on one side of 90 degrees, finest panels first, with the recurrence of their Legendre polynomials. */
+interface Side {
+  /** 2 t k weight f, real and imaginary part. */
   re: Float64Array;
   im: Float64Array;
-  /** 1 - |cos(theta)|, and whether cos(theta) is negative. */
+  /** 1 - |cos(theta)| */
   gap: Float64Array;
-  behind: Uint8Array;
   width: Float64Array;
+  /** |P_l| and P_l - P_{l-1} for the next l. */
+  value: Float64Array;
+  difference: Float64Array;
+  /** Nodes that still resolve P_l. */
+  active: number;
+  /** (-1)^l where cos(theta) < 0. */
+  alternates: boolean;
 }
 
-function beamOf({ k, t, weight, width, re, im }: ConeSamples): Beam {
-  const order = [...t.keys()].sort((a, b) => (width[a] ?? 0) - (width[b] ?? 0));
+function sideOf(samples: ConeSamples, alternates: boolean): Side {
+  const { k, t, weight, width, re, im } = samples;
+  const at = (list: readonly number[], i: number) => list[i] ?? 0;
+  const order = [...t.keys()]
+    .filter((i) => at(t, i) > Math.SQRT1_2 === alternates)
+    .sort((a, b) => at(width, a) - at(width, b));
   const pick = (value: (i: number) => number) => Float64Array.from(order, value);
-  const factor = (i: number) => 2 * k * (t[i] ?? 0) * (weight[i] ?? 0);
-  const isBehind = (i: number) => (t[i] ?? 0) > Math.SQRT1_2;
+  const factor = (i: number) => 2 * k * at(t, i) * at(weight, i);
   return {
-    re: pick((i) => factor(i) * (re[i] ?? 0)),
-    im: pick((i) => factor(i) * (im[i] ?? 0)),
-    gap: pick((i) => 2 * (isBehind(i) ? (1 - (t[i] ?? 0)) * (1 + (t[i] ?? 0)) : (t[i] ?? 0) ** 2)),
-    behind: Uint8Array.from(order, (i) => (isBehind(i) ? 1 : 0)),
-    width: pick((i) => width[i] ?? 0),
+    re: pick((i) => factor(i) * at(re, i)),
+    im: pick((i) => factor(i) * at(im, i)),
+    gap: pick((i) => 2 * (alternates ? (1 - at(t, i)) * (1 + at(t, i)) : at(t, i) ** 2)),
+    width: pick((i) => at(width, i)),
+    value: new Float64Array(order.length).fill(1),
+    difference: new Float64Array(order.length),
+    active: order.length,
+    alternates,
   };
+}
+
+/** Factors of (l+1) d_{l+1} = l d_l - (2l+1)(1-x) P_l for a chunk of l. */
+function recurrence(first: number): { keep: Float64Array; turn: Float64Array } {
+  const keep = new Float64Array(CHUNK);
+  const turn = new Float64Array(CHUNK);
+  for (let j = 0; j < CHUNK; j++) {
+    const l = first + j;
+    keep[j] = l / (l + 1);
+    turn[j] = (2 * l + 1) / (l + 1);
+  }
+  return { keep, turn };
+}
+
+/** Adds one side's part of T_l for a chunk of l. */
+function addChunk(side: Side, first: number, sums: { re: Float64Array; im: Float64Array }): void {
+  const { keep, turn } = recurrence(first);
+  const { re, im, gap, width, value, difference } = side;
+  while (side.active > 0 && 2 * first * (width[side.active - 1] ?? 0) > RESOLVED) side.active -= 1;
+  for (let i = 0; i < side.active; i++) {
+    let a = re[i] ?? 0;
+    let b = im[i] ?? 0;
+    const g = gap[i] ?? 0;
+    let p = value[i] ?? 0;
+    let d = difference[i] ?? 0;
+    const flip = side.alternates ? -1 : 1;
+    for (let j = 0; j < CHUNK; j++) {
+      sums.re[j] = (sums.re[j] ?? 0) + a * p;
+      if (b !== 0) sums.im[j] = (sums.im[j] ?? 0) + b * p;
+      d = (keep[j] ?? 0) * d - (turn[j] ?? 0) * g * p;
+      p += d;
+      a *= flip;
+      b *= flip;
+    }
+    value[i] = p;
+    difference[i] = d;
+  }
+}
+
+/** |P_l(cos theta)| <= min(1, sqrt(2/(pi l sin theta))) bounds what all higher waves can be. */
+function boundFrom(sides: readonly Side[], l: number): number {
+  let bound = 0;
+  for (const { re, im, gap, active } of sides) {
+    for (let i = 0; i < active; i++) {
+      const g = gap[i] ?? 0;
+      const sine = Math.sqrt(g * (2 - g));
+      const polynomial = Math.min(1, Math.sqrt(2 / (Math.PI * l * sine)));
+      bound += Math.hypot(re[i] ?? 0, im[i] ?? 0) * polynomial;
+    }
+  }
+  return bound;
 }
 
 /**
@@ -47,33 +113,25 @@ function beamOf({ k, t, weight, width, re, im }: ConeSamples): Beam {
  * @param range largest radius at which the interaction is felt, angstrom; waves up to 1.2 k·range are looked at
  * @returns max |T_l|, good to a part in a thousand; unitarity asks for at most 1
  *
- * Source: textbook; e.g. L. I. Schiff, Quantum Mechanics, 3rd ed. (1968), secs. 19, 38.
+ * Source: textbook; e.g. L. I. Schiff, Quantum Mechanics, 3rd ed. (1968), secs. 19, 38. Bound of P_l: DLMF 18.14.7.
  */
 export function largestBornPhase(samples: ConeSamples, range: number): LargestPhase {
-  const { re, im, gap, behind, width } = beamOf(samples);
+  const sides = [sideOf(samples, false), sideOf(samples, true)];
   const wanted = Math.ceil(1.2 * samples.k * range) + 10;
-  const value = new Float64Array(re.length).fill(1);
-  const difference = new Float64Array(re.length);
-  const best: LargestPhase = { value: 0, l: 0, lMax: 0 };
-  let active = re.length;
+  const best: LargestPhase = { value: 0, l: 0, lMax: wanted };
   let products = 0;
-  for (let l = 0; l <= wanted && active > 0 && products < MAX_PRODUCTS; l++) {
-    while (active > 0 && 2 * l * (width[active - 1] ?? 0) > RESOLVED) active -= 1;
-    let sumRe = 0;
-    let sumIm = 0;
-    for (let i = 0; i < active; i++) {
-      const p = value[i] ?? 0;
-      const signed = l % 2 === 1 && behind[i] === 1 ? -p : p;
-      sumRe += (re[i] ?? 0) * signed;
-      sumIm += (im[i] ?? 0) * signed;
-      const d = (l * (difference[i] ?? 0) - (2 * l + 1) * (gap[i] ?? 0) * p) / (l + 1);
-      difference[i] = d;
-      value[i] = p + d;
+  for (let first = 0; first <= wanted; first += CHUNK) {
+    if (first > 0 && boundFrom(sides, first) <= best.value) break;
+    const sums = { re: new Float64Array(CHUNK), im: new Float64Array(CHUNK) };
+    for (const side of sides) {
+      addChunk(side, first, sums);
+      products += side.active * CHUNK;
     }
-    products += active;
-    best.lMax = l;
-    const size = Math.hypot(sumRe, sumIm);
-    if (size > best.value) Object.assign(best, { value: size, l });
+    for (let j = 0; j < CHUNK && first + j <= wanted; j++) {
+      const size = Math.hypot(sums.re[j] ?? 0, sums.im[j] ?? 0);
+      if (size > best.value) Object.assign(best, { value: size, l: first + j });
+    }
+    if (products > MAX_PRODUCTS) return { ...best, lMax: first + CHUNK - 1 };
   }
   return best;
 }

@@ -20,7 +20,7 @@ export interface GoldenRule {
   /** angstrom. */
   boxSide: number;
   matrixElementTimesVolume: MatrixElement;
-  /** The same by quadrature; null where a term has none. */
+  /** The same by quadrature; null where a term has none, or where it would take longer than everything else. */
   quadratureCheck: MatrixElement | null;
   /** Final states per energy and solid angle, 1/(eV sr). */
   densityOfStates: number;
@@ -33,6 +33,8 @@ export interface GoldenRule {
 }
 
 const FOUR_PI = 4 * Math.PI;
+/** Phase q·r over the reach of a term up to which the quadrature takes some milliseconds. */
+const CHECKED_PHASE = 2e4;
 
 function matrixElement(
   terms: readonly Term[],
@@ -95,6 +97,8 @@ export function goldenRule(
       { errors: [{ path: '/goldenRule/boxSide', message: 'This box side is out of reach.' }] },
     );
   }
-  const quadratureCheck = matrixElement(terms, (term) => term.quadrature?.(q) ?? null);
+  const quadratureCheck = matrixElement(terms, ({ quadrature, reach }) =>
+    q * (reach ?? 0) > CHECKED_PHASE ? null : (quadrature?.(q) ?? null),
+  );
   return { theta, q, boxSide, matrixElementTimesVolume: element, quadratureCheck, ...sheet };
 }
