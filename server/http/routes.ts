@@ -1,5 +1,9 @@
 import { authRoutes } from '#server/modules/auth/auth.routes.ts';
 import { campaignRoutes } from '#server/modules/campaigns/campaigns.routes.ts';
+import { caseRoutes } from '#server/modules/cases/cases.routes.ts';
+import { versionRoutes } from '#server/modules/cases/versions.routes.ts';
+import { estimateRoutes } from '#server/modules/estimates/estimates.routes.ts';
+import { formRoutes } from '#server/modules/forms/forms.routes.ts';
 import { healthRoutes } from '#server/modules/health/health.routes.ts';
 import { tokenRoutes } from '#server/modules/tokens/tokens.routes.ts';
 import { userRoutes } from '#server/modules/users/users.routes.ts';
@@ -12,4 +16,8 @@ export const ROUTES: readonly Route[] = [
   ...tokenRoutes,
   ...userRoutes,
   ...campaignRoutes,
+  ...caseRoutes,
+  ...versionRoutes,
+  ...estimateRoutes,
+  ...formRoutes,
 ];
