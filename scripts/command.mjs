@@ -51,7 +51,7 @@ function databaseInUse(settings) {
  */
 async function findDatabase(shutdown, settings) {
   if (settings.ownDatabase !== undefined) {
-    ensureSecrets(settings.secretsFile);
+    ensureSecrets(settings.secretsFile, ['signingKey']);
     await migrateAndSeed(shutdown, { ...settings, demo: false }, settings.ownDatabase);
     return settings.ownDatabase;
   }

@@ -60,7 +60,7 @@ await live(async (shutdown) => {
   };
   await ensurePostgres(shutdown);
   await prepareClone(shutdown, { build: false });
-  ensureSecrets(settings.secretsFile);
+  ensureSecrets(settings.secretsFile, ['signingKey']);
   const urls = settings.ownDatabase ?? (await openPrivateDatabase(shutdown, settings)).urls;
   await migrateAndSeed(shutdown, settings, urls, fromSource);
   const env = {

@@ -39,15 +39,18 @@ async function holdDataDir(shutdown, dataDir) {
 }
 
 /**
- * Starts a dead PostgreSQL again, a bounded number of times.
+ * Starts a dead PostgreSQL again, on the port the server knows, unless it keeps dying.
  * @param {Shutdown} shutdown
  * @param {Awaited<ReturnType<typeof openPrivateDatabase>>} database
  */
 async function keepDatabase(shutdown, { running, again }) {
   let current = running;
-  for (let tries = 0; tries < 5; tries += 1) {
+  /** @type {number[]} */
+  let deaths = [];
+  while (deaths.length < 5) {
     const how = await current.ended;
     if (shutdown.isRequested) return;
+    deaths = [...deaths.filter((time) => Date.now() - time < 600_000), Date.now()];
     say(`PostgreSQL ended unexpectedly (${how}); starting it again.`);
     current = await again();
     if (current.port !== running.port) {
@@ -55,7 +58,10 @@ async function keepDatabase(shutdown, { running, again }) {
     }
     say('PostgreSQL answers again.');
   }
-  throw new Failure('PostgreSQL ended five times', 'look into postgres.log in DATA_DIR');
+  throw new Failure(
+    'PostgreSQL ended five times in ten minutes',
+    'postgres.log in DATA_DIR says why; then start Tallybarn again',
+  );
 }
 
 /**
@@ -65,7 +71,7 @@ async function keepDatabase(shutdown, { running, again }) {
 async function openDatabase(shutdown, settings) {
   const { ownDatabase } = settings;
   if (ownDatabase !== undefined) {
-    ensureSecrets(settings.secretsFile);
+    ensureSecrets(settings.secretsFile, ['signingKey']);
     if (ownDatabase.ownerIsRuntime) {
       say(
         'Warning: MIGRATION_DATABASE_URL is not set, so one role owns the tables and serves people; append-only tables are then protected by triggers alone.',

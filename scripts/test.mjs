@@ -64,12 +64,13 @@ async function runTests(shutdown, filters) {
     ...['node_modules/vitest/vitest.mjs', 'run', '--reporter=default'],
     ...['--reporter=json', `--outputFile.json=${file}`, ...filters],
   ];
+  const plain = process.stdout.isTTY ? { FORCE_COLOR: '1' } : { NO_COLOR: '1' };
   const endedWell = await passes('tests', () =>
     run(shutdown, process.execPath, args, {
       what: 'some tests failed',
       mend: 'the lines above name them',
       cwd: ROOT,
-      env: { ...process.env, NODE_ENV: 'test', TEST_DATABASE_ADMIN_URL: adminUrl },
+      env: { ...process.env, ...plain, NODE_ENV: 'test', TEST_DATABASE_ADMIN_URL: adminUrl },
       echo: true,
       stopWith: [
         ['SIGINT', 5_000],

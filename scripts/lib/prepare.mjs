@@ -58,15 +58,16 @@ export function ensureDataDir(dataDir) {
 }
 
 /**
- * What our programs get of the environment: settings in one place, none of the variables that steer PostgreSQL's
- * own client.
+ * What our programs get of the environment: settings in one place and, with the private database, none of the
+ * variables that steer PostgreSQL's own client.
  * @param {Settings} settings
  * @param {{ runtimeUrl: string, ownerUrl?: string }} urls
  * @returns {NodeJS.ProcessEnv}
  */
 export function programEnvironment(settings, urls) {
+  const ours = settings.ownDatabase === undefined ? /^PG[A-Z]+$/ : /^$/;
   const inherited = Object.entries(process.env).filter(
-    ([name]) => !/^(PG[A-Z]+|npm_.*|DATABASE_URL|MIGRATION_DATABASE_URL)$/.test(name),
+    ([name]) => !ours.test(name) && !/^(npm_.*|DATABASE_URL|MIGRATION_DATABASE_URL)$/.test(name),
   );
   return {
     ...Object.fromEntries(inherited),

@@ -2,6 +2,7 @@
 import { randomBytes } from 'node:crypto';
 import { chmodSync, mkdirSync, readFileSync, renameSync, statSync, writeFileSync } from 'node:fs';
 import { dirname } from 'node:path';
+import process from 'node:process';
 import { Failure, errorCode } from './say.mjs';
 
 /** Every secret is made of random bytes, written in letters that need no quoting anywhere. */
@@ -12,7 +13,12 @@ const BYTES = {
   signingKey: 48,
 };
 
-/** @typedef {Record<keyof typeof BYTES, string>} Secrets */
+/**
+ * @typedef {keyof typeof BYTES} SecretName
+ * @typedef {Record<SecretName, string>} Secrets
+ */
+
+const ALL = /** @type {SecretName[]} */ (Object.keys(BYTES));
 
 /**
  * @param {string} file
@@ -36,31 +42,33 @@ function readSecrets(file) {
 
 /**
  * Reads the secrets, making those that are missing. Keys of others stay as they are.
+ * @template {SecretName} [Name=SecretName]
  * @param {string} file
- * @returns {{ secrets: Secrets, made: string[] }} the names of those that are new
+ * @param {readonly Name[]} [names] those that are needed
+ * @returns {{ secrets: Record<Name, string>, made: Name[] }} `made` names those that are new
  */
-export function ensureSecrets(file) {
+export function ensureSecrets(file, names = /** @type {Name[]} */ (ALL)) {
   const found = readSecrets(file);
-  /** @type {string[]} */
+  /** @type {Name[]} */
   const made = [];
-  const secrets = /** @type {Secrets} */ ({});
-  for (const [name, bytes] of Object.entries(BYTES)) {
-    const key = /** @type {keyof typeof BYTES} */ (name);
-    const value = found[key];
+  const secrets = /** @type {Record<Name, string>} */ ({});
+  for (const name of names) {
+    const value = found[name];
     if (typeof value === 'string' && value.length >= 16) {
-      secrets[key] = value;
+      secrets[name] = value;
       continue;
     }
-    secrets[key] = randomBytes(bytes).toString('base64url');
-    made.push(key);
+    secrets[name] = randomBytes(BYTES[name]).toString('base64url');
+    made.push(name);
   }
   if (made.length > 0) {
     mkdirSync(dirname(file), { recursive: true, mode: 0o700 });
     const draft = `${file}.new`;
     writeFileSync(draft, `${JSON.stringify({ ...found, ...secrets }, null, 2)}\n`, { mode: 0o600 });
     renameSync(draft, file);
-  } else if ((statSync(file).mode & 0o077) !== 0) {
-    chmodSync(file, 0o600);
+    return { secrets, made };
   }
+  const { mode, uid } = statSync(file);
+  if ((mode & 0o077) !== 0 && uid === process.getuid?.()) chmodSync(file, 0o600);
   return { secrets, made };
 }
