@@ -1,6 +1,7 @@
 import { useId } from 'react';
 import { useQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
+import type { CaseListItem } from '#shared/contracts/cases.ts';
 import { ButtonLink } from '#src/components/button.tsx';
 import { CaseLine } from '#src/components/case-line.tsx';
 import { EmptyState } from '#src/components/empty-state.tsx';
@@ -11,9 +12,13 @@ import type { caseListOptions } from '#src/lib/case-list.ts';
 interface CaseGroupProps {
   title: string;
   options: ReturnType<typeof caseListOptions>;
+  /** Which of the answer to show; all of it when left out. */
+  wants?: (item: CaseListItem) => boolean;
+  atMost: number;
   /** Where the whole list stands. */
   more: string;
-  empty: { title: string; words: string };
+  moreLabel: string;
+  empty: { title: string; words: string; begins?: boolean };
 }
 
 function Placeholders() {
@@ -29,38 +34,51 @@ function Placeholders() {
   );
 }
 
-export function CaseGroup({ title, options, more, empty }: CaseGroupProps) {
+export function CaseGroup({
+  title,
+  options,
+  wants,
+  atMost,
+  more,
+  moreLabel,
+  empty,
+}: CaseGroupProps) {
   const heading = useId();
   const { data, error, refetch } = useQuery(options);
-  const hidden = data ? data.total - data.items.length : 0;
+  const wanted = data && wants ? data.items.filter(wants) : data?.items;
+  const items = wanted?.slice(0, atMost);
+  const goesOn =
+    data && items && (data.total > data.items.length || (wanted?.length ?? 0) > items.length);
   return (
     <section aria-labelledby={heading} className="min-w-0">
       <div className="mb-1 flex items-baseline justify-between gap-3">
         <h2 id={heading} className="text-lg font-semibold">
           {title}
         </h2>
-        {hidden > 0 && (
+        {goesOn && (
           <Link to={more} className="rounded text-sm underline underline-offset-2">
-            all {data?.total}
+            {moreLabel}
           </Link>
         )}
       </div>
-      {data && data.items.length > 0 && (
+      {items && items.length > 0 && (
         <ul className="divide-y divide-line rounded border border-line bg-sheet px-4">
-          {data.items.map((item) => (
+          {items.map((item) => (
             <li key={item.id}>
               <CaseLine item={item} />
             </li>
           ))}
         </ul>
       )}
-      {data?.items.length === 0 && (
+      {items?.length === 0 && (
         <EmptyState
           title={empty.title}
           actions={
-            <ButtonLink to="/cases/new" size="small">
-              Begin a case
-            </ButtonLink>
+            empty.begins && (
+              <ButtonLink to="/cases/new" size="small">
+                Begin a case
+              </ButtonLink>
+            )
           }
         >
           {empty.words}

@@ -9,7 +9,7 @@ import { Starts } from '../components/starts.tsx';
 import { UnsavedWork } from '../components/unsaved-work.tsx';
 
 const DRAFTS = caseListOptions({ owner: 'me', status: 'draft', sort: '-updated', pageSize: 6 });
-const RECENT = caseListOptions({ sort: '-updated', pageSize: 8 });
+const RECENT = caseListOptions({ sort: '-updated', pageSize: 30 });
 
 export default function DeskPage() {
   const session = useSession();
@@ -27,20 +27,27 @@ export default function DeskPage() {
         <CaseGroup
           title="My drafts"
           options={DRAFTS}
+          atMost={6}
           more="/cases?owner=me&status=draft"
+          moreLabel="all my drafts"
           empty={{
             title: 'No drafts of yours.',
+            begins: true,
             words:
               'A case that is saved but not yet reviewed waits here. Begin one below, and the curve follows while you type.',
           }}
         />
         <CaseGroup
-          title="Recently changed"
+          title="Other recent changes"
           options={RECENT}
+          wants={(item) => item.owner.id !== session.user.id || item.status !== 'draft'}
+          atMost={8}
           more="/cases"
+          moreLabel="all cases"
           empty={{
-            title: 'No case yet that you may read.',
-            words: 'Your own cases and those of campaigns you are a member of appear here.',
+            title: 'Nothing else has changed.',
+            words:
+              'Cases of campaigns you are a member of appear here, and your own once they are past the draft.',
           }}
         />
       </div>

@@ -1,0 +1,78 @@
+import { afterAll, afterEach, beforeAll, expect, test } from 'vitest';
+import type { Page } from 'playwright-core';
+import { openStage, type Stage } from '#tests/browser/support/stage.ts';
+
+let stage: Stage;
+beforeAll(async () => {
+  stage = await openStage();
+});
+afterAll(() => stage.close());
+afterEach(() => stage.settle());
+
+const focused = (page: Page) =>
+  page.evaluate(() => document.activeElement?.id || document.activeElement?.textContent || '');
+
+test('the first Tab offers to skip to the page', async () => {
+  const { page, goTo } = await stage.visitor('theorist');
+  await goTo('/cases');
+  await page.keyboard.press('Tab');
+  expect(await focused(page)).toBe('Skip to the page');
+  await page.keyboard.press('Enter');
+  expect(await focused(page)).toBe('main');
+});
+
+test('walking to another page brings the focus to its heading', async () => {
+  const { page, goTo } = await stage.visitor('theorist');
+  await goTo('/');
+  await page.getByRole('link', { name: 'Account' }).click();
+  await page.getByRole('heading', { name: 'Account', level: 1 }).waitFor();
+  await expect.poll(() => focused(page)).toBe('Account');
+  expect(await page.title()).toBe('Account · Tallybarn');
+});
+
+test('/ leads to the search from any page, ? shows the keys, and both can be switched off', async () => {
+  const { page, goTo } = await stage.visitor('theorist');
+  await goTo('/account');
+  await page.locator('body').press('/');
+  await page.getByLabel('Search the cases').waitFor();
+  await expect.poll(() => focused(page)).toBe('case-search');
+  await page.keyboard.type('?n/');
+  expect(await page.getByLabel('Search the cases').inputValue()).toBe('?n/');
+  await page.getByRole('heading', { name: 'Cases' }).click();
+  await page.keyboard.press('?');
+  const dialog = page.getByRole('dialog', { name: 'Keys' });
+  await dialog.getByRole('checkbox').uncheck();
+  await page.keyboard.press('Escape');
+  await dialog.waitFor({ state: 'detached' });
+  await page.locator('body').press('?');
+  await page.locator('body').press('n');
+  expect(await page.getByRole('dialog').count()).toBe(0);
+  expect(new URL(page.url()).pathname).toBe('/cases');
+});
+
+test('the menu of a narrow screen holds the focus and gives it back', async () => {
+  const { page, goTo } = await stage.visitor('theorist', { width: 390 });
+  await goTo('/');
+  const button = page.getByRole('button', { name: 'Menu', exact: true });
+  await button.click();
+  const menu = page.getByRole('dialog', { name: 'Menu' });
+  await menu.waitFor();
+  for (let n = 0; n < 12; n += 1) {
+    await page.keyboard.press('Tab');
+    const inside = await menu.evaluate((element) => element.contains(document.activeElement));
+    expect(inside).toBe(true);
+  }
+  await page.keyboard.press('Escape');
+  await menu.waitFor({ state: 'detached' });
+  expect(await button.evaluate((element) => element === document.activeElement)).toBe(true);
+  await button.click();
+  await menu.getByRole('link', { name: 'Cases' }).click();
+  await page.getByRole('heading', { name: 'Cases', level: 1 }).waitFor();
+  expect(await menu.count()).toBe(0);
+});
+
+test('the demo is announced on every page', async () => {
+  const { page, goTo } = await stage.visitor('theorist');
+  await goTo('/account');
+  await page.getByText(/^Demo:/).waitFor();
+});
