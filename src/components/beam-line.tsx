@@ -1,9 +1,9 @@
-import type { ReactNode } from 'react';
 import { CircleAlert } from 'lucide-react';
 import { classNames } from '#src/lib/class-names.ts';
+import { StationGlyph, type Station } from './station-glyph.tsx';
 
 export interface BeamLineStation {
-  key: string;
+  key: Station;
   name: string;
   main: string;
   detail: string;
@@ -14,26 +14,9 @@ export interface BeamLineStation {
 interface BeamLineProps {
   stations: readonly BeamLineStation[];
   /** Without it the line is a picture to read, as in lists and on paper. */
-  onOpen?: (key: string) => void;
-  selected?: string | undefined;
+  onOpen?: (key: Station) => void;
+  selected?: Station | undefined;
 }
-
-const PICTURES: Record<string, ReactNode> = {
-  beam: (
-    <>
-      <path d="M3 12h12.5M11.5 7.5 16 12l-4.5 4.5" />
-      <circle cx="20" cy="12" r="1.2" />
-    </>
-  ),
-  target: (
-    <>
-      <circle cx="12" cy="12" r="2.4" />
-      <circle cx="12" cy="12" r="8.5" strokeDasharray="3 3" />
-    </>
-  ),
-  interaction: <path d="M3 6h18M4 6c5 0 5 13 9 13 4 0 3-9 8-10" />,
-  detectors: <path d="M4 18 18 6M4 18l16-2M4 18 9 4M18 6l2 2M20 16l-.5 2.6M9 4 6.6 3" />,
-};
 
 function Picture({ station, lit }: { station: BeamLineStation; lit: boolean }) {
   return (
@@ -44,18 +27,10 @@ function Picture({ station, lit }: { station: BeamLineStation; lit: boolean }) {
         'group-hover:border-barn print:bg-sheet',
       )}
     >
-      <svg
-        viewBox="0 0 24 24"
+      <StationGlyph
+        station={station.key}
         className={classNames('size-5.5', station.problem ? 'text-fault' : 'text-barn')}
-        fill="none"
-        stroke="currentColor"
-        strokeWidth="2"
-        strokeLinecap="round"
-        strokeLinejoin="round"
-        aria-hidden="true"
-      >
-        {PICTURES[station.key]}
-      </svg>
+      />
     </span>
   );
 }

@@ -1,0 +1,177 @@
+import { Suspense, lazy, useCallback, useId, useState, type ReactNode } from 'react';
+import { ZoomIn, ZoomOut } from 'lucide-react';
+import { classNames } from '#src/lib/class-names.ts';
+import { usePalette } from '#src/lib/theme.ts';
+import { IconButton } from './button.tsx';
+import { PlotExportMenu } from './plot-export-menu.tsx';
+import { styleOf } from './plot-option.ts';
+import type { PlotAxis, PlotPicture, PlotSeries, Scale } from './plot-types.ts';
+
+const PlotCanvas = lazy(() => import('./plot-canvas.tsx'));
+const WHOLE = [0, 100] as const;
+
+interface PlotProps {
+  /** Spoken name: what is drawn against what. */
+  label: string;
+  series: readonly PlotSeries[];
+  x: PlotAxis;
+  y: PlotAxis;
+  yScale: Scale;
+  /** Place of the crosshair among the points of the first curve. */
+  cursor: number;
+  onCursor: (place: number) => void;
+  /** What all curves say at the crosshair. */
+  readout: ReactNode;
+  /** How the crosshair's place is spoken. */
+  cursorText: string;
+  /** Switches of the caller, right of the legend. */
+  switches?: ReactNode;
+  /** The next curve is on its way: the old one stays, dimmed. */
+  dimmed?: boolean;
+  fileName: string;
+  csv: () => string;
+}
+
+function Legend(props: {
+  series: readonly PlotSeries[];
+  hidden: ReadonlySet<string>;
+  onToggle: (key: string) => void;
+}) {
+  const { palette } = usePalette();
+  return (
+    <ul className="flex flex-wrap gap-x-1 gap-y-1" aria-label="Curves">
+      {props.series.map((series, place) => {
+        const { role, dash } = styleOf(series, place);
+        const off = props.hidden.has(series.key);
+        return (
+          <li key={series.key}>
+            <button
+              type="button"
+              aria-pressed={!off}
+              onClick={() => props.onToggle(series.key)}
+              title={off ? `Show ${series.name}` : `Hide ${series.name}`}
+              className={classNames(
+                'flex min-h-7 items-center gap-2 rounded px-1.5 text-sm hover:bg-soft',
+                off && 'text-muted line-through',
+              )}
+            >
+              <svg viewBox="0 0 30 8" className="h-2 w-7.5" aria-hidden="true">
+                <line
+                  x1="0"
+                  x2="30"
+                  y1="4"
+                  y2="4"
+                  stroke={palette[role]}
+                  strokeWidth="2.4"
+                  strokeDasharray={dash.join(' ')}
+                  opacity={off ? 0.35 : 1}
+                />
+              </svg>
+              {series.name}
+            </button>
+          </li>
+        );
+      })}
+    </ul>
+  );
+}
+
+function nearestPlace(points: PlotSeries['points'], x: number): number {
+  let best = 0;
+  points.forEach(([at], place) => {
+    if (Math.abs(at - x) < Math.abs((points[best]?.[0] ?? Infinity) - x)) best = place;
+  });
+  return best;
+}
+
+function zoomed([from, to]: readonly [number, number], about: number): [number, number] {
+  const half = (to - from) / 4;
+  const middle = Math.min(Math.max(about, from + half), to - half);
+  return [middle - half, middle + half];
+}
+
+/** The one plot of the application: legend that toggles, crosshair for mouse, touch and keyboard, zoom, and export. */
+export function Plot(props: PlotProps) {
+  const { label, series, x, y, yScale, cursor, onCursor } = props;
+  const [hidden, setHidden] = useState<ReadonlySet<string>>(new Set());
+  const [window, setWindow] = useState<readonly [number, number]>(WHOLE);
+  const sliderId = useId();
+  const first = series[0]?.points;
+  const at = first?.[Math.min(cursor, first.length - 1)]?.[0] ?? null;
+  const picture: PlotPicture = { series, x, y, yScale, hidden, cursor: at, window };
+
+  const onPoint = useCallback(
+    (value: number) => {
+      if (first) onCursor(nearestPlace(first, value));
+    },
+    [first, onCursor],
+  );
+  const toggle = (key: string) =>
+    setHidden((keys) => {
+      const next = new Set(keys);
+      if (!next.delete(key)) next.add(key);
+      return next;
+    });
+  const last = Math.max(0, (first?.length ?? 1) - 1);
+  const ends = first ? [first[0]?.[0] ?? 0, first[last]?.[0] ?? 1] : [0, 1];
+  const [low = 0, high = 1] = [Math.min(...ends), Math.max(...ends)];
+  const share = at === null ? 50 : (100 * (at - low)) / (high - low || 1);
+
+  return (
+    <figure aria-label={label} className="min-w-0">
+      <div className="mb-2 flex flex-wrap items-center justify-between gap-x-4 gap-y-2">
+        <Legend series={series} hidden={hidden} onToggle={toggle} />
+        <div className="flex flex-wrap items-center gap-1.5" data-screen-only>
+          {props.switches}
+          <IconButton
+            label="Zoom in at the crosshair"
+            className="size-7"
+            onClick={() => setWindow(zoomed(window, share))}
+          >
+            <ZoomIn aria-hidden="true" className="size-4" />
+          </IconButton>
+          <IconButton
+            label="Show the whole range"
+            className="size-7"
+            disabled={window[0] <= 0 && window[1] >= 100}
+            onClick={() => setWindow(WHOLE)}
+          >
+            <ZoomOut aria-hidden="true" className="size-4" />
+          </IconButton>
+          <PlotExportMenu fileName={props.fileName} picture={picture} csv={props.csv} />
+        </div>
+      </div>
+      <div
+        role="img"
+        aria-label={`${label}. The numbers stand in the table below.`}
+        aria-busy={props.dimmed || undefined}
+        className={classNames(
+          'h-[300px] transition-opacity delay-100 duration-150 sm:h-[350px]',
+          props.dimmed && 'opacity-45',
+        )}
+      >
+        <Suspense fallback={<p className="grid h-full place-items-center text-muted">Drawing…</p>}>
+          <PlotCanvas picture={picture} onPoint={onPoint} onWindow={setWindow} />
+        </Suspense>
+      </div>
+      <div className="mt-1 border-t border-line pt-2.5">
+        <div className="flex items-center gap-3" data-screen-only>
+          <label htmlFor={sliderId} className="sr-only">
+            Crosshair
+          </label>
+          <input
+            id={sliderId}
+            type="range"
+            min={0}
+            max={last}
+            value={Math.min(cursor, last)}
+            aria-valuetext={props.cursorText}
+            onChange={(event) => onCursor(Number(event.target.value))}
+            className="h-4 w-full accent-barn"
+          />
+        </div>
+        {props.readout}
+      </div>
+    </figure>
+  );
+}

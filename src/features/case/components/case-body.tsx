@@ -1,0 +1,57 @@
+import type { ReactNode } from 'react';
+import { BeamLine } from '#src/components/beam-line.tsx';
+import { useEditing } from '../editing/editor-context.ts';
+import { useStations } from '../editing/use-stations.ts';
+import { problemsByStation } from '../model/problems.ts';
+import { STATIONS, summarise } from '../model/stations.ts';
+import { InputsPanel, STATION_NAMES } from './inputs-panel.tsx';
+import { ProblemSummary } from './notices.tsx';
+import { SectionTabs } from './section-tabs.tsx';
+import type { Section } from './section-tabs.tsx';
+import { groupId } from './station-group.tsx';
+
+interface CaseBodyProps {
+  section: Section;
+  notices: ReactNode;
+  children: ReactNode;
+}
+
+/** Beam line, sections, and the inputs beside whichever section is open. */
+export function CaseBody({ section, notices, children }: CaseBodyProps) {
+  const { draft, forms, estimate, problems } = useEditing();
+  const stations = useStations(groupId);
+  const summaries = summarise(draft.document, forms, estimate);
+  const faults = problemsByStation(problems);
+  return (
+    <div className="@container">
+      <div className="mb-5">
+        <BeamLine
+          selected={stations.selected}
+          onOpen={stations.openStation}
+          stations={STATIONS.map((key) => ({
+            key,
+            name: STATION_NAMES[key],
+            ...summaries[key],
+            problem: faults[key][0]?.message,
+          }))}
+        />
+      </div>
+      <SectionTabs section={section} />
+      <div className="mb-4 flex flex-col gap-3 empty:hidden">
+        {notices}
+        <ProblemSummary problems={problems} onOpen={stations.openStation} />
+      </div>
+      <div className="grid items-start gap-x-5.5 gap-y-5 @4xl:grid-cols-[19.5rem_minmax(0,1fr)] @5xl:grid-cols-[20.75rem_minmax(0,1fr)]">
+        <div className="order-2 @4xl:sticky @4xl:top-3 @4xl:order-1 @4xl:max-h-[calc(100svh-1.5rem)] @4xl:overflow-y-auto print:hidden">
+          <InputsPanel
+            summaries={summaries}
+            closed={stations.closed}
+            onToggle={stations.toggle}
+            onEnter={stations.setSelected}
+          />
+        </div>
+        <div className="@container order-1 min-w-0 @4xl:order-2">{children}</div>
+      </div>
+    </div>
+  );
+}

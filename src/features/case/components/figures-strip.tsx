@@ -1,0 +1,123 @@
+import { Chip } from '#src/components/chip.tsx';
+import { AreaUnitMenu, Figure } from '#src/components/figure.tsx';
+import { classNames } from '#src/lib/class-names.ts';
+import { METHODS } from '#shared/contracts/estimates.ts';
+import type { Estimate, Integral, Method } from '#shared/contracts/estimates.ts';
+import { composedFactor } from '#shared/units/composed.ts';
+import { VERDICT_WORDS, decidingNumber, numericsText } from '../model/verdict.ts';
+import { METHOD_NAMES } from '../model/words.ts';
+
+type Kind = 'elastic' | 'momentumTransfer' | 'absorption' | 'viscosity';
+
+const LABELS: Record<Kind, string> = {
+  elastic: 'Elastic σ',
+  momentumTransfer: 'Momentum transfer σ',
+  absorption: 'Absorption σ',
+  viscosity: 'Viscosity σ',
+};
+
+interface CellProps {
+  label: string;
+  integral: Integral;
+  unit: string;
+  onUnit: (unit: string) => void;
+}
+
+function Cell({ label, integral, unit, onUnit }: CellProps) {
+  if ('divergent' in integral) {
+    return (
+      <>
+        <dt className="text-sm text-muted">{label}</dt>
+        <dd>
+          <span className="block text-lg font-semibold">divergent</span>
+          <span className="block text-xs text-muted">{integral.reason}</span>
+        </dd>
+      </>
+    );
+  }
+  const factor = composedFactor(integral.unit, unit);
+  const errors = {
+    relativeError: integral.relativeError,
+    absoluteError:
+      integral.absoluteError === undefined ? undefined : integral.absoluteError * factor,
+  };
+  return (
+    <>
+      <dt className="text-sm text-muted">{label}</dt>
+      <dd>
+        <Figure
+          size="large"
+          label={label}
+          value={integral.value * factor}
+          unit={unit}
+          unitMenu={<AreaUnitMenu unit={unit} onChange={onUnit} label={`Unit of ${label}`} />}
+        />
+        <span className="block text-xs text-muted">{numericsText(errors)}</span>
+      </dd>
+    </>
+  );
+}
+
+function VerdictCell({ estimate }: { estimate: Estimate }) {
+  const { validity } = estimate;
+  const { word, tone, sign } = VERDICT_WORDS[validity.verdict];
+  return (
+    <>
+      <dt className="text-sm text-muted">First Born here</dt>
+      <dd>
+        <Chip tone={tone} className="my-1 text-sm" icon={<span aria-hidden="true">{sign}</span>}>
+          {word}
+        </Chip>
+        <span className="block text-xs text-muted">{decidingNumber(validity)}</span>
+      </dd>
+    </>
+  );
+}
+
+function kindsOf(estimate: Estimate, method: Method): Kind[] {
+  const result = estimate.methods[method];
+  if (!result || 'unavailable' in result) return [];
+  const { absorption } = result;
+  const absorbs = 'divergent' in absorption || absorption.value !== 0;
+  return absorbs
+    ? ['elastic', 'absorption', 'momentumTransfer', 'viscosity']
+    : ['elastic', 'momentumTransfer', 'viscosity'];
+}
+
+interface FiguresStripProps {
+  estimate: Estimate;
+  dimmed: boolean;
+  unit: string;
+  onUnit: (unit: string) => void;
+}
+
+/** The figures that matter, each with its unit and with what limits it. */
+export function FiguresStrip({ estimate, dimmed, unit, onUnit }: FiguresStripProps) {
+  const shown = METHODS.flatMap((method) => {
+    const result = estimate.methods[method];
+    if (!result || 'unavailable' in result) return [];
+    return kindsOf(estimate, method).map((kind) => ({
+      key: `${method} ${kind}`,
+      label: `${LABELS[kind]}, ${METHOD_NAMES[method]}`,
+      integral: result[kind],
+    }));
+  });
+  return (
+    <dl
+      aria-busy={dimmed || undefined}
+      className={classNames(
+        'grid grid-cols-2 gap-px overflow-clip rounded border border-line bg-line transition-opacity delay-100 @2xl:flex @2xl:[&>div]:flex-1',
+        dimmed && '[&_dd]:opacity-45',
+      )}
+    >
+      {shown.map(({ key, ...cell }) => (
+        <div key={key} className="bg-sheet px-4 py-3">
+          <Cell {...cell} unit={unit} onUnit={onUnit} />
+        </div>
+      ))}
+      <div className="bg-sheet px-4 py-3 max-@2xl:last:odd:col-span-2">
+        <VerdictCell estimate={estimate} />
+      </div>
+    </dl>
+  );
+}

@@ -1,0 +1,39 @@
+import { Plus } from 'lucide-react';
+import { Button } from '#src/components/button.tsx';
+import { useEditing } from '../editing/editor-context.ts';
+import { addTerm, defaultTerm } from '../model/terms.ts';
+import { PotentialSketch } from './potential-sketch.tsx';
+import { TermInputs } from './term-inputs.tsx';
+
+export const MOST_TERMS = 12;
+
+export function InteractionInputs() {
+  const { draft, forms, editDocument, readOnly, estimate, stale } = useEditing();
+  const { terms } = draft.document.interaction;
+  const next = forms.find(({ key }) => key === 'gaussian') ?? forms[0];
+  return (
+    <>
+      {terms.map((term, index) => (
+        <div
+          key={index}
+          className={index > 0 ? 'border-t border-dashed border-edge pt-3' : undefined}
+        >
+          <TermInputs term={term} index={index} several={terms.length > 1} />
+        </div>
+      ))}
+      {!readOnly && next && (
+        <Button
+          size="small"
+          className="self-start"
+          disabled={terms.length >= MOST_TERMS}
+          onClick={() =>
+            editDocument('/interaction/terms', (document) => addTerm(document, defaultTerm(next)))
+          }
+        >
+          <Plus aria-hidden="true" className="size-4" /> Add a term
+        </Button>
+      )}
+      {estimate && <PotentialSketch estimate={estimate} dimmed={stale} />}
+    </>
+  );
+}

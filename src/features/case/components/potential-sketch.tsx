@@ -1,0 +1,145 @@
+import { classNames } from '#src/lib/class-names.ts';
+import type { Estimate } from '#shared/contracts/estimates.ts';
+import { composedFactor } from '#shared/units/composed.ts';
+import { formatComposed, formatNumber, unitSymbol } from '#shared/units/format.ts';
+import { sketchOf } from '../model/sketch.ts';
+import type { Sketch } from '../model/sketch.ts';
+
+const W = 320;
+const H = 190;
+const LEFT = 14;
+const RIGHT = 306;
+const TOP = 22;
+const BOTTOM = 132;
+
+const STROKES = ['stroke-barn', 'stroke-slate'];
+
+function pathOf(points: Sketch['curves'][number]['points'], sketch: Sketch): string {
+  const x = (r: number) => LEFT + ((RIGHT - LEFT) * r) / sketch.r[1];
+  const y = yOf(sketch);
+  return points
+    .map((p, i) => `${i === 0 ? 'M' : 'L'}${x(p.x).toFixed(1)},${y(p.y).toFixed(1)}`)
+    .join('');
+}
+
+function yOf(sketch: Sketch): (v: number) => number {
+  const [low, high] = sketch.v;
+  const span = high - low || 1;
+  return (v) => TOP + ((BOTTOM - TOP) * (high - v)) / span;
+}
+
+/** The wavelength as a bar on the scale of r, or in words where it does not fit the picture. */
+function Wavelength({ length, end, unit }: { length: number; end: number; unit: string }) {
+  const width = ((RIGHT - LEFT) * length) / end;
+  const words = formatComposed(length, unit, 3);
+  const y = 160;
+  const bars = width < 6 ? 10 ** Math.ceil(Math.log10(6 / width)) : 1;
+  if (width > RIGHT - LEFT) {
+    return (
+      <g>
+        <path
+          d={`M${LEFT},${y}H${RIGHT - 2}m-6,-4l6,4l-6,4`}
+          className="fill-none stroke-slate"
+          strokeWidth="1.6"
+        />
+        <text x={LEFT} y={y + 17} className="fill-muted text-[12px]">
+          λ = {words}, {formatNumber(length / end, 2)} times the width of this picture
+        </text>
+      </g>
+    );
+  }
+  const drawn = Math.min(width * bars, RIGHT - LEFT);
+  return (
+    <g>
+      <path
+        d={`M${LEFT},${y - 5}v10M${LEFT},${y}h${drawn.toFixed(1)}m0,-5v10`}
+        className="fill-none stroke-slate"
+        strokeWidth="1.6"
+      />
+      <text x={LEFT} y={y + 18} className="fill-muted text-[12px]">
+        {bars > 1 ? `${bars} λ, to scale; λ = ${words}` : `λ = ${words}, to scale`}
+      </text>
+    </g>
+  );
+}
+
+function Axes({ sketch, rUnit, vUnit }: { sketch: Sketch; rUnit: string; vUnit: string }) {
+  const zero = yOf(sketch)(0);
+  const [low, high] = sketch.v;
+  const deep = Math.abs(low) > Math.abs(high) ? low : high;
+  const y = yOf(sketch)(deep);
+  return (
+    <g>
+      <path
+        d={`M${LEFT},${TOP - 8}V${BOTTOM + 6}M${LEFT},${zero}H${RIGHT}`}
+        className="fill-none stroke-edge"
+      />
+      <text x={LEFT + 6} y={TOP - 9} className="fill-muted text-[12px]">
+        V(r)
+      </text>
+      <text
+        x={RIGHT}
+        y={zero < (TOP + BOTTOM) / 2 ? zero - 7 : zero + 15}
+        textAnchor="end"
+        className="fill-muted text-[12px]"
+      >
+        r to {formatNumber(sketch.r[1], 3)} {unitSymbol(rUnit)}
+      </text>
+      <path d={`M${LEFT - 4},${y}h8`} className="stroke-edge" />
+      <text
+        x={RIGHT}
+        y={deep < 0 ? BOTTOM + 3 : TOP + 3}
+        textAnchor="end"
+        className="fill-muted text-[12px]"
+      >
+        {sketch.cut ? 'cut off at' : deep < 0 ? 'deepest' : 'highest'} {formatNumber(deep, 3)}{' '}
+        {unitSymbol(vUnit)}
+      </text>
+    </g>
+  );
+}
+
+interface PotentialSketchProps {
+  estimate: Estimate;
+  dimmed: boolean;
+}
+
+/** V(r) with the de Broglie wavelength on the same scale. */
+export function PotentialSketch({ estimate, dimmed }: PotentialSketchProps) {
+  const { potential, kinematics } = estimate;
+  if ('unavailable' in potential) {
+    return <p className="text-sm text-muted">No sketch of V(r): {potential.reason}</p>;
+  }
+  const sketch = sketchOf(potential);
+  const { wavelength } = kinematics;
+  const length = wavelength.value * composedFactor(wavelength.unit, potential.unit.r);
+  const spoken = `V(r) from ${formatNumber(sketch.v[0], 3)} to ${formatNumber(sketch.v[1], 3)} ${potential.unit.v} up to r = ${formatNumber(sketch.r[1], 3)} ${potential.unit.r}; the wavelength is ${formatNumber(length, 3)} ${potential.unit.r}.`;
+  return (
+    <figure className={classNames('transition-opacity delay-100', dimmed && 'opacity-45')}>
+      <svg
+        viewBox={`0 0 ${W} ${H}`}
+        role="img"
+        aria-label={spoken}
+        className="w-full max-w-md font-sans"
+      >
+        <Axes sketch={sketch} rUnit={potential.unit.r} vUnit={potential.unit.v} />
+        {sketch.curves.map((curve, i) => (
+          <path
+            key={curve.name}
+            d={pathOf(curve.points, sketch)}
+            className={classNames('fill-none', STROKES[i])}
+            strokeWidth="2.2"
+            strokeLinejoin="round"
+            {...(i > 0 ? { strokeDasharray: '8 4' } : {})}
+          />
+        ))}
+        <Wavelength length={length} end={sketch.r[1]} unit={potential.unit.r} />
+      </svg>
+      {sketch.curves.length > 1 && (
+        <figcaption className="text-xs text-muted">
+          Solid: real part. Dashed: imaginary part.
+        </figcaption>
+      )}
+    </figure>
+  );
+}

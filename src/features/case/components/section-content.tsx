@@ -1,0 +1,74 @@
+import { Button } from '#src/components/button.tsx';
+import { Notice } from '#src/components/notice.tsx';
+import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
+import type { CaseDetail } from '#shared/contracts/cases.ts';
+import { useEditing } from '../editing/editor-context.ts';
+import { CrossSection } from './cross-section.tsx';
+import { GoldenRuleSheet } from './golden-rule.tsx';
+import { InputList } from './input-list.tsx';
+import { Record } from './record.tsx';
+import type { Section } from './section-tabs.tsx';
+import { NothingFiled } from './withdraw.tsx';
+
+interface SectionContentProps {
+  section: Section;
+  saved: { detail: CaseDetail; etag: string } | null;
+  failure: string | null;
+  onRetry: () => void;
+}
+
+function FirstResult() {
+  return (
+    <Waiting what="the result">
+      <div className="flex flex-col gap-4">
+        <Skeleton className="h-22" />
+        <Skeleton className="h-115" />
+      </div>
+    </Waiting>
+  );
+}
+
+function fileNameOf(saved: SectionContentProps['saved']): string {
+  return saved ? `case-${saved.detail.number}-dcs` : 'new-case-dcs';
+}
+
+export function SectionContent({ section, saved, failure, onRetry }: SectionContentProps) {
+  const { estimate, problems } = useEditing();
+  if (section === 'record') {
+    return saved ? <Record detail={saved.detail} etag={saved.etag} /> : <NothingFiled />;
+  }
+  const trouble = failure !== null && (
+    <Notice
+      live
+      tone="fault"
+      title="The result could not be computed."
+      actions={
+        <Button size="small" onClick={onRetry}>
+          Try again
+        </Button>
+      }
+      className="mb-4"
+    >
+      {failure}
+    </Notice>
+  );
+  if (!estimate) {
+    if (trouble) return trouble;
+    return problems.length > 0 ? (
+      <p className="text-muted">The figures appear here once the inputs are sound.</p>
+    ) : (
+      <FirstResult />
+    );
+  }
+  return (
+    <>
+      {trouble}
+      <InputList />
+      {section === 'golden-rule' ? (
+        <GoldenRuleSheet estimate={estimate} />
+      ) : (
+        <CrossSection estimate={estimate} fileName={fileNameOf(saved)} />
+      )}
+    </>
+  );
+}

@@ -1,0 +1,75 @@
+import type { CaseDocument } from '#shared/contracts/cases.ts';
+import type { Estimate, InteractionTerm } from '#shared/contracts/estimates.ts';
+import type { FormInfo } from '#shared/contracts/forms.ts';
+import { formatComposed, formatQuantity } from '#shared/units/format.ts';
+import { anglesText, formLabel, projectileName, termValueText } from './words.ts';
+
+export const STATIONS = ['beam', 'target', 'interaction', 'detectors'] as const;
+export type StationKey = (typeof STATIONS)[number];
+
+/** The station whose inputs a JSON Pointer into the document belongs to. */
+export function stationOf(pointer: string): StationKey {
+  const [, root = ''] = pointer.split('/');
+  if (root === 'projectile' || root === 'energy' || root === 'kinematics') return 'beam';
+  if (root === 'target' || root === 'identical') return 'target';
+  return root === 'interaction' ? 'interaction' : 'detectors';
+}
+
+export interface StationSummary {
+  main: string;
+  detail: string;
+}
+
+function shortTerm(term: InteractionTerm, forms: readonly FormInfo[]): string {
+  const form = forms.find(({ key }) => key === term.form);
+  const shown = (form?.parameters ?? []).flatMap(({ key }) => {
+    const value = term[key];
+    const zero = typeof value === 'object' && value.value === 0;
+    return value === undefined || zero ? [] : [`${key} ${termValueText(value)}`];
+  });
+  return shown.slice(0, 3).join(' · ');
+}
+
+/** The four stations in one line each, as they stand in the document now; the wavenumber comes from the result. */
+export function summarise(
+  document: CaseDocument,
+  forms: readonly FormInfo[],
+  estimate: Estimate | undefined,
+): Record<StationKey, StationSummary> {
+  const { target, interaction, angles } = document;
+  const k = estimate?.kinematics.k;
+  const terms = interaction.terms;
+  const [first] = terms;
+  return {
+    beam: {
+      main: `${projectileName(document.projectile)}, ${formatQuantity(document.energy)}`,
+      detail: `lab${k ? ` · k = ${formatComposed(k.value, k.unit, 4)}` : ''}`,
+    },
+    target: {
+      main:
+        target.kind === 'fixed'
+          ? 'fixed centre'
+          : target.kind === 'nuclide'
+            ? target.nuclide
+            : target.kind === 'species'
+              ? target.species
+              : 'custom target',
+      detail:
+        target.kind === 'fixed'
+          ? `charge ${termValueText(target.charge)}`
+          : `recoils${document.identical === undefined ? '' : document.identical ? ' · identical' : ' · distinguishable'}`,
+    },
+    interaction: {
+      main:
+        terms.length === 1 && first ? formLabel(first.form, forms) : `sum of ${terms.length} terms`,
+      detail:
+        terms.length === 1 && first
+          ? shortTerm(first, forms)
+          : terms.map(({ form }) => formLabel(form, forms)).join(' + '),
+    },
+    detectors: {
+      main: anglesText(angles),
+      detail: document.frame === 'lab' ? 'lab angles' : 'centre of mass',
+    },
+  };
+}

@@ -1,0 +1,78 @@
+import type { CaseDocument } from '#shared/contracts/cases.ts';
+import type { InteractionTerm } from '#shared/contracts/estimates.ts';
+import type { FormInfo } from '#shared/contracts/forms.ts';
+import type { Draft } from './editor.ts';
+import { withoutEntered, withoutTermTexts } from './entered.ts';
+import { without } from './without.ts';
+
+/** A term with the defaults of the register; parameters that may be left out are left out. */
+export function defaultTerm(form: FormInfo): InteractionTerm {
+  const given = form.parameters.filter(({ optional }) => !optional);
+  return {
+    form: form.key,
+    ...Object.fromEntries(given.map((parameter) => [parameter.key, parameter.default])),
+  };
+}
+
+/** Another form for a term: what both forms call by the same name and measure in the same dimension is kept. */
+export function changedForm(
+  term: InteractionTerm,
+  from: FormInfo | undefined,
+  to: FormInfo,
+): InteractionTerm {
+  const next = defaultTerm(to);
+  for (const { key, dimension } of to.parameters) {
+    const before = from?.parameters.find((parameter) => parameter.key === key);
+    const value = term[key];
+    if (value !== undefined && before?.dimension === dimension) next[key] = value;
+  }
+  return next;
+}
+
+function withTerms(
+  document: CaseDocument,
+  change: (terms: readonly InteractionTerm[]) => InteractionTerm[],
+): CaseDocument {
+  return { ...document, interaction: { terms: change(document.interaction.terms) } };
+}
+
+export function setForm(draft: Draft, index: number, term: InteractionTerm): Draft {
+  const pointer = `/interaction/terms/${index}`;
+  const open = Object.entries(draft.open).filter(([key]) => !key.startsWith(`${pointer}/`));
+  const document = withTerms(withoutEntered(draft.document, pointer), (terms) =>
+    terms.map((before, place) => (place === index ? term : before)),
+  );
+  return { ...draft, document, open: Object.fromEntries(open) };
+}
+
+/** One parameter of one term; without a value it is left out. */
+export function setParameter(
+  document: CaseDocument,
+  index: number,
+  key: string,
+  value: InteractionTerm[string] | undefined,
+): CaseDocument {
+  return withTerms(document, (terms) =>
+    terms.map((term, place) => {
+      if (place !== index) return term;
+      if (value !== undefined) return { ...term, [key]: value };
+      return { ...without(term, key), form: term.form };
+    }),
+  );
+}
+
+export function addTerm(document: CaseDocument, term: InteractionTerm): CaseDocument {
+  return withTerms(document, (terms) => [...terms, term]);
+}
+
+/** Without one term; what stands in the fields of the later ones moves with them. */
+export function removeTerm(draft: Draft, index: number): Draft {
+  const { entered, ...rest } = draft.document;
+  const document = withTerms(rest, (terms) => terms.filter((_, place) => place !== index));
+  const kept = withoutTermTexts(entered ?? {}, index);
+  return {
+    ...draft,
+    document: Object.keys(kept).length === 0 ? document : { ...document, entered: kept },
+    open: withoutTermTexts(draft.open, index),
+  };
+}

@@ -1,0 +1,120 @@
+import type { CaseDocument } from '#shared/contracts/cases.ts';
+import type {
+  Criterion,
+  InteractionTerm,
+  Method,
+  Projectile,
+  Target,
+} from '#shared/contracts/estimates.ts';
+import type { FormInfo } from '#shared/contracts/forms.ts';
+import { fullDigits, unitSymbol } from '#shared/units/format.ts';
+import type { Quantity } from '#shared/units/quantity.ts';
+
+export const METHOD_NAMES: Record<Method, string> = {
+  born1: 'first Born',
+  born2: 'second Born',
+  eikonal: 'eikonal',
+  partialWaves: 'exact (phase shifts)',
+};
+
+export const REGIME_NAMES = {
+  nonrelativistic: 'non-relativistic',
+  relativistic: 'relativistic',
+} as const;
+
+export const FRAME_NAMES = { cm: 'centre of mass', lab: 'lab' } as const;
+
+export const CRITERION_NAMES: Record<Criterion['name'], string> = {
+  unitarity: 'unitarity',
+  secondOrder: 'second-order size',
+  slow: 'slow criterion',
+  fast: 'fast criterion',
+  eta: 'Sommerfeld parameter',
+};
+
+/** A number with every digit it has, as prose shows it: 1e-7 stays readable, the minus is a minus. */
+export function digits(value: number): string {
+  return fullDigits(value).replaceAll('-', '−');
+}
+
+export function quantityText(quantity: Quantity): string {
+  const symbol = unitSymbol(quantity.unit);
+  return symbol === '°' ? `${digits(quantity.value)}°` : `${digits(quantity.value)} ${symbol}`;
+}
+
+export function projectileText(projectile: Projectile): string {
+  if ('nuclide' in projectile) return `${projectile.nuclide} nucleus`;
+  if (projectile.species !== 'custom') return projectile.species;
+  const { mass, charge, spin } = projectile;
+  return `custom particle (${quantityText(mass)}, charge ${digits(charge)}, spin ${digits(spin)})`;
+}
+
+/** Name alone, for the beam line. */
+export function projectileName(projectile: Projectile): string {
+  if ('nuclide' in projectile) return projectile.nuclide;
+  return projectile.species === 'custom' ? 'custom particle' : projectile.species;
+}
+
+export function targetText(target: Target): string {
+  switch (target.kind) {
+    case 'fixed':
+      return `fixed centre, charge ${digits(target.charge)}`;
+    case 'nuclide':
+      return `${target.nuclide}, recoiling`;
+    case 'species':
+      return `${target.species}, recoiling`;
+    case 'custom':
+      return `custom (${quantityText(target.mass)}, charge ${digits(target.charge)}, spin ${digits(target.spin)})`;
+  }
+}
+
+export function formLabel(key: string, forms: readonly FormInfo[]): string {
+  return forms.find((form) => form.key === key)?.label ?? key;
+}
+
+export type TermValue = InteractionTerm[string];
+
+export function termValueText(value: TermValue | undefined): string {
+  if (value === undefined) return 'not given';
+  if (typeof value === 'string') return value;
+  return typeof value === 'number' ? digits(value) : quantityText(value);
+}
+
+/** The parameters of a term in the order of the register, then whatever the register does not know. */
+export function termEntries(
+  term: InteractionTerm,
+  forms: readonly FormInfo[],
+): { key: string; symbol: string; label: string; value: TermValue }[] {
+  const parameters = forms.find((form) => form.key === term.form)?.parameters ?? [];
+  const known = parameters.map(({ key, symbol, label }) => ({ key, symbol, label }));
+  const extra = Object.keys(term)
+    .filter((key) => key !== 'form' && !known.some((parameter) => parameter.key === key))
+    .map((key) => ({ key, symbol: key, label: key }));
+  return [...known, ...extra].flatMap((parameter) => {
+    const value = term[parameter.key];
+    return value === undefined ? [] : [{ ...parameter, value }];
+  });
+}
+
+export function termText(term: InteractionTerm, forms: readonly FormInfo[]): string {
+  const parts = termEntries(term, forms).map(
+    ({ key, value }) => `${key} = ${termValueText(value)}`,
+  );
+  return [formLabel(term.form, forms), ...parts].join(', ');
+}
+
+export function anglesText(angles: CaseDocument['angles']): string {
+  if (!angles) return '0° to 180°, 181 angles';
+  const symbol = angles.unit === 'deg' ? '°' : ` ${angles.unit}`;
+  if (!('values' in angles)) {
+    return `${digits(angles.from)}${symbol} to ${digits(angles.to)}${symbol}, ${angles.count} angles`;
+  }
+  const listed = angles.values.map((value) => `${digits(value)}${symbol}`);
+  if (listed.length <= 12) return listed.join(', ');
+  return `${listed.slice(0, 4).join(', ')} … ${listed.at(-1) ?? ''}, ${listed.length} angles`;
+}
+
+export function identicalText(identical: boolean | undefined): string {
+  if (identical === undefined) return 'by the rule (same species or nuclide)';
+  return identical ? 'treated as identical' : 'treated as distinguishable';
+}

@@ -1,0 +1,94 @@
+import { useQuery } from '@tanstack/react-query';
+import { useParams, useSearchParams } from 'react-router-dom';
+import { ButtonLink } from '#src/components/button.tsx';
+import { EmptyState } from '#src/components/empty-state.tsx';
+import { Failure } from '#src/components/failure.tsx';
+import { PageTitle } from '#src/components/page-title.tsx';
+import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
+import { ApiError } from '#src/lib/api.ts';
+import { caseQuery, versionQuery } from '../api.ts';
+import { VersionView } from '../components/version-view.tsx';
+import { Workspace } from '../components/workspace.tsx';
+import { contentOfCase } from '../editing/use-saving.ts';
+import { DEFAULT_DOCUMENT, DEFAULT_TITLE } from '../model/default-document.ts';
+
+const NEW = { title: DEFAULT_TITLE, tags: [], document: DEFAULT_DOCUMENT };
+
+function Loading() {
+  return (
+    <Waiting what="the case">
+      <Skeleton className="mb-5 h-8 w-96 max-w-full" />
+      <Skeleton className="mb-5 h-20" />
+      <Skeleton className="h-96" />
+    </Waiting>
+  );
+}
+
+function Missing({ error, onRetry }: { error: unknown; onRetry: () => void }) {
+  const code = error instanceof ApiError ? error.code : null;
+  if (code !== 'notFound' && code !== 'invalidInput') {
+    return <Failure what="The case" error={error} onRetry={onRetry} />;
+  }
+  return (
+    <>
+      <PageTitle title="Case not found" className="mb-4" />
+      <EmptyState
+        title="There is no such case, or it is not yours to read."
+        actions={
+          <ButtonLink to="/cases" look="primary">
+            All cases
+          </ButtonLink>
+        }
+      >
+        A case is read by its owner, the members of its campaign and lab managers. Ask the owner to
+        file it under a campaign you belong to.
+      </EmptyState>
+    </>
+  );
+}
+
+function NewCase() {
+  const [parameters] = useSearchParams();
+  const name = parameters.get('draft');
+  const subject = name === null ? 'case:new' : `case:new:${name}`;
+  const href = name === null ? '/cases/new' : `/cases/new?draft=${encodeURIComponent(name)}`;
+  return <Workspace key={subject} subject={subject} href={href} content={NEW} saved={null} />;
+}
+
+function SavedCase({ id }: { id: string }) {
+  const query = useQuery(caseQuery(id));
+  if (query.data) {
+    const { data: detail, etag } = query.data;
+    return (
+      <Workspace
+        key={id}
+        subject={`case:${id}`}
+        href={`/cases/${id}`}
+        content={contentOfCase(detail)}
+        saved={{ detail, etag: etag ?? '' }}
+      />
+    );
+  }
+  if (query.isError) return <Missing error={query.error} onRetry={() => void query.refetch()} />;
+  return <Loading />;
+}
+
+function SavedVersion({ id, n }: { id: string; n: number }) {
+  const current = useQuery(caseQuery(id));
+  const version = useQuery(versionQuery(id, n));
+  const failed = current.isError ? current : version.isError ? version : null;
+  if (current.data && version.data) {
+    const { data: detail, etag } = current.data;
+    return <VersionView key={n} detail={detail} etag={etag ?? ''} version={version.data} />;
+  }
+  if (failed) return <Missing error={failed.error} onRetry={() => void failed.refetch()} />;
+  return <Loading />;
+}
+
+/** One case: a new one, a saved one, or one of its older versions. */
+export default function CasePage() {
+  const { caseId, n } = useParams();
+  if (caseId === undefined) return <NewCase />;
+  if (n !== undefined) return <SavedVersion id={caseId} n={Number(n)} />;
+  return <SavedCase id={caseId} />;
+}
