@@ -4,9 +4,15 @@ import type { Actor } from '#server/http/actor.ts';
 import { recordTrail } from '#server/trail/record-trail.ts';
 import { Campaign, CampaignMember } from './campaign.entity.ts';
 
+export interface OpeningContext {
+  em: EntityManager;
+  actor: Pick<Actor, 'id' | 'name'> & Partial<Pick<Actor, 'credential'>>;
+  now: Date;
+}
+
 /** Opens a campaign with its first members. */
 export async function createCampaign(
-  { em, actor, now }: { em: EntityManager; actor: Actor; now: Date },
+  { em, actor, now }: OpeningContext,
   { name, memberIds }: { name: string; memberIds: readonly string[] },
 ): Promise<Campaign> {
   return em.transactional(async (tx) => {

@@ -6,10 +6,10 @@ import { CaseVersion, VersionStatus } from './case-version.entity.ts';
 import type { Case } from './case.entity.ts';
 import type { VersionContent } from './compute-content.ts';
 
-/** What every save is told by its caller. */
+/** What every save is told by its caller. A command acts for an account without any credential. */
 export interface Saving {
   em: EntityManager;
-  actor: Actor;
+  actor: Pick<Actor, 'id' | 'name' | 'role'> & Partial<Pick<Actor, 'credential'>>;
   now: Date;
 }
 

@@ -59,7 +59,7 @@ describe('POST /api/cases', () => {
     const estimated = await agent.post('/api/estimates').send(yukawaDocument).expect(200);
     const { filed } = await fileCase(agent);
     const version = await read<VersionDetail>(agent, `/api/cases/${filed.id}/versions/1`);
-    expect(version.result).toEqual({ estimate: estimated.body });
+    expect(version.result).toEqual({ estimate: estimated.body as object });
   });
 
   it('seals with a hash that anyone can recompute from the answer', async () => {

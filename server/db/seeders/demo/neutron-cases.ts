@@ -1,20 +1,20 @@
 import type { DemoCase } from './scenario.ts';
 
-const vanadium: DemoCase = {
-  title: 'Thermal neutrons on vanadium',
-  tags: ['neutrons', 'vanadium', 'incoherent'],
+const nickel: DemoCase = {
+  title: 'Thermal neutrons on bound nickel',
+  tags: ['neutrons', 'nickel', 'scattering length'],
   campaign: 'neutrons',
   versions: [
     {
       author: 'theorist',
-      note: 'Shows a contact interaction: the same in every direction, and for vanadium nearly all of it incoherent. The energy was typed as a wavelength of 1.8 angstrom.',
+      note: 'Shows a contact interaction: the same in every direction, 4 pi b squared in all, whatever the energy. The length is the bound coherent one, so the target is fixed. The energy was typed as a wavelength of 1.8 angstrom.',
       document: {
         projectile: { species: 'neutron' },
-        target: { kind: 'nuclide', nuclide: 'V-51' },
+        target: { kind: 'fixed', charge: 0 },
         energy: { value: 25.24821303539516, unit: 'meV' },
         entered: { '/energy': '1.8 angstrom' },
         kinematics: 'nonrelativistic',
-        interaction: { terms: [{ form: 'contact', nuclide: 'V-51' }] },
+        interaction: { terms: [{ form: 'contact', b: { value: 10.3, unit: 'fm' } }] },
         methods: ['born1'],
         angles: { unit: 'deg', from: 0, to: 180, count: 37 },
         frame: 'cm',
@@ -59,4 +59,4 @@ const calcium: DemoCase = {
   ],
 };
 
-export const NEUTRON_CASES: readonly DemoCase[] = [vanadium, calcium];
+export const NEUTRON_CASES: readonly DemoCase[] = [nickel, calcium];
