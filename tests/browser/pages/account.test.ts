@@ -17,7 +17,7 @@ test('a token is made, shown once, works for a script, and is revoked', async ()
   await page.getByLabel('Name').fill('energy sweep');
   await page.getByLabel('It may').selectOption('read');
   await page.getByRole('button', { name: 'Make the token' }).click();
-  const secret = await page.getByLabel('Token').inputValue();
+  const secret = await page.getByRole('textbox', { name: 'Token' }).inputValue();
   await page.getByRole('button', { name: 'Copy' }).click();
   await page.getByText('Copied.').waitFor();
   expect(await page.evaluate(() => navigator.clipboard.readText())).toBe(secret);
