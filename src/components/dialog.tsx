@@ -36,7 +36,7 @@ export function Dialog(props: DialogProps) {
               event.preventDefault();
               (first ?? content.current)?.focus();
             }}
-            className={`pointer-events-auto flex max-h-full w-full flex-col gap-4 overflow-y-auto rounded border border-line bg-sheet p-5 shadow ${width === 'wide' ? 'max-w-3xl' : 'max-w-md'}`}
+            className={`pointer-events-auto flex max-h-full w-full flex-col gap-4 overflow-y-auto rounded border border-line bg-sheet p-5 shadow ${width === 'wide' ? 'max-w-3xl' : 'max-w-lg'}`}
           >
             <div className="flex items-start justify-between gap-4">
               <Radix.Title className="font-display text-xl font-semibold">{title}</Radix.Title>

@@ -6,6 +6,7 @@ import { ROLE_LABELS } from '#shared/roles.ts';
 import { IconButton } from '#src/components/button.tsx';
 import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
 import { ThemeSwitch } from '#src/components/theme-switch.tsx';
+import { classNames } from '#src/lib/class-names.ts';
 import { mayEver } from '#src/lib/session.ts';
 import { useShortcuts } from '#src/lib/shortcuts.ts';
 import { Brand } from './brand.tsx';
@@ -76,7 +77,13 @@ export function Shell({ session }: { session: Session }) {
     </IconButton>
   );
   return (
-    <div className="flex min-h-svh flex-col">
+    <div
+      className={classNames(
+        'flex min-h-svh flex-col',
+        // The height of the banner, so that the foot of the rooms stays in sight below it.
+        demo ? '[--banner:1.8125rem]' : '[--banner:0px]',
+      )}
+    >
       <a
         href="#main"
         className="absolute top-2 left-2 z-60 -translate-y-16 rounded bg-ink px-3 py-2 text-paper focus:translate-y-0"
@@ -87,7 +94,7 @@ export function Shell({ session }: { session: Session }) {
       <div className="flex flex-1 lg:grid lg:grid-cols-[12.25rem_minmax(0,1fr)]">
         <div
           data-screen-only
-          className="sticky top-0 hidden max-h-svh flex-col self-start overflow-y-auto border-r border-line px-3 py-4 lg:flex lg:h-svh"
+          className="sticky top-0 hidden h-[calc(100svh-var(--banner))] flex-col self-start overflow-y-auto border-r border-line px-3 py-4 lg:flex"
         >
           <Rooms session={session} brand />
         </div>

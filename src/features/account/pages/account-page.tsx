@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react';
 import { ROLE_LABELS } from '#shared/roles.ts';
 import { Notice } from '#src/components/notice.tsx';
-import { PageTitle } from '#src/components/page-title.tsx';
+import { PageHead } from '#src/components/page-head.tsx';
 import { ThemeSwitch } from '#src/components/theme-switch.tsx';
 import { dayOf } from '#src/lib/dates.ts';
 import { useSession } from '#src/lib/session.ts';
@@ -15,7 +15,7 @@ function Matter({ title, words, children }: { title: string; words: string; chil
   return (
     <section
       aria-labelledby={id}
-      className="grid gap-x-10 gap-y-3 border-t border-line py-6 md:grid-cols-[16rem_minmax(0,1fr)]"
+      className="grid gap-x-10 gap-y-3 border-line py-6 not-last:border-b md:grid-cols-[16rem_minmax(0,1fr)]"
     >
       <div>
         <h2 id={id} className="text-lg font-semibold">
@@ -41,8 +41,8 @@ export default function AccountPage() {
   const { user } = useSession();
   const shortcuts = useShortcutsOn();
   return (
-    <div className="max-w-4xl">
-      <PageTitle title="Account" className="mb-5" />
+    <div className="flex max-w-4xl flex-col">
+      <PageHead title="Account" />
       <Matter title="You" words="Set by an administrator, who can change it.">
         <dl className="grid grid-cols-[repeat(auto-fit,minmax(12rem,1fr))] gap-x-6 gap-y-3">
           <Fact name="Name">{user.name}</Fact>

@@ -4,7 +4,7 @@ import { ButtonLink } from '#src/components/button.tsx';
 import { EmptyState } from '#src/components/empty-state.tsx';
 import { Failure } from '#src/components/failure.tsx';
 import { Notice } from '#src/components/notice.tsx';
-import { PageTitle } from '#src/components/page-title.tsx';
+import { PageHead } from '#src/components/page-head.tsx';
 import { Pagination } from '#src/components/pagination.tsx';
 import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
 import { caseListOptions } from '#src/lib/case-list.ts';
@@ -107,14 +107,13 @@ export default function CasesPage() {
   const mayList = mayEver(session, 'case.list');
   return (
     <div className="flex flex-col gap-4">
-      <div className="flex flex-wrap items-end justify-between gap-3">
-        <PageTitle title="Cases" />
+      <PageHead title="Cases">
         {mayList && (
           <ButtonLink to="/cases/new" look="primary">
             <Plus aria-hidden="true" className="size-4" /> New case
           </ButtonLink>
         )}
-      </div>
+      </PageHead>
       {mayList ? (
         <Listed />
       ) : (

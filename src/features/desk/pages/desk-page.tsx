@@ -1,7 +1,7 @@
 import { Navigate } from 'react-router-dom';
 import { Plus } from 'lucide-react';
 import { ButtonLink } from '#src/components/button.tsx';
-import { PageTitle } from '#src/components/page-title.tsx';
+import { PageHead } from '#src/components/page-head.tsx';
 import { caseListOptions } from '#src/lib/case-list.ts';
 import { mayEver, useSession } from '#src/lib/session.ts';
 import { CaseGroup } from '../components/case-group.tsx';
@@ -16,12 +16,11 @@ export default function DeskPage() {
   if (!mayEver(session, 'case.list')) return <Navigate to="/people" replace />;
   return (
     <div className="flex flex-col gap-8">
-      <div className="flex flex-wrap items-end justify-between gap-3">
-        <PageTitle title="Desk" />
+      <PageHead title="Desk">
         <ButtonLink to="/cases/new" look="primary">
           <Plus aria-hidden="true" className="size-4" /> New case
         </ButtonLink>
-      </div>
+      </PageHead>
       <UnsavedWork accountId={session.user.id} />
       <div className="grid items-start gap-x-8 gap-y-8 xl:grid-cols-2">
         <CaseGroup

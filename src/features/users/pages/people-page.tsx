@@ -7,7 +7,7 @@ import { Button } from '#src/components/button.tsx';
 import { EmptyState } from '#src/components/empty-state.tsx';
 import { Failure } from '#src/components/failure.tsx';
 import { Notice } from '#src/components/notice.tsx';
-import { PageTitle } from '#src/components/page-title.tsx';
+import { PageHead } from '#src/components/page-head.tsx';
 import { Pagination } from '#src/components/pagination.tsx';
 import { SearchBox } from '#src/components/search-box.tsx';
 import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
@@ -85,7 +85,7 @@ export default function PeoplePage() {
   if (!mayEver(session, 'user.list')) {
     return (
       <div className="flex flex-col gap-4">
-        <PageTitle title="People" />
+        <PageHead title="People" />
         <Notice tone="info" title="Accounts are kept by administrators.">
           Ask one of them for a new account, another role or a new password.
         </Notice>
@@ -94,12 +94,11 @@ export default function PeoplePage() {
   }
   return (
     <div className="flex max-w-5xl flex-col gap-4">
-      <div className="flex flex-wrap items-end justify-between gap-3">
-        <PageTitle title="People" />
+      <PageHead title="People">
         <Button look="primary" onClick={() => setMaking(true)}>
           <Plus aria-hidden="true" className="size-4" /> New account
         </Button>
-      </div>
+      </PageHead>
       <People selfId={session.user.id} />
       <NewPerson open={making} onOpenChange={setMaking} />
     </div>
