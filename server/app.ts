@@ -2,6 +2,7 @@ import express from 'express';
 import type { Express } from 'express';
 import type { MikroORM } from '@mikro-orm/postgresql';
 import type { Logger } from 'pino';
+import { DomainError } from '#shared/errors.ts';
 import type { Compute } from '#server/compute/compute.ts';
 import type { AppConfig } from './config.ts';
 import { clientFiles } from './http/client-files.ts';
@@ -34,6 +35,9 @@ export function createApp(deps: AppDeps, routes: readonly Route[] = ROUTES): Exp
   app.use(securityHeaders(config));
   app.use(buildRouter(withOpenApi(routes, config), deps, authenticate));
   if (config.clientDir !== undefined) app.use(clientFiles(config.clientDir));
+  app.use(() => {
+    throw new DomainError('notFound', 'There is nothing at this address.');
+  });
   app.use(errorEdge);
   return app;
 }

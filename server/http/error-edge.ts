@@ -16,6 +16,9 @@ function reading(fault: Error): DomainError | undefined {
       'This content or character encoding is unknown.',
     );
   }
+  if (status === 403 || status === 404) {
+    return new DomainError('notFound', 'There is nothing at this address.');
+  }
   if (status === 400 || fault instanceof URIError) {
     return new DomainError('malformed', 'The request or its address cannot be read.');
   }
@@ -28,7 +31,7 @@ export function asRefusal(fault: unknown): DomainError | undefined {
   if (isDatabaseAway(fault)) {
     return new DomainError(
       'unavailable',
-      'The database does not answer at the moment; nothing was saved. Try again in a few seconds.',
+      'The database does not answer at the moment. Try again in a few seconds; if you were saving, look first whether it was saved.',
       { extra: { retryAfter: 5 } },
     );
   }

@@ -16,6 +16,7 @@ const WORDS: Record<string, string> = {
 function kindOf(value: unknown): string {
   if (value === null) return 'null';
   if (Array.isArray(value)) return 'a list';
+  if (typeof value === 'boolean') return String(value);
   return WORDS[typeof value] ?? typeof value;
 }
 

@@ -1,91 +1,103 @@
-import { OpenAPIRegistry, OpenApiGeneratorV31 } from '@asteasolutions/zod-to-openapi';
-import type { RouteConfig } from '@asteasolutions/zod-to-openapi';
 import { z } from 'zod';
 import { problemSchema } from '#shared/contracts/problem-details.ts';
 import type { ErrorCode } from '#shared/errors.ts';
-import { groupBy } from './group-by.ts';
 import type { AppConfig } from '#server/config.ts';
 import { cookieNames } from './cookies.ts';
+import { groupBy } from './group-by.ts';
+import { JsonSchemas } from './json-schemas.ts';
+import type { JsonSchema } from './json-schemas.ts';
 import { STATUS_OF } from './problem.ts';
 import { defineRoute } from './route.ts';
 import type { Route } from './route.ts';
 
+type Described = Pick<AppConfig, 'version' | 'https' | 'publicUrl'>;
+
 const EVERY_ROUTE: readonly ErrorCode[] = ['malformed', 'internal', 'unavailable'];
 
-function refusalsOf(route: Route): ErrorCode[] {
-  const codes = [...EVERY_ROUTE, ...route.refusals];
-  if (route.access !== 'public') codes.push('unauthenticated', 'forbidden');
-  if (route.owned || route.params) codes.push('notFound');
-  if (route.body) codes.push('invalidInput', 'unsupportedMediaType', 'payloadTooLarge');
-  if (route.query) codes.push('invalidInput');
+function refusalsOf(route: Route): Set<ErrorCode> {
+  const codes = new Set([...EVERY_ROUTE, ...route.refusals]);
+  const add = (when: unknown, ...more: ErrorCode[]) => when && more.forEach((c) => codes.add(c));
+  add(route.access !== 'public', 'unauthenticated', 'forbidden');
+  add(route.params, 'notFound');
+  add(route.body, 'invalidInput', 'unsupportedMediaType', 'payloadTooLarge');
+  add(route.query, 'invalidInput');
   return codes;
 }
 
-function responsesOf(route: Route): RouteConfig['responses'] {
-  const responses: RouteConfig['responses'] = {
-    [route.status]: route.response
-      ? { description: 'Done.', content: { 'application/json': { schema: route.response } } }
-      : { description: 'Done; nothing to answer.' },
+function responsesOf(route: Route, schemas: JsonSchemas): JsonSchema {
+  const done = route.response
+    ? {
+        description: 'Done.',
+        content: { 'application/json': { schema: schemas.of(route.response, 'output') } },
+      }
+    : { description: 'Done; nothing to answer.' };
+  const problem = { schema: schemas.of(problemSchema, 'output') };
+  const refused = [...groupBy(refusalsOf(route), (code) => STATUS_OF[code])].map(
+    ([status, codes]) => [
+      status,
+      {
+        description: `Refused; code: ${codes.join(' or ')}.`,
+        content: { 'application/problem+json': problem },
+      },
+    ],
+  );
+  return { [route.status]: done, ...(Object.fromEntries(refused) as JsonSchema) };
+}
+
+/** The properties of an object schema as parameters of the address. */
+function parametersOf(
+  schema: z.ZodType | undefined,
+  where: 'path' | 'query',
+  schemas: JsonSchemas,
+): JsonSchema[] {
+  if (!schema) return [];
+  const { properties = {}, required = [] } = schemas.of(schema, 'input') as {
+    properties?: Record<string, JsonSchema>;
+    required?: string[];
   };
-  const byStatus = groupBy(new Set(refusalsOf(route)), (code) => STATUS_OF[code]);
-  for (const [status, codes] of byStatus) {
-    responses[status] = {
-      description: `Refused; code: ${codes.join(' or ')}.`,
-      content: { 'application/problem+json': { schema: problemSchema } },
-    };
-  }
-  return responses;
+  return Object.entries(properties).map(([name, property]) => ({
+    name,
+    in: where,
+    required: where === 'path' || required.includes(name),
+    schema: property,
+  }));
 }
 
-function objectOf(schema: z.ZodType | undefined): z.ZodObject | undefined {
-  return schema instanceof z.ZodObject ? schema : undefined;
-}
-
-function pathConfig(route: Route): RouteConfig {
-  const params = objectOf(route.params);
-  const query = objectOf(route.query);
-  const rule =
-    route.access === 'public'
-      ? 'Open to all.'
-      : `Permission: ${route.access}.${route.sessionOnly ? ' Not by a personal token.' : ''}`;
+function operationOf(route: Route, schemas: JsonSchemas): JsonSchema {
+  const open = route.access === 'public';
+  const rule = open ? 'Open to all.' : `Permission: ${route.access}.`;
+  const parameters = [
+    ...parametersOf(route.params, 'path', schemas),
+    ...parametersOf(route.query, 'query', schemas),
+  ];
+  const body = route.body && {
+    required: true,
+    content: { 'application/json': { schema: schemas.of(route.body, 'input') } },
+  };
   return {
-    method: route.method,
-    path: route.path.replace(/:(\w+)/g, '{$1}'),
     operationId: route.operationId,
     summary: route.summary,
-    description: rule,
+    description: `${rule}${route.sessionOnly ? ' Not by a personal token.' : ''}`,
     tags: [route.tag],
-    security: route.access === 'public' ? [] : [{ session: [] }, { personalToken: [] }],
-    request: {
-      ...(params && { params }),
-      ...(query && { query }),
-      ...(route.body && {
-        body: { required: true, content: { 'application/json': { schema: route.body } } },
-      }),
-    },
-    responses: responsesOf(route),
+    security: open ? [] : [{ session: [] }, { personalToken: [] }],
+    ...(parameters.length > 0 && { parameters }),
+    ...(body && { requestBody: body }),
+    responses: responsesOf(route, schemas),
   };
 }
-
-type Described = Pick<AppConfig, 'version' | 'https' | 'publicUrl'>;
 
 /** The OpenAPI 3.1 document of the routes, made from the schemas that validate them. */
 export function openApiDocument(
   routes: readonly Route[],
   { version, https, publicUrl }: Described,
-) {
-  const registry = new OpenAPIRegistry();
-  registry.registerComponent('securitySchemes', 'session', {
-    type: 'apiKey',
-    in: 'cookie',
-    name: cookieNames(https).session,
-  });
-  registry.registerComponent('securitySchemes', 'personalToken', {
-    type: 'http',
-    scheme: 'bearer',
-  });
-  for (const route of routes) registry.registerPath(pathConfig(route));
-  return new OpenApiGeneratorV31(registry.definitions).generateDocument({
+): JsonSchema {
+  const schemas = new JsonSchemas();
+  const paths: Record<string, JsonSchema> = {};
+  for (const route of routes) {
+    const path = route.path.replace(/:(\w+)/g, '{$1}');
+    paths[path] = { ...paths[path], [route.method]: operationOf(route, schemas) };
+  }
+  return {
     openapi: '3.1.0',
     info: {
       title: 'Tallybarn',
@@ -94,12 +106,20 @@ export function openApiDocument(
         'Cross sections in the Born approximation, with their errors. Quantities are {"value", "unit"}; refusals are problem documents (RFC 9457).',
     },
     servers: [{ url: publicUrl?.origin ?? '/' }],
-  });
+    paths,
+    components: {
+      schemas: schemas.components,
+      securitySchemes: {
+        session: { type: 'apiKey', in: 'cookie', name: cookieNames(https).session },
+        personalToken: { type: 'http', scheme: 'bearer' },
+      },
+    },
+  };
 }
 
 /** The routes and the one that describes them all. */
 export function withOpenApi(routes: readonly Route[], config: Described): readonly Route[] {
-  let document: Record<string, unknown> | undefined;
+  let document: JsonSchema | undefined;
   const all: Route[] = [
     ...routes,
     defineRoute({
@@ -110,7 +130,7 @@ export function withOpenApi(routes: readonly Route[], config: Described): readon
       tag: 'Service',
       access: 'public',
       response: z.record(z.string(), z.unknown()),
-      handler: () => (document ??= { ...openApiDocument(all, config) }),
+      handler: () => (document ??= openApiDocument(all, config)),
     }),
   ];
   return all;

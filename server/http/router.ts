@@ -123,7 +123,7 @@ export function buildRouter(
     for (const route of group) router[route.method](path, handlerOf(route, deps, authenticate));
     router.all(path, refuseMethod(group.map((route) => route.method)));
   }
-  router.all('/api/{*path}', () => {
+  router.all('/api{/*path}', () => {
     throw new DomainError('notFound', 'There is nothing at this address; see /api/openapi.json.');
   });
   return router;
