@@ -92,11 +92,10 @@ export function Shell({ session }: { session: Session }) {
       </a>
       {demo && <DemoBanner />}
       <div className="flex flex-1 lg:grid lg:grid-cols-[12.25rem_minmax(0,1fr)]">
-        <div
-          data-screen-only
-          className="sticky top-0 hidden h-[calc(100svh-var(--banner))] flex-col self-start overflow-y-auto border-r border-line px-3 py-4 lg:flex"
-        >
-          <Rooms session={session} brand />
+        <div data-screen-only className="hidden border-r border-line lg:block">
+          <div className="sticky top-0 flex h-[calc(100svh-var(--banner))] flex-col overflow-y-auto px-3 py-4">
+            <Rooms session={session} brand />
+          </div>
         </div>
         <div className="flex min-w-0 flex-1 flex-col">
           <header

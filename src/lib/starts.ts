@@ -75,7 +75,3 @@ export const STARTS: readonly Start[] = [
     },
   },
 ];
-
-export function startDocument(key: string | null): CaseDocument | undefined {
-  return STARTS.find((start) => start.key === key)?.document;
-}

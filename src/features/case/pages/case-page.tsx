@@ -6,6 +6,7 @@ import { Failure } from '#src/components/failure.tsx';
 import { PageTitle } from '#src/components/page-title.tsx';
 import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
 import { ApiError } from '#src/lib/api.ts';
+import { STARTS } from '#src/lib/starts.ts';
 import { caseQuery, versionQuery } from '../api.ts';
 import { VersionView } from '../components/version-view.tsx';
 import { Workspace } from '../components/workspace.tsx';
@@ -47,12 +48,24 @@ function Missing({ error, onRetry }: { error: unknown; onRetry: () => void }) {
   );
 }
 
+/** Where a new case begins: at the plain default, or at one of the Desk's starts; each keeps unsaved work of its own. */
+function newCase(parameters: URLSearchParams) {
+  const start = STARTS.find(({ key }) => key === parameters.get('start'));
+  if (start) {
+    const { key, title, document } = start;
+    const content = { title, tags: [], document };
+    return { subject: `case:new:start-${key}`, href: `/cases/new?start=${key}`, content };
+  }
+  const name = parameters.get('draft');
+  if (name === null) return { subject: 'case:new', href: '/cases/new', content: NEW };
+  const href = `/cases/new?draft=${encodeURIComponent(name)}`;
+  return { subject: `case:new:${name}`, href, content: NEW };
+}
+
 function NewCase() {
   const [parameters] = useSearchParams();
-  const name = parameters.get('draft');
-  const subject = name === null ? 'case:new' : `case:new:${name}`;
-  const href = name === null ? '/cases/new' : `/cases/new?draft=${encodeURIComponent(name)}`;
-  return <Workspace key={subject} subject={subject} href={href} content={NEW} saved={null} />;
+  const { subject, href, content } = newCase(parameters);
+  return <Workspace key={subject} subject={subject} href={href} content={content} saved={null} />;
 }
 
 function SavedCase({ id }: { id: string }) {
