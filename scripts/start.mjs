@@ -103,6 +103,8 @@ await live(async (shutdown) => {
   const env = {
     ...programEnvironment(settings, { runtimeUrl: urls.runtimeUrl }),
     STOP_WITH_STDIN: '1',
+    // A person at a terminal wants to hear of trouble, a service manager keeps the whole log.
+    LOG_LEVEL: process.env['LOG_LEVEL'] || (process.stdout.isTTY ? 'warn' : 'info'),
   };
   await serve(shutdown, settings, ['--enable-source-maps', join(ROOT, 'dist/server/main.js')], env);
   say(`Tallybarn is ready at http://${hostInUrl(settings.host)}:${settings.port}`);
