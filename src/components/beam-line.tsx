@@ -22,8 +22,9 @@ function Picture({ station, lit }: { station: BeamLineStation; lit: boolean }) {
   return (
     <span
       className={classNames(
-        'relative grid size-11 shrink-0 place-items-center rounded-full border-2 bg-paper transition-colors',
-        station.problem ? 'border-fault' : lit ? 'border-barn bg-barn-soft' : 'border-line',
+        'relative grid size-11 shrink-0 place-items-center rounded-full border-2 transition-colors',
+        station.problem ? 'border-fault' : lit ? 'border-barn' : 'border-line',
+        lit ? 'bg-barn-soft' : 'bg-paper',
         'group-hover:border-barn print:bg-sheet',
       )}
     >
@@ -38,13 +39,13 @@ function Picture({ station, lit }: { station: BeamLineStation; lit: boolean }) {
 function Words({ station, lit }: { station: BeamLineStation; lit: boolean }) {
   return (
     <span className="block min-w-0">
-      <span className="flex items-center gap-1.5 text-sm font-semibold text-muted">
-        {station.name}
-        {lit && (
-          <span className="rounded-full bg-barn-soft px-1.5 text-xs leading-4 font-semibold text-barn">
-            open
-          </span>
+      <span
+        className={classNames(
+          'text-sm font-semibold',
+          lit ? 'text-ink underline decoration-barn decoration-2 underline-offset-4' : 'text-muted',
         )}
+      >
+        {station.name}
       </span>
       <span className="block font-semibold">
         {station.main} <span className="font-normal text-muted">{station.detail}</span>

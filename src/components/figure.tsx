@@ -1,5 +1,5 @@
 import { useState, type ReactNode } from 'react';
-import { Check } from 'lucide-react';
+import { Check, ChevronDown } from 'lucide-react';
 import { formatNumber, fullDigits, unitSymbol } from '#shared/units/format.ts';
 import { classNames } from '#src/lib/class-names.ts';
 
@@ -13,6 +13,19 @@ interface FigureProps {
   label: string;
   /** A menu in place of the unit. */
   unitMenu?: ReactNode;
+}
+
+/** `1.23 × 10⁻⁵` with a raised exponent of the same face, which few monospaced fonts hold as signs. */
+export function Power({ text }: { text: string }) {
+  const match = /^(.*×\s10)([⁻⁰¹²³⁴-⁹]+)$/u.exec(text);
+  if (!match) return text;
+  const exponent = (match[2] ?? '').normalize('NFKC').replace('-', '−');
+  return (
+    <>
+      {match[1]}
+      <sup className="align-[0.45em] text-[0.7em] leading-none">{exponent}</sup>
+    </>
+  );
 }
 
 /** A computed number: without brackets, all digits on hover and focus, copied whole by a click. */
@@ -38,7 +51,7 @@ export function Figure({ value, unit, digits = 4, size = 'normal', label, unitMe
         onBlur={() => setCopied(false)}
         onMouseLeave={() => setCopied(false)}
       >
-        {formatNumber(value, digits)}
+        <Power text={formatNumber(value, digits)} />
         <span
           aria-hidden="true"
           className="pointer-events-none absolute top-full left-0 z-20 mt-1 hidden items-center gap-1 rounded border border-line bg-sheet px-2 py-1 font-mono text-sm font-normal text-ink shadow group-hover:flex group-focus-visible:flex"
@@ -67,17 +80,24 @@ interface AreaUnitMenuProps {
 export function AreaUnitMenu({ unit, onChange, label }: AreaUnitMenuProps) {
   const choices = AREA_CHOICES.includes(unit) ? AREA_CHOICES : [unit, ...AREA_CHOICES];
   return (
-    <select
-      aria-label={label}
-      value={unit}
-      onChange={(event) => onChange(event.target.value)}
-      className="rounded border border-transparent bg-transparent text-sm text-muted hover:border-edge"
-    >
-      {choices.map((choice) => (
-        <option key={choice} value={choice} className="bg-sheet text-ink">
-          {unitSymbol(choice)}
-        </option>
-      ))}
-    </select>
+    <span className="relative inline-flex items-center text-sm text-muted hover:text-ink">
+      <select
+        aria-label={label}
+        value={unit}
+        onChange={(event) => onChange(event.target.value)}
+        className="appearance-none rounded bg-transparent pr-4 field-sizing-content"
+      >
+        {choices.map((choice) => (
+          <option key={choice} value={choice} className="bg-sheet text-ink">
+            {unitSymbol(choice)}
+          </option>
+        ))}
+      </select>
+      <ChevronDown
+        aria-hidden="true"
+        className="pointer-events-none absolute right-0 size-3.5"
+        data-screen-only
+      />
+    </span>
   );
 }

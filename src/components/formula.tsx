@@ -46,7 +46,9 @@ export function Formula({ tex, display = false, className }: FormulaProps) {
   return (
     <span
       className={classNames(
-        display ? 'block overflow-x-auto overflow-y-hidden py-1' : 'inline-block',
+        display
+          ? 'block overflow-x-auto overflow-y-hidden py-1 [&_.katex]:text-left! [&_.katex-display]:my-0!'
+          : 'inline-block',
         className,
       )}
       // A formula wider than a telephone scrolls by itself; the keyboard must reach it too.

@@ -8,7 +8,7 @@ const DECADES = 14;
 
 function powerOfTen(value: number): string {
   const exponent = Math.round(Math.log10(value));
-  if (exponent >= -2 && exponent <= 3) return formatNumber(10 ** exponent, 1);
+  if (exponent >= -2 && exponent <= 3) return String(10 ** exponent);
   const raised = [...String(Math.abs(exponent))].map((d) => '⁰¹²³⁴⁵⁶⁷⁸⁹'[Number(d)] ?? '').join('');
   return `10${exponent < 0 ? '⁻' : ''}${raised}`;
 }

@@ -4,6 +4,7 @@ import { classNames } from '#src/lib/class-names.ts';
 import { usePalette } from '#src/lib/theme.ts';
 import { IconButton } from './button.tsx';
 import { PlotExportMenu } from './plot-export-menu.tsx';
+import { PlotHandle } from './plot-handle.tsx';
 import { styleOf } from './plot-option.ts';
 import type { PlotAxis, PlotPicture, PlotSeries, Scale } from './plot-types.ts';
 
@@ -112,6 +113,7 @@ export function Plot(props: PlotProps) {
       if (!next.delete(key)) next.add(key);
       return next;
     });
+  const descending = first !== undefined && (first[0]?.[0] ?? 0) > (first.at(-1)?.[0] ?? 0);
   const last = Math.max(0, (first?.length ?? 1) - 1);
   const ends = first ? [first[0]?.[0] ?? 0, first[last]?.[0] ?? 1] : [0, 1];
   const [low = 0, high = 1] = [Math.min(...ends), Math.max(...ends)];
@@ -154,20 +156,20 @@ export function Plot(props: PlotProps) {
           <PlotCanvas picture={picture} onPoint={onPoint} onWindow={setWindow} />
         </Suspense>
       </div>
-      <div className="mt-1 border-t border-line pt-2.5">
-        <div className="flex items-center gap-3" data-screen-only>
+      <div>
+        {/* Inset as the axis is, so that the handle stands below the crosshair. */}
+        <div className="flex pr-[11px] pl-[55px]" data-screen-only>
           <label htmlFor={sliderId} className="sr-only">
             Crosshair
           </label>
-          <input
+          <PlotHandle
             id={sliderId}
-            type="range"
             min={0}
             max={last}
             value={Math.min(cursor, last)}
             aria-valuetext={props.cursorText}
+            dir={descending ? 'rtl' : 'ltr'}
             onChange={(event) => onCursor(Number(event.target.value))}
-            className="h-4 w-full accent-barn"
           />
         </div>
         {props.readout}

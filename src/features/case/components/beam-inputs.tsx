@@ -4,6 +4,9 @@ import type { CaseDocument } from '#shared/contracts/cases.ts';
 import { REGIMES } from '#shared/contracts/estimates.ts';
 import type { Projectile, Species } from '#shared/contracts/estimates.ts';
 import { formatComposed, formatNumber } from '#shared/units/format.ts';
+import { wavelengthFromEnergy } from '#shared/units/de-broglie.ts';
+import { toInternal } from '#shared/units/quantity.ts';
+import { UNITS } from '#shared/units/vocabulary.ts';
 import { parseQuantity } from '#shared/units/parse.ts';
 import { useEditing } from '../editing/editor-context.ts';
 import { beamContext, dependsOnParticle, isWavelength } from '../model/beam-context.ts';
@@ -63,12 +66,19 @@ function useWaitingEnergy(): void {
 }
 
 function Hint() {
-  const { estimate } = useEditing();
+  const { draft, estimate, mass } = useEditing();
   if (!estimate) return null;
-  const { beta, wavelength } = estimate.kinematics;
+  const { energy, kinematics = 'nonrelativistic' } = draft.document;
+  const { length } = estimate.units;
+  const wavelength =
+    mass === undefined
+      ? null
+      : wavelengthFromEnergy(toInternal(energy, 'energy'), mass, kinematics) /
+        (UNITS.length[length] ?? 1);
   return (
     <>
-      β = {formatNumber(beta, 3)} · λ = {formatComposed(wavelength.value, wavelength.unit, 4)}
+      β = {formatNumber(estimate.kinematics.beta, 3)}
+      {wavelength !== null && ` · λ = ${formatComposed(wavelength, length, 4)}`}, in the lab
     </>
   );
 }

@@ -1,12 +1,14 @@
 import { useId, useState } from 'react';
+import { PlotHandle } from '#src/components/plot-handle.tsx';
 import type { Estimate, GoldenRule } from '#shared/contracts/estimates.ts';
 import { formatComposed } from '#shared/units/format.ts';
 import { useEditing } from '../editing/editor-context.ts';
 import { same } from '../model/same.ts';
 import { withGoldenRule } from '../model/table.ts';
 import { takeValue } from '../model/typing.ts';
-import { brief } from '../model/verdict.ts';
-import { QuantityField } from './typed-fields.tsx';
+import { brief as briefError } from '../model/verdict.ts';
+import { brief } from '../model/words.ts';
+import { NumberField, QuantityField } from './typed-fields.tsx';
 
 interface Seen {
   /** Everything but the box that the last line depends on. */
@@ -36,6 +38,7 @@ function useOtherBox(now: Seen): Seen | null {
 export function BoxSide({ rule, estimate }: { rule: GoldenRule; estimate: Estimate }) {
   const { draft, edit, readOnly } = useEditing();
   const sliderId = useId();
+  const unit = estimate.units.angle;
   const before = useOtherBox(seenOf(rule, estimate));
   const asked = draft.document.goldenRule?.boxSide;
   const shown = asked ?? rule.boxSide;
@@ -43,7 +46,20 @@ export function BoxSide({ rule, estimate }: { rule: GoldenRule; estimate: Estima
   const change = before ? Math.abs(rule.dcs.value - before.dcs) / Math.abs(before.dcs || 1) : null;
   return (
     <section aria-label="Box" className="rounded border border-line bg-sheet px-4.5 py-4">
-      <div className="grid items-start gap-x-6 gap-y-3 @2xl:grid-cols-[14rem_1fr]">
+      <div className="grid items-start gap-x-6 gap-y-3 sm:grid-cols-2 @3xl:grid-cols-[13rem_13rem_1fr]">
+        <NumberField
+          optional
+          pointer="/goldenRule/theta"
+          label={`Angle θ (${unit === 'deg' ? '°' : unit}, centre of mass)`}
+          value={draft.document.goldenRule?.theta}
+          rules={{ minimum: 0, what: 'The angle' }}
+          put={(document, theta) => withGoldenRule(document, { theta })}
+          hint={
+            draft.document.goldenRule?.theta === undefined
+              ? `The middle angle: ${brief(rule.theta)}.`
+              : undefined
+          }
+        />
         <QuantityField
           optional
           pointer="/goldenRule/boxSide"
@@ -64,9 +80,8 @@ export function BoxSide({ rule, estimate }: { rule: GoldenRule; estimate: Estima
           <label htmlFor={sliderId} className="text-sm text-muted">
             Move the walls
           </label>
-          <input
+          <PlotHandle
             id={sliderId}
-            type="range"
             min={-3}
             max={7}
             step={0.05}
@@ -81,15 +96,14 @@ export function BoxSide({ rule, estimate }: { rule: GoldenRule; estimate: Estima
                 ),
               );
             }}
-            className="h-9 w-full accent-barn"
-            data-screen-only
+            className="my-2"
           />
           <p role="status" className="min-h-5 text-sm">
             {before && change !== null ? (
               <>
                 Box {formatComposed(before.boxSide.value, before.boxSide.unit, 4)} →{' '}
                 {formatComposed(rule.boxSide.value, rule.boxSide.unit, 4)}: the last line changed by{' '}
-                <span className="font-mono">{brief(change)}</span> of itself.
+                <span className="font-mono">{briefError(change)}</span> of itself.
               </>
             ) : (
               <span className="text-muted">

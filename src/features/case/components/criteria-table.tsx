@@ -18,6 +18,55 @@ function Grade({ verdict }: { verdict: Validity['verdict'] }) {
   );
 }
 
+const SCALE = 132;
+
+/** Where the number stands between its limits, on a logarithmic scale of six decades. */
+function Scale({ value, limits }: Criterion) {
+  const middle = Math.log10(limits.sound * limits.usable) / 2;
+  const x = (v: number) => (SCALE * (Math.log10(v) - middle + 3)) / 6;
+  const at = Math.min(SCALE - 4, Math.max(4, value > 0 ? x(value) : 0));
+  const [a, b] = [x(limits.sound), x(limits.usable)];
+  return (
+    <svg viewBox={`0 0 ${SCALE} 22`} className="w-33 shrink-0" aria-hidden="true">
+      <path d={`M0,11H${a - 2}`} className="stroke-field" strokeWidth="4" />
+      <path
+        d={`M${a},11H${b - 2}`}
+        className="stroke-straw"
+        strokeWidth="4"
+        strokeDasharray="6 2"
+      />
+      <path
+        d={`M${b},11H${SCALE}`}
+        className="stroke-fault"
+        strokeWidth="4"
+        strokeDasharray="2 2"
+      />
+      <path d={`M${at},3V19`} className="stroke-ink" strokeWidth="2.5" />
+    </svg>
+  );
+}
+
+function Row({ criterion }: { criterion: Criterion }) {
+  const { name, value, limits, meaning, decides } = criterion;
+  return (
+    <li className="flex flex-wrap items-center justify-between gap-x-5 gap-y-1 border-t border-line py-2">
+      <div className="min-w-0 flex-1 basis-56">
+        <span className={decides ? 'font-semibold' : undefined}>{CRITERION_NAMES[name]}</span>{' '}
+        <span className="font-mono">{formatNumber(value, 3)}</span>
+        {decides && <span className="text-muted"> · decides</span>}
+        <span className="block text-xs text-muted">{meaning}</span>
+      </div>
+      <div className="flex flex-wrap items-center gap-x-4 gap-y-1">
+        <span className="text-xs text-muted">
+          <Scale {...criterion} />
+          sound &lt; {limits.sound} · usable &lt; {limits.usable}
+        </span>
+        <Grade verdict={gradeOf(criterion)} />
+      </div>
+    </li>
+  );
+}
+
 /** Is the first Born approximation to be trusted here: each criterion with its number, its limits and what it means. */
 export function CriteriaTable({ validity }: { validity: Validity }) {
   return (
@@ -25,56 +74,17 @@ export function CriteriaTable({ validity }: { validity: Validity }) {
       <h2 className="flex flex-wrap items-center gap-2 font-bold">
         Is first Born to be trusted? <Grade verdict={validity.verdict} />
       </h2>
-      <p className="mt-1 text-sm text-muted">
+      <p className="mt-1 mb-2.5 text-sm text-muted">
         {validity.basis === 'exact'
           ? `Against the exact calculation: ${decidingNumber(validity)}.`
           : 'Judged by criteria, not by an exact calculation of this case. The largest decides.'}{' '}
         {validity.reason}
       </p>
-      {validity.criteria.length > 0 && (
-        <div className="mt-3 overflow-x-auto" tabIndex={0} role="region" aria-label="Criteria">
-          <table className="w-full text-sm">
-            <thead>
-              <tr className="border-b border-line text-left text-muted">
-                <th scope="col" className="py-1 pr-4 font-normal">
-                  Criterion
-                </th>
-                <th scope="col" className="py-1 pr-4 text-right font-normal">
-                  Value
-                </th>
-                <th scope="col" className="py-1 pr-4 font-normal">
-                  Sound / usable below
-                </th>
-                <th scope="col" className="py-1 font-normal">
-                  Says
-                </th>
-              </tr>
-            </thead>
-            <tbody>
-              {validity.criteria.map((criterion) => (
-                <tr key={criterion.name} className="border-b border-line align-top last:border-0">
-                  <th scope="row" className="min-w-40 py-1.5 pr-4 text-left font-normal">
-                    <span className={criterion.decides ? 'font-semibold' : undefined}>
-                      {CRITERION_NAMES[criterion.name]}
-                    </span>
-                    {criterion.decides && <span className="text-muted"> (decides)</span>}
-                    <span className="block text-xs text-muted">{criterion.meaning}</span>
-                  </th>
-                  <td className="py-1.5 pr-4 text-right font-mono whitespace-nowrap">
-                    {formatNumber(criterion.value, 4)}
-                  </td>
-                  <td className="py-1.5 pr-4 font-mono whitespace-nowrap">
-                    {criterion.limits.sound} / {criterion.limits.usable}
-                  </td>
-                  <td className="py-1.5">
-                    <Grade verdict={gradeOf(criterion)} />
-                  </td>
-                </tr>
-              ))}
-            </tbody>
-          </table>
-        </div>
-      )}
+      <ul>
+        {validity.criteria.map((criterion) => (
+          <Row key={criterion.name} criterion={criterion} />
+        ))}
+      </ul>
     </section>
   );
 }

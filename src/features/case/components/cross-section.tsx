@@ -6,13 +6,29 @@ import { METHOD_NAMES } from '../model/words.ts';
 import { CriteriaTable } from './criteria-table.tsx';
 import { Distribution } from './distribution.tsx';
 import { FiguresStrip } from './figures-strip.tsx';
+import { KinematicsList } from './kinematics-list.tsx';
+import { PotentialSketch } from './potential-sketch.tsx';
 
+/** What to beware of stands out; what only rounds the picture off stands small. */
 export function Warnings({ estimate }: { estimate: Estimate }) {
-  return estimate.warnings.map((warning) => (
-    <Notice key={`${warning.code} ${warning.message}`} tone="attention">
-      {warning.message}
-    </Notice>
-  ));
+  const cautions = estimate.warnings.filter(({ level }) => level !== 'info');
+  const remarks = estimate.warnings.filter(({ level }) => level === 'info');
+  return (
+    <>
+      {cautions.map((warning) => (
+        <Notice key={`${warning.code} ${warning.message}`} tone="attention">
+          {warning.message}
+        </Notice>
+      ))}
+      {remarks.length > 0 && (
+        <ul className="flex flex-col gap-1 px-1 text-sm text-muted">
+          {remarks.map((remark) => (
+            <li key={`${remark.code} ${remark.message}`}>{remark.message}</li>
+          ))}
+        </ul>
+      )}
+    </>
+  );
 }
 
 function UnavailableMethods({ estimate }: { estimate: Estimate }) {
@@ -39,9 +55,19 @@ export function CrossSection({ estimate, fileName }: { estimate: Estimate; fileN
       >
         <Distribution estimate={estimate} dimmed={stale} fileName={fileName} />
       </section>
-      <Warnings estimate={estimate} />
       <UnavailableMethods estimate={estimate} />
-      <CriteriaTable validity={estimate.validity} />
+      <div className="grid gap-4 @3xl:grid-cols-[20rem_minmax(0,1fr)]">
+        <section
+          aria-label="Potential and wavelength"
+          className="rounded border border-line bg-sheet px-4.5 py-4"
+        >
+          <h2 className="mb-2 font-bold">V(r) and the wavelength</h2>
+          <PotentialSketch estimate={estimate} dimmed={stale} />
+          <KinematicsList estimate={estimate} />
+        </section>
+        <CriteriaTable validity={estimate.validity} />
+      </div>
+      <Warnings estimate={estimate} />
     </div>
   );
 }

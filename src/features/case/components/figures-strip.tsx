@@ -1,5 +1,6 @@
 import { Chip } from '#src/components/chip.tsx';
 import { AreaUnitMenu, Figure } from '#src/components/figure.tsx';
+import { Notice } from '#src/components/notice.tsx';
 import { classNames } from '#src/lib/class-names.ts';
 import { METHODS } from '#shared/contracts/estimates.ts';
 import type { Estimate, Integral, Method } from '#shared/contracts/estimates.ts';
@@ -18,19 +19,20 @@ const LABELS: Record<Kind, string> = {
 
 interface CellProps {
   label: string;
+  method: string;
   integral: Integral;
   unit: string;
   onUnit: (unit: string) => void;
 }
 
-function Cell({ label, integral, unit, onUnit }: CellProps) {
+function Cell({ label, method, integral, unit, onUnit }: CellProps) {
   if ('divergent' in integral) {
     return (
       <>
         <dt className="text-sm text-muted">{label}</dt>
         <dd>
           <span className="block text-lg font-semibold">divergent</span>
-          <span className="block text-xs text-muted">{integral.reason}</span>
+          <span className="block text-xs text-muted">{method} · reason below</span>
         </dd>
       </>
     );
@@ -47,12 +49,16 @@ function Cell({ label, integral, unit, onUnit }: CellProps) {
       <dd>
         <Figure
           size="large"
-          label={label}
+          label={`${label}, ${method}`}
           value={integral.value * factor}
           unit={unit}
-          unitMenu={<AreaUnitMenu unit={unit} onChange={onUnit} label={`Unit of ${label}`} />}
+          unitMenu={
+            <AreaUnitMenu unit={unit} onChange={onUnit} label={`Unit of ${label}, ${method}`} />
+          }
         />
-        <span className="block text-xs text-muted">{numericsText(errors)}</span>
+        <span className="block text-xs text-muted">
+          {method} · {numericsText(errors)}
+        </span>
       </dd>
     </>
   );
@@ -98,26 +104,42 @@ export function FiguresStrip({ estimate, dimmed, unit, onUnit }: FiguresStripPro
     if (!result || 'unavailable' in result) return [];
     return kindsOf(estimate, method).map((kind) => ({
       key: `${method} ${kind}`,
-      label: `${LABELS[kind]}, ${METHOD_NAMES[method]}`,
+      label: LABELS[kind],
+      method: METHOD_NAMES[method],
       integral: result[kind],
     }));
   });
+  const divergent = shown.flatMap(({ label, integral }) =>
+    'divergent' in integral ? [{ label, reason: integral.reason }] : [],
+  );
   return (
-    <dl
-      aria-busy={dimmed || undefined}
-      className={classNames(
-        'grid grid-cols-2 gap-px overflow-clip rounded border border-line bg-line transition-opacity delay-100 @2xl:flex @2xl:[&>div]:flex-1',
-        dimmed && '[&_dd]:opacity-45',
-      )}
-    >
-      {shown.map(({ key, ...cell }) => (
-        <div key={key} className="bg-sheet px-4 py-3">
-          <Cell {...cell} unit={unit} onUnit={onUnit} />
+    <>
+      <dl
+        aria-busy={dimmed || undefined}
+        className={classNames(
+          'grid grid-cols-2 gap-px overflow-clip rounded border border-line bg-line transition-opacity delay-100 @2xl:flex @2xl:[&>div]:flex-1',
+          dimmed && '[&_dd]:opacity-45',
+        )}
+      >
+        {shown.map(({ key, ...cell }) => (
+          <div key={key} className="bg-sheet px-4 py-3">
+            <Cell {...cell} unit={unit} onUnit={onUnit} />
+          </div>
+        ))}
+        <div className="bg-sheet px-4 py-3 max-@2xl:last:odd:col-span-2">
+          <VerdictCell estimate={estimate} />
         </div>
-      ))}
-      <div className="bg-sheet px-4 py-3 max-@2xl:last:odd:col-span-2">
-        <VerdictCell estimate={estimate} />
-      </div>
-    </dl>
+      </dl>
+      {divergent.length > 0 && (
+        <Notice tone="info">
+          {divergent.map(({ label, reason }) => (
+            <p key={label}>
+              <b className="font-semibold">{label}</b> diverges:{' '}
+              {reason.charAt(0).toLowerCase() + reason.slice(1)}
+            </p>
+          ))}
+        </Notice>
+      )}
+    </>
   );
 }

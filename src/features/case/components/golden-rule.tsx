@@ -3,12 +3,13 @@ import { Formula } from '#src/components/formula.tsx';
 import { Notice } from '#src/components/notice.tsx';
 import { classNames } from '#src/lib/class-names.ts';
 import type { Estimate, GoldenRule as Sheet } from '#shared/contracts/estimates.ts';
-import { formatComposed, formatNumber, unitSymbol } from '#shared/units/format.ts';
+import { formatNumber, unitSymbol } from '#shared/units/format.ts';
 import { useEditing } from '../editing/editor-context.ts';
 import { chainOf, transformTex } from '../model/chain.ts';
 import type { ChainStep } from '../model/chain.ts';
 import { brief } from '../model/verdict.ts';
 import { BoxSide } from './box-side.tsx';
+import { PotentialSketch } from './potential-sketch.tsx';
 import { Window } from './golden-rule-window.tsx';
 import { Warnings } from './cross-section.tsx';
 
@@ -148,20 +149,19 @@ export function GoldenRuleSheet({ estimate }: { estimate: Estimate }) {
         className="flex flex-col gap-2 rounded border border-line bg-sheet px-4.5 py-4"
       >
         <h2 className="font-bold">Where the matrix element comes from</h2>
-        {transforms.map((tex, index) => (
-          <Formula key={index} display tex={tex} />
-        ))}
-        <Quadrature rule={rule} />
+        <div className="grid items-center gap-x-6 gap-y-3 @2xl:grid-cols-[minmax(0,1fr)_18rem]">
+          <div className="flex min-w-0 flex-col gap-2">
+            {transforms.map((tex, index) => (
+              <Formula key={index} display tex={tex} />
+            ))}
+            <Quadrature rule={rule} />
+          </div>
+          <PotentialSketch estimate={estimate} dimmed={stale} />
+        </div>
       </section>
       <Window rule={rule} />
       <FactorsAfter rule={rule} />
       <Warnings estimate={estimate} />
-      <p className="text-sm text-muted">
-        At θ = {formatNumber(rule.theta, 5)}
-        {estimate.units.angle === 'deg' ? '°' : ` ${estimate.units.angle}`}, centre of mass, with{' '}
-        {formatComposed(estimate.kinematics.energyCm.value, estimate.kinematics.energyCm.unit, 6)}{' '}
-        in the centre of mass. Elastic scattering only: inelastic channels are out of scope.
-      </p>
     </div>
   );
 }

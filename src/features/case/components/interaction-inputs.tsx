@@ -2,13 +2,12 @@ import { Plus } from 'lucide-react';
 import { Button } from '#src/components/button.tsx';
 import { useEditing } from '../editing/editor-context.ts';
 import { addTerm, defaultTerm } from '../model/terms.ts';
-import { PotentialSketch } from './potential-sketch.tsx';
 import { TermInputs } from './term-inputs.tsx';
 
 export const MOST_TERMS = 12;
 
 export function InteractionInputs() {
-  const { draft, forms, editDocument, readOnly, estimate, stale } = useEditing();
+  const { draft, forms, editDocument, readOnly } = useEditing();
   const { terms } = draft.document.interaction;
   const next = forms.find(({ key }) => key === 'gaussian') ?? forms[0];
   return (
@@ -33,7 +32,6 @@ export function InteractionInputs() {
           <Plus aria-hidden="true" className="size-4" /> Add a term
         </Button>
       )}
-      {estimate && <PotentialSketch estimate={estimate} dimmed={stale} />}
     </>
   );
 }

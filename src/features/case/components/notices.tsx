@@ -1,6 +1,7 @@
 import { Button } from '#src/components/button.tsx';
 import { Notice } from '#src/components/notice.tsx';
 import type { Station } from '#src/components/station-glyph.tsx';
+import type { VersionHead } from '#shared/contracts/cases.ts';
 import type { FieldError } from '#shared/errors.ts';
 import type { Work } from '../editing/use-work.ts';
 import { momentText } from '../model/moments.ts';
@@ -8,7 +9,7 @@ import { stationOf } from '../model/stations.ts';
 import { STATION_NAMES } from './inputs-panel.tsx';
 
 /** What became of unsaved work. */
-export function WorkNotices({ work }: { work: Work }) {
+export function WorkNotices({ work, newest }: { work: Work; newest: VersionHead | null }) {
   const { restoredAt, other } = work;
   return (
     <>
@@ -40,6 +41,12 @@ export function WorkNotices({ work }: { work: Work }) {
         >
           There are unsaved changes from {momentText(other.savedAt)}, made in another tab or before
           the browser was closed.
+        </Notice>
+      )}
+      {work.overtaken && newest && (
+        <Notice tone="attention">
+          Version {newest.n} was saved by {newest.author.name}, {momentText(newest.createdAt)},
+          after you began. Your changes are kept; saving will set both side by side, field by field.
         </Notice>
       )}
       {!work.kept && (

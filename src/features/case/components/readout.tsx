@@ -26,7 +26,7 @@ export function Readout({ curves, place, units, angle }: ReadoutProps) {
   if (!first) return null;
   const single = curves.length === 1;
   return (
-    <dl className="mt-1.5 flex flex-wrap gap-x-8 gap-y-1.5">
+    <dl className="mt-2 flex flex-wrap gap-x-8 gap-y-1.5 border-t border-line pt-2.5">
       <Item name={`angle, ${units.frame}`}>θ = {angle}</Item>
       {first.q !== null && (
         <Item name="momentum transfer">q = {formatComposed(first.q, units.wavenumber, 5)}</Item>

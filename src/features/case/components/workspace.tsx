@@ -174,7 +174,7 @@ export function Workspace({ subject, href, content, saved }: WorkspaceProps) {
         section={section}
         notices={
           <>
-            <WorkNotices work={work} />
+            <WorkNotices work={work} newest={saved?.detail.version ?? null} />
             {forms.isError && (
               <Failure
                 what="The list of interaction forms"

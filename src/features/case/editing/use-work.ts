@@ -25,6 +25,8 @@ export interface Work {
   dirty: boolean;
   /** False when the browser refuses to keep unsaved work. */
   kept: boolean;
+  /** Someone saved a version after the one this unsaved work rests on. */
+  overtaken: boolean;
   /** When the unsaved work shown was typed, if it was taken up again. */
   restoredAt: string | null;
   /** Throws the unsaved work away and shows what is saved. */
@@ -62,6 +64,7 @@ export function useWork({ account, subject, href, saved, readOnly }: WorkInput):
   const editor = useEditor(found?.value.draft ?? draftOf(saved.content));
   const draft = editor.state.present;
   const [kept, setKept] = useState(true);
+  const [seen, setSeen] = useState(saved.base?.etag);
 
   const dirty = useMemo(() => {
     if (readOnly) return false;
@@ -70,6 +73,17 @@ export function useWork({ account, subject, href, saved, readOnly }: WorkInput):
     const open = Object.values(draft.open).some(({ problem }) => problem !== null);
     return open || !same(contentOf(draft), reference);
   }, [readOnly, base, saved.content, draft]);
+
+  // The case may be saved or withdrawn elsewhere while this page is open.
+  if (saved.base && base && saved.base.etag !== seen) {
+    setSeen(saved.base.etag);
+    if (saved.base.version === base.version) {
+      setBase({ ...base, etag: saved.base.etag });
+    } else if (saved.base.version > base.version && !dirty) {
+      setBase({ ...saved.base, content: saved.content });
+      editor.load(draftOf(saved.content));
+    }
+  }
 
   useEffect(() => {
     if (readOnly) return;
@@ -91,6 +105,7 @@ export function useWork({ account, subject, href, saved, readOnly }: WorkInput):
     setBase,
     dirty,
     kept,
+    overtaken: dirty && base !== null && (saved.base?.version ?? 0) > base.version,
     restoredAt: dirty ? restoredAt : null,
     discard: () => {
       editor.load(draftOf(saved.content));

@@ -48,10 +48,9 @@ export function sketchOf(potential: Potential): Sketch {
   const complex = values.some(({ im }) => im !== 0);
   const part = (name: string, read: (v: { re: number; im: number }) => number): SketchCurve => ({
     name,
-    points: within.map((i) => ({
-      x: potential.r[i] ?? 0,
-      y: Math.min(top, Math.max(-top, read(values[i] ?? { re: 0, im: 0 }))),
-    })),
+    points: within
+      .map((i) => ({ x: potential.r[i] ?? 0, y: read(values[i] ?? { re: 0, im: 0 }) }))
+      .filter(({ y }) => Math.abs(y) <= top),
   });
   const curves = complex
     ? [part('Re V', ({ re }) => re), part('Im V', ({ im }) => im)]

@@ -1,8 +1,8 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { Estimate, InteractionTerm } from '#shared/contracts/estimates.ts';
 import type { FormInfo } from '#shared/contracts/forms.ts';
-import { formatComposed, formatQuantity } from '#shared/units/format.ts';
-import { anglesText, formLabel, projectileName, termValueText } from './words.ts';
+import { formatComposed } from '#shared/units/format.ts';
+import { anglesText, briefQuantity, formLabel, projectileName, termValueText } from './words.ts';
 
 export const STATIONS = ['beam', 'target', 'interaction', 'detectors'] as const;
 export type StationKey = (typeof STATIONS)[number];
@@ -20,12 +20,27 @@ export interface StationSummary {
   detail: string;
 }
 
+/** A TeX symbol in plain characters: V_0 → V₀. */
+export function symbolText(tex: string): string {
+  return tex
+    .replace(/\\(?:mathrm|text)\{([^}]*)\}/g, '$1')
+    .replace(/\\alpha/g, 'α')
+    .replace(/_\{?(\d+)\}?/g, (_, low: string) =>
+      [...low].map((d) => '₀₁₂₃₄₅₆₇₈₉'[Number(d)] ?? d).join(''),
+    )
+    .replace(/[{}]/g, '');
+}
+
 function shortTerm(term: InteractionTerm, forms: readonly FormInfo[]): string {
   const form = forms.find(({ key }) => key === term.form);
-  const shown = (form?.parameters ?? []).flatMap(({ key }) => {
+  const shown = (form?.parameters ?? []).flatMap(({ key, symbol }) => {
     const value = term[key];
     const zero = typeof value === 'object' && value.value === 0;
-    return value === undefined || zero ? [] : [`${key} ${termValueText(value)}`];
+    return value === undefined || zero
+      ? []
+      : [
+          `${symbolText(symbol)} ${typeof value === 'object' ? briefQuantity(value) : termValueText(value)}`,
+        ];
   });
   return shown.slice(0, 3).join(' · ');
 }
@@ -42,7 +57,7 @@ export function summarise(
   const [first] = terms;
   return {
     beam: {
-      main: `${projectileName(document.projectile)}, ${formatQuantity(document.energy)}`,
+      main: `${projectileName(document.projectile)}, ${briefQuantity(document.energy)}`,
       detail: `lab${k ? ` · k = ${formatComposed(k.value, k.unit, 4)}` : ''}`,
     },
     target: {

@@ -37,6 +37,16 @@ export function digits(value: number): string {
   return fullDigits(value).replaceAll('-', '−');
 }
 
+/** A value for reading in a line: six digits at most, none that nobody wrote. */
+export function brief(value: number, figures = 6): string {
+  return digits(Number(value.toPrecision(figures)));
+}
+
+export function briefQuantity({ value, unit }: Quantity, figures = 6): string {
+  const symbol = unitSymbol(unit);
+  return symbol === '°' ? `${brief(value, figures)}°` : `${brief(value, figures)} ${symbol}`;
+}
+
 export function quantityText(quantity: Quantity): string {
   const symbol = unitSymbol(quantity.unit);
   return symbol === '°' ? `${digits(quantity.value)}°` : `${digits(quantity.value)} ${symbol}`;
