@@ -2,11 +2,12 @@ import { queryOptions, useQuery } from '@tanstack/react-query';
 import { sessionSchema, type Session } from '#shared/contracts/auth.ts';
 import { PERMISSIONS, type Action } from '#shared/roles.ts';
 import { ApiError, request } from './api.ts';
+import { askForSession } from './session-loss.ts';
 
 /** Who is signed in; null when nobody is. */
 export const sessionQuery = queryOptions({
   queryKey: ['session'],
-  queryFn: async ({ signal }): Promise<Session | null> => {
+  queryFn: async ({ signal, client }): Promise<Session | null> => {
     try {
       return await request('/api/auth/session', {
         answer: sessionSchema,
@@ -14,7 +15,10 @@ export const sessionQuery = queryOptions({
         onSignedOut: 'refuse',
       });
     } catch (error) {
-      if (error instanceof ApiError && error.code === 'unauthenticated') return null;
+      if (!(error instanceof ApiError) || error.code !== 'unauthenticated') throw error;
+      // A page that is open stays open, with all that stands on it, while its person signs in again.
+      if (!client.getQueryData<Session | null>(['session'])) return null;
+      askForSession();
       throw error;
     }
   },

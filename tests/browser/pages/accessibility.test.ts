@@ -58,6 +58,14 @@ describe.each(VIEWS)('in $theme at $width px', (view) => {
   });
 });
 
+test.each(['light', 'dark'] as const)('the menu of a narrow screen, in %s', async (theme) => {
+  const { page, goTo } = await stage.visitor(owner, { width: 390, theme });
+  await goTo('/');
+  await page.getByRole('button', { name: 'Menu', exact: true }).click();
+  await page.getByRole('dialog', { name: 'Menu' }).waitFor();
+  await expectAccessible(page);
+});
+
 test('every page fits a screen of 360 px', async () => {
   const { page, goTo } = await stage.visitor(owner, { width: 390 });
   await page.setViewportSize({ width: 360, height: 740 });

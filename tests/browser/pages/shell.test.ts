@@ -71,6 +71,20 @@ test('the menu of a narrow screen holds the focus and gives it back', async () =
   expect(await menu.count()).toBe(0);
 });
 
+test('a part of the page that does not arrive is reported in words, and the rooms stay', async () => {
+  const visitor = await stage.visitor('theorist');
+  visitor.console.expect(/Failed to (load|fetch)|account-page|dynamically imported/);
+  const { page, goTo } = visitor;
+  await page.route('**/assets/account-page-*.js', (route) => route.abort());
+  await goTo('/');
+  await page.getByRole('link', { name: 'Account' }).click();
+  await page.getByRole('heading', { name: 'This page could not be fetched', level: 1 }).waitFor();
+  await page.getByRole('navigation', { name: 'Rooms' }).waitFor();
+  await page.unroute('**/assets/account-page-*.js');
+  await page.getByRole('button', { name: 'Reload the page' }).click();
+  await page.getByRole('heading', { name: 'Account', level: 1 }).waitFor();
+});
+
 test('the demo is announced on every page', async () => {
   const { page, goTo } = await stage.visitor('theorist');
   await goTo('/account');

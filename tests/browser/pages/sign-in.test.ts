@@ -92,6 +92,43 @@ test('a lost session is regained over the page, at the same address', async () =
   expect(new URL(page.url()).search).toBe('?q=foil');
 });
 
+test('signing out in one tab asks the other to sign in again, and keeps what stands there', async () => {
+  const visitor = await stage.visitor(person);
+  visitor.console.expect(/401 \(Unauthorized\).*\/api\//);
+  const { page, context, goTo } = visitor;
+  await goTo('/account');
+  await page.getByLabel('Current password').fill('half typed');
+  await context.clearCookies();
+  await page.clock.install();
+  await page.clock.fastForward(120_000);
+  await page.evaluate(() => window.dispatchEvent(new Event('visibilitychange')));
+  const dialog = page.getByRole('dialog', { name: 'Sign in again' });
+  await dialog.waitFor();
+  await dialog.getByLabel('Password').fill(TEST_PASSWORD);
+  await page.keyboard.press('Enter');
+  await dialog.waitFor({ state: 'detached' });
+  expect(await page.getByLabel('Current password').inputValue()).toBe('half typed');
+});
+
+test('declining leaves the page as it is and says what is not possible', async () => {
+  const visitor = await stage.visitor(person);
+  visitor.console.expect(/401 \(Unauthorized\).*\/api\//);
+  const { page, context, goTo } = visitor;
+  await goTo('/cases');
+  await page.getByRole('link', { name: 'Neutrons on a foil' }).waitFor();
+  await context.clearCookies();
+  await page.getByLabel('Search the cases').fill('foil');
+  await page.getByRole('dialog', { name: 'Sign in again' }).waitFor();
+  await page.keyboard.press('Escape');
+  await page.getByText('You are signed out.').waitFor();
+  expect(await page.getByLabel('Search the cases').inputValue()).toBe('foil');
+  await page.getByRole('button', { name: 'Sign in again' }).click();
+  const dialog = page.getByRole('dialog', { name: 'Sign in again' });
+  await dialog.getByLabel('Password').fill(TEST_PASSWORD);
+  await page.keyboard.press('Enter');
+  await page.getByRole('link', { name: 'Neutrons on a foil' }).waitFor();
+});
+
 test('signing out offers to clear unsaved work of this computer', async () => {
   const { page, goTo } = await stage.visitor(person);
   await goTo('/');
