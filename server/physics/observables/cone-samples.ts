@@ -54,7 +54,7 @@ interface Sample {
 const RULE = gaussRule(16);
 const AIM = 4 * UNIT_ROUNDOFF;
 const MAX_ROUNDS = 40;
-const MAX_TRANSFORMS = 1_500_000;
+const MAX_TRANSFORMS = 1_000_000;
 const CALLS_PER_PANEL = 48;
 
 /**
@@ -138,7 +138,7 @@ function add(panels: readonly Panel[], pick: (panel: Panel) => Moments): Moments
  * @param k wave number, 1/angstrom, > 0
  * @param scales lengths of the interaction
  * @returns nodes, weights, values and the three moments with the difference of the two orders
- * @throws DomainError('tooMuchWork') where more than 1.5 million transforms would be needed
+ * @throws DomainError('tooMuchWork') where more than a million transforms would be needed
  *
  * Source: textbook; P. J. Davis and P. Rabinowitz, Methods of Numerical Integration, 2nd ed. (1984), ch. 6.
  */
