@@ -55,7 +55,7 @@ const carbon: DemoCase = {
   versions: [
     {
       author: 'experimentalist',
-      note: 'Shows how the screening length rules the forward part. Here the Bohr radius over the cube root of 6.',
+      note: 'Shows how the screening length rules the forward part, and that 1 keV is too slow for first order to be valid here. Length: the Bohr radius over the cube root of 6.',
       document: screenedCarbon(BOHR_LENGTH),
     },
     {
@@ -81,7 +81,7 @@ const fastOnCarbon: DemoCase = {
   versions: [
     {
       author: 'theorist',
-      note: 'Shows relativistic kinematics and the spin factor of a fast electron at an energy far above our gun, where first order is trusted on a light element.',
+      note: 'Shows relativistic kinematics at an energy far above our gun, where first order serves for a light element. The spin of the electron is left out, and the warning says what it would change at wide angles.',
       document: {
         ...screenedCarbon(THOMAS_FERMI_LENGTH),
         energy: { value: 100, unit: 'keV' },
