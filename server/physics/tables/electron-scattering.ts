@@ -33,7 +33,7 @@ const ROWS: ReadonlyMap<string, Row> = new Map(table.atoms.map((row) => [String(
  * Formula: f_e(s) = Σ a_i exp(-b_i s²), s = sin(theta/2)/lambda = q/4π; first Born, electron of rest mass, attraction positive.
  *
  * @param symbol of an element from hydrogen to californium
- * @returns a in angstrom, b in angstrom²; the fit holds to about 1 % of f_e up to s = 1.5 per angstrom, and is low by 0.2 to 31 % at 2
+ * @returns a in angstrom, b in angstrom²; the fit holds to 1 % of f_e for most atoms up to s = 1.5 per angstrom (Rb, Cs 7 %), and is low by up to 31 % at 2
  * @throws DomainError('invalidInput') for an unknown symbol or one beyond californium
  *
  * Validity: s up to `fittedTo`, beyond which Gaussians die while the true factor falls as s^-2: continue with the Mott-Bethe formula

@@ -45,7 +45,7 @@ const ROWS: Readonly<Record<XrayEdition, ReadonlyMap<string, Row>>> = {
  *
  * @param symbol of an element from hydrogen to californium
  * @param edition the fit; Waasmaier and Kirfel hold to s = 6 per angstrom, IT92 to 2
- * @returns a and c in electrons, b in angstrom²; f(0) departs from Z by at most 0.06 electrons, at worst 1e-3 of Z
+ * @returns a and c in electrons, b in angstrom²; f(0) departs from Z by at most 0.06 electrons, at worst 1.1e-3 of Z
  * @throws DomainError('invalidInput') for an unknown symbol or one beyond californium
  *
  * Validity: up to `fittedTo` and never beyond, where the fit tends to c, or grows (a width of C is slightly negative), while the true
