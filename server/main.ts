@@ -52,9 +52,11 @@ async function listen(server: Server, { host, port }: ServerConfig): Promise<Add
 /** Lets requests under way finish, within a bound. */
 async function drain(server: Server): Promise<void> {
   const closed = new Promise((resolve) => server.close(resolve));
-  server.closeIdleConnections();
+  // A connection falls idle when its last answer is sent, so they are looked for until none is left.
+  const sweep = setInterval(() => server.closeIdleConnections(), 50);
   const bound = setTimeout(() => server.closeAllConnections(), STOP_MILLISECONDS);
   await closed;
+  clearInterval(sweep);
   clearTimeout(bound);
 }
 

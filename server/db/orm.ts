@@ -30,6 +30,8 @@ export function ormConfig({ databaseUrl, ownerUrl, poolSize = 10 }: OrmOptions) 
     pool: { min: 0, max: poolSize, acquireTimeoutMillis: 10_000 },
     driverOptions: {
       connection: {
+        // The driver reads the whole address, with what stands behind its question mark (sslmode).
+        connectionString: ownerUrl ?? databaseUrl,
         application_name: 'tallybarn',
         connectionTimeoutMillis: 5_000,
         keepAlive: true,

@@ -24,6 +24,8 @@ export interface TestAppOptions {
   config?: Partial<AppConfig>;
   compute?: Compute;
   routes?: readonly Route[];
+  /** Another way to the same database, such as one that can be cut. */
+  databaseUrl?: (url: string) => string;
 }
 
 export interface TestApp {
@@ -80,7 +82,8 @@ function movableClock() {
 /** The whole application on a throw-away database, listening on a free port of this machine. */
 export async function createTestApp(options: TestAppOptions = {}): Promise<TestApp> {
   const database = await createTestDatabase();
-  const orm = await openOrm({ databaseUrl: database.runtimeUrl });
+  const databaseUrl = options.databaseUrl?.(database.runtimeUrl) ?? database.runtimeUrl;
+  const orm = await openOrm({ databaseUrl });
   const config = testConfig(options.config ?? {});
   const clock = movableClock();
   const lines: string[] = [];

@@ -1,4 +1,5 @@
 import { afterEach, expect, test } from 'vitest';
+import { ENTITIES } from '#server/db/entities.ts';
 import { migrate } from '#server/db/migrate.ts';
 import { MIGRATIONS } from '#server/db/migrations-list.ts';
 import { openOrm } from '#server/db/orm.ts';
@@ -67,4 +68,40 @@ test('a migration that fails leaves the database as it was', async () => {
   expect(tables).toEqual([{ accounts: null }]);
   await query(ownerUrl, 'drop table outbox');
   expect(await migrate({ databaseUrl, ownerUrl })).toEqual(NAMES);
+});
+
+test('every entity finds its table and all its columns, as the runtime role', async () => {
+  database = await createTestDatabase();
+  const orm = await openOrm({ databaseUrl: database.runtimeUrl, poolSize: 1 });
+  try {
+    for (const entity of ENTITIES) await orm.em.fork().find(entity.meta.className, {}, { limit: 1 });
+    expect(ENTITIES.length).toBeGreaterThan(7);
+  } finally {
+    await orm.close(true);
+  }
+});
+
+test('what stands behind the question mark of an address counts, and passwords may hold any sign', async () => {
+  database = await createTestDatabase();
+  const { adminUrl, runtimeUrl } = database;
+  const strict = new URL(runtimeUrl);
+  strict.searchParams.set('sslmode', 'verify-full');
+  const orm = await openOrm({ databaseUrl: strict.href, poolSize: 1 });
+  await expect(orm.em.getConnection().execute('select 1')).rejects.toThrow(/SSL/);
+  await orm.close(true);
+
+  const role = `odd_${database.name}`;
+  const password = 'a/b@c:d?e#f%20é';
+  await query(adminUrl, `create role ${role} login password '${password}'`);
+  try {
+    const odd = new URL(runtimeUrl);
+    odd.username = role;
+    odd.password = encodeURIComponent(password);
+    const opened = await openOrm({ databaseUrl: odd.href, poolSize: 1 });
+    const rows = await opened.em.getConnection().execute('select current_user as me');
+    await opened.close(true);
+    expect(rows).toEqual([{ me: role }]);
+  } finally {
+    await query(adminUrl, `drop role ${role}`);
+  }
 });

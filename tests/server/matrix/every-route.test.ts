@@ -39,7 +39,7 @@ describe.each(all.map((route) => [route.operationId, route] as const))('%s', (id
     const walked = await walkRoute(app, route, rule);
     expect(walked.filter(({ expected, got }) => expected !== got)).toEqual([]);
     expect(walked.filter(({ status }) => status >= 500)).toEqual([]);
-  });
+  }, 120_000);
 });
 
 test.each(guarded.map((route) => [route.operationId, route] as const))(
