@@ -41,7 +41,7 @@ function searchConditions(q: string): Condition[] {
   });
 }
 
-function conditionsOf(actor: Actor, query: CaseListQuery): Condition[] {
+function conditionsOf(actor: Pick<Actor, 'id' | 'role'>, query: CaseListQuery): Condition[] {
   const { q, status, tag, campaign, owner } = query;
   const conditions = [reachedBy(actor, 'case.read'), ...searchConditions(q ?? '')];
   if (status !== undefined) conditions.push({ sql: `${statusOf('v.id')} = ?`, params: [status] });
@@ -56,7 +56,7 @@ function conditionsOf(actor: Actor, query: CaseListQuery): Condition[] {
 /** The page of cases the actor may read: decided by the database before paging, so that totals and pages tell nothing of others. */
 export async function listCases(
   em: EntityManager,
-  actor: Actor,
+  actor: Pick<Actor, 'id' | 'role'>,
   query: CaseListQuery,
 ): Promise<{ rows: CaseRow[]; total: number }> {
   const conditions = conditionsOf(actor, query);
