@@ -6,7 +6,11 @@ export function PageHead({ title, children }: { title: string; children?: ReactN
   return (
     <div className="flex min-h-9 flex-wrap items-center justify-between gap-3">
       <PageTitle title={title} />
-      {children}
+      {children && (
+        <div data-screen-only className="flex flex-wrap gap-2">
+          {children}
+        </div>
+      )}
     </div>
   );
 }

@@ -91,8 +91,8 @@ export function Shell({ session }: { session: Session }) {
         Skip to the page
       </a>
       {demo && <DemoBanner />}
-      <div className="flex flex-1 lg:grid lg:grid-cols-[12.25rem_minmax(0,1fr)]">
-        <div data-screen-only className="hidden border-r border-line lg:block">
+      <div className="flex flex-1">
+        <div data-screen-only className="hidden w-49 shrink-0 border-r border-line lg:block">
           <div className="sticky top-0 flex h-[calc(100svh-var(--banner))] flex-col overflow-y-auto px-3 py-4">
             <Rooms session={session} brand />
           </div>

@@ -6,6 +6,7 @@ export type ThemeChoice = 'system' | ThemeName;
 /** Read by src/public/theme.js too, before the first paint. */
 const KEY = 'tallybarn.theme';
 const system = window.matchMedia('(prefers-color-scheme: dark)');
+const print = window.matchMedia('print');
 const listeners = new Set<() => void>();
 
 function stored(): ThemeChoice {
@@ -13,7 +14,9 @@ function stored(): ThemeChoice {
   return value === 'light' || value === 'dark' ? value : 'system';
 }
 
+/** Paper is light, whatever the screen shows. */
 function shown(): ThemeName {
+  if (print.matches) return 'light';
   const choice = stored();
   if (choice !== 'system') return choice;
   return system.matches ? 'dark' : 'light';
@@ -22,9 +25,11 @@ function shown(): ThemeName {
 function subscribe(listener: () => void): () => void {
   listeners.add(listener);
   system.addEventListener('change', listener);
+  print.addEventListener('change', listener);
   return () => {
     listeners.delete(listener);
     system.removeEventListener('change', listener);
+    print.removeEventListener('change', listener);
   };
 }
 

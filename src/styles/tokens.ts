@@ -65,8 +65,8 @@ export const series: ReadonlyArray<{ role: ColourRole; dash: readonly number[] }
 export const fonts = {
   sans: '"Source Sans 3 Variable", system-ui, sans-serif',
   display: '"Fraunces Variable", Georgia, serif',
-  // Source Sans stands in for the few signs Plex Mono lacks, such as superscripts.
-  mono: '"IBM Plex Mono", "Source Sans 3 Variable", ui-monospace, monospace',
+  // Superscripts of their own (styles/fonts.css); Source Sans stands in for the few other signs Plex Mono lacks.
+  mono: '"Tallybarn Superscripts", "IBM Plex Mono", "Source Sans 3 Variable", ui-monospace, monospace',
 } as const;
 
 export const radius = '6px';
