@@ -15,11 +15,12 @@ function goodEnough({ value, error }: NumericalResult, norm: number): boolean {
  * @param term shape s(r), r in angstrom
  * @param q momentum transfer, 1/angstrom, >= 0
  * @returns S(q) and a bound of its error, rounding included
- * @throws DomainError('tooMuchWork') where neither route gives a value
+ * @throws DomainError('invalidInput') for a form without first order, with its reason; 'tooMuchWork' where neither route gives a value
  *
  * Validity: q = 0 diverges for a Coulomb tail and must not be asked.
  */
 export function transform(term: Term, q: number): NumericalResult {
+  if (term.noBorn !== undefined) throw new DomainError('invalidInput', term.noBorn);
   const closed = term.closed?.(q);
   if (closed && goodEnough(closed, term.norm)) return closed;
   const numerical = term.quadrature?.(q);

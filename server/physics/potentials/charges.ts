@@ -1,5 +1,5 @@
 import { FINE_STRUCTURE, HBAR_C_EV_ANGSTROM } from '#server/physics/constants/codata2022.ts';
-import type { readParameters } from './parameters.ts';
+import type { ParameterReader } from './parameters.ts';
 import type { FormContext, FormParameter } from './types.ts';
 
 export const chargeProductParameter: FormParameter = {
@@ -20,10 +20,7 @@ export const chargeProductParameter: FormParameter = {
  *
  * @returns eV·angstrom; `chargeProduct` wins over the charges of the context
  */
-export function coulombStrength(
-  read: ReturnType<typeof readParameters>,
-  context: FormContext,
-): number {
+export function coulombStrength(read: ParameterReader, context: FormContext): number {
   const product = read.optional('chargeProduct') ?? context.projectileCharge * context.targetCharge;
   return product * FINE_STRUCTURE * HBAR_C_EV_ANGSTROM;
 }

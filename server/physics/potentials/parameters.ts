@@ -1,4 +1,11 @@
-import type { Complex, FormParameter } from './types.ts';
+import type {
+  AnyParameter,
+  Complex,
+  FormParameter,
+  FormValues,
+  NamedParameter,
+  Points,
+} from './types.ts';
 import { DomainError } from '#shared/errors.ts';
 
 /** Strengths beyond a PeV and lengths from 1e-12 angstrom to 100 m leave nothing of physics out and no overflow in. */
@@ -59,6 +66,7 @@ const INTERNAL_UNITS: Partial<Record<FormParameter['dimension'], string>> = {
   energy: ' eV',
   length: ' angstrom',
   energyLength: ' eV angstrom',
+  volume: ' angstrom3',
 };
 
 function checkBounds(parameter: FormParameter, value: number): void {
@@ -79,6 +87,36 @@ function checkBounds(parameter: FormParameter, value: number): void {
   if (parameter.integer && !Number.isInteger(value)) refuse(key, `${key} must be a whole number`);
 }
 
+function checkName({ key, choices }: NamedParameter, value: string): void {
+  if (choices && !choices.includes(value)) {
+    refuse(key, `${key} must be one of ${choices.join(', ')}, it is ${JSON.stringify(value)}`);
+  }
+}
+
+function isNamed(parameter: AnyParameter): parameter is NamedParameter {
+  return ['choice', 'element', 'nuclide', 'points'].includes(parameter.dimension);
+}
+
+function check(parameter: AnyParameter, value: number | string | Points): void {
+  const { key } = parameter;
+  if (isNamed(parameter)) {
+    if (parameter.dimension === 'points') {
+      if (typeof value !== 'object') refuse(key, `${key} must be a list of pairs [r, V]`);
+    } else if (typeof value === 'string') checkName(parameter, value);
+    else refuse(key, `${key} must be a name`);
+  } else if (typeof value === 'number') checkBounds(parameter, value);
+  else refuse(key, `${key} must be a number`);
+}
+
+/** Reads parameter values that were checked against the declaration of their form. */
+export interface ParameterReader {
+  need: (key: string) => number;
+  /** Undefined where it was left out. */
+  optional: (key: string) => number | undefined;
+  name: (key: string) => string | undefined;
+  points: (key: string) => Points | undefined;
+}
+
 /**
  * Values of a form's parameters, checked against its declaration.
  *
@@ -88,9 +126,9 @@ function checkBounds(parameter: FormParameter, value: number): void {
  * @throws DomainError invalidInput, with the key as pointer, for a missing, unknown or out-of-bounds value
  */
 export function readParameters(
-  parameters: readonly FormParameter[],
-  values: Readonly<Record<string, number>>,
-): { need: (key: string) => number; optional: (key: string) => number | undefined } {
+  parameters: readonly AnyParameter[],
+  values: FormValues,
+): ParameterReader {
   const known = new Set(parameters.map((parameter) => parameter.key));
   for (const key of Object.keys(values)) {
     if (!known.has(key)) {
@@ -99,16 +137,28 @@ export function readParameters(
   }
   for (const parameter of parameters) {
     const value = values[parameter.key];
-    if (value !== undefined) checkBounds(parameter, value);
+    if (value !== undefined) check(parameter, value);
     else if (!parameter.optional) refuse(parameter.key, `${parameter.key} is missing`);
   }
+  const optional = (key: string) => {
+    const value = values[key];
+    return typeof value === 'number' ? value : undefined;
+  };
   return {
-    need: (key) => values[key] ?? refuse(key, `${key} is missing`),
-    optional: (key) => values[key],
+    need: (key) => optional(key) ?? refuse(key, `${key} is missing`),
+    optional,
+    name: (key) => {
+      const value = values[key];
+      return typeof value === 'string' ? value : undefined;
+    },
+    points: (key) => {
+      const value = values[key];
+      return typeof value === 'object' ? value : undefined;
+    },
   };
 }
 
 /** V0 + i W0, where W0 may be left out. */
-export function complexStrength(read: ReturnType<typeof readParameters>): Complex {
+export function complexStrength(read: ParameterReader): Complex {
   return { re: read.need('V0'), im: read.optional('W0') ?? 0 };
 }

@@ -3,9 +3,15 @@ import { coulomb } from './coulomb.ts';
 import { deltaShell } from './delta-shell.ts';
 import { exponential } from './exponential.ts';
 import { gaussian } from './gaussian.ts';
+import { hardSphere } from './hard-sphere.ts';
+import { hulthen } from './hulthen.ts';
+import { krc } from './krc.ts';
+import { moliere } from './moliere.ts';
+import { polarization } from './polarization.ts';
 import { screenedCoulomb } from './screened-coulomb.ts';
 import { squareWell } from './square-well.ts';
 import type { Form } from './types.ts';
+import { universalIon } from './universal-ion.ts';
 import { woodsSaxon } from './woods-saxon.ts';
 import { yukawa } from './yukawa.ts';
 
@@ -14,12 +20,18 @@ export const FORMS: readonly Form[] = [
   yukawa,
   coulomb,
   screenedCoulomb,
+  moliere,
+  krc,
+  universalIon,
   squareWell,
   gaussian,
   exponential,
   woodsSaxon,
   deltaShell,
+  hulthen,
+  polarization,
   contact,
+  hardSphere,
 ];
 
 const byKey = new Map(FORMS.map((form) => [form.key, form]));

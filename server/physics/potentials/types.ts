@@ -16,10 +16,14 @@ export interface FormContext {
   /** Charge numbers of projectile and target. */
   projectileCharge: number;
   targetCharge: number;
+  /** Identity of the projectile (`electron`, `neutron`, …), null for a custom one; forms made for one particle ask for it. */
+  projectile?: string | null;
+  /** M/(m + M), 1 for a fixed target: bound lengths times it are free ones. */
+  recoilFactor?: number;
 }
 
-/** Large-r behaviour of a shape: decides integrals, matching and what diverges. */
-export type Tail = 'compact' | 'exponential' | 'coulomb' | 'point';
+/** Large-r behaviour of a shape: decides integrals, matching and what diverges. A `power` tail falls faster than 1/r³. */
+export type Tail = 'compact' | 'exponential' | 'power' | 'coulomb' | 'point';
 
 /**
  * A term of the interaction, V(r) = strength · s(r): a complex strength and one real radial shape s.
@@ -55,9 +59,18 @@ export interface Term {
   reach: number | null;
   /** Radii where s or its derivative jumps, angstrom, ascending. */
   breakpoints: number[];
+  /** Why there is no first order (hard sphere); `closed` and `quadrature` are null then. */
+  noBorn?: string;
+  /** Incoherent scattering, angstrom²/sr: adds to the cross section, never to the amplitude. Absent means none. */
+  incoherent?: number;
+  /**
+   * How far S(q) moves when what lies between the points of a table is read as straight lines: a doubt about the table, no
+   * numerical error, and no part of it. Same unit as S.
+   */
+  interpolationDoubt?: (q: number) => number;
 }
 
-/** A parameter of a form, as the register publishes it. Values are in internal units. */
+/** A number among the parameters of a form, as the register publishes it. Values are in internal units. */
 export interface FormParameter {
   key: string;
   label: string;
@@ -74,8 +87,32 @@ export interface FormParameter {
   description: string;
 }
 
-/** One interaction form: everything the input panel, validation, the engine and the Reference page need. */
-export interface Form {
+/** A parameter that is no number: a name of a list, an element or nuclide by its symbol, or points (r, V). */
+export interface NamedParameter {
+  key: string;
+  label: string;
+  symbol: string;
+  dimension: 'choice' | 'element' | 'nuclide' | 'points';
+  /** What a `choice` may be. */
+  choices?: readonly string[];
+  optional?: boolean;
+  default: string | Points;
+  description: string;
+}
+
+export type AnyParameter = FormParameter | NamedParameter;
+
+/** (r, V) in angstrom and eV. */
+export type Points = readonly (readonly [number, number])[];
+
+/** Parameter values by key, in internal units. */
+export type FormValues = Readonly<Record<string, number | string | Points>>;
+
+/**
+ * One interaction form: everything the input panel, validation, the engine and the Reference page need.
+ * `Form` alone has numbers for parameters; `Form<AnyParameter>` also named ones.
+ */
+export interface Form<Parameter extends AnyParameter = FormParameter> {
   key: string;
   label: string;
   /** V(r) as TeX. */
@@ -83,7 +120,7 @@ export interface Form {
   /** Transform S(q) or amplitude as TeX, for display. */
   transformFormula: string;
   source: string;
-  parameters: FormParameter[];
+  parameters: Parameter[];
   /** Builds the term from parameter values in internal units. Throws DomainError('invalidInput', …) naming the parameter where a combination is refused. */
-  build: (values: Readonly<Record<string, number>>, context: FormContext) => Term;
+  build: (values: FormValues, context: FormContext) => Term;
 }

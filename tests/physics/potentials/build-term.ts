@@ -1,5 +1,5 @@
 import { formByKey } from '#server/physics/potentials/register.ts';
-import type { FormContext, Term } from '#server/physics/potentials/types.ts';
+import type { FormContext, FormValues, Term } from '#server/physics/potentials/types.ts';
 
 /** An electron-like projectile on a target of charge two. */
 export const CONTEXT: FormContext = {
@@ -8,7 +8,7 @@ export const CONTEXT: FormContext = {
   targetCharge: 2,
 };
 
-export function build(form: string, values: Record<string, number>, context = CONTEXT): Term {
+export function build(form: string, values: FormValues, context = CONTEXT): Term {
   const found = formByKey(form);
   if (!found) throw new Error(`no form ${form}`);
   return found.build(values, context);
@@ -19,6 +19,10 @@ export function unitTerm(form: string, lengths: Record<string, number>): Term {
   const strength: Record<string, Record<string, number>> = {
     deltaShell: { g: 1 },
     screenedCoulomb: { chargeProduct: 1 },
+    polarization: { alpha: 1 },
+    moliere: {},
+    krc: {},
+    universalIon: {},
   };
   return build(form, { ...(strength[form] ?? { V0: 1 }), ...lengths });
 }

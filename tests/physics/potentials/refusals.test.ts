@@ -62,10 +62,13 @@ describe('refusals', () => {
     expect(error.message).toContain(form.parameters[0]?.key);
   });
 
-  it.each(FORMS)('$key: takes a strength of zero', (form) => {
-    const strength = form.parameters.find(({ key }) =>
-      ['V0', 'g', 'b', 'chargeProduct'].includes(key),
-    );
+  const STRENGTHS = ['V0', 'g', 'b', 'chargeProduct', 'alpha'];
+  const withStrength = FORMS.filter(({ parameters }) =>
+    parameters.some(({ key }) => STRENGTHS.includes(key)),
+  );
+
+  it.each(withStrength)('$key: takes a strength of zero', (form) => {
+    const strength = form.parameters.find(({ key }) => STRENGTHS.includes(key));
     const term = form.build({ ...plain(form), [strength?.key ?? '']: 0 }, CONTEXT);
     expect(Math.abs(term.strength.re)).toBe(0);
   });

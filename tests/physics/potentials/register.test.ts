@@ -10,12 +10,18 @@ describe('register of forms', () => {
       'yukawa',
       'coulomb',
       'screenedCoulomb',
+      'moliere',
+      'krc',
+      'universalIon',
       'squareWell',
       'gaussian',
       'exponential',
       'woodsSaxon',
       'deltaShell',
+      'hulthen',
+      'polarization',
       'contact',
+      'hardSphere',
     ]);
     for (const form of FORMS) expect(formByKey(form.key)).toBe(form);
     expect(formByKey('toString')).toBeUndefined();
@@ -46,6 +52,7 @@ describe('register of forms', () => {
     const term = form.build(values, CONTEXT);
     expect(term.form).toBe(form.key);
     expect(Number.isFinite(term.strength.re) && term.strength.re !== 0).toBe(true);
-    expect(term.closed?.(1).value).toBeGreaterThan(-Infinity);
+    if (term.noBorn === undefined) expect(term.closed?.(1).value).toBeGreaterThan(-Infinity);
+    else expect(term).toMatchObject({ closed: null, quadrature: null });
   });
 });

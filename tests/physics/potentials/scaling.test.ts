@@ -11,6 +11,8 @@ const FORMS: [string, string[], number][] = [
   ['exponential', ['a'], 3],
   ['woodsSaxon', ['R', 'a'], 3],
   ['deltaShell', ['R'], 2],
+  ['hulthen', ['a'], 3],
+  ['polarization', ['d'], -1],
 ];
 const length = fc.double({ min: 1e-6, max: 100, noNaN: true });
 const factor = fc.double({ min: 1e-4, max: 1e4, noNaN: true });

@@ -6,6 +6,10 @@ import { build, CONTEXT, transform, unitTerm } from './build-term.ts';
 const WITH_SHAPE: [string, Record<string, number>][] = [
   ['yukawa', { a: 0.8 }],
   ['screenedCoulomb', { a: 0.8 }],
+  ['hulthen', { a: 0.8 }],
+  ['moliere', { Z: 13 }],
+  ['krc', { Z1: 2, Z2: 79 }],
+  ['universalIon', { Z1: 2, Z2: 79 }],
   ['squareWell', { R: 0.8 }],
   ['gaussian', { a: 0.8 }],
   ['exponential', { a: 0.8 }],
