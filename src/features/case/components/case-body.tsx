@@ -41,7 +41,7 @@ export function CaseBody({ section, notices, children }: CaseBodyProps) {
         {notices}
         <ProblemSummary problems={problems} onOpen={stations.openStation} />
       </div>
-      <div className="grid items-start gap-x-5.5 gap-y-5 @4xl:grid-cols-[19.5rem_minmax(0,1fr)] @5xl:grid-cols-[20.75rem_minmax(0,1fr)]">
+      <div className="grid items-start gap-x-5.5 gap-y-5 @4xl:grid-cols-[19.5rem_minmax(0,1fr)] @5xl:grid-cols-[20.75rem_minmax(0,1fr)] print:block">
         <div className="order-2 @4xl:sticky @4xl:top-3 @4xl:order-1 @4xl:max-h-[calc(100svh-1.5rem)] @4xl:overflow-y-auto print:hidden">
           <InputsPanel
             summaries={summaries}
