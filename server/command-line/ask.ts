@@ -17,16 +17,19 @@ async function fromTerminal({ prompt, secret }: Question): Promise<string> {
     output: secret ? mute : process.stdout,
     terminal: true,
   });
+  let answered = false;
   try {
     if (secret) process.stdout.write(prompt);
     const gone = new Promise<never>((_resolve, reject) => {
-      lines.once('close', () => reject(new CommandError('Nothing was made.')));
-      lines.once('SIGINT', () => lines.close());
+      lines.once('close', () => {
+        if (!answered) reject(new CommandError('Nothing was made.'));
+      });
     });
-    return await Promise.race([lines.question(secret ? '' : prompt), gone]);
+    const answer = await Promise.race([lines.question(secret ? '' : prompt), gone]);
+    answered = true;
+    return answer;
   } finally {
     if (secret) process.stdout.write('\n');
-    lines.removeAllListeners('close');
     lines.close();
   }
 }

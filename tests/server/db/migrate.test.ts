@@ -74,7 +74,8 @@ test('every entity finds its table and all its columns, as the runtime role', as
   database = await createTestDatabase();
   const orm = await openOrm({ databaseUrl: database.runtimeUrl, poolSize: 1 });
   try {
-    for (const entity of ENTITIES) await orm.em.fork().find(entity.meta.className, {}, { limit: 1 });
+    for (const entity of ENTITIES)
+      await orm.em.fork().find(entity.meta.className, {}, { limit: 1 });
     expect(ENTITIES.length).toBeGreaterThan(7);
   } finally {
     await orm.close(true);
