@@ -30,18 +30,27 @@ export interface FirstBornResult {
   integrals: CrossSections;
 }
 
+/** What the interaction does not allow, and why. */
+export interface Unavailable {
+  unavailable: string;
+}
+
 /** What the engine answers, in internal units throughout. */
 export interface EstimateResult {
   problem: Problem;
   potential: PotentialCurve;
-  firstBorn: FirstBornResult | null;
-  /** Null where the matrix element diverges. */
-  goldenRule: GoldenRuleSheet | null;
+  /** Null where it was not asked for. */
+  firstBorn: FirstBornResult | Unavailable | null;
+  goldenRule: GoldenRuleSheet | Unavailable;
   goldenRuleTheta: number;
   assessment: Assessment;
 }
 
 export const RANGES_IN_A_BOX = 1000;
+const FORWARD: Unavailable = {
+  unavailable:
+    'The matrix element of a 1/r potential diverges in the forward direction; choose an angle above zero.',
+};
 
 const isActive = ({ strength }: { strength: { re: number; im: number } }) =>
   strength.re !== 0 || strength.im !== 0;
@@ -85,13 +94,13 @@ function goldenRuleSheet(
   theta: number,
   { range }: Scales,
   samples: ConeSamples | null,
-): GoldenRuleSheet | null {
+): GoldenRuleSheet | Unavailable {
   const { terms, collision, goldenRule: asked } = problem;
   const hasTail = born.tail.re !== 0 || born.tail.im !== 0;
-  if (hasTail && theta === 0) return null;
+  if (hasTail && theta === 0) return FORWARD;
   const box = asked.boxSide ?? (range > 0 ? RANGES_IN_A_BOX * range : asked.boxWithoutRange);
   const sheet = goldenRule(terms, collision, theta, box);
-  if (sheet === null) return null;
+  if (sheet === null) return FORWARD;
   const window = goldenRuleWindow({
     theta,
     k: collision.k,
@@ -107,6 +116,18 @@ function goldenRuleSheet(
   return { ...sheet, window, withExchange: exchangedDcs(problem, born, theta) };
 }
 
+/** An interaction without first order (a hard sphere): what the potential and the kinematics still say. */
+function withoutFirstOrder(problem: Problem, reason: string): EstimateResult {
+  return {
+    problem,
+    potential: potentialCurve(problem.terms, problem.collision.wavelength),
+    firstBorn: problem.wantsFirstBorn ? { unavailable: reason } : null,
+    goldenRule: { unavailable: reason },
+    goldenRuleTheta: problem.goldenRule.theta ?? middleAngle(problem),
+    assessment: { verdict: 'unassessed', criteria: [], reason },
+  };
+}
+
 /**
  * One estimate: amplitudes, observables, golden-rule sheet and verdict of a problem, by pure composition.
  *
@@ -116,8 +137,10 @@ function goldenRuleSheet(
  *   DomainError('invalidInput') for a box that leaves double precision
  */
 export function estimate(problem: Problem): EstimateResult {
-  const { terms, collision, exchangeSpin } = problem;
+  const { terms, collision } = problem;
   const { k, twoMuOverHbar2 } = collision;
+  const reason = terms.find((term) => term.noBorn !== undefined)?.noBorn;
+  if (reason !== undefined) return withoutFirstOrder(problem, reason);
   const born = firstBorn(terms, twoMuOverHbar2);
   const scales = scalesOf(problem);
   const hasTail = born.tail.re !== 0 || born.tail.im !== 0;
@@ -126,14 +149,22 @@ export function estimate(problem: Problem): EstimateResult {
   return {
     problem,
     potential: potentialCurve(terms, collision.wavelength),
-    firstBorn: problem.wantsFirstBorn
-      ? {
-          differential: differential(problem, born),
-          integrals: crossSections({ born, k, scales, samples, exchangeSpin }),
-        }
-      : null,
+    firstBorn: problem.wantsFirstBorn ? curveAndIntegrals(problem, born, scales, samples) : null,
     goldenRule: goldenRuleSheet(problem, born, theta, scales, samples),
     goldenRuleTheta: theta,
     assessment: assess({ terms, born, k, twoMuOverHbar2, scales, samples }),
+  };
+}
+
+function curveAndIntegrals(
+  problem: Problem,
+  born: FirstBorn,
+  scales: Scales,
+  samples: ConeSamples | null,
+): FirstBornResult {
+  const { collision, exchangeSpin } = problem;
+  return {
+    differential: differential(problem, born),
+    integrals: crossSections({ born, k: collision.k, scales, samples, exchangeSpin }),
   };
 }

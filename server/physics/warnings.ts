@@ -15,7 +15,7 @@ export interface Warning {
 
 const FERMI = 1e-5;
 const DEGREE = Math.PI / 180;
-const ELECTROSTATIC = ['coulomb', 'screenedCoulomb'];
+const ELECTROSTATIC = ['coulomb', 'screenedCoulomb', 'moliere', 'krc', 'universalIon'];
 const TEN_RANGES = 10;
 const FAST = 0.1;
 
@@ -78,7 +78,7 @@ function noCharge({ problem }: EstimateResult): Warning | null {
 
 function smallBox({ goldenRule, problem }: EstimateResult): Warning | null {
   const { range } = scalesOf(problem);
-  if (goldenRule === null || !(goldenRule.boxSide < TEN_RANGES * range)) return null;
+  if ('unavailable' in goldenRule || !(goldenRule.boxSide < TEN_RANGES * range)) return null;
   return {
     code: 'boxTooSmall',
     level: 'caution',

@@ -52,7 +52,9 @@ function methodsOf(
   const methods: Estimate['methods'] = {};
   for (const method of request.methods) {
     if (method !== 'born1') methods[method] = { unavailable: true, reason: NOT_YET[method] };
-    else if (firstBorn) {
+    else if (firstBorn && 'unavailable' in firstBorn) {
+      methods.born1 = { unavailable: true, reason: firstBorn.unavailable };
+    } else if (firstBorn) {
       const { differential, integrals } = firstBorn;
       methods.born1 = {
         differential: presentDifferential(differential, askedAngles(request).values, units),

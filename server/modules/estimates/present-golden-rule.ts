@@ -4,9 +4,6 @@ import type { MatrixElement } from '#server/physics/observables/golden-rule.ts';
 import type { AnswerUnits } from './answer-units.ts';
 import { errorOf, finite } from './answer-units.ts';
 
-const DIVERGES =
-  'The matrix element of a 1/r potential diverges in the forward direction; choose an angle above zero.';
-
 function elementOf({ re, im, error }: MatrixElement, units: AnswerUnits) {
   const shown = { re: units.volumeEnergyOf(re), im: units.volumeEnergyOf(im) };
   return {
@@ -39,7 +36,7 @@ export function presentGoldenRule(
   theta: number,
   units: AnswerUnits,
 ): Estimate['goldenRule'] {
-  if (sheet === null) return { unavailable: true, reason: DIVERGES };
+  if ('unavailable' in sheet) return { unavailable: true, reason: sheet.unavailable };
   const density = `1/(${units.energy} sr)`;
   return {
     theta,

@@ -102,6 +102,8 @@ export function toProblem(request: EstimateRequest): Problem {
       twoMuOverHbar2: collision.twoMuOverHbar2,
       projectileCharge: projectile.charge,
       targetCharge: target.charge,
+      projectile: projectile.identity,
+      recoilFactor: 1 / (1 + projectile.mass / target.mass),
     },
     faults,
   );

@@ -97,8 +97,10 @@ export function goldenRule(
       { errors: [{ path: '/goldenRule/boxSide', message: 'This box side is out of reach.' }] },
     );
   }
-  const quadratureCheck = matrixElement(terms, ({ quadrature, reach }) =>
-    q * (reach ?? 0) > CHECKED_PHASE ? null : (quadrature?.(q) ?? null),
-  );
+  const quadratureCheck = matrixElement(terms, ({ quadrature, reach, range, tail }) => {
+    // A power tail is integrated along a turned path, whatever its reach.
+    const extent = (tail === 'power' ? range : reach) ?? 0;
+    return q * extent > CHECKED_PHASE ? null : (quadrature?.(q) ?? null);
+  });
   return { theta, q, boxSide, matrixElementTimesVolume: element, quadratureCheck, ...sheet };
 }

@@ -70,9 +70,13 @@ export function potentialCurve(terms: readonly Term[], wavelength: number): Pote
   return {
     r: finite.map((point) => point.r),
     v: finite.map((point) => point.v),
-    note:
-      missing.length > 0
-        ? `Not drawn: ${missing.map(({ form }) => form).join(', ')}. There V(r) is no function.`
-        : null,
+    note: noteOn(missing, finite.length < points.length),
   };
+}
+
+function noteOn(missing: readonly Term[], infinite: boolean): string | null {
+  if (missing.length > 0) {
+    return `Not drawn: ${missing.map(({ form }) => form).join(', ')}, where V(r) is no function.`;
+  }
+  return infinite ? 'Not drawn where V(r) is infinite.' : null;
 }

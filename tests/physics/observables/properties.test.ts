@@ -42,7 +42,7 @@ function write(sent: Sent, wave: number, scale: Scale): Record<string, unknown> 
   const energy = (x: number) => Q(x * scale.perEnergy, scale.energy);
   const length = (x: number) => Q(x * wave * scale.perLength, scale.length);
   return Object.fromEntries(
-    Object.entries(sent).map(([key, value]) => {
+    Object.entries(sent).map(([key, value]): [string, unknown] => {
       if (typeof value === 'string' || key === 'chargeProduct') return [key, value];
       if (key === 'g') {
         const unit = scale === ATOMIC ? 'eV angstrom' : 'MeV fm';
