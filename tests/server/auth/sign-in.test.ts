@@ -33,9 +33,9 @@ test('an unknown account costs the same work as a wrong password', async () => {
   const passwordHash = await hashPassword('something else', 9);
   await passwordMatches('warm', undefined, 9);
   const time = async (known: string | undefined) => {
-    const start = performance.now();
+    const start = process.cpuUsage().user;
     for (let i = 0; i < 5; i += 1) expect(await passwordMatches('guess', known, 9)).toBe(false);
-    return performance.now() - start;
+    return process.cpuUsage().user - start;
   };
   const ratio = (await time(undefined)) / (await time(passwordHash));
   expect(ratio).toBeGreaterThan(0.4);
