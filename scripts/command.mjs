@@ -8,7 +8,7 @@ import {
   checkNode,
   commandFile,
   ensureDataDir,
-  migrateAndSeed,
+  migrate,
   prepareClone,
   programEnvironment,
 } from './lib/prepare.mjs';
@@ -52,7 +52,7 @@ function databaseInUse(settings) {
 async function findDatabase(shutdown, settings) {
   if (settings.ownDatabase !== undefined) {
     ensureSecrets(settings.secretsFile, ['signingKey']);
-    await migrateAndSeed(shutdown, { ...settings, demo: false }, settings.ownDatabase);
+    await migrate(shutdown, settings, settings.ownDatabase);
     return settings.ownDatabase;
   }
   const lock = await takeLock(join(settings.dataDir, 'start.lock'));
@@ -60,7 +60,7 @@ async function findDatabase(shutdown, settings) {
   shutdown.onStop(async () => lock.release());
   await ensurePostgres(shutdown);
   const { urls } = await openPrivateDatabase(shutdown, settings);
-  await migrateAndSeed(shutdown, { ...settings, demo: false }, urls);
+  await migrate(shutdown, settings, urls);
   return urls;
 }
 

@@ -6,9 +6,10 @@ import { claimPort } from './lib/port.mjs';
 import {
   checkNode,
   ensureDataDir,
-  migrateAndSeed,
+  migrate,
   prepareClone,
   programEnvironment,
+  seedDemo,
 } from './lib/prepare.mjs';
 import { ensurePostgres, openPrivateDatabase } from './lib/postgres/private-database.mjs';
 import { endOf, launch } from './lib/processes.mjs';
@@ -62,7 +63,8 @@ await live(async (shutdown) => {
   await prepareClone(shutdown, { build: false });
   ensureSecrets(settings.secretsFile, ['signingKey']);
   const urls = settings.ownDatabase ?? (await openPrivateDatabase(shutdown, settings)).urls;
-  await migrateAndSeed(shutdown, settings, urls, fromSource);
+  await migrate(shutdown, settings, urls, fromSource);
+  await seedDemo(shutdown, settings, urls, fromSource);
   const env = {
     ...programEnvironment(settings, { runtimeUrl: urls.runtimeUrl }),
     NODE_ENV: 'development',

@@ -6,9 +6,10 @@ import { claimPort } from './lib/port.mjs';
 import {
   checkNode,
   ensureDataDir,
-  migrateAndSeed,
+  migrate,
   prepareClone,
   programEnvironment,
+  seedDemo,
 } from './lib/prepare.mjs';
 import { ensurePostgres, openPrivateDatabase } from './lib/postgres/private-database.mjs';
 import { Failure, say } from './lib/say.mjs';
@@ -72,11 +73,6 @@ async function openDatabase(shutdown, settings) {
   const { ownDatabase } = settings;
   if (ownDatabase !== undefined) {
     ensureSecrets(settings.secretsFile, ['signingKey']);
-    if (ownDatabase.ownerIsRuntime) {
-      say(
-        'Warning: MIGRATION_DATABASE_URL is not set, so one role owns the tables and serves people; append-only tables are then protected by triggers alone.',
-      );
-    }
     return ownDatabase;
   }
   const database = await openPrivateDatabase(shutdown, settings);
@@ -98,15 +94,15 @@ await live(async (shutdown) => {
     await prepareClone(shutdown);
   }
   const urls = await openDatabase(shutdown, wanted);
-  await migrateAndSeed(shutdown, wanted, urls);
+  await migrate(shutdown, wanted, urls);
   const settings = { ...wanted, port: await claimPort(wanted.host, wanted.port) };
   const env = {
     ...programEnvironment(settings, { runtimeUrl: urls.runtimeUrl }),
     STOP_WITH_STDIN: '1',
-    // A person at a terminal wants to hear of trouble, a service manager keeps the whole log.
-    LOG_LEVEL: process.env['LOG_LEVEL'] || (process.stdout.isTTY ? 'warn' : 'info'),
   };
-  await serve(shutdown, settings, ['--enable-source-maps', join(ROOT, 'dist/server/main.js')], env);
+  const program = ['--enable-source-maps', join(ROOT, 'dist/server/main.js')];
+  // The demo is looked after while the server starts; the ready line waits for both.
+  await Promise.all([seedDemo(shutdown, settings, urls), serve(shutdown, settings, program, env)]);
   say(`Tallybarn is ready at http://${hostInUrl(settings.host)}:${settings.port}`);
   say('Ctrl-C stops it.');
   const reason = await shutdown.requested;

@@ -88,29 +88,43 @@ export function programEnvironment(settings, urls) {
 export const commandFile = (name) => join(ROOT, 'dist/server/commands', `${name}.js`);
 
 /**
- * Brings the schema up to date and, with the demo on, fills an empty database.
+ * @param {string} name
+ * @returns {string[]} arguments of node
+ */
+const built = (name) => ['--enable-source-maps', commandFile(name)];
+
+/**
+ * Brings the schema up to date.
  * @param {Shutdown} shutdown
  * @param {Settings} settings
  * @param {{ runtimeUrl: string, ownerUrl: string }} urls
  * @param {(name: string) => string[]} [program] arguments of node for a command
  */
-export async function migrateAndSeed(
-  shutdown,
-  settings,
-  urls,
-  program = (name) => ['--enable-source-maps', commandFile(name)],
-) {
-  const options = { cwd: ROOT, env: programEnvironment(settings, urls), echo: true };
+export async function migrate(shutdown, settings, urls, program = built) {
   say('Bringing the database up to date …');
   await run(shutdown, process.execPath, program('migrate'), {
-    ...options,
     what: 'the database could not be brought up to date',
-    mend: 'the lines above say which migration failed; the database is as it was before that one',
+    mend: 'the lines above say why; the database is as it was before the migration that failed',
+    cwd: ROOT,
+    env: programEnvironment(settings, urls),
+    echo: true,
   });
+}
+
+/**
+ * With the demo on, fills an empty database.
+ * @param {Shutdown} shutdown
+ * @param {Settings} settings
+ * @param {{ runtimeUrl: string }} urls
+ * @param {(name: string) => string[]} [program] arguments of node for a command
+ */
+export async function seedDemo(shutdown, settings, { runtimeUrl }, program = built) {
   if (!settings.demo) return;
   await run(shutdown, process.execPath, program('seed-demo'), {
-    ...options,
     what: 'the demo could not be made',
     mend: 'the lines above say why; DEMO=0 npm start does without it',
+    cwd: ROOT,
+    env: programEnvironment(settings, { runtimeUrl }),
+    echo: true,
   });
 }

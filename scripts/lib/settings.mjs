@@ -14,7 +14,7 @@ export const ROOT = fileURLToPath(new URL('../..', import.meta.url)).replace(/\/
  * @property {string} secretsFile
  * @property {boolean} demo
  * @property {string | undefined} publicUrl
- * @property {{ runtimeUrl: string, ownerUrl: string, ownerIsRuntime: boolean } | undefined} ownDatabase
+ * @property {{ runtimeUrl: string, ownerUrl: string } | undefined} ownDatabase
  */
 
 /**
@@ -80,8 +80,6 @@ export function readSettings(env) {
     demo: demoText === '1',
     publicUrl,
     ownDatabase:
-      runtimeUrl === undefined
-        ? undefined
-        : { runtimeUrl, ownerUrl: ownerUrl ?? runtimeUrl, ownerIsRuntime: ownerUrl === undefined },
+      runtimeUrl === undefined ? undefined : { runtimeUrl, ownerUrl: ownerUrl ?? runtimeUrl },
   };
 }

@@ -8,11 +8,22 @@ export interface WorkerFile {
   execArgv: string[];
 }
 
-/** A TypeScript worker needs the loader that the parent runs under; a bundled one needs nothing. */
+/**
+ * Node.js 20 and 22 abort the whole process when a thread is ended while it loads an ES module by require(), which
+ * the pool tries first. With this the attempt is refused and the pool falls back to import(), which can be ended.
+ */
+const WITHOUT_REQUIRE_OF_MODULES = process.allowedNodeEnvironmentFlags.has(
+  '--experimental-require-module',
+)
+  ? ['--no-experimental-require-module']
+  : [];
+
+/** A TypeScript worker needs the loader that the parent runs under. */
 export function workerFile(path: string): WorkerFile {
-  if (!path.endsWith('.ts')) return { filename: path, execArgv: [] };
+  const execArgv = [...WITHOUT_REQUIRE_OF_MODULES];
+  if (!path.endsWith('.ts')) return { filename: path, execArgv };
   const loader = pathToFileURL(createRequire(import.meta.url).resolve('tsx')).href;
-  return { filename: path, execArgv: ['--import', loader] };
+  return { filename: path, execArgv: [...execArgv, '--import', loader] };
 }
 
 /** The engine's own worker: beside this file as .ts, or in the bundle, whose shared chunks lie in folders of their own. */

@@ -44,18 +44,16 @@ describe('readSettings', () => {
     expect(refuse).not.toThrow(/hush/);
   });
 
-  test('one role for both is known, so that it can be warned of', () => {
+  test('without an owner role the runtime role stands for both', () => {
     const DATABASE_URL = 'postgresql://runtime@db/x';
     const alone = readSettings({ DATABASE_URL }).ownDatabase;
     expect(alone).toEqual({
       runtimeUrl: DATABASE_URL,
       ownerUrl: DATABASE_URL,
-      ownerIsRuntime: true,
     });
     const both = readSettings({ DATABASE_URL, MIGRATION_DATABASE_URL: 'postgresql://owner@db/x' });
     expect(both.ownDatabase).toMatchObject({
       ownerUrl: 'postgresql://owner@db/x',
-      ownerIsRuntime: false,
     });
   });
 
