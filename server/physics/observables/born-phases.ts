@@ -22,6 +22,7 @@ interface Side {
   im: Float64Array;
   /** 1 - |cos(theta)| */
   gap: Float64Array;
+  /** Angle between the ends of the half panel, rad. */
   width: Float64Array;
   /** |P_l| and P_l - P_{l-1} for the next l. */
   value: Float64Array;
@@ -35,16 +36,18 @@ interface Side {
 function sideOf(samples: ConeSamples, alternates: boolean): Side {
   const { k, t, weight, width, re, im } = samples;
   const at = (list: readonly number[], i: number) => list[i] ?? 0;
+  // d theta = 2 dt/sqrt(1-t²): what is fine in t is coarse backwards.
+  const angle = (i: number) => (2 * at(width, i)) / Math.sqrt((1 - at(t, i)) * (1 + at(t, i)));
   const order = [...t.keys()]
     .filter((i) => at(t, i) > Math.SQRT1_2 === alternates)
-    .sort((a, b) => at(width, a) - at(width, b));
+    .sort((a, b) => angle(a) - angle(b));
   const pick = (value: (i: number) => number) => Float64Array.from(order, value);
   const factor = (i: number) => 2 * k * at(t, i) * at(weight, i);
   return {
     re: pick((i) => factor(i) * at(re, i)),
     im: pick((i) => factor(i) * at(im, i)),
     gap: pick((i) => 2 * (alternates ? (1 - at(t, i)) * (1 + at(t, i)) : at(t, i) ** 2)),
-    width: pick((i) => at(width, i)),
+    width: pick(angle),
     value: new Float64Array(order.length).fill(1),
     difference: new Float64Array(order.length),
     active: order.length,
@@ -68,7 +71,7 @@ function recurrence(first: number): { keep: Float64Array; turn: Float64Array } {
 function addChunk(side: Side, first: number, sums: { re: Float64Array; im: Float64Array }): void {
   const { keep, turn } = recurrence(first);
   const { re, im, gap, width, value, difference } = side;
-  while (side.active > 0 && 2 * first * (width[side.active - 1] ?? 0) > RESOLVED) side.active -= 1;
+  while (side.active > 0 && first * (width[side.active - 1] ?? 0) > RESOLVED) side.active -= 1;
   for (let i = 0; i < side.active; i++) {
     let a = re[i] ?? 0;
     let b = im[i] ?? 0;
@@ -111,7 +114,7 @@ function boundFrom(sides: readonly Side[], l: number): number {
  *
  * @param samples short-range amplitude at the nodes of a composite rule
  * @param range largest radius at which the interaction is felt, angstrom; waves up to 1.2 k·range are looked at
- * @returns max |T_l|, good to a part in a thousand; unitarity asks for at most 1
+ * @returns max |T_l|, good to half a percent; unitarity asks for at most 1
  *
  * Source: textbook; e.g. L. I. Schiff, Quantum Mechanics, 3rd ed. (1968), secs. 19, 38. Bound of P_l: DLMF 18.14.7.
  */
