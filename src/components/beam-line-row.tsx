@@ -17,12 +17,12 @@ export function BeamLineRow({ summary }: BeamLineRowProps) {
   return (
     <ul className="flex flex-wrap items-center gap-y-1 text-sm text-muted">
       {stations.map((station, index) => (
-        <li key={station} className="flex min-w-0 items-center">
-          <StationGlyph station={station} className="mr-1.5 size-4 shrink-0 text-barn" />
+        <li key={station} className="flex min-w-0 items-start">
+          <StationGlyph station={station} className="mt-0.5 mr-1.5 size-4 shrink-0 text-barn" />
           <span className="sr-only">{LABELS[station]}: </span>
           <span className="min-w-0">{summary[station]}</span>
           {index < stations.length - 1 && (
-            <span aria-hidden="true" className="mx-2 h-px w-4 shrink-0 bg-barn/50 sm:w-6" />
+            <span aria-hidden="true" className="mx-2 mt-2.5 h-px w-4 shrink-0 bg-barn/50 sm:w-6" />
           )}
         </li>
       ))}

@@ -127,14 +127,14 @@ export function Plot(props: PlotProps) {
           {props.switches}
           <IconButton
             label="Zoom in at the crosshair"
-            className="size-7"
+            className="size-7!"
             onClick={() => setWindow(zoomed(window, share))}
           >
             <ZoomIn aria-hidden="true" className="size-4" />
           </IconButton>
           <IconButton
             label="Show the whole range"
-            className="size-7"
+            className="size-7!"
             disabled={window[0] <= 0 && window[1] >= 100}
             onClick={() => setWindow(WHOLE)}
           >

@@ -1,17 +1,9 @@
 import type { ReactNode } from 'react';
 import { ChevronDown } from 'lucide-react';
 import { unitSymbol } from '#shared/units/format.ts';
-import { fromInternal, toInternal } from '#shared/units/quantity.ts';
-import type { Quantity } from '#shared/units/quantity.ts';
 import { unitsOf } from '#shared/units/vocabulary.ts';
 import type { Dimension } from '#shared/units/vocabulary.ts';
 import { Field } from './field.tsx';
-
-/** The same quantity in another unit. The fifteen digits a double holds for sure, so that 0.1 nm is 1 Å and not 1.0000000000000002. */
-export function convertQuantity(quantity: Quantity, unit: string, dimension: Dimension): Quantity {
-  const { value } = fromInternal(toInternal(quantity, dimension), unit, dimension);
-  return { value: Number(value.toPrecision(15)), unit };
-}
 
 interface QuantityInputProps {
   label: ReactNode;

@@ -1,3 +1,4 @@
+import { tidy } from '#src/components/convert-quantity.ts';
 import { Segmented } from '#src/components/segmented.tsx';
 import { Field, TextArea } from '#src/components/field.tsx';
 import { DEFAULT_UNITS } from '#shared/contracts/estimates.ts';
@@ -13,7 +14,7 @@ import { withEntered } from '../model/entered.ts';
 
 /** 180° in the unit of the table: where angles end. */
 function useStraight(unit: string): number {
-  return Number((Math.PI / (UNITS.angle[unit] ?? 1)).toPrecision(15));
+  return tidy(Math.PI / (UNITS.angle[unit] ?? 1));
 }
 
 function StepFields() {

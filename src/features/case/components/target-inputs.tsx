@@ -70,7 +70,7 @@ export function TargetInputs() {
       <ChoiceField<Kind>
         exact
         pointer="/target"
-        label="Target"
+        label="Kind of target"
         value={target.kind}
         choices={[
           { value: 'fixed', label: 'fixed centre (infinitely heavy)' },

@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import { Field, TextInput } from '#src/components/field.tsx';
-import { QuantityInput, convertQuantity } from '#src/components/quantity-input.tsx';
+import { convertQuantity } from '#src/components/convert-quantity.ts';
+import { QuantityInput } from '#src/components/quantity-input.tsx';
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import { fullDigits, unitSymbol } from '#shared/units/format.ts';
 import { parseQuantity } from '#shared/units/parse.ts';

@@ -1,5 +1,6 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import { DEFAULT_ANGLES } from '#shared/contracts/estimates.ts';
+import { tidy } from '#src/components/convert-quantity.ts';
 import { UNITS } from '#shared/units/vocabulary.ts';
 import { without } from './without.ts';
 
@@ -9,10 +10,9 @@ export function anglesOf(document: CaseDocument): Angles {
   return document.angles ?? DEFAULT_ANGLES;
 }
 
-/** Fifteen digits: 60° back and forth between units stays 60°. */
 function converter(from: string, to: string): (angle: number) => number {
   const factor = (UNITS.angle[from] ?? 1) / (UNITS.angle[to] ?? 1);
-  return (angle) => Number((angle * factor).toPrecision(15));
+  return (angle) => tidy(angle * factor);
 }
 
 /** The table in another unit of angle; the angle of the golden rule goes with it. */

@@ -3,6 +3,7 @@ import type { InteractionTerm } from '#shared/contracts/estimates.ts';
 import type { FormInfo } from '#shared/contracts/forms.ts';
 import type { Draft } from './editor.ts';
 import { withoutEntered, withoutTermTexts } from './entered.ts';
+import { same } from './same.ts';
 import { without } from './without.ts';
 
 /** A term with the defaults of the register; parameters that may be left out are left out. */
@@ -14,17 +15,18 @@ export function defaultTerm(form: FormInfo): InteractionTerm {
   };
 }
 
-/** Another form for a term: what both forms call by the same name and measure in the same dimension is kept. */
+/** Another form for a term: what both forms call by the same names is kept, where the person had set it. */
 export function changedForm(
   term: InteractionTerm,
   from: FormInfo | undefined,
   to: FormInfo,
 ): InteractionTerm {
   const next = defaultTerm(to);
-  for (const { key, dimension } of to.parameters) {
+  for (const { key, label, dimension } of to.parameters) {
     const before = from?.parameters.find((parameter) => parameter.key === key);
     const value = term[key];
-    if (value !== undefined && before?.dimension === dimension) next[key] = value;
+    if (value === undefined || before?.dimension !== dimension || before.label !== label) continue;
+    if (!same(value, before.default)) next[key] = value;
   }
   return next;
 }
