@@ -41,7 +41,7 @@ const parameters: FormParameter[] = [
 const CUT = 48;
 
 /** Edges about the surface in steps of its own thickness; inside and outside nothing is narrower. */
-function surfaceEdges(R: number, a: number): number[] {
+export function surfaceEdges(R: number, a: number): number[] {
   const steps = [-40, -20, -10, -5, 0, 5, 10, 20, CUT];
   return [0, ...steps.map((x) => R + x * a).filter((r) => r > 0)];
 }
