@@ -58,11 +58,19 @@ test('empty fields are named before anything is sent', async () => {
   expect(await email.evaluate((element) => element === document.activeElement)).toBe(true);
 });
 
-test('a forged return address leads nowhere else', async () => {
+const FORGED = [
+  'https://elsewhere.example/cases',
+  '//elsewhere.example',
+  '/\\elsewhere.example',
+  'javascript:alert(1)',
+  'http://',
+  '/sign-in',
+];
+test.each(FORGED)('the forged return address %s leads to the desk', async (next) => {
   const { page, goTo } = await stage.visitor(person);
-  await goTo('/sign-in?next=https://elsewhere.example/cases');
+  await goTo(`/sign-in?next=${encodeURIComponent(next)}`);
   await page.getByRole('heading', { name: 'Desk', level: 1 }).waitFor();
-  expect(new URL(page.url()).origin).toBe(stage.app.url);
+  expect(new URL(page.url()).href).toBe(`${stage.app.url}/`);
 });
 
 test('a demo account is filled in by one click', async () => {

@@ -10,8 +10,8 @@ import { SignInForm } from '../components/sign-in-form.tsx';
 import { WhatItIs } from '../components/what-it-is.tsx';
 
 /** Only an address of this application, so that a forged link cannot lead elsewhere after signing in. */
-export function safeReturn(next: string | null): string {
-  if (!next) return '/';
+function safeReturn(next: string | null): string {
+  if (!next || !URL.canParse(next, window.location.origin)) return '/';
   const target = new URL(next, window.location.origin);
   if (target.origin !== window.location.origin || target.pathname === '/sign-in') return '/';
   return target.pathname + target.search + target.hash;
