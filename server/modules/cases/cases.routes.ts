@@ -49,7 +49,7 @@ export const caseRoutes = [
     body: createCaseSchema,
     response: caseSchema,
     status: 201,
-    refusals: ['conflict', 'tooMuchWork'],
+    refusals: ['conflict', 'tooMuchWork', 'tooManyRequests'],
     async handler({ em, actor, body, headers, setHeader, ...context }) {
       const key = saveKeyOf(headers['idempotency-key'], actor.id, { create: body });
       const { caseId, n, lock } = await createCase({ ...context, em, actor }, body, key);

@@ -5,6 +5,7 @@ import { DomainError } from '#shared/errors.ts';
 import type { Compute } from '#server/compute/compute.ts';
 import { canonicalHash } from '#server/documents/canonical-hash.ts';
 import { estimate } from '#server/modules/estimates/estimate.ts';
+import { withSlot } from '#server/modules/estimates/in-flight.ts';
 
 /** What a version keeps for ever, and the hash over it. */
 export interface VersionContent {
@@ -15,6 +16,8 @@ export interface VersionContent {
 }
 
 export interface ComputeContext {
+  /** Whose computations are counted. */
+  actor: { id: string };
   compute: Compute;
   signal?: AbortSignal;
 }
@@ -36,7 +39,8 @@ export async function computeContent(
   context: ComputeContext,
 ): Promise<VersionContent> {
   const document = { ...sent, format: CURRENT_FORMAT } as const;
-  const answer = await estimate(document, context).catch((fault: unknown) => {
+  const work = () => estimate(document, context);
+  const answer = await withSlot(context.actor.id, work).catch((fault: unknown) => {
     throw withinDocument(fault);
   });
   const result = { estimate: answer };

@@ -49,7 +49,13 @@ export const versionRoutes = [
     body: createVersionSchema,
     response: caseSchema,
     status: 201,
-    refusals: ['preconditionRequired', 'staleVersion', 'conflict', 'tooMuchWork'],
+    refusals: [
+      'preconditionRequired',
+      'staleVersion',
+      'conflict',
+      'tooMuchWork',
+      'tooManyRequests',
+    ],
     async handler({ em, actor, resource, body, headers, ifMatch, setHeader, ...context }) {
       const { id } = resource;
       const key = saveKeyOf(headers['idempotency-key'], actor.id, { save: id, body });

@@ -186,6 +186,19 @@ describe('POST /api/cases', () => {
     await agent.get('/api/cases').expect(200);
   });
 
+  it('keeps a document of 5,000 angles whole', async () => {
+    const angles = { unit: 'deg', from: 0, to: 180, count: 5000 };
+    const { filed } = await fileCase(agent, { document: { ...yukawaDocument, angles } });
+    const { document, result, engine, hash } = await read<VersionDetail>(
+      agent,
+      `/api/cases/${filed.id}/versions/1`,
+    );
+    expect(hash).toBe(canonicalHash({ document, result, engine }));
+    expect(result.estimate.methods.born1).toMatchObject({
+      differential: { length: 5000, 4999: { theta: 180 } },
+    });
+  });
+
   it('counts from 1 without gaps, also when many file at once and some fail', async () => {
     const first = Number(await lastNumber());
     const sent = Array.from({ length: 12 }, (_, index) =>
