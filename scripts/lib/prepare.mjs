@@ -1,5 +1,5 @@
 // @ts-check
-import { mkdirSync, statSync } from 'node:fs';
+import { accessSync, constants, mkdirSync } from 'node:fs';
 import { join } from 'node:path';
 import process from 'node:process';
 import { ensureBuild } from './build.mjs';
@@ -26,18 +26,25 @@ export function checkNode(version = process.versions.node) {
  */
 export async function prepareClone(shutdown, { build } = { build: true }) {
   const dist = join(ROOT, 'dist');
-  try {
-    mkdirSync(dist, { recursive: true });
-  } catch (error) {
-    throw new Failure(
-      `the folder ${dist} cannot be made (${errorCode(error)})`,
-      'clone Tallybarn into a folder of your own',
-    );
-  }
+  ensureFolder(dist, 0o755, 'clone Tallybarn into a folder of your own, or run it as its owner');
   await withLock(join(dist, 'prepare.lock'), shutdown, async () => {
     await ensurePackages(shutdown, ROOT);
     if (build) await ensureBuild(shutdown, ROOT);
   });
+}
+
+/**
+ * @param {string} folder
+ * @param {number} mode
+ * @param {string} mend
+ */
+function ensureFolder(folder, mode, mend) {
+  try {
+    mkdirSync(folder, { recursive: true, mode });
+    accessSync(folder, constants.W_OK | constants.X_OK);
+  } catch (error) {
+    throw new Failure(`the folder ${folder} cannot be written to (${errorCode(error)})`, mend);
+  }
 }
 
 /**
@@ -46,15 +53,8 @@ export async function prepareClone(shutdown, { build } = { build: true }) {
  * @param {string} dataDir
  */
 export function ensureDataDir(dataDir) {
-  try {
-    mkdirSync(dataDir, { recursive: true, mode: process.getuid?.() === 0 ? 0o711 : 0o700 });
-    if (!statSync(dataDir).isDirectory()) throw new Error('not a folder');
-  } catch (error) {
-    throw new Failure(
-      `DATA_DIR ${dataDir} cannot be made (${errorCode(error) || String(error)})`,
-      'set DATA_DIR to a folder this account may write to',
-    );
-  }
+  const mode = process.getuid?.() === 0 ? 0o711 : 0o700;
+  ensureFolder(dataDir, mode, 'set DATA_DIR to a folder this account may write to');
 }
 
 /**

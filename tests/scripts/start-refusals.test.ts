@@ -51,3 +51,14 @@ test('a setting that is not understood is refused by name', async () => {
   expect(err).toContain('PORT=http is not a port');
   expect(code).toBe(1);
 });
+
+test('a DATA_DIR that is a file, or below one, is refused by name', async () => {
+  const file = join(tempFolder(), 'file');
+  writeFileSync(file, '');
+  for (const dataDir of [file, join(file, 'below')]) {
+    const { code, err } = await start({ DATA_DIR: dataDir, PORT: '0' });
+    expect(err).toMatch(`the folder ${dataDir} cannot be written to (E`);
+    expect(err).toContain('set DATA_DIR');
+    expect(code).toBe(1);
+  }
+});
