@@ -1,5 +1,6 @@
 import type { FirstBorn } from '#server/physics/methods/born1.ts';
 import { exchangeWeight } from '#server/physics/methods/exchange.ts';
+import { DomainError } from '#shared/errors.ts';
 import type { ConeSamples, Scales } from './cone-samples.ts';
 import type { Computed, CrossSections } from './integrals.ts';
 import { DIVERGENCES, absorption, directIntegrals, exchangeIntegrals, sumOf } from './integrals.ts';
@@ -19,11 +20,22 @@ const plus = (a: Computed, b: Computed): Computed => ({
   error: a.error + b.error,
 });
 
+/** An integral that is neither good to 1e-6 nor lost in the floor is refused: no silent wrong number. */
+function refuseCoarse({ value, error }: Computed, floor: number): void {
+  if (error <= Math.max(1e-6 * value, 4 * Math.PI * floor ** 2)) return;
+  throw new DomainError(
+    'tooMuchWork',
+    'The cross section cannot be integrated to a millionth of itself: the product of wave number and range is too large. Lower the energy or the range, or check their units.',
+  );
+}
+
 /**
  * Elastic, absorption, total, momentum-transfer and viscosity cross section, angstrom², or why there is none.
  *
  * Integrals and their weights use the centre-of-mass angle. For identical particles dσ/dΩ counts both, so half of the
  * sphere's integral is taken for every one of them; the momentum-transfer weight then averages to one.
+ *
+ * @throws DomainError('tooMuchWork') where an integral is neither good to 1e-6 nor below the floor
  */
 export function crossSections(input: CrossSectionInput): CrossSections {
   const { born, k, samples } = input;
@@ -38,6 +50,7 @@ export function crossSections(input: CrossSectionInput): CrossSections {
     };
   }
   const [elastic, momentumTransfer, viscosity] = angular(input, samples);
+  for (const integral of [elastic, momentumTransfer, viscosity]) refuseCoarse(integral, born.floor);
   const total = sumOf(elastic, removed);
   return { elastic, absorption: removed, total, momentumTransfer, viscosity };
 }

@@ -182,3 +182,39 @@ test('strength scales amplitudes by itself and cross sections by its square', ()
     { ...RUNS, numRuns: 50 },
   );
 });
+
+const well = (R: number) => [{ form: 'squareWell', V0: Q(-1, 'eV'), R: Q(R, 'angstrom') }];
+const custom = (eV: number) => ({ species: 'custom', mass: Q(eV, 'eV'), charge: 1, spin: 0 });
+test.each([
+  ['an energy of 1e25 eV', { energy: Q(1e25, 'eV') }],
+  ['an energy of 1e-300 eV', { energy: Q(1e-300, 'eV') }],
+  ['a particle of 1e-20 eV', { projectile: custom(1e-20) }],
+  ['a particle of 1e30 eV', { projectile: custom(1e30), kinematics: 'relativistic' }],
+  [
+    'a target of 1e-20 eV',
+    { target: { kind: 'custom', mass: Q(1e-20, 'eV'), charge: 1, spin: 0 } },
+  ],
+  ['a sphere of 1e-12 angstrom', { interaction: { terms: well(1e-12) } }],
+  ['a sphere of 100 m', { interaction: { terms: well(1e12) } }],
+  ['a sphere of kR = 1e5', { interaction: { terms: well(19_519) } }],
+  [
+    'a strength of 1e15 eV',
+    { interaction: { terms: [{ form: 'yukawa', V0: Q(1e15, 'eV'), a: Q(1, 'm') }] } },
+  ],
+  ['a box of 1e-100 m', { goldenRule: { boxSide: Q(1e-100, 'm') } }],
+  ['a box of 1e200 m', { goldenRule: { boxSide: Q(1e200, 'm') } }],
+  [
+    'subnormal numbers',
+    { energy: Q(5e-324, 'eV'), interaction: { terms: [{ form: 'contact', b: Q(5e-324, 'fm') }] } },
+  ],
+])('%s is answered with finite numbers or refused in words', (_, extreme) => {
+  const estimate = attempt({
+    projectile: { species: 'electron' },
+    target: { kind: 'fixed', charge: 1 },
+    energy: Q(100, 'eV'),
+    interaction: { terms: well(1) },
+    methods: ['born1'],
+    ...extreme,
+  });
+  everyNumber(estimate, (x) => expect(Number.isFinite(x)).toBe(true));
+});
