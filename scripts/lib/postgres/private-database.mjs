@@ -52,6 +52,7 @@ export async function openPrivateDatabase(shutdown, settings) {
     await resetAdminPassword(shutdown, cluster);
   }
   const running = await startCluster(shutdown, cluster);
+  say(`The database answers on 127.0.0.1:${running.port}.`);
   const urls = await ensureDatabase(running.port, ADMIN, secrets);
   return { urls, running, again: () => startCluster(shutdown, cluster, running.port) };
 }
