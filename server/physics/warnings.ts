@@ -38,7 +38,7 @@ function coulombTotal({ problem }: EstimateResult): Warning | null {
     code: 'coulombTotalDiverges',
     level: 'info',
     message:
-      'Integrals over all angles diverge for a bare 1/r potential. For a finite total use screenedCoulomb, or integrate the curve over the angles your detector sees.',
+      'Integrals over all angles diverge for a bare 1/r potential. For a finite total use the screened Coulomb form, or integrate the curve over the angles your detector sees.',
     path: '/interaction/terms',
   };
 }
@@ -100,7 +100,7 @@ function screening({ problem }: EstimateResult): Warning | null {
   return {
     code: 'screeningLeftOut',
     level: 'caution',
-    message: `The electrons of the atom are left out by a bare Coulomb potential. They matter ${where}; add their screening with screenedCoulomb (a about ${screeningLength(target.charge).toPrecision(3)} angstrom).`,
+    message: `The electrons of the atom are left out by a bare Coulomb potential. They matter ${where}; add their screening with the screened Coulomb form (a about ${screeningLength(target.charge).toPrecision(3)} angstrom).`,
     path: '/interaction/terms',
   };
 }

@@ -97,10 +97,12 @@ export function goldenRule(
       { errors: [{ path: '/goldenRule/boxSide', message: 'This box side is out of reach.' }] },
     );
   }
-  const quadratureCheck = matrixElement(terms, ({ quadrature, reach, range, tail }) => {
+  const integrated = matrixElement(terms, ({ quadrature, reach, range, tail }) => {
     // A power tail is integrated along a turned path, whatever its reach.
     const extent = (tail === 'power' ? range : reach) ?? 0;
     return q * extent > CHECKED_PHASE ? null : (quadrature?.(q) ?? null);
   });
+  // A bare Coulomb tail leaves nothing to integrate: its closed form would only be compared with itself.
+  const quadratureCheck = integrated && integrated.evaluations > 0 ? integrated : null;
   return { theta, q, boxSide, matrixElementTimesVolume: element, quadratureCheck, ...sheet };
 }
