@@ -69,6 +69,7 @@ function operationOf(route: Route, schemas: JsonSchemas): JsonSchema {
   const parameters = [
     ...parametersOf(route.params, 'path', schemas),
     ...parametersOf(route.query, 'query', schemas),
+    ...route.headers.map((header) => ({ ...header, in: 'header', schema: { type: 'string' } })),
   ];
   const body = route.body && {
     required: true,

@@ -29,6 +29,12 @@ export interface HandlerContext<
   resource: R;
 }
 
+export interface RouteHeader {
+  name: string;
+  required: boolean;
+  description: string;
+}
+
 export interface RouteSpec<
   A extends Access,
   P extends z.ZodType,
@@ -59,6 +65,8 @@ export interface RouteSpec<
   /** The answer: what `handler` returns; without a schema, 204 and no content. */
   response?: S;
   status?: 200 | 201 | 202 | 204;
+  /** Headers the handler reads, for the OpenAPI document. */
+  headers?: readonly RouteHeader[];
   /** Refusals worth naming in the OpenAPI document, beyond those every route has. */
   refusals?: readonly ErrorCode[];
   handler: (context: HandlerContext<A, P, Q, B, R>) => Promise<z.input<S>> | z.input<S>;
@@ -80,6 +88,7 @@ export interface Route {
   query: z.ZodType | undefined;
   body: z.ZodType | undefined;
   response: z.ZodType | undefined;
+  headers: readonly RouteHeader[];
   refusals: readonly ErrorCode[];
   run: (context: RequestContext, input: RouteInput) => Promise<unknown>;
 }
@@ -153,6 +162,7 @@ export function defineRoute<
     query: spec.query,
     body: spec.body,
     response: spec.response,
+    headers: spec.headers ?? [],
     refusals: spec.refusals ?? [],
     async run(context, input) {
       const params = parseParams((spec.params ?? nothing) as P, spec.params && input.params);

@@ -13,11 +13,11 @@ import { defineRoute } from '#server/http/route.ts';
 import { caseRow } from './case-rows.ts';
 import { loadCase } from './case-resource.ts';
 import { createCase } from './create-case.ts';
-import { etagOf } from './etag.ts';
+import { IF_MATCH_HEADER, etagOf } from './etag.ts';
 import { listCases } from './list-cases.ts';
 import { presentCase, presentListItem } from './present-case.ts';
 import { readDocumentOf } from './read-version.ts';
-import { saveKeyOf } from './save-key.ts';
+import { SAVE_KEY_HEADER, saveKeyOf } from './save-key.ts';
 import { withdrawCase } from './withdraw-case.ts';
 
 const params = z.object({ id: z.uuid() });
@@ -49,6 +49,7 @@ export const caseRoutes = [
     body: createCaseSchema,
     response: caseSchema,
     status: 201,
+    headers: [SAVE_KEY_HEADER],
     refusals: ['conflict', 'tooMuchWork', 'tooManyRequests'],
     async handler({ em, actor, body, headers, setHeader, ...context }) {
       const key = saveKeyOf(headers['idempotency-key'], actor.id, { create: body });
@@ -90,6 +91,7 @@ export const caseRoutes = [
     params,
     body: withdrawSchema,
     response: caseSchema,
+    headers: [{ ...IF_MATCH_HEADER, required: false }],
     refusals: ['conflict', 'staleVersion'],
     async handler({ em, actor, now, resource, body, ifMatch, setHeader }) {
       await withdrawCase({ em, actor, now }, { caseId: resource.id, ifMatch }, body.reason);

@@ -1,5 +1,12 @@
 import { DomainError } from '#shared/errors.ts';
 
+/** If-Match as the OpenAPI document describes it. */
+export const IF_MATCH_HEADER = {
+  name: 'If-Match',
+  required: true,
+  description: 'ETag of the case the change starts from, as GET on the case answers it.',
+};
+
 /** A case changes with every save and every change of status; each raises its lock, and that is the tag. */
 export function etagOf(lock: number): string {
   return `"${lock}"`;

@@ -7,6 +7,14 @@ import { canonicalJson } from '#server/documents/canonical-hash.ts';
 /** How long a lost answer can be asked for again. */
 const KEPT_DAYS = 7;
 
+/** Idempotency-Key as the OpenAPI document describes it. */
+export const SAVE_KEY_HEADER = {
+  name: 'Idempotency-Key',
+  required: false,
+  description:
+    'A UUID made anew for each save: a request repeated with it after a lost answer does not save twice.',
+};
+
 /** A save under a key of the client's choice: the same key and the same content are one save. */
 export interface SaveKey {
   accountId: string;

@@ -9,10 +9,10 @@ import { listSchema, pageQuerySchema } from '#shared/contracts/list.ts';
 import { defineRoute } from '#server/http/route.ts';
 import { caseRow } from './case-rows.ts';
 import { loadCase } from './case-resource.ts';
-import { etagOf } from './etag.ts';
+import { IF_MATCH_HEADER, etagOf } from './etag.ts';
 import { presentCase } from './present-case.ts';
 import { listVersions, readVersion } from './read-version.ts';
-import { saveKeyOf } from './save-key.ts';
+import { SAVE_KEY_HEADER, saveKeyOf } from './save-key.ts';
 import { saveVersion } from './save-version.ts';
 
 const params = z.object({ id: z.uuid() });
@@ -49,6 +49,7 @@ export const versionRoutes = [
     body: createVersionSchema,
     response: caseSchema,
     status: 201,
+    headers: [IF_MATCH_HEADER, SAVE_KEY_HEADER],
     refusals: [
       'preconditionRequired',
       'staleVersion',

@@ -1,11 +1,13 @@
 import { z } from 'zod';
 import { DomainError } from '#shared/errors.ts';
+import { demoAccountsUsable } from '#server/modules/auth/demo-gate.ts';
 import { defineRoute } from '#server/http/route.ts';
 
 const healthSchema = z.object({
   status: z.literal('ok'),
   version: z.string(),
   database: z.literal('ok'),
+  /** Whether the demo's accounts can sign in from where this is asked. */
   demo: z.boolean(),
 });
 
@@ -18,7 +20,7 @@ export const healthRoutes = [
     tag: 'Service',
     access: 'public',
     response: healthSchema,
-    async handler({ em, config, log }) {
+    async handler({ em, config, log, headers }) {
       try {
         await em.getConnection().execute('select 1');
       } catch (fault) {
@@ -31,7 +33,7 @@ export const healthRoutes = [
         status: 'ok' as const,
         version: config.version,
         database: 'ok' as const,
-        demo: config.demo,
+        demo: demoAccountsUsable(config, headers),
       };
     },
   }),

@@ -51,6 +51,12 @@ test.each(FORWARDED)(
   },
 );
 
+test('the sign-in page hears of the demo only where its accounts work', async () => {
+  const here = await request(app.url).get('/api/health');
+  const throughProxy = await request(app.url).get('/api/health').set('x-forwarded-for', '192.0.2.1');
+  expect([here.body, throughProxy.body]).toMatchObject([{ demo: true }, { demo: false }]);
+});
+
 test('a demo account is locked under a name that was made to point here', async () => {
   const { email } = await makeAccount(app.em(), { demo: true });
   const host = `rebound.example.org:${new URL(app.url).port}`;

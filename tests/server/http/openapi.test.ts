@@ -59,6 +59,12 @@ test('what is open says so, everything else names session and token', () => {
   }
 });
 
+test('a save names the headers it reads', () => {
+  const save = document.paths['/api/cases/{id}/versions']?.post;
+  const headers = (save?.parameters ?? []).filter((one) => one.in === 'header');
+  expect(headers.map(({ name }) => name)).toEqual(['If-Match', 'Idempotency-Key']);
+});
+
 test('nothing of the server’s inside is in it', () => {
   expect(JSON.stringify(document)).not.toMatch(/passwordHash|tokenHash|signingKey/);
 });
