@@ -1,9 +1,13 @@
 import type { Estimate, EstimateRequest } from '#shared/contracts/estimates.ts';
 import { computeEstimate } from '#server/modules/estimates/compute-estimate.ts';
+import { drawForm } from '#server/modules/reference/draw-form.ts';
+import type { FormSheet } from '#server/modules/reference/draw-form.ts';
 
 /** What the engine can be asked, with what goes in and what comes out: plain JSON both ways. */
 export interface EngineKinds {
   estimate: { input: EstimateRequest; output: Estimate };
+  /** What the Reference shows of a form: V(r), its transform, remarks. */
+  formSheet: { input: EstimateRequest; output: FormSheet };
 }
 export type EngineKind = keyof EngineKinds;
 
@@ -11,4 +15,5 @@ export const ENGINE: {
   readonly [K in EngineKind]: (input: EngineKinds[K]['input']) => EngineKinds[K]['output'];
 } = {
   estimate: computeEstimate,
+  formSheet: drawForm,
 };

@@ -5,6 +5,8 @@ import { versionRoutes } from '#server/modules/cases/versions.routes.ts';
 import { estimateRoutes } from '#server/modules/estimates/estimates.routes.ts';
 import { formRoutes } from '#server/modules/forms/forms.routes.ts';
 import { healthRoutes } from '#server/modules/health/health.routes.ts';
+import { referenceRoutes } from '#server/modules/reference/reference.routes.ts';
+import { searchRoutes } from '#server/modules/search/search.routes.ts';
 import { tokenRoutes } from '#server/modules/tokens/tokens.routes.ts';
 import { userRoutes } from '#server/modules/users/users.routes.ts';
 import type { Route } from './route.ts';
@@ -20,4 +22,6 @@ export const ROUTES: readonly Route[] = [
   ...versionRoutes,
   ...estimateRoutes,
   ...formRoutes,
+  ...referenceRoutes,
+  ...searchRoutes,
 ];

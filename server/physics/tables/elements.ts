@@ -21,6 +21,7 @@ export interface ChemicalElement {
 
 export const ELEMENTS_EDITION = table.edition;
 export const ELEMENTS_SOURCE = table.source;
+export const ELEMENTS_LICENCE = table.licence;
 export const ELEMENTS_NOTES: readonly string[] = table.notes;
 
 type Cell = string | number | number[] | null;

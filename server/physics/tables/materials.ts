@@ -21,6 +21,7 @@ export interface Material {
 
 export const MATERIALS_EDITION = table.edition;
 export const MATERIALS_SOURCE = table.source;
+export const MATERIALS_LICENCE = table.licence;
 export const MATERIALS_NOTES: readonly string[] = table.notes;
 
 const SOURCES: ReadonlyMap<string, string> = new Map(Object.entries(table.sources));

@@ -31,6 +31,7 @@ export interface NeutronEntry {
 
 export const NEUTRON_EDITION = table.edition;
 export const NEUTRON_SOURCE = table.source;
+export const NEUTRON_LICENCE = table.licence;
 export const NEUTRON_NOTES: readonly string[] = table.notes;
 /** Wavelength of the tabulated absorption, angstrom (2200 m/s). */
 export const NEUTRON_WAVELENGTH = table.wavelength;
@@ -41,6 +42,11 @@ export const DIFFERS_FROM_SEARS: readonly { symbol: string; here: number; sears:
     here: Number(here),
     sears: Number(sears),
   }));
+
+/** Where the printed imaginary part implies another absorption than the printed one, barn at `NEUTRON_WAVELENGTH`. */
+export const ABSORPTION_CONTRADICTIONS: ReadonlyMap<string, number> = new Map(
+  table.absorptionExceptions.map((row) => [String(row[0]), Number(row[3])]),
+);
 
 type Cell = string | number | boolean | null;
 const CONTRADICTIONS: ReadonlyMap<string, number> = new Map(

@@ -24,6 +24,7 @@ export interface NuclearCharge {
 
 export const NUCLEAR_CHARGE_EDITION = table.edition;
 export const NUCLEAR_CHARGE_SOURCE = table.source;
+export const NUCLEAR_CHARGE_LICENCE = table.licence;
 export const NUCLEAR_CHARGE_NOTES: readonly string[] = table.notes;
 
 type Cell = string | number | null;

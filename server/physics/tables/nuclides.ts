@@ -20,6 +20,9 @@ export interface Nuclide {
 export const NUCLIDES_EDITION = table.edition;
 export const NUCLIDES_SOURCE = `${table.masses}. ${table.abundances}. ${table.spins}.`;
 
+export const NUCLIDES_LICENCE = `Numbers with their published source; by way of ${table.obtainedFrom}`;
+export const NUCLIDES_LEFT_OUT = table.leftOut;
+
 /** Symbols in the order of atomic number, hydrogen first. */
 export const ELEMENT_SYMBOLS: readonly string[] = table.elements;
 const ATOMIC_NUMBERS: ReadonlyMap<string, number> = new Map(
