@@ -45,14 +45,12 @@ const parameters: AnyParameter[] = [
       },
       { value: 0.535, unit: 'fm' },
     ),
-    optional: true,
+    when: { key: 'kind', is: ['fermi', 'helm'] },
   },
   chargeProductParameter,
 ];
 
-function shapeOf(kind: ChargeKind, radius: number, diffuseness: number | undefined): ChargeShape {
-  const surface = () =>
-    diffuseness ?? refuse('diffuseness', `diffuseness is missing: a ${kind} distribution needs it`);
+function shapeOf(kind: ChargeKind, radius: number, surface: () => number): ChargeShape {
   switch (kind) {
     case 'uniformSphere':
       return uniformSphere(radius);
@@ -117,11 +115,7 @@ export const extendedCharge: Form<AnyParameter> = {
     const read = readParameters(parameters, values);
     const kind = read.name('kind');
     if (!isKind(kind)) refuse('kind', `kind must be one of ${CHARGE_KINDS.join(', ')}`);
-    const diffuseness = read.optional('diffuseness');
-    if (diffuseness !== undefined && kind !== 'fermi' && kind !== 'helm') {
-      refuse('diffuseness', `a ${kind} distribution has no diffuseness: leave it out`);
-    }
-    const shape = shapeOf(kind, read.need('radius'), diffuseness);
+    const shape = shapeOf(kind, read.need('radius'), () => read.need('diffuseness'));
     const strength = coulombStrength(read, context);
     const charged = strength !== 0;
     return {

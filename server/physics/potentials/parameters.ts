@@ -2,8 +2,10 @@ import type {
   AnyParameter,
   Complex,
   FormParameter,
+  FormValue,
   FormValues,
   NamedParameter,
+  NamedQuantities,
   Points,
 } from './types.ts';
 import { DomainError } from '#shared/errors.ts';
@@ -62,6 +64,16 @@ export function refuse(key: string, message: string): never {
   throw new DomainError('invalidInput', message, { errors: [{ path: `/${key}`, message }] });
 }
 
+/** What `find` finds in a table; a refusal of the name becomes one of the parameter. */
+export function lookUp<T>(key: string, find: () => T): T {
+  try {
+    return find();
+  } catch (error) {
+    if (error instanceof DomainError && error.code === 'invalidInput') refuse(key, error.message);
+    throw error;
+  }
+}
+
 const INTERNAL_UNITS: Partial<Record<FormParameter['dimension'], string>> = {
   energy: ' eV',
   length: ' angstrom',
@@ -93,19 +105,82 @@ function checkName({ key, choices }: NamedParameter, value: string): void {
   }
 }
 
-function isNamed(parameter: AnyParameter): parameter is NamedParameter {
-  return ['choice', 'element', 'nuclide', 'points'].includes(parameter.dimension);
+const NAMED = ['choice', 'element', 'nuclide', 'points', 'formula', 'quantities'];
+
+export function isNamed(parameter: AnyParameter): parameter is NamedParameter {
+  return NAMED.includes(parameter.dimension);
 }
 
-function check(parameter: AnyParameter, value: number | string | Points): void {
-  const { key } = parameter;
-  if (isNamed(parameter)) {
-    if (parameter.dimension === 'points') {
-      if (typeof value !== 'object') refuse(key, `${key} must be a list of pairs [r, V]`);
-    } else if (typeof value === 'string') checkName(parameter, value);
-    else refuse(key, `${key} must be a name`);
-  } else if (typeof value === 'number') checkBounds(parameter, value);
-  else refuse(key, `${key} must be a number`);
+const isPoints = (value: FormValue): value is Points => Array.isArray(value);
+const isQuantities = (value: FormValue): value is NamedQuantities =>
+  typeof value === 'object' && !isPoints(value);
+
+function checkNamed(parameter: NamedParameter, value: FormValue): void {
+  const { key, dimension } = parameter;
+  if (dimension === 'points') {
+    if (!isPoints(value)) refuse(key, `${key} must be a list of pairs [r, V]`);
+  } else if (dimension === 'quantities') {
+    if (!isQuantities(value)) refuse(key, `${key} must be quantities by name`);
+  } else if (typeof value === 'string') checkName(parameter, value);
+  else refuse(key, `${key} must be a ${dimension === 'formula' ? 'text' : 'name'}`);
+}
+
+function check(parameter: AnyParameter, value: FormValue): void {
+  if (isNamed(parameter)) checkNamed(parameter, value);
+  else if (typeof value === 'number') checkBounds(parameter, value);
+  else refuse(parameter.key, `${parameter.key} must be a number`);
+}
+
+/** Whether these values ask for the parameter at all. */
+export function applies({ when }: AnyParameter, values: Readonly<Record<string, unknown>>): boolean {
+  return when === undefined || when.is.some((value) => value === values[when.key]);
+}
+
+export interface ChoiceFault {
+  key: string;
+  message: string;
+  /** Nothing was given where something is needed. */
+  missing: boolean;
+}
+
+function groupFault(
+  group: readonly string[],
+  values: Readonly<Record<string, unknown>>,
+): ChoiceFault[] {
+  const found = group.filter((name) => values[name] !== undefined);
+  const [key = ''] = group;
+  if (found.length === 1) return [];
+  const message = `Give exactly one of ${group.join(', ')}`;
+  return found.length === 0
+    ? [{ key, message: `${message}.`, missing: true }]
+    : [{ key: found[1] ?? key, message: `${message}, not ${found.join(' and ')}.`, missing: false }];
+}
+
+/** What is missing or too many among the parameters, by what they say of each other. */
+export function choiceFaults(
+  parameters: readonly AnyParameter[],
+  values: Readonly<Record<string, unknown>>,
+): ChoiceFault[] {
+  const seen = new Set<string>();
+  return parameters.flatMap((parameter) => {
+    const { key, when, oneOf, optional } = parameter;
+    const given = values[key] !== undefined;
+    if (when && given && !applies(parameter, values)) {
+      const message = `${key} goes with ${when.key} ${when.is.join(' or ')} only; leave it out.`;
+      return [{ key, message, missing: false }];
+    }
+    if (oneOf !== undefined) {
+      if (seen.has(oneOf)) return [];
+      seen.add(oneOf);
+      const group = parameters.filter((other) => other.oneOf === oneOf);
+      return groupFault(
+        group.map((other) => other.key),
+        values,
+      );
+    }
+    const missing = !given && !optional && applies(parameter, values);
+    return missing ? [{ key, message: `${key} is missing`, missing }] : [];
+  });
 }
 
 /** Reads parameter values that were checked against the declaration of their form. */
@@ -115,6 +190,7 @@ export interface ParameterReader {
   optional: (key: string) => number | undefined;
   name: (key: string) => string | undefined;
   points: (key: string) => Points | undefined;
+  quantities: (key: string) => NamedQuantities | undefined;
 }
 
 /**
@@ -138,8 +214,9 @@ export function readParameters(
   for (const parameter of parameters) {
     const value = values[parameter.key];
     if (value !== undefined) check(parameter, value);
-    else if (!parameter.optional) refuse(parameter.key, `${parameter.key} is missing`);
   }
+  const [fault] = choiceFaults(parameters, values);
+  if (fault) refuse(fault.key, fault.message);
   const optional = (key: string) => {
     const value = values[key];
     return typeof value === 'number' ? value : undefined;
@@ -153,7 +230,11 @@ export function readParameters(
     },
     points: (key) => {
       const value = values[key];
-      return typeof value === 'object' ? value : undefined;
+      return value !== undefined && isPoints(value) ? value : undefined;
+    },
+    quantities: (key) => {
+      const value = values[key];
+      return value !== undefined && isQuantities(value) ? value : undefined;
     },
   };
 }

@@ -70,43 +70,53 @@ export interface Term {
   interpolationDoubt?: (q: number) => number;
 }
 
-/** A number among the parameters of a form, as the register publishes it. Values are in internal units. */
-export interface FormParameter {
+interface Parameter {
   key: string;
   label: string;
   symbol: string;
+  optional?: boolean;
+  /** The parameter belongs to these values of a `choice` alone: needed with them, refused with others. */
+  when?: { key: string; is: readonly string[] };
+  /** Of the parameters that share this name exactly one is given; the first of them is what a new term starts with. */
+  oneOf?: string;
+  description: string;
+}
+
+/** A number among the parameters of a form, as the register publishes it. Values are in internal units. */
+export interface FormParameter extends Parameter {
   dimension: Dimension | 'number';
   /** Bounds in internal units; absent means unbounded. `exclusive` marks an open lower bound. */
   min?: number;
   max?: number;
   exclusiveMin?: boolean;
-  optional?: boolean;
   integer?: boolean;
   /** Default as a person would type it, unit included (a plain number for `number`). */
   default: { value: number; unit: string } | number;
-  description: string;
 }
 
-/** A parameter that is no number: a name of a list, an element or nuclide by its symbol, or points (r, V). */
-export interface NamedParameter {
-  key: string;
-  label: string;
-  symbol: string;
-  dimension: 'choice' | 'element' | 'nuclide' | 'points';
+/**
+ * A parameter that is no number: a name of a list, an element or nuclide by its symbol, points (r, V), a formula, or
+ * the named quantities of one.
+ */
+export interface NamedParameter extends Parameter {
+  dimension: 'choice' | 'element' | 'nuclide' | 'points' | 'formula' | 'quantities';
   /** What a `choice` may be. */
   choices?: readonly string[];
-  optional?: boolean;
-  default: string | Points;
-  description: string;
+  /** `points` in angstrom and eV. */
+  default: string | Points | NamedQuantities;
 }
 
 export type AnyParameter = FormParameter | NamedParameter;
+
+/** Quantities by name, as they were sent; a plain number has no unit. */
+export type NamedQuantities = Readonly<Record<string, { value: number; unit: string } | number>>;
 
 /** (r, V) in angstrom and eV. */
 export type Points = readonly (readonly [number, number])[];
 
 /** Parameter values by key, in internal units. */
-export type FormValues = Readonly<Record<string, number | string | Points>>;
+export type FormValue = number | string | Points | NamedQuantities;
+export type FormValues = Readonly<Record<string, FormValue>>;
 
 /**
  * One interaction form: everything the input panel, validation, the engine and the Reference page need.

@@ -1,0 +1,115 @@
+import { neutronEntry, NEUTRON_EDITION } from '#server/physics/tables/neutron-lengths.ts';
+import type { NeutronEntry } from '#server/physics/tables/neutron-lengths.ts';
+import { contact, contactTerm, lengthB } from './contact.ts';
+import { lookUp, readParameters, refuse, type ParameterReader } from './parameters.ts';
+import type { AnyParameter, Form, FormContext, Term } from './types.ts';
+
+const parameters: AnyParameter[] = [
+  { ...lengthB, optional: true },
+  {
+    key: 'nuclide',
+    label: 'Nuclide',
+    symbol: '{}^A\\mathrm X',
+    dimension: 'nuclide',
+    optional: true,
+    default: 'V-51',
+    description:
+      'In place of b, for slow neutrons: the bound length of the table, times M/(m + M) where the target recoils.',
+  },
+  {
+    key: 'element',
+    label: 'Element',
+    symbol: '\\mathrm X',
+    dimension: 'element',
+    optional: true,
+    default: 'Ni',
+    description:
+      'In place of b, for slow neutrons: the mean bound length of the natural element, times M/(m + M) where the target recoils.',
+  },
+];
+
+const FERMI = 1e-5;
+/** 1 barn in angstrom². */
+const BARN = 1e-8;
+
+type Named = 'nuclide' | 'element';
+
+/** The way that was chosen: exactly one of b, nuclide, element. */
+function chosen(read: ParameterReader): { key: Named; name: string } | { b: number } {
+  const b = read.optional('b');
+  const names = (['nuclide', 'element'] as const).flatMap((key) => {
+    const name = read.name(key);
+    return name === undefined ? [] : [{ key, name }];
+  });
+  const [first, ...more] = names;
+  if (first === undefined && b !== undefined) return { b };
+  if (first === undefined) refuse('b', 'b is missing; give it, or a nuclide or an element');
+  if (more.length > 0 || b !== undefined) {
+    refuse(first.key, 'give only one of b, nuclide and element: each says what the length is');
+  }
+  return first;
+}
+
+function rowOf(key: Named, name: string): NeutronEntry {
+  const isNuclide = /\d/.test(name);
+  if (key === 'nuclide' && !isNuclide) {
+    refuse(
+      key,
+      `${name} is no nuclide: write symbol and mass number, as in Ni-58, or give "element"`,
+    );
+  }
+  if (key === 'element' && isNuclide) {
+    refuse(key, `${name} is no element: write its symbol alone, as in Ni, or give "nuclide"`);
+  }
+  return lookUp(key, () => neutronEntry(name));
+}
+
+function refuseOthers(key: Named, { projectile }: FormContext): void {
+  if (projectile === 'neutron') return;
+  refuse(key, 'the table holds scattering lengths of slow neutrons: for another projectile give b');
+}
+
+function recoilFactor({ recoilFactor: factor }: FormContext): number {
+  if (factor === undefined)
+    throw new Error('the context of a contact term lacks its recoil factor');
+  return factor;
+}
+
+/**
+ * Contact term from the table of neutron scattering lengths.
+ *
+ * Formula: b = (b' - i b'') M/(m + M), incoherent = sigma_inc/4π (M/(m + M))²; the printed imaginary part absorbs.
+ *
+ * @throws DomainError invalidInput for projectiles other than neutrons, names that the table lacks, nuclides without a measured
+ *   length, and resonant absorbers, whose complex b depends on the energy
+ */
+function fromTable(key: Named, name: string, context: FormContext): Term {
+  refuseOthers(key, context);
+  const { b, imaginary, resonant, sigmaIncoherent } = rowOf(key, name);
+  if (resonant) {
+    refuse(
+      key,
+      `${name} has a resonance for slow neutrons: its complex scattering length depends on the energy, and the table knows it near 25 meV only. Give b at your wavelength`,
+    );
+  }
+  if (b === null) {
+    refuse(key, `no scattering length of ${name} has been measured (${NEUTRON_EDITION}): give b`);
+  }
+  const factor = recoilFactor(context);
+  const length = { re: b.value * FERMI * factor, im: (imaginary ?? 0) * FERMI * factor };
+  if (sigmaIncoherent === null) return contactTerm(length, context);
+  const incoherent = (sigmaIncoherent.value * BARN * factor ** 2) / (4 * Math.PI);
+  return contactTerm(length, context, incoherent);
+}
+
+/** `contact` with its length from the table as well as by hand. */
+export const contactByName: Form<AnyParameter> = {
+  ...contact,
+  source: `${contact.source}; lengths: ${NEUTRON_EDITION}`,
+  parameters,
+  build(values, context) {
+    const way = chosen(readParameters(parameters, values));
+    if ('b' in way) return contactTerm({ re: way.b, im: 0 }, context);
+    return fromTable(way.key, way.name, context);
+  },
+};
