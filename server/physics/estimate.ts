@@ -72,7 +72,8 @@ function middleAngle({ angles, frame, collision }: Problem): number {
   return labToCm(middle, collision.frame)[0]?.thetaCm ?? middle;
 }
 
-function differential(problem: Problem, born: FirstBorn): FirstBornResult['differential'] {
+/** The curve of a problem from its amplitude, in the frame it is asked in. */
+export function differential(problem: Problem, born: FirstBorn): FirstBornResult['differential'] {
   const { angles, frame, exchangeSpin, collision } = problem;
   const input = { born, k: collision.k, exchangeSpin };
   if (frame === 'cm') return { frame, points: angles.map((theta) => cmPoint(input, theta)) };

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { quantitySchema } from '#shared/units/quantity.ts';
 import { UNITS } from '#shared/units/vocabulary.ts';
+import { aidsRequestSchema, aidsSchema } from './aids.ts';
 
 /** The methods an estimate may ask for; those the engine cannot do yet answer `unavailable`. */
 export const METHODS = ['born1', 'born2', 'eikonal', 'partialWaves'] as const;
@@ -155,7 +156,12 @@ export const estimateBodySchema = z.strictObject(body);
 
 /** POST /api/estimates accepts and ignores `format` and `runPlan`, so that a saved document can be sent as it is. */
 export const estimateRequestSchema = z
-  .strictObject({ ...body, format: z.int().optional(), runPlan: z.unknown().optional() })
+  .strictObject({
+    ...body,
+    format: z.int().optional(),
+    runPlan: z.unknown().optional(),
+    aids: aidsRequestSchema.optional(),
+  })
   .meta({ id: 'EstimateRequest' });
 export type EstimateRequest = z.infer<typeof estimateRequestSchema>;
 
@@ -304,6 +310,8 @@ export const estimateSchema = z
       angle: z.string(),
     }),
     frame: z.enum(FRAMES),
+    /** What was asked beside the estimate; absent where nothing was, and in saved results. */
+    aids: aidsSchema.optional(),
   })
   .meta({ id: 'Estimate' });
 export type Estimate = z.infer<typeof estimateSchema>;
