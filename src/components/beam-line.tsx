@@ -42,7 +42,9 @@ function Words({ station, lit }: { station: BeamLineStation; lit: boolean }) {
       <span
         className={classNames(
           'text-sm font-semibold',
-          lit ? 'text-ink underline decoration-barn decoration-2 underline-offset-4' : 'text-muted',
+          lit
+            ? 'text-ink underline decoration-barn decoration-2 underline-offset-4 print:no-underline'
+            : 'text-muted',
         )}
       >
         {station.name}

@@ -118,7 +118,7 @@ test('the box of the golden rule moves every line but the last', async () => {
   const before = [await valueOf('Transition rate'), await valueOf('Differential cross section')];
   const box = page.getByRole('region', { name: 'Box' });
   await retype(page, box.getByLabel('Box side L'), '40 nm');
-  await box.getByText(/the last line changed by/).waitFor();
+  await box.getByText(/the last line (did not change|changed by)/).waitFor();
   expectRelative((await valueOf('Transition rate')) * 64, before[0] ?? NaN, 1e-12);
   expectRelative(await valueOf('Differential cross section'), before[1] ?? NaN, 1e-13);
 });

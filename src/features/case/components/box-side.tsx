@@ -1,4 +1,5 @@
 import { useId, useState } from 'react';
+import { convertQuantity } from '#src/components/convert-quantity.ts';
 import { PlotHandle } from '#src/components/plot-handle.tsx';
 import type { Estimate, GoldenRule } from '#shared/contracts/estimates.ts';
 import { formatComposed } from '#shared/units/format.ts';
@@ -7,7 +8,7 @@ import { same } from '../model/same.ts';
 import { withGoldenRule } from '../model/table.ts';
 import { takeValue } from '../model/typing.ts';
 import { brief as briefError } from '../model/verdict.ts';
-import { brief } from '../model/words.ts';
+import { brief, briefQuantity } from '../model/words.ts';
 import { NumberField, QuantityField } from './typed-fields.tsx';
 
 interface Seen {
@@ -42,6 +43,8 @@ export function BoxSide({ rule, estimate }: { rule: GoldenRule; estimate: Estima
   const before = useOtherBox(seenOf(rule, estimate));
   const asked = draft.document.goldenRule?.boxSide;
   const shown = asked ?? rule.boxSide;
+  const inShown = (side: { value: number; unit: string }) =>
+    briefQuantity(convertQuantity(side, shown.unit, 'length'), 4);
   const exponent = Math.log10(shown.value);
   const change = before ? Math.abs(rule.dcs.value - before.dcs) / Math.abs(before.dcs || 1) : null;
   return (
@@ -101,9 +104,10 @@ export function BoxSide({ rule, estimate }: { rule: GoldenRule; estimate: Estima
           <p role="status" className="min-h-5 text-sm">
             {before && change !== null ? (
               <>
-                Box {formatComposed(before.boxSide.value, before.boxSide.unit, 4)} →{' '}
-                {formatComposed(rule.boxSide.value, rule.boxSide.unit, 4)}: the last line changed by{' '}
-                <span className="font-mono">{briefError(change)}</span> of itself.
+                {inShown(before.boxSide)} → {inShown(rule.boxSide)}: the last line{' '}
+                {change === 0
+                  ? 'did not change by a digit.'
+                  : `changed by ${briefError(change)} of itself.`}
               </>
             ) : (
               <span className="text-muted">

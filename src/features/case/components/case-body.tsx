@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import { BeamLine } from '#src/components/beam-line.tsx';
 import { useEditing } from '../editing/editor-context.ts';
+import { REST_MS, useShownProblems } from '../editing/shown-problems.ts';
 import { useStations } from '../editing/use-stations.ts';
 import { problemsByStation } from '../model/problems.ts';
 import { STATIONS, summarise } from '../model/stations.ts';
@@ -18,7 +19,8 @@ interface CaseBodyProps {
 
 /** Beam line, sections, and the inputs beside whichever section is open. */
 export function CaseBody({ section, notices, children }: CaseBodyProps) {
-  const { draft, forms, estimate, problems } = useEditing();
+  const { draft, forms, estimate, problems: atFields } = useEditing();
+  const problems = useShownProblems(atFields, REST_MS);
   const stations = useStations(groupId);
   const summaries = summarise(draft.document, forms, estimate);
   const faults = problemsByStation(problems);
@@ -41,8 +43,8 @@ export function CaseBody({ section, notices, children }: CaseBodyProps) {
         {notices}
         <ProblemSummary problems={problems} onOpen={stations.openStation} />
       </div>
-      <div className="grid items-start gap-x-5.5 gap-y-5 @4xl:grid-cols-[19.5rem_minmax(0,1fr)] @5xl:grid-cols-[20.75rem_minmax(0,1fr)] print:block">
-        <div className="order-2 @4xl:sticky @4xl:top-3 @4xl:order-1 @4xl:max-h-[calc(100svh-1.5rem)] @4xl:overflow-y-auto print:hidden">
+      <div className="grid items-start gap-x-5.5 gap-y-5 @3xl:grid-cols-[17.5rem_minmax(0,1fr)] @5xl:grid-cols-[20.75rem_minmax(0,1fr)] print:block">
+        <div className="order-2 @3xl:sticky @3xl:top-3 @3xl:order-1 @3xl:max-h-[calc(100svh-1.5rem)] @3xl:overflow-y-auto print:hidden">
           <InputsPanel
             summaries={summaries}
             closed={stations.closed}
@@ -50,7 +52,7 @@ export function CaseBody({ section, notices, children }: CaseBodyProps) {
             onEnter={stations.setSelected}
           />
         </div>
-        <div className="@container order-1 min-w-0 @4xl:order-2">{children}</div>
+        <div className="@container order-1 min-w-0 @3xl:order-2">{children}</div>
       </div>
     </div>
   );

@@ -2,7 +2,7 @@ import type { ReactNode } from 'react';
 import { Copy, Redo2, Undo2 } from 'lucide-react';
 import { Button, IconButton } from '#src/components/button.tsx';
 import { Chip, StatusChip } from '#src/components/chip.tsx';
-import type { CaseDetail } from '#shared/contracts/cases.ts';
+import type { CaseDetail, Status } from '#shared/contracts/cases.ts';
 import { momentText } from '../model/moments.ts';
 import { TitleField } from './title-field.tsx';
 
@@ -17,11 +17,13 @@ interface CaseHeaderProps {
   onDuplicate: () => void;
   onSave: () => void;
   saving: boolean;
+  /** The version shown, where it is not the newest that is worked on. */
+  version?: { n: number; createdAt: string; status: Status } | undefined;
   /** In place of the buttons that save. */
   instead?: ReactNode;
 }
 
-function Meta({ detail, dirty }: { detail: CaseDetail | null; dirty: boolean }) {
+function Meta({ detail, dirty, version }: Pick<CaseHeaderProps, 'detail' | 'dirty' | 'version'>) {
   const unsaved = dirty && <span className="text-straw">unsaved changes</span>;
   if (!detail) {
     return (
@@ -30,15 +32,17 @@ function Meta({ detail, dirty }: { detail: CaseDetail | null; dirty: boolean }) 
       </p>
     );
   }
-  const { number, campaign, version, status, tags } = detail;
+  const { number, campaign, tags } = detail;
+  const shown = version ?? { ...detail.version, status: detail.status };
   return (
     <p className="mb-0.5 flex flex-wrap items-center gap-x-2 gap-y-0.5 text-sm text-muted">
       <span>
-        Case {number} · {campaign ? `${campaign.name} · ` : ''}version {version.n}, saved{' '}
-        <time dateTime={version.createdAt}>{momentText(version.createdAt)}</time>
+        Case {number} · {campaign ? `${campaign.name} · ` : ''}version {shown.n}
+        {version && ` of ${detail.version.n}`}, saved{' '}
+        <time dateTime={shown.createdAt}>{momentText(shown.createdAt)}</time>
         {tags.length > 0 && ` · ${tags.join(', ')}`}
       </span>
-      <StatusChip status={status} />
+      <StatusChip status={shown.status} />
       {unsaved}
     </p>
   );
@@ -50,7 +54,7 @@ export function CaseHeader(props: CaseHeaderProps) {
   return (
     <div className="mb-4 flex flex-wrap items-end justify-between gap-x-4 gap-y-3">
       <div className="min-w-0 flex-1 basis-80">
-        <Meta detail={detail} dirty={dirty} />
+        <Meta detail={detail} dirty={dirty} version={props.version} />
         <TitleField title={title} readOnly={readOnly} onChange={onTitle} />
       </div>
       <div className="flex flex-wrap items-center gap-2" data-screen-only>

@@ -1,26 +1,24 @@
-import { tidy } from '#src/components/convert-quantity.ts';
 import { Segmented } from '#src/components/segmented.tsx';
-import { Field, TextArea } from '#src/components/field.tsx';
 import { DEFAULT_UNITS } from '#shared/contracts/estimates.ts';
 import { unitSymbol } from '#shared/units/format.ts';
-import { UNITS, unitsOf } from '#shared/units/vocabulary.ts';
+import { unitsOf } from '#shared/units/vocabulary.ts';
 import { useEditing } from '../editing/editor-context.ts';
-import { problemAt } from '../model/problems.ts';
-import { anglesOf, withAngleKind, withAngleUnit, withGoldenRule } from '../model/table.ts';
-import { readNumberList, takeText, takeValue } from '../model/typing.ts';
+import {
+  anglesOf,
+  straightAngle,
+  withAngleKind,
+  withAngleUnit,
+  withGoldenRule,
+} from '../model/table.ts';
+import { takeValue } from '../model/typing.ts';
+import { AngleListField } from './angle-list-field.tsx';
 import { ChoiceField } from './choice-field.tsx';
 import { NumberField, QuantityField } from './typed-fields.tsx';
-import { withEntered } from '../model/entered.ts';
-
-/** 180° in the unit of the table: where angles end. */
-function useStraight(unit: string): number {
-  return tidy(Math.PI / (UNITS.angle[unit] ?? 1));
-}
 
 function StepFields() {
   const { draft } = useEditing();
   const angles = anglesOf(draft.document);
-  const straight = useStraight(angles.unit);
+  const straight = straightAngle(angles.unit);
   if ('values' in angles) return null;
   const angle = { minimum: 0, maximum: straight, what: 'The angle' };
   const put =
@@ -53,55 +51,6 @@ function StepFields() {
   );
 }
 
-function ListField() {
-  const { draft, edit, problems, readOnly } = useEditing();
-  const angles = anglesOf(draft.document);
-  const straight = useStraight(angles.unit);
-  if (!('values' in angles)) return null;
-  const { unit } = angles;
-  const pointer = '/angles/values';
-  // A long list does not fit what may be kept as typed: the numbers are then shown as they are.
-  const text = draft.open[pointer]?.text ?? angles.values.map(String).join(', ');
-  return (
-    <Field
-      label={`Angles (${unit})`}
-      hint={`${angles.values.length} angles; separate them by commas or spaces.`}
-      error={problemAt(problems, pointer)}
-    >
-      {(control) => (
-        <TextArea
-          {...control}
-          className="font-mono"
-          disabled={readOnly}
-          value={text}
-          onChange={(event) => {
-            const typed = event.target.value;
-            const rules = { minimum: 0, maximum: straight, what: 'An angle' };
-            edit(pointer, (before) => {
-              const reading = readNumberList(typed, rules);
-              // While a separator is being typed the text stays as it is.
-              const unfinished =
-                'value' in reading && reading.value.map(String).join(', ') !== typed;
-              const next = takeText(before, pointer, typed, reading, (document, values) => ({
-                ...document,
-                angles: { unit, values },
-              }));
-              const document = withEntered(next.document, pointer, null);
-              return unfinished
-                ? {
-                    ...next,
-                    document,
-                    open: { ...next.open, [pointer]: { text: typed, problem: null } },
-                  }
-                : { ...next, document };
-            });
-          }}
-        />
-      )}
-    </Field>
-  );
-}
-
 function UnitField({ kind, label }: { kind: 'length' | 'area' | 'energy'; label: string }) {
   const { draft, editDocument, setAreaUnit } = useEditing();
   return (
@@ -125,7 +74,7 @@ function GoldenRuleFields() {
   const { draft } = useEditing();
   const { goldenRule } = draft.document;
   const { unit } = anglesOf(draft.document);
-  const straight = useStraight(unit);
+  const straight = straightAngle(unit);
   return (
     <div className="grid grid-cols-2 gap-3">
       <NumberField
@@ -187,7 +136,7 @@ export function DetectorsInputs() {
         />
       </div>
       <StepFields />
-      <ListField />
+      <AngleListField />
       <div className="flex flex-col items-start gap-1">
         <span className="text-sm text-muted" aria-hidden="true">
           Frame of the angles

@@ -127,7 +127,7 @@ export function Distribution({ estimate, dimmed, fileName }: DistributionProps) 
               ]}
               onChange={setAbscissa}
             />
-            {!fixed && (
+            {!fixed && !readOnly && (
               <Segmented
                 label="Frame"
                 value={draft.document.frame ?? 'cm'}
@@ -135,9 +135,7 @@ export function Distribution({ estimate, dimmed, fileName }: DistributionProps) 
                   { value: 'cm', label: 'cm' },
                   { value: 'lab', label: 'lab' },
                 ]}
-                onChange={(frame) =>
-                  !readOnly && editDocument('/frame', (before) => ({ ...before, frame }))
-                }
+                onChange={(frame) => editDocument('/frame', (before) => ({ ...before, frame }))}
               />
             )}
           </>

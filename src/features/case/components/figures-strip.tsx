@@ -8,12 +8,13 @@ import { composedFactor } from '#shared/units/composed.ts';
 import { VERDICT_WORDS, decidingNumber, numericsText } from '../model/verdict.ts';
 import { METHOD_NAMES } from '../model/words.ts';
 
-type Kind = 'elastic' | 'momentumTransfer' | 'absorption' | 'viscosity';
+type Kind = 'elastic' | 'absorption' | 'total' | 'momentumTransfer' | 'viscosity';
 
 const LABELS: Record<Kind, string> = {
   elastic: 'Elastic σ',
   momentumTransfer: 'Momentum transfer σ',
   absorption: 'Absorption σ',
+  total: 'Total σ',
   viscosity: 'Viscosity σ',
 };
 
@@ -74,7 +75,7 @@ function VerdictCell({ estimate }: { estimate: Estimate }) {
         <Chip tone={tone} className="my-1 text-sm" icon={<span aria-hidden="true">{sign}</span>}>
           {word}
         </Chip>
-        <span className="block text-xs text-muted">{decidingNumber(validity)}</span>
+        <span className="block text-xs text-pretty text-muted">{decidingNumber(validity)}</span>
       </dd>
     </>
   );
@@ -86,7 +87,7 @@ function kindsOf(estimate: Estimate, method: Method): Kind[] {
   const { absorption } = result;
   const absorbs = 'divergent' in absorption || absorption.value !== 0;
   return absorbs
-    ? ['elastic', 'absorption', 'momentumTransfer', 'viscosity']
+    ? ['elastic', 'absorption', 'total', 'momentumTransfer', 'viscosity']
     : ['elastic', 'momentumTransfer', 'viscosity'];
 }
 
@@ -117,7 +118,9 @@ export function FiguresStrip({ estimate, dimmed, unit, onUnit }: FiguresStripPro
       <dl
         aria-busy={dimmed || undefined}
         className={classNames(
-          'grid grid-cols-2 gap-px overflow-clip rounded border border-line bg-line transition-opacity delay-100 @2xl:flex @2xl:[&>div]:flex-1',
+          'grid grid-cols-2 gap-px overflow-clip rounded border border-line bg-line transition-opacity delay-100',
+          // Four stand in one row; more break evenly.
+          shown.length === 3 ? '@2xl:grid-cols-4' : '@lg:grid-cols-3',
           dimmed && '[&_dd]:opacity-45',
         )}
       >

@@ -6,11 +6,11 @@ import { sketchOf } from '../model/sketch.ts';
 import type { Sketch } from '../model/sketch.ts';
 
 const W = 320;
-const H = 190;
+const H = 226;
 const LEFT = 14;
 const RIGHT = 306;
 const TOP = 22;
-const BOTTOM = 132;
+const BOTTOM = 168;
 
 const STROKES = ['stroke-barn', 'stroke-slate'];
 
@@ -32,7 +32,7 @@ function yOf(sketch: Sketch): (v: number) => number {
 function Wavelength({ length, end, unit }: { length: number; end: number; unit: string }) {
   const width = ((RIGHT - LEFT) * length) / end;
   const words = formatComposed(length, unit, 3);
-  const y = 160;
+  const y = 196;
   const bars = width < 6 ? 10 ** Math.ceil(Math.log10(6 / width)) : 1;
   if (width > RIGHT - LEFT) {
     return (

@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import { ChevronDown } from 'lucide-react';
 import { classNames } from '#src/lib/class-names.ts';
+import { useEditing } from '../editing/editor-context.ts';
 import { StationGlyph, type Station } from '#src/components/station-glyph.tsx';
 
 export const groupId = (station: Station): string => `inputs-${station}`;
@@ -19,6 +20,7 @@ interface StationGroupProps {
 
 /** The inputs of one station. */
 export function StationGroup(props: StationGroupProps) {
+  const { readOnly } = useEditing();
   const { station, name, open, onToggle, onEnter, summary, faulty, children } = props;
   const id = groupId(station);
   return (
@@ -54,7 +56,12 @@ export function StationGroup(props: StationGroupProps) {
         </button>
       </h2>
       <div id={`${id}-fields`} hidden={!open} className="px-4.5 pb-4.5">
-        <div className="flex flex-col gap-3.5">{children}</div>
+        <fieldset
+          disabled={readOnly}
+          className="flex min-w-0 flex-col gap-3.5 [&_:disabled]:opacity-100!"
+        >
+          {children}
+        </fieldset>
       </div>
     </section>
   );

@@ -41,12 +41,12 @@ export function TitleField({ title, readOnly, onChange }: TitleFieldProps) {
     );
   }
   return (
-    <div className="flex items-center gap-1.5">
-      <PageTitle title={title} />
+    <div>
+      <PageTitle title={title} className="inline" />
       {!readOnly && (
         <IconButton
           label="Change the title"
-          className="size-7 shrink-0 text-muted"
+          className="ml-1.5 size-7! align-[0.1em] text-muted"
           onClick={() => setBefore(title)}
           data-screen-only
         >

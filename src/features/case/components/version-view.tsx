@@ -8,13 +8,13 @@ import { formsQuery } from '../api.ts';
 import { useAreaUnit } from '../editing/area-unit.ts';
 import { EditingContext } from '../editing/editor-context.ts';
 import type { Editing } from '../editing/editor-context.ts';
+import { useDuplicate } from '../editing/use-duplicate.ts';
 import { draftOf } from '../editing/use-work.ts';
 import { momentText } from '../model/moments.ts';
 import { CaseBody } from './case-body.tsx';
 import { CaseHeader } from './case-header.tsx';
 import { SectionContent } from './section-content.tsx';
 import { useSection } from './section-tabs.tsx';
-import { useDuplicate } from './workspace.tsx';
 
 interface VersionViewProps {
   detail: CaseDetail;
@@ -53,6 +53,7 @@ export function VersionView({ detail, etag, version }: VersionViewProps) {
     <EditingContext value={editing}>
       <CaseHeader
         detail={detail}
+        version={version}
         title={version.title}
         readOnly
         dirty={false}

@@ -1,21 +1,19 @@
-import { useCallback, useEffect, useMemo, useState } from 'react';
-import { useQuery, useQueryClient } from '@tanstack/react-query';
-import { useLocation, useNavigate } from 'react-router-dom';
+import { useCallback, useMemo, useState } from 'react';
+import { useQuery } from '@tanstack/react-query';
 import { Failure } from '#src/components/failure.tsx';
 import type { CaseDetail } from '#shared/contracts/cases.ts';
 import type { FormInfo } from '#shared/contracts/forms.ts';
-import { saveDraft } from '#src/lib/drafts.ts';
-import { say } from '#src/lib/toasts.ts';
 import { useSession } from '#src/lib/session.ts';
-import { formsQuery, massQuery, versionQuery } from '../api.ts';
+import { formsQuery, massQuery } from '../api.ts';
 import { useAreaUnit } from '../editing/area-unit.ts';
 import { EditingContext } from '../editing/editor-context.ts';
 import type { Editing } from '../editing/editor-context.ts';
-import { ownKey } from '../editing/kept-draft.ts';
+import { useDuplicate } from '../editing/use-duplicate.ts';
+import { useRestore } from '../editing/use-restore.ts';
+import { WORD_MS, useShownProblems } from '../editing/shown-problems.ts';
 import { useShortcuts } from '../editing/use-editor.ts';
 import { useLiveEstimate } from '../editing/use-estimate.ts';
 import { contentOf, useWork } from '../editing/use-work.ts';
-import type { Work } from '../editing/use-work.ts';
 import type { Content } from '../model/fields.ts';
 import { ownMass } from '../model/beam-context.ts';
 import { allProblems } from '../model/problems.ts';
@@ -40,60 +38,6 @@ interface WorkspaceProps {
 
 const NO_FORMS: readonly FormInfo[] = [];
 
-/** Opens the content as a new case of its own, in the work kept on this computer. */
-export function useDuplicate() {
-  const navigate = useNavigate();
-  const { user } = useSession();
-  return useCallback(
-    ({ title, tags, document }: Content) => {
-      const name = crypto.randomUUID().slice(0, 8);
-      const href = `/cases/new?draft=${name}`;
-      const copy = `Copy of ${title}`.slice(0, 200);
-      saveDraft(user.id, {
-        key: ownKey(`case:new:${name}`),
-        title: copy,
-        href,
-        value: { draft: { title: copy, tags, document, open: {} }, base: null },
-      });
-      void navigate(href);
-    },
-    [navigate, user.id],
-  );
-}
-
-function restoreAsked(state: unknown): number | null {
-  if (typeof state !== 'object' || state === null || !('restore' in state)) return null;
-  return typeof state.restore === 'number' ? state.restore : null;
-}
-
-/** Takes up an older version as an edit of the newest, when one came here for that. */
-function useRestore(work: Work, saved: Saved | null): void {
-  const location = useLocation();
-  const navigate = useNavigate();
-  const client = useQueryClient();
-  const asked = restoreAsked(location.state);
-  const { edit } = work.editor;
-  const caseId = saved?.detail.id;
-  useEffect(() => {
-    if (asked === null || caseId === undefined) return;
-    void navigate({ search: location.search }, { replace: true, state: { keepFocus: true } });
-    client
-      .fetchQuery(versionQuery(caseId, asked))
-      .then((version) => {
-        edit('restore', (draft) => ({
-          ...draft,
-          title: version.title,
-          document: version.document,
-          open: {},
-        }));
-        say(`Version ${asked} is taken up again, unsaved. Undo brings the newest back.`);
-      })
-      .catch(() =>
-        say(`Version ${asked} could not be loaded. Try again from the record.`, { tone: 'fault' }),
-      );
-  }, [asked, caseId, client, edit, navigate, location.search]);
-}
-
 /** A case that can be changed: filed already or not yet. */
 export function Workspace({ subject, href, content, saved }: WorkspaceProps) {
   const { user } = useSession();
@@ -109,7 +53,7 @@ export function Workspace({ subject, href, content, saved }: WorkspaceProps) {
       base: saved && { version: saved.detail.version.n, etag: saved.etag },
     },
   });
-  useRestore(work, saved);
+  useRestore(work, saved?.detail.id);
   const { editor } = work;
   const { present: draft, past, future } = editor.state;
   const { document } = draft;
@@ -123,6 +67,7 @@ export function Workspace({ subject, href, content, saved }: WorkspaceProps) {
   const mass = known ?? asked.data;
 
   const problems = useMemo(() => allProblems(draft.open, live.errors), [draft.open, live.errors]);
+  const shownProblems = useShownProblems(problems, WORD_MS);
   const editing = useMemo<Editing>(
     () => ({
       draft,
@@ -132,7 +77,7 @@ export function Workspace({ subject, href, content, saved }: WorkspaceProps) {
       forms: forms.data ?? NO_FORMS,
       estimate: live.estimate,
       stale: live.stale,
-      problems,
+      problems: shownProblems,
       mass,
       areaUnit,
       setAreaUnit,
@@ -145,7 +90,7 @@ export function Workspace({ subject, href, content, saved }: WorkspaceProps) {
       forms.data,
       live.estimate,
       live.stale,
-      problems,
+      shownProblems,
       mass,
       areaUnit,
       setAreaUnit,

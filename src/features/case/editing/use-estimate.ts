@@ -7,6 +7,7 @@ import { ApiError, inWords } from '#src/lib/api.ts';
 import { estimateQuery } from '../api.ts';
 
 const PAUSE_MS = 100;
+const NO_ERRORS: readonly FieldError[] = [];
 
 /** A value that follows another once that has stood still for a moment. */
 export function useSettled<T>(value: T, pause: number): T {
@@ -35,7 +36,7 @@ export function useLiveEstimate(document: CaseDocument): LiveEstimate {
   const [last, setLast] = useState<Estimate | undefined>(query.data);
   if (query.data && query.data !== last) setLast(query.data);
   const { error } = query;
-  const errors = error instanceof ApiError ? error.errors : [];
+  const errors = error instanceof ApiError ? error.errors : NO_ERRORS;
   return {
     estimate: query.data ?? last,
     stale: query.isPlaceholderData || query.data === undefined || settled !== document,

@@ -75,3 +75,8 @@ export function withGoldenRule(
   const rest = without(document, 'goldenRule');
   return Object.keys(goldenRule).length === 0 ? rest : { ...rest, goldenRule };
 }
+
+/** 180° in a unit of angle: where angles end. */
+export function straightAngle(unit: string): number {
+  return tidy(Math.PI / (UNITS.angle[unit] ?? 1));
+}
