@@ -5,13 +5,13 @@ import { lookUp, readParameters, refuse, type ParameterReader } from './paramete
 import type { AnyParameter, Form, FormContext, Term } from './types.ts';
 
 const parameters: AnyParameter[] = [
-  { ...lengthB, optional: true },
+  { ...lengthB, oneOf: 'length' },
   {
     key: 'nuclide',
     label: 'Nuclide',
     symbol: '{}^A\\mathrm X',
     dimension: 'nuclide',
-    optional: true,
+    oneOf: 'length',
     default: 'V-51',
     description:
       'In place of b, for slow neutrons: the bound length of the table, times M/(m + M) where the target recoils.',
@@ -21,7 +21,7 @@ const parameters: AnyParameter[] = [
     label: 'Element',
     symbol: '\\mathrm X',
     dimension: 'element',
-    optional: true,
+    oneOf: 'length',
     default: 'Ni',
     description:
       'In place of b, for slow neutrons: the mean bound length of the natural element, times M/(m + M) where the target recoils.',
@@ -34,20 +34,13 @@ const BARN = 1e-8;
 
 type Named = 'nuclide' | 'element';
 
-/** The way that was chosen: exactly one of b, nuclide, element. */
+/** The way that was chosen; that there is exactly one the declaration sees to. */
 function chosen(read: ParameterReader): { key: Named; name: string } | { b: number } {
-  const b = read.optional('b');
-  const names = (['nuclide', 'element'] as const).flatMap((key) => {
+  for (const key of ['nuclide', 'element'] as const) {
     const name = read.name(key);
-    return name === undefined ? [] : [{ key, name }];
-  });
-  const [first, ...more] = names;
-  if (first === undefined && b !== undefined) return { b };
-  if (first === undefined) refuse('b', 'b is missing; give it, or a nuclide or an element');
-  if (more.length > 0 || b !== undefined) {
-    refuse(first.key, 'give only one of b, nuclide and element: each says what the length is');
+    if (name !== undefined) return { key, name };
   }
-  return first;
+  return { b: read.need('b') };
 }
 
 function rowOf(key: Named, name: string): NeutronEntry {
