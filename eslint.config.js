@@ -37,8 +37,24 @@ const allow = [
   ['potentials', ['potentials', 'tables', ...physicsBase]],
   ['methods', ['methods', 'kinematics', 'potentials', 'tables', ...physicsBase]],
   ['observables', ['observables', 'methods', 'kinematics', 'potentials', 'tables', ...physicsBase]],
-  ['physics', ['physics', 'observables', 'methods', 'kinematics', 'potentials', 'tables', ...physicsBase]],
-  ['server', ['server', 'physics', 'observables', 'methods', 'kinematics', 'potentials', 'tables', ...physicsBase, 'shared']],
+  [
+    'physics',
+    ['physics', 'observables', 'methods', 'kinematics', 'potentials', 'tables', ...physicsBase],
+  ],
+  [
+    'server',
+    [
+      'server',
+      'physics',
+      'observables',
+      'methods',
+      'kinematics',
+      'potentials',
+      'tables',
+      ...physicsBase,
+      'shared',
+    ],
+  ],
   ['feature', ['src', 'shared', 'shared-units', 'shared-errors']],
   ['src', ['src', 'shared', 'shared-units', 'shared-errors']],
   ['layouts', ['layouts', 'feature', 'src', 'shared', 'shared-units', 'shared-errors']],
@@ -52,12 +68,20 @@ export default tseslint.config(
   {
     files: ['**/*.ts', '**/*.tsx'],
     extends: [...tseslint.configs.recommendedTypeChecked],
-    languageOptions: { parserOptions: { projectService: true, tsconfigRootDir: import.meta.dirname } },
+    languageOptions: {
+      parserOptions: { projectService: true, tsconfigRootDir: import.meta.dirname },
+    },
     rules: {
       '@typescript-eslint/no-explicit-any': 'error',
       '@typescript-eslint/consistent-type-imports': 'error',
-      '@typescript-eslint/restrict-template-expressions': ['error', { allowNumber: true, allowBoolean: true }],
-      '@typescript-eslint/no-misused-promises': ['error', { checksVoidReturn: { attributes: false } }],
+      '@typescript-eslint/restrict-template-expressions': [
+        'error',
+        { allowNumber: true, allowBoolean: true },
+      ],
+      '@typescript-eslint/no-misused-promises': [
+        'error',
+        { checksVoidReturn: { attributes: false } },
+      ],
       'no-empty': ['error', { allowEmptyCatch: false }],
       eqeqeq: 'error',
     },
@@ -88,7 +112,10 @@ export default tseslint.config(
               allow: [
                 {
                   to: {
-                    element: { type: 'feature', captured: { feature: '{{from.captured.feature}}' } },
+                    element: {
+                      type: 'feature',
+                      captured: { feature: '{{from.captured.feature}}' },
+                    },
                   },
                 },
               ],
