@@ -25,7 +25,7 @@ const CHECKS = [
 async function installWhatIsMissing(shutdown) {
   const missing = [
     ...(findBinaries().length === 0 ? ['postgresql'] : []),
-    ...(findChromium() === undefined ? ['chromium', 'fonts-dejavu-core'] : []),
+    ...(findChromium() === undefined ? ['chromium', 'fonts-liberation'] : []),
   ];
   await installDebianPackages(shutdown, missing);
 }
