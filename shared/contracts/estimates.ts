@@ -2,6 +2,9 @@ import { z } from 'zod';
 import { quantitySchema } from '#shared/units/quantity.ts';
 import { UNITS } from '#shared/units/vocabulary.ts';
 import { aidsRequestSchema, aidsSchema } from './aids.ts';
+import { termSchema } from './terms.ts';
+
+export type { InteractionTerm } from './terms.ts';
 
 /** The methods an estimate may ask for; those the engine cannot do yet answer `unavailable`. */
 export const METHODS = ['born1', 'born2', 'eikonal', 'partialWaves'] as const;
@@ -65,19 +68,6 @@ export const targetSchema = z.discriminatedUnion(
 );
 export type Target = z.infer<typeof targetSchema>;
 
-const anyQuantity = z.strictObject({ value: finite('value'), unit: z.string().max(24) });
-
-/** A term as the browser knows it: a form and its parameters. The register on the server validates it strictly. */
-export const termSchema = z
-  .object({ form: z.string().min(1).max(40) })
-  .catchall(
-    z.union(
-      [anyQuantity, finite('A parameter'), z.string().max(40)],
-      'A parameter is a quantity {"value", "unit"}, a plain number or a name.',
-    ),
-  );
-export type InteractionTerm = z.infer<typeof termSchema>;
-
 export const interactionSchema = z.strictObject({
   terms: z
     .array(termSchema)
@@ -108,6 +98,10 @@ export const anglesSchema = z.union(
   `Angles are {"values": […]} or {"from", "to", "count"}, at most ${MAX_ANGLES}.`,
 );
 
+/** Corrections beyond first order that are applied on request. */
+export const CORRECTIONS = ['mckinleyFeshbach'] as const;
+export type Correction = (typeof CORRECTIONS)[number];
+
 export const FRAMES = ['cm', 'lab'] as const;
 export const REGIMES = ['nonrelativistic', 'relativistic'] as const;
 
@@ -135,6 +129,11 @@ const body = {
   angles: anglesSchema.optional(),
   frame: z.enum(FRAMES).optional(),
   identical: z.boolean().optional(),
+  corrections: z
+    .array(z.enum(CORRECTIONS))
+    .max(CORRECTIONS.length)
+    .refine((list) => new Set(list).size === list.length, 'A correction is named twice.')
+    .optional(),
   goldenRule: z
     .strictObject({
       theta: finite('theta').optional(),

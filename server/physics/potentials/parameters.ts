@@ -132,7 +132,10 @@ function check(parameter: AnyParameter, value: FormValue): void {
 }
 
 /** Whether these values ask for the parameter at all. */
-export function applies({ when }: AnyParameter, values: Readonly<Record<string, unknown>>): boolean {
+export function applies(
+  { when }: AnyParameter,
+  values: Readonly<Record<string, unknown>>,
+): boolean {
   return when === undefined || when.is.some((value) => value === values[when.key]);
 }
 
@@ -153,7 +156,13 @@ function groupFault(
   const message = `Give exactly one of ${group.join(', ')}`;
   return found.length === 0
     ? [{ key, message: `${message}.`, missing: true }]
-    : [{ key: found[1] ?? key, message: `${message}, not ${found.join(' and ')}.`, missing: false }];
+    : [
+        {
+          key: found[1] ?? key,
+          message: `${message}, not ${found.join(' and ')}.`,
+          missing: false,
+        },
+      ];
 }
 
 /** What is missing or too many among the parameters, by what they say of each other. */

@@ -1,8 +1,8 @@
 import { contact } from './contact.ts';
 import { coulomb } from './coulomb.ts';
 import { deltaShell } from './delta-shell.ts';
-import { extendedCharge } from './extended-charge.ts';
 import { exponential } from './exponential.ts';
+import { extendedCharge } from './extended-charge.ts';
 import { gaussian } from './gaussian.ts';
 import { hardSphere } from './hard-sphere.ts';
 import { hulthen } from './hulthen.ts';
@@ -11,13 +11,13 @@ import { moliere } from './moliere.ts';
 import { polarization } from './polarization.ts';
 import { screenedCoulomb } from './screened-coulomb.ts';
 import { squareWell } from './square-well.ts';
-import type { AnyParameter, Form } from './types.ts';
+import type { Form } from './types.ts';
 import { universalIon } from './universal-ion.ts';
 import { woodsSaxon } from './woods-saxon.ts';
 import { yukawa } from './yukawa.ts';
 
 /** Every form there is, in the order in which pages list them. A new form is one file and one line here. */
-export const FORMS: readonly Form<AnyParameter>[] = [
+export const FORMS: readonly Form[] = [
   yukawa,
   coulomb,
   extendedCharge,
@@ -38,6 +38,6 @@ export const FORMS: readonly Form<AnyParameter>[] = [
 
 const byKey = new Map(FORMS.map((form) => [form.key, form]));
 
-export function formByKey(key: string): Form<AnyParameter> | undefined {
+export function formByKey(key: string): Form | undefined {
   return byKey.get(key);
 }

@@ -120,9 +120,8 @@ export type FormValues = Readonly<Record<string, FormValue>>;
 
 /**
  * One interaction form: everything the input panel, validation, the engine and the Reference page need.
- * `Form` alone has numbers for parameters; `Form<AnyParameter>` also named ones.
  */
-export interface Form<Parameter extends AnyParameter = FormParameter> {
+export interface Form<Parameter extends AnyParameter = AnyParameter> {
   key: string;
   label: string;
   /** V(r) as TeX. */

@@ -1,5 +1,15 @@
 import { formByKey } from '#server/physics/potentials/register.ts';
-import type { FormContext, FormValues, Term } from '#server/physics/potentials/types.ts';
+import { applies, isNamed } from '#server/physics/potentials/parameters.ts';
+import type {
+  AnyParameter,
+  Form,
+  FormContext,
+  FormParameter,
+  FormValue,
+  FormValues,
+  Term,
+} from '#server/physics/potentials/types.ts';
+import { UNITS } from '#shared/units/vocabulary.ts';
 
 /** An electron-like projectile on a target of charge two. */
 export const CONTEXT: FormContext = {
@@ -32,4 +42,28 @@ export function transform(term: Term, route: 'closed' | 'quadrature', q: number)
   const routine = term[route];
   if (!routine) throw new Error(`${term.form} has no ${route}`);
   return routine(q);
+}
+
+function defaultOf(parameter: AnyParameter): FormValue {
+  const { default: start } = parameter;
+  if (isNamed(parameter) || typeof start !== 'object') return start as FormValue;
+  const { value, unit } = start as Exclude<FormParameter['default'], number>;
+  const units: Readonly<Record<string, number>> =
+    parameter.dimension === 'number' ? {} : UNITS[parameter.dimension];
+  return value * (units[unit] ?? NaN);
+}
+
+/** The parameters a new term starts with, in internal units: what may be left out is, of alternatives the first is taken. */
+export function neededOf({ parameters }: Form): AnyParameter[] {
+  const starts = Object.fromEntries(parameters.map((one) => [one.key, one.default]));
+  return parameters.filter(
+    (one) =>
+      !one.optional &&
+      applies(one, starts) &&
+      (one.oneOf === undefined || parameters.find(({ oneOf }) => oneOf === one.oneOf) === one),
+  );
+}
+
+export function defaultValues(form: Form): Record<string, FormValue> {
+  return Object.fromEntries(neededOf(form).map((one) => [one.key, defaultOf(one)]));
 }

@@ -1,17 +1,19 @@
 import { describe, expect, it } from 'vitest';
 import { FORMS } from '#server/physics/potentials/register.ts';
-import type { Form } from '#server/physics/potentials/types.ts';
+import { isNamed } from '#server/physics/potentials/parameters.ts';
+import type { Form, FormParameter, FormValue } from '#server/physics/potentials/types.ts';
 import { DomainError } from '#shared/errors.ts';
-import { CONTEXT } from './build-term.ts';
+import { CONTEXT, defaultValues } from './build-term.ts';
 
-/** One for every needed parameter. */
-function plain(form: Form): Record<string, number> {
+/** One for every needed number, defaults for names. */
+function plain(form: Form): Record<string, FormValue> {
+  const starts = Object.entries(defaultValues(form));
   return Object.fromEntries(
-    form.parameters.filter((parameter) => !parameter.optional).map(({ key }) => [key, 1]),
+    starts.map(([key, start]) => [key, typeof start === 'number' ? 1 : start]),
   );
 }
 
-function refusal(form: Form, values: Record<string, number>): DomainError {
+function refusal(form: Form, values: Record<string, FormValue>): DomainError {
   try {
     form.build(values, CONTEXT);
   } catch (error) {
@@ -24,13 +26,27 @@ function refusal(form: Form, values: Record<string, number>): DomainError {
 const PARAMETERS = FORMS.flatMap((form) =>
   form.parameters.map((parameter): [string, string, Form] => [form.key, parameter.key, form]),
 );
+const NUMBERS = FORMS.flatMap((form) =>
+  form.parameters
+    .filter((parameter): parameter is FormParameter => !isNamed(parameter))
+    .map((parameter): [string, string, Form, FormParameter] => [
+      form.key,
+      parameter.key,
+      form,
+      parameter,
+    ]),
+);
+const ALTERNATIVES = FORMS.flatMap((form) =>
+  form.parameters
+    .filter(({ oneOf }) => oneOf !== undefined)
+    .map(({ key }): [string, string, Form] => [form.key, key, form]),
+);
 
 describe('refusals', () => {
-  it.each(PARAMETERS)(
+  it.each(NUMBERS)(
     '%s refuses %s that is no number or out of bounds, by name',
-    (_, key, form) => {
-      const parameter = form.parameters.find((one) => one.key === key);
-      const beyond = [(parameter?.min ?? NaN) - 1, (parameter?.max ?? NaN) * 2 + 1];
+    (_, key, form, { min = NaN, max = NaN }) => {
+      const beyond = [min - 1, max * 2 + 1];
       for (const value of [NaN, Infinity, -Infinity, ...beyond]) {
         const error = refusal(form, { ...plain(form), [key]: value });
         expect(error.code).toBe('invalidInput');
@@ -42,9 +58,18 @@ describe('refusals', () => {
 
   it.each(PARAMETERS)('%s misses %s only where it is needed', (_, key, form) => {
     const rest = Object.fromEntries(Object.entries(plain(form)).filter(([name]) => name !== key));
-    const optional = form.parameters.find((one) => one.key === key)?.optional ?? false;
+    const { optional, oneOf } = form.parameters.find((one) => one.key === key) ?? {};
+    if (oneOf !== undefined) return;
     if (optional) expect(() => form.build(rest, CONTEXT)).not.toThrow();
     else expect(refusal(form, rest).message).toBe(`${key} is missing`);
+  });
+
+  it('exactly one of alternatives', () => {
+    for (const [, key, form] of ALTERNATIVES) {
+      const all = Object.fromEntries(form.parameters.map((one) => [one.key, one.default]));
+      expect(refusal(form, {}).message, key).toContain('Give exactly one of');
+      expect(refusal(form, all as Record<string, FormValue>).message).toContain(key);
+    }
   });
 
   it.each(FORMS.filter((form) => form.parameters.some(({ key }) => key === 'W0')))(

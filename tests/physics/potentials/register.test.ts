@@ -1,14 +1,14 @@
 import katex from 'katex';
 import { describe, expect, it } from 'vitest';
 import { FORMS, formByKey } from '#server/physics/potentials/register.ts';
-import { UNITS } from '#shared/units/vocabulary.ts';
-import { CONTEXT } from './build-term.ts';
+import { CONTEXT, defaultValues } from './build-term.ts';
 
 describe('register of forms', () => {
   it('lists every form once and finds it by key', () => {
     expect(FORMS.map(({ key }) => key)).toEqual([
       'yukawa',
       'coulomb',
+      'extendedCharge',
       'screenedCoulomb',
       'moliere',
       'krc',
@@ -41,14 +41,7 @@ describe('register of forms', () => {
   });
 
   it.each(FORMS)('$key: builds from its defaults, which lie in their bounds', (form) => {
-    const values = Object.fromEntries(
-      form.parameters.map(({ key, default: start, dimension }) => {
-        if (typeof start === 'number') return [key, start];
-        expect(dimension).not.toBe('number');
-        const units = dimension === 'number' ? {} : UNITS[dimension];
-        return [key, start.value * (units[start.unit] ?? NaN)];
-      }),
-    );
+    const values = defaultValues(form);
     const term = form.build(values, CONTEXT);
     expect(term.form).toBe(form.key);
     expect(Number.isFinite(term.strength.re) && term.strength.re !== 0).toBe(true);

@@ -2,6 +2,8 @@ import { afterAll, beforeAll, expect, test } from 'vitest';
 import { FORMS } from '#server/physics/potentials/register.ts';
 import { formsSchema } from '#shared/contracts/forms.ts';
 import type { FormInfo } from '#shared/contracts/forms.ts';
+import { startingParameters } from '#shared/contracts/forms.ts';
+import { isQuantity } from '#shared/contracts/terms.ts';
 import { isUnit } from '#shared/units/vocabulary.ts';
 import type { Dimension } from '#shared/units/vocabulary.ts';
 import { CONTRACT_BODY } from '#tests/physics/observables/bodies.ts';
@@ -24,16 +26,14 @@ test('the register is served whole, bounds in the unit of the default', async ()
   const served = await forms();
   expect(served.map(({ key }) => key)).toEqual(FORMS.map(({ key }) => key));
   for (const { parameters } of served) {
-    for (const {
-      dimension,
-      default: value,
-      minimum = -Infinity,
-      maximum = Infinity,
-    } of parameters) {
-      const number = typeof value === 'number' ? value : value.value;
-      expect(number).toBeGreaterThanOrEqual(minimum);
-      expect(number).toBeLessThanOrEqual(maximum);
-      if (typeof value !== 'number') expect(isUnit(value.unit, dimension as Dimension)).toBe(true);
+    for (const parameter of parameters) {
+      const { dimension, default: start, minimum = -Infinity, maximum = Infinity } = parameter;
+      if (dimension === 'choice') expect(parameter.choices).toContain(start);
+      const value = typeof start === 'number' ? start : isQuantity(start) ? start.value : null;
+      if (value === null) continue;
+      expect(value).toBeGreaterThanOrEqual(minimum);
+      expect(value).toBeLessThanOrEqual(maximum);
+      if (isQuantity(start)) expect(isUnit(start.unit, dimension as Dimension)).toBe(true);
     }
   }
   const depth = served.find(({ key }) => key === 'woodsSaxon')?.parameters[0];
@@ -42,7 +42,7 @@ test('the register is served whole, bounds in the unit of the default', async ()
 
 test('the defaults of every form make an estimate', async () => {
   for (const { key, parameters } of await forms()) {
-    const needed = parameters.filter(({ optional }) => !optional);
+    const needed = startingParameters(parameters);
     const term = Object.fromEntries(needed.map((parameter) => [parameter.key, parameter.default]));
     const target = { kind: 'fixed', charge: 6 };
     const body = { ...CONTRACT_BODY, target, interaction: { terms: [{ form: key, ...term }] } };

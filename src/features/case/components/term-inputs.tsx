@@ -3,6 +3,7 @@ import { IconButton } from '#src/components/button.tsx';
 import { Formula } from '#src/components/formula.tsx';
 import type { InteractionTerm } from '#shared/contracts/estimates.ts';
 import type { FormInfo, FormParameterInfo } from '#shared/contracts/forms.ts';
+import { isQuantity } from '#shared/contracts/terms.ts';
 import { UNITS } from '#shared/units/vocabulary.ts';
 import type { Dimension } from '#shared/units/vocabulary.ts';
 import { useEditing } from '../editing/editor-context.ts';
@@ -42,13 +43,13 @@ function ParameterField({ term, index, parameter }: ParameterFieldProps) {
     hint: parameter.description,
   };
   const initial = parameter.default;
-  if (typeof initial === 'object' && isDimension(dimension)) {
+  if (isQuantity(initial) && isDimension(dimension)) {
     return (
       <QuantityField
         {...shared}
         name={`${parameter.label} of term ${index + 1}`}
         dimension={dimension}
-        value={typeof value === 'object' ? value : undefined}
+        value={isQuantity(value) ? value : undefined}
         fallbackUnit={initial.unit}
         rules={{ ...bounds, unit: initial.unit }}
         put={(document, next) => setParameter(document, index, key, next)}
@@ -126,7 +127,7 @@ export function TermInputs({ term, index, several }: TermInputsProps) {
       </div>
       {form && (
         <div className="rounded bg-soft px-3 py-1.5">
-          <Formula display tex={`V(r) = ${form.formula.replace(/^\s*V\s*\(r\)\s*=\s*/, '')}`} />
+          <Formula display tex={form.formula} />
         </div>
       )}
       {form?.parameters.map((parameter) => (

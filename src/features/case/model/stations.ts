@@ -1,6 +1,7 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { Estimate, InteractionTerm } from '#shared/contracts/estimates.ts';
 import type { FormInfo } from '#shared/contracts/forms.ts';
+import { isQuantity } from '#shared/contracts/terms.ts';
 import { formatComposed } from '#shared/units/format.ts';
 import { anglesText, briefQuantity, formLabel, projectileName, termValueText } from './words.ts';
 
@@ -35,11 +36,11 @@ function shortTerm(term: InteractionTerm, forms: readonly FormInfo[]): string {
   const form = forms.find(({ key }) => key === term.form);
   const shown = (form?.parameters ?? []).flatMap(({ key, symbol }) => {
     const value = term[key];
-    const zero = typeof value === 'object' && value.value === 0;
+    const zero = isQuantity(value) && value.value === 0;
     return value === undefined || zero
       ? []
       : [
-          `${symbolText(symbol)} ${typeof value === 'object' ? briefQuantity(value) : termValueText(value)}`,
+          `${symbolText(symbol)} ${isQuantity(value) ? briefQuantity(value) : termValueText(value)}`.trim(),
         ];
   });
   return shown.slice(0, 3).join(' · ');

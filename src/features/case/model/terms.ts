@@ -1,5 +1,6 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { InteractionTerm } from '#shared/contracts/estimates.ts';
+import { startingParameters } from '#shared/contracts/forms.ts';
 import type { FormInfo } from '#shared/contracts/forms.ts';
 import type { Draft } from './editor.ts';
 import { withoutEntered, withoutTermTexts } from './entered.ts';
@@ -8,10 +9,11 @@ import { without } from './without.ts';
 
 /** A term with the defaults of the register; parameters that may be left out are left out. */
 export function defaultTerm(form: FormInfo): InteractionTerm {
-  const given = form.parameters.filter(({ optional }) => !optional);
   return {
     form: form.key,
-    ...Object.fromEntries(given.map((parameter) => [parameter.key, parameter.default])),
+    ...Object.fromEntries(
+      startingParameters(form.parameters).map((parameter) => [parameter.key, parameter.default]),
+    ),
   };
 }
 

@@ -7,6 +7,8 @@ import type {
   Target,
 } from '#shared/contracts/estimates.ts';
 import type { FormInfo } from '#shared/contracts/forms.ts';
+import { isNamedQuantities, isPoints, isQuantity } from '#shared/contracts/terms.ts';
+import type { TablePoints, TermValue } from '#shared/contracts/terms.ts';
 import { fullDigits, unitSymbol } from '#shared/units/format.ts';
 import type { Quantity } from '#shared/units/quantity.ts';
 
@@ -82,12 +84,25 @@ export function formLabel(key: string, forms: readonly FormInfo[]): string {
   return forms.find((form) => form.key === key)?.label ?? key;
 }
 
-export type TermValue = InteractionTerm[string];
-
 export function termValueText(value: TermValue | undefined): string {
   if (value === undefined) return 'not given';
   if (typeof value === 'string') return value;
-  return typeof value === 'number' ? digits(value) : quantityText(value);
+  if (typeof value === 'number') return digits(value);
+  if (isQuantity(value)) return quantityText(value);
+  if (isPoints(value)) return tableText(value);
+  if (!isNamedQuantities(value)) return `${value.name}, ${value.text.length} characters`;
+  return Object.entries(value)
+    .map(
+      ([name, inner]) =>
+        `${name} = ${typeof inner === 'number' ? digits(inner) : quantityText(inner)}`,
+    )
+    .join(', ');
+}
+
+function tableText(points: TablePoints): string {
+  const [first, last] = [points[0], points.at(-1)];
+  if (!first || !last) return 'no points';
+  return `${points.length} points, r ${brief(first[0])} to ${brief(last[0])}`;
 }
 
 /** The parameters of a term in the order of the register, then whatever the register does not know. */
