@@ -4,6 +4,7 @@ import {
   DataZoomInsideComponent,
   GridComponent,
   LegendComponent,
+  MarkAreaComponent,
   MarkLineComponent,
 } from 'echarts/components';
 import * as echarts from 'echarts/core';
@@ -19,6 +20,7 @@ echarts.use([
   GridComponent,
   DataZoomInsideComponent,
   LegendComponent,
+  MarkAreaComponent,
   MarkLineComponent,
   CanvasRenderer,
   SVGRenderer,
@@ -28,7 +30,17 @@ interface PlotCanvasProps {
   picture: PlotPicture;
   onPoint: (x: number) => void;
   onWindow: (window: [number, number]) => void;
+  /** Where dragging marks a band: its two ends, in the order they were drawn. */
+  onBand?: ((from: number, to: number) => void) | undefined;
 }
+
+interface Pointer {
+  offsetX: number;
+  offsetY: number;
+}
+
+/** A press that moves less than this is a click. */
+const DRAG_PIXELS = 4;
 
 interface ZoomEvent {
   start?: number;
@@ -37,10 +49,12 @@ interface ZoomEvent {
 }
 
 /** The drawn part, loaded when the first plot is shown. */
-export default function PlotCanvas({ picture, onPoint, onWindow }: PlotCanvasProps) {
+export default function PlotCanvas({ picture, onPoint, onWindow, onBand }: PlotCanvasProps) {
   const { palette } = usePalette();
   const chart = useRef<EChartsReact>(null);
   const box = useRef<HTMLDivElement>(null);
+  /** Where a drag began: it outlives the redrawing that it causes. */
+  const pressed = useRef<Pointer>(null);
 
   // The wrapper ignores the first resize after a remount, so the plot watches its box itself.
   useEffect(() => {
@@ -55,19 +69,39 @@ export default function PlotCanvas({ picture, onPoint, onWindow }: PlotCanvasPro
     const instance = chart.current?.getEchartsInstance();
     const surface = instance?.getZr();
     if (!instance || !surface) return;
-    const follow = (event: { offsetX: number; offsetY: number }) => {
-      const at = [event.offsetX, event.offsetY];
-      if (!instance.containPixel('grid', at)) return;
-      const [x] = instance.convertFromPixel('grid', at);
-      if (typeof x === 'number' && Number.isFinite(x)) onPoint(x);
+    const abscissaAt = ({ offsetX, offsetY }: Pointer) => {
+      const [x] = instance.convertFromPixel('grid', [offsetX, offsetY]);
+      return typeof x === 'number' && Number.isFinite(x) ? x : null;
+    };
+    const inside = ({ offsetX, offsetY }: Pointer) =>
+      instance.containPixel('grid', [offsetX, offsetY]);
+    const follow = (event: Pointer) => {
+      const start = pressed.current;
+      if (start && onBand && Math.abs(event.offsetX - start.offsetX) >= DRAG_PIXELS) {
+        const [from, to] = [abscissaAt(start), abscissaAt(event)];
+        if (from !== null && to !== null) onBand(from, to);
+      }
+      const x = inside(event) ? abscissaAt(event) : null;
+      if (x !== null) onPoint(x);
+    };
+    const press = (event: Pointer) => {
+      const { offsetX, offsetY } = event;
+      pressed.current = inside(event) ? { offsetX, offsetY } : null;
+    };
+    const release = () => {
+      pressed.current = null;
     };
     surface.on('mousemove', follow);
     surface.on('click', follow);
+    surface.on('mousedown', press);
+    surface.on('mouseup', release);
     return () => {
       surface.off('mousemove', follow);
       surface.off('click', follow);
+      surface.off('mousedown', press);
+      surface.off('mouseup', release);
     };
-  }, [onPoint]);
+  }, [onPoint, onBand]);
 
   const onZoom = (event: ZoomEvent) => {
     const { start, end } = event.batch?.[0] ?? event;

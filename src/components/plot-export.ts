@@ -31,7 +31,7 @@ async function svgText(picture: PlotPicture): Promise<string> {
   });
   const shown = picture.series.filter(({ key }) => !picture.hidden.has(key));
   chart.setOption({
-    ...plotOption({ ...picture, cursor: null }, light),
+    ...plotOption({ ...picture, cursor: null, band: null }, light),
     backgroundColor: light.sheet,
     legend: {
       data: shown.map(({ name }) => name),
@@ -63,7 +63,7 @@ export async function downloadPng(name: string, picture: PlotPicture): Promise<v
   });
   const shown = picture.series.filter(({ key }) => !picture.hidden.has(key));
   chart.setOption({
-    ...plotOption({ ...picture, cursor: null }, light),
+    ...plotOption({ ...picture, cursor: null, band: null }, light),
     backgroundColor: light.sheet,
     legend: {
       data: shown.map((entry) => entry.name),

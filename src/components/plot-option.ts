@@ -123,6 +123,35 @@ function crosshair(picture: PlotPicture, palette: Palette) {
   ];
 }
 
+/** The marked part of the abscissa: a ground behind the curves and an edge on either side, so that no hue carries it alone. */
+function markedBand({ band }: PlotPicture, palette: Palette) {
+  if (!band) return [];
+  return [
+    {
+      type: 'line' as const,
+      id: 'band',
+      data: [],
+      silent: true,
+      animation: false,
+      z: 1,
+      markArea: {
+        silent: true,
+        animation: false,
+        itemStyle: { color: palette.slate, opacity: 0.14 },
+        data: [[{ xAxis: band[0] }, { xAxis: band[1] }]],
+      },
+      markLine: {
+        silent: true,
+        symbol: 'none',
+        animation: false,
+        label: { show: false },
+        lineStyle: { color: palette.slate, type: 'solid', width: 1.2 },
+        data: [{ xAxis: band[0] }, { xAxis: band[1] }],
+      },
+    },
+  ];
+}
+
 /** The plot as ECharts takes it. Nothing of it needs styles in markup: the content policy forbids them, so the tooltip stays off. */
 export function plotOption(picture: PlotPicture, palette: Palette): EChartsCoreOption {
   const { x, y, yScale, window } = picture;
@@ -165,10 +194,12 @@ export function plotOption(picture: PlotPicture, palette: Palette): EChartsCoreO
         // The wheel alone scrolls the page.
         zoomOnMouseWheel: 'ctrl',
         moveOnMouseWheel: false,
+        moveOnMouseMove: picture.marking !== true,
         preventDefaultMouseMove: false,
       },
     ],
     series: [
+      ...markedBand(picture, palette),
       ...picture.series.map((series, place) => curve(series, place, picture, palette)),
       ...crosshair(picture, palette),
     ],

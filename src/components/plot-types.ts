@@ -32,4 +32,8 @@ export interface PlotPicture {
   cursor: number | null;
   /** Shown part of the abscissa, in percent. */
   window: readonly [number, number];
+  /** Part of the abscissa that is marked. */
+  band?: readonly [number, number] | null;
+  /** Dragging marks a band in place of moving a zoomed window. */
+  marking?: boolean;
 }

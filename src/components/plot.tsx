@@ -31,6 +31,8 @@ interface PlotProps {
   dimmed?: boolean;
   fileName: string;
   csv: () => string;
+  /** A part of the abscissa marked by dragging; without it dragging moves a zoomed plot. */
+  band?: { ends: readonly [number, number] | null; onBand: (from: number, to: number) => void };
 }
 
 function Legend(props: {
@@ -93,13 +95,17 @@ function zoomed([from, to]: readonly [number, number], about: number): [number, 
 
 /** The one plot of the application: legend that toggles, crosshair for mouse, touch and keyboard, zoom, and export. */
 export function Plot(props: PlotProps) {
-  const { label, series, x, y, yScale, cursor, onCursor } = props;
+  const { label, series, x, y, yScale, cursor, onCursor, band } = props;
   const [hidden, setHidden] = useState<ReadonlySet<string>>(new Set());
   const [window, setWindow] = useState<readonly [number, number]>(WHOLE);
   const sliderId = useId();
   const first = series[0]?.points;
   const at = first?.[Math.min(cursor, first.length - 1)]?.[0] ?? null;
-  const picture: PlotPicture = { series, x, y, yScale, hidden, cursor: at, window };
+  const picture: PlotPicture = {
+    ...{ series, x, y, yScale, hidden, cursor: at, window },
+    band: band?.ends ?? null,
+    marking: band !== undefined,
+  };
 
   const onPoint = useCallback(
     (value: number) => {
@@ -150,10 +156,16 @@ export function Plot(props: PlotProps) {
         className={classNames(
           'h-[300px] transition-opacity delay-100 duration-150 sm:h-[350px]',
           props.dimmed && 'opacity-45',
+          band && 'cursor-crosshair',
         )}
       >
         <Suspense fallback={<p className="grid h-full place-items-center text-muted">Drawing…</p>}>
-          <PlotCanvas picture={picture} onPoint={onPoint} onWindow={setWindow} />
+          <PlotCanvas
+            picture={picture}
+            onPoint={onPoint}
+            onWindow={setWindow}
+            onBand={band?.onBand}
+          />
         </Suspense>
       </div>
       <div>

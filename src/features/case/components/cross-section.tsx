@@ -1,6 +1,8 @@
 import { Notice } from '#src/components/notice.tsx';
 import { METHODS } from '#shared/contracts/estimates.ts';
 import type { Estimate } from '#shared/contracts/estimates.ts';
+import { AidsArea } from '../aids/aids-area.tsx';
+import { AidsProvider } from '../aids/aids-provider.tsx';
 import { useEditing } from '../editing/editor-context.ts';
 import { METHOD_NAMES } from '../model/words.ts';
 import { CriteriaTable } from './criteria-table.tsx';
@@ -47,27 +49,30 @@ function UnavailableMethods({ estimate }: { estimate: Estimate }) {
 export function CrossSection({ estimate, fileName }: { estimate: Estimate; fileName: string }) {
   const { stale, areaUnit, setAreaUnit } = useEditing();
   return (
-    <div className="flex flex-col gap-4">
-      <FiguresStrip estimate={estimate} dimmed={stale} unit={areaUnit} onUnit={setAreaUnit} />
-      <section
-        aria-label="Angular distribution"
-        className="rounded border border-line bg-sheet px-4.5 py-4"
-      >
-        <Distribution estimate={estimate} dimmed={stale} fileName={fileName} />
-      </section>
-      <UnavailableMethods estimate={estimate} />
-      <div className="grid gap-4 @3xl:grid-cols-[20rem_minmax(0,1fr)]">
+    <AidsProvider>
+      <div className="flex flex-col gap-4">
+        <FiguresStrip estimate={estimate} dimmed={stale} unit={areaUnit} onUnit={setAreaUnit} />
         <section
-          aria-label="Potential and wavelength"
+          aria-label="Angular distribution"
           className="rounded border border-line bg-sheet px-4.5 py-4"
         >
-          <h2 className="mb-2 font-bold">V(r) and the wavelength</h2>
-          <PotentialSketch estimate={estimate} dimmed={stale} />
-          <KinematicsList estimate={estimate} />
+          <Distribution estimate={estimate} dimmed={stale} fileName={fileName} />
         </section>
-        <CriteriaTable validity={estimate.validity} />
+        <AidsArea />
+        <UnavailableMethods estimate={estimate} />
+        <div className="grid gap-4 @3xl:grid-cols-[20rem_minmax(0,1fr)]">
+          <section
+            aria-label="Potential and wavelength"
+            className="rounded border border-line bg-sheet px-4.5 py-4"
+          >
+            <h2 className="mb-2 font-bold">V(r) and the wavelength</h2>
+            <PotentialSketch estimate={estimate} dimmed={stale} />
+            <KinematicsList estimate={estimate} />
+          </section>
+          <CriteriaTable validity={estimate.validity} />
+        </div>
+        <Warnings estimate={estimate} />
       </div>
-      <Warnings estimate={estimate} />
-    </div>
+    </AidsProvider>
   );
 }

@@ -1,13 +1,16 @@
-import { useMemo, useState } from 'react';
+import { useCallback, useMemo, useState } from 'react';
 import { Plot } from '#src/components/plot.tsx';
 import type { Scale } from '#src/components/plot-types.ts';
 import { Segmented } from '#src/components/segmented.tsx';
 import type { Estimate } from '#shared/contracts/estimates.ts';
 import { formatComposed, formatNumber, unitSymbol } from '#shared/units/format.ts';
+import { useAidsState } from '../aids/aids-context.ts';
+import { bandOf, draggedRange, rangeOver } from '../aids/model/angle-range.ts';
 import { useEditing } from '../editing/editor-context.ts';
 import { curvesCsv } from '../model/csv.ts';
 import { abscissaOf, curvesOf } from '../model/curves.ts';
 import type { Abscissa, Curve } from '../model/curves.ts';
+import { anglesOf } from '../model/table.ts';
 import { FRAME_NAMES } from '../model/words.ts';
 import { NumbersTable } from './numbers-table.tsx';
 import { Readout } from './readout.tsx';
@@ -54,6 +57,23 @@ function xAxis(abscissa: Abscissa, curves: readonly Curve[], estimate: Estimate)
   return { title: `momentum transfer q, centre of mass (${unitSymbol(`1/${length}`)})` };
 }
 
+/** The range of angles marked on the plot, while an aid asks for one. */
+function useBand(curves: readonly Curve[], abscissa: Abscissa, unit: string) {
+  const { draft } = useEditing();
+  const { marking, range, setRange } = useAidsState();
+  const [first] = curves;
+  const onBand = useCallback(
+    (from: number, to: number) => {
+      const dragged = draggedRange(first, abscissa, [from, to], unit);
+      if (dragged) setRange(dragged);
+    },
+    [first, abscissa, unit, setRange],
+  );
+  if (!marking) return {};
+  const ends = bandOf(first, abscissa, rangeOver(anglesOf(draft.document), range));
+  return { band: { ends, onBand } };
+}
+
 interface DistributionProps {
   estimate: Estimate;
   dimmed: boolean;
@@ -68,6 +88,7 @@ export function Distribution({ estimate, dimmed, fileName }: DistributionProps) 
   const series = useMemo(() => plotted(curves, abscissa), [curves, abscissa]);
   const [place, setPlace] = useState<number | null>(null);
   const [tableOpen, setTableOpen] = useState(false);
+  const band = useBand(curves, abscissa, estimate.units.angle);
 
   const count = curves[0]?.points.length ?? 0;
   const cursor = Math.min(place ?? Math.floor((count - 1) / 3), Math.max(0, count - 1));
@@ -98,6 +119,7 @@ export function Distribution({ estimate, dimmed, fileName }: DistributionProps) 
         dimmed={dimmed}
         fileName={fileName}
         csv={() => curvesCsv(curves, units)}
+        {...band}
         readout={
           <Readout
             curves={curves}

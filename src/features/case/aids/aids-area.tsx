@@ -1,0 +1,24 @@
+import { useAidsState } from './aids-context.ts';
+import { BetweenAngles } from './between-angles.tsx';
+import { Disclosure } from './disclosure.tsx';
+
+/** What helps to read the curve and to take it along: closed lines below it, each asked for when it is opened. */
+export function AidsArea() {
+  const { setMarking } = useAidsState();
+  return (
+    <section
+      aria-label="Aids"
+      className="rounded border border-line bg-sheet px-4.5 py-2"
+      data-screen-only
+    >
+      <h2 className="sr-only">Aids</h2>
+      <Disclosure
+        title="Between two angles"
+        says="what scatters into a ring, marked on the plot"
+        onOpen={setMarking}
+      >
+        <BetweenAngles />
+      </Disclosure>
+    </section>
+  );
+}
