@@ -37,6 +37,42 @@ const rooms: RouteObject[] = [
   { path: 'cases/new', lazy: casePage },
   { path: 'cases/:caseId', lazy: casePage },
   { path: 'cases/:caseId/versions/:n', lazy: casePage },
+  {
+    path: 'reference',
+    lazy: page(() => import('#src/features/reference/pages/reference-room.tsx')),
+    children: [
+      { index: true, lazy: page(() => import('#src/features/reference/pages/overview-page.tsx')) },
+      { path: 'forms', lazy: page(() => import('#src/features/reference/pages/forms-page.tsx')) },
+      {
+        path: 'forms/:key',
+        lazy: page(() => import('#src/features/reference/pages/form-page.tsx')),
+      },
+      {
+        path: 'species',
+        lazy: page(() => import('#src/features/reference/pages/species-page.tsx')),
+      },
+      {
+        path: 'nuclides',
+        lazy: page(() => import('#src/features/reference/pages/nuclides-page.tsx')),
+      },
+      {
+        path: 'nuclides/:nuclide',
+        lazy: page(() => import('#src/features/reference/pages/nuclide-page.tsx')),
+      },
+      {
+        path: 'elements',
+        lazy: page(() => import('#src/features/reference/pages/elements-page.tsx')),
+      },
+      {
+        path: 'neutron-lengths',
+        lazy: page(() => import('#src/features/reference/pages/neutron-lengths-page.tsx')),
+      },
+      {
+        path: 'materials',
+        lazy: page(() => import('#src/features/reference/pages/materials-page.tsx')),
+      },
+    ],
+  },
   { path: 'account', lazy: page(() => import('#src/features/account/pages/account-page.tsx')) },
   { path: 'people', lazy: page(() => import('#src/features/users/pages/people-page.tsx')) },
   { path: '*', Component: NotFound },

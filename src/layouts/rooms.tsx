@@ -1,4 +1,4 @@
-import { BookOpenText, CircleUserRound, LampDesk, UsersRound } from 'lucide-react';
+import { BookOpenText, CircleUserRound, LampDesk, Ruler, UsersRound } from 'lucide-react';
 import { NavLink } from 'react-router-dom';
 import type { Session } from '#shared/contracts/auth.ts';
 import { classNames } from '#src/lib/class-names.ts';
@@ -14,6 +14,7 @@ interface Room {
 
 const DESK: Room = { to: '/', label: 'Desk', Icon: LampDesk, end: true };
 const CASES: Room = { to: '/cases', label: 'Cases', Icon: BookOpenText };
+const REFERENCE: Room = { to: '/reference', label: 'Reference', Icon: Ruler };
 const PEOPLE: Room = { to: '/people', label: 'People', Icon: UsersRound };
 const ACCOUNT: Room = { to: '/account', label: 'Account', Icon: CircleUserRound };
 
@@ -50,7 +51,7 @@ export function Rooms({
   brand?: boolean;
   onWalk?: () => void;
 }) {
-  const research = mayEver(session, 'case.list') ? [DESK, CASES] : [];
+  const research = mayEver(session, 'case.list') ? [DESK, CASES, REFERENCE] : [REFERENCE];
   const admin = mayEver(session, 'user.list') ? [PEOPLE] : [];
   return (
     <nav aria-label="Rooms" className="flex flex-1 flex-col gap-4">
@@ -59,13 +60,11 @@ export function Rooms({
           <Brand />
         </div>
       )}
-      {research.length > 0 && (
-        <ul className="flex flex-col gap-0.5">
-          {research.map((room) => (
-            <RoomLink key={room.to} room={room} onWalk={onWalk} />
-          ))}
-        </ul>
-      )}
+      <ul className="flex flex-col gap-0.5">
+        {research.map((room) => (
+          <RoomLink key={room.to} room={room} onWalk={onWalk} />
+        ))}
+      </ul>
       {admin.length > 0 && (
         <div>
           <h2 className="mb-1 px-2.5 text-xs font-semibold text-muted">Admin</h2>

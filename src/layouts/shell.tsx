@@ -7,6 +7,7 @@ import { IconButton } from '#src/components/button.tsx';
 import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
 import { ThemeSwitch } from '#src/components/theme-switch.tsx';
 import { classNames } from '#src/lib/class-names.ts';
+import { HeaderSearch } from '#src/features/search/components/header-search.tsx';
 import { mayEver } from '#src/lib/session.ts';
 import { useShortcuts } from '#src/lib/shortcuts.ts';
 import { Brand } from './brand.tsx';
@@ -24,13 +25,8 @@ function useKeys(session: Session, showKeys: () => void) {
     useMemo(() => {
       const always = { '?': showKeys };
       if (!research) return always;
-      const search = () => {
-        const box = document.querySelector<HTMLInputElement>('#case-search');
-        if (box) box.focus();
-        else void navigate('/cases', { state: { focusSearch: true, keepFocus: true } });
-      };
       const begin = () => pathname !== '/cases/new' && void navigate('/cases/new');
-      return { ...always, n: begin, '/': search };
+      return { ...always, n: begin };
     }, [research, navigate, pathname, showKeys]),
   );
 }
@@ -106,6 +102,9 @@ export function Shell({ session }: { session: Session }) {
               <Brand />
             </div>
             <span className="truncate max-lg:hidden">{lab}</span>
+            <div className="flex min-w-0 flex-1 justify-center max-lg:justify-end">
+              <HeaderSearch />
+            </div>
             <div className="flex items-center gap-3 max-lg:hidden">
               {who}
               {keys}

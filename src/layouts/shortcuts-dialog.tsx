@@ -4,7 +4,7 @@ import { setShortcuts, useShortcutsOn } from '#src/lib/shortcuts.ts';
 
 const LIST: ReadonlyArray<{ keys: readonly string[]; does: string }> = [
   { keys: ['n'], does: 'Begin a new case' },
-  { keys: ['/'], does: 'Search the cases' },
+  { keys: ['/'], does: 'Search cases, nuclides, forms and materials' },
   { keys: ['?'], does: 'Show these keys' },
   { keys: ['Ctrl', 'S'], does: 'Save the open case as a new version' },
   { keys: ['Ctrl', 'Z'], does: 'Undo a change of the open case' },
@@ -22,7 +22,7 @@ export function ShortcutsDialog({
   research: boolean;
 }) {
   const on = useShortcutsOn();
-  const shown = research ? LIST : LIST.filter(({ keys }) => keys.includes('?'));
+  const shown = research ? LIST : LIST.filter(({ keys }) => ['/', '?'].includes(keys[0] ?? ''));
   return (
     <Dialog open={open} onOpenChange={onOpenChange} title="Keys">
       <dl className="flex flex-col gap-2">

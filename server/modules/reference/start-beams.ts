@@ -51,7 +51,10 @@ const MADE_FOR: Readonly<Record<string, FormBeam>> = {
 };
 
 const isNuclear = ({ default: start }: FormParameterInfo): boolean =>
-  typeof start === 'object' && 'unit' in start && /MeV|fm/.test(start.unit);
+  typeof start === 'object' &&
+  'unit' in start &&
+  typeof start.unit === 'string' &&
+  /MeV|fm/.test(String(start.unit));
 
 /** The collision a form is shown with: its own, or by the scale of its defaults electrons of 100 eV or neutrons of 50 MeV. */
 export function beamFor(key: string, parameters: readonly FormParameterInfo[]): FormBeam {

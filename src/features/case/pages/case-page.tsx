@@ -6,6 +6,8 @@ import { Failure } from '#src/components/failure.tsx';
 import { PageTitle } from '#src/components/page-title.tsx';
 import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
 import { ApiError } from '#src/lib/api.ts';
+import { referenceStartOf, startHref, startQuery } from '#src/lib/reference-start.ts';
+import type { ReferenceStart } from '#src/lib/reference-start.ts';
 import { STARTS } from '#src/lib/starts.ts';
 import { caseQuery, versionQuery } from '../api.ts';
 import { VersionView } from '../components/version-view.tsx';
@@ -62,8 +64,39 @@ function newCase(parameters: URLSearchParams) {
   return { subject: `case:new:${name}`, href, content: NEW };
 }
 
+/** A new case with something from the Reference in it: the server, which has the tables, writes the document. */
+function FromReference({ start }: { start: ReferenceStart }) {
+  const { data, error, isError, refetch } = useQuery(startQuery(start));
+  if (data) {
+    const { title, document } = data;
+    const subject = `case:new:${start.kind}-${start.name}`;
+    return (
+      <Workspace
+        key={subject}
+        subject={subject}
+        href={startHref(start)}
+        content={{ title, tags: [], document }}
+        saved={null}
+      />
+    );
+  }
+  if (!isError) return <Loading />;
+  return (
+    <>
+      <PageTitle title="New case" className="mb-4" />
+      <Failure what="The entry of the Reference" error={error} onRetry={() => void refetch()} />
+    </>
+  );
+}
+
 function NewCase() {
   const [parameters] = useSearchParams();
+  const start = referenceStartOf(parameters);
+  if (start) return <FromReference start={start} />;
+  return <PlainNewCase parameters={parameters} />;
+}
+
+function PlainNewCase({ parameters }: { parameters: URLSearchParams }) {
   const { subject, href, content } = newCase(parameters);
   return <Workspace key={subject} subject={subject} href={href} content={content} saved={null} />;
 }
