@@ -6,6 +6,7 @@ import type { Estimate } from '#shared/contracts/estimates.ts';
 import { formatComposed, formatNumber, unitSymbol } from '#shared/units/format.ts';
 import { useAidsState } from '../aids/aids-context.ts';
 import { bandOf, draggedRange, rangeOver } from '../aids/model/angle-range.ts';
+import { PointMeaning } from '../aids/point-meaning.tsx';
 import { useEditing } from '../editing/editor-context.ts';
 import { curvesCsv } from '../model/csv.ts';
 import { abscissaOf, curvesOf } from '../model/curves.ts';
@@ -74,6 +75,23 @@ function useBand(curves: readonly Curve[], abscissa: Abscissa, unit: string) {
   return { band: { ends, onBand } };
 }
 
+/** A branch is explained as what it is; their sum is not, since it has no amplitude of its own. */
+function CurveMeaning(props: { curve: Curve; place: number; estimate: Estimate }) {
+  const { curve, place, estimate } = props;
+  const born = estimate.methods.born1;
+  const point = born && !('unavailable' in born) ? born.differential[place] : undefined;
+  const isSum = curve.key === 'born1' && (point?.branches?.length ?? 0) > 0;
+  if (!point || isSum || !curve.key.startsWith('born1')) return null;
+  return (
+    <PointMeaning
+      point={point}
+      estimate={estimate}
+      rank={curve.key === 'born1-high' ? 1 : 0}
+      label={`What is dσ/dΩ here, ${curve.name}?`}
+    />
+  );
+}
+
 interface DistributionProps {
   estimate: Estimate;
   dimmed: boolean;
@@ -126,6 +144,7 @@ export function Distribution({ estimate, dimmed, fileName }: DistributionProps) 
             place={cursor}
             units={units}
             angle={angleText(at.theta, units.angle)}
+            meaningOf={(curve) => <CurveMeaning curve={curve} place={cursor} estimate={estimate} />}
           />
         }
         switches={

@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import { Chip } from '#src/components/chip.tsx';
 import { AreaUnitMenu, Figure } from '#src/components/figure.tsx';
 import { Notice } from '#src/components/notice.tsx';
@@ -5,6 +6,7 @@ import { classNames } from '#src/lib/class-names.ts';
 import { METHODS } from '#shared/contracts/estimates.ts';
 import type { Estimate, Integral, Method } from '#shared/contracts/estimates.ts';
 import { composedFactor } from '#shared/units/composed.ts';
+import { FigureMeaning } from '../aids/figure-meaning.tsx';
 import { VERDICT_WORDS, decidingNumber, numericsText } from '../model/verdict.ts';
 import { METHOD_NAMES } from '../model/words.ts';
 
@@ -20,17 +22,20 @@ const LABELS: Record<Kind, string> = {
 
 interface CellProps {
   label: string;
+  meaning: ReactNode;
   method: string;
   integral: Integral;
   unit: string;
   onUnit: (unit: string) => void;
 }
 
-function Cell({ label, method, integral, unit, onUnit }: CellProps) {
+function Cell({ label, meaning, method, integral, unit, onUnit }: CellProps) {
   if ('divergent' in integral) {
     return (
       <>
-        <dt className="text-sm text-muted">{label}</dt>
+        <dt className="flex items-center justify-between gap-1 text-sm text-muted">
+          {label} {meaning}
+        </dt>
         <dd>
           <span className="block text-lg font-semibold">divergent</span>
           <span className="block text-xs text-muted">{method} · reason below</span>
@@ -46,7 +51,9 @@ function Cell({ label, method, integral, unit, onUnit }: CellProps) {
   };
   return (
     <>
-      <dt className="text-sm text-muted">{label}</dt>
+      <dt className="flex items-center justify-between gap-1 text-sm text-muted">
+        {label} {meaning}
+      </dt>
       <dd>
         <Figure
           size="large"
@@ -106,6 +113,9 @@ export function FiguresStrip({ estimate, dimmed, unit, onUnit }: FiguresStripPro
     return kindsOf(estimate, method).map((kind) => ({
       key: `${method} ${kind}`,
       label: LABELS[kind],
+      meaning: method === 'born1' && (
+        <FigureMeaning kind={kind} label={LABELS[kind]} estimate={estimate} />
+      ),
       method: METHOD_NAMES[method],
       integral: result[kind],
     }));

@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import { formatComposed, formatNumber, unitSymbol } from '#shared/units/format.ts';
 import type { TableUnits } from '../model/csv.ts';
 import type { Curve } from '../model/curves.ts';
@@ -9,9 +10,11 @@ interface ReadoutProps {
   units: TableUnits;
   /** The angle of the crosshair, in words. */
   angle: string;
+  /** What the value of a curve is, behind a question mark. */
+  meaningOf: (curve: Curve) => ReactNode;
 }
 
-function Item({ name, children }: { name: string; children: React.ReactNode }) {
+function Item({ name, children }: { name: string; children: ReactNode }) {
   return (
     <div className="min-w-0">
       <dt className="text-xs text-muted">{name}</dt>
@@ -21,7 +24,7 @@ function Item({ name, children }: { name: string; children: React.ReactNode }) {
 }
 
 /** Everything at the crosshair in one row that never changes its height. */
-export function Readout({ curves, place, units, angle }: ReadoutProps) {
+export function Readout({ curves, place, units, angle, meaningOf }: ReadoutProps) {
   const first = curves[0]?.points[place];
   if (!first) return null;
   const single = curves.length === 1;
@@ -39,7 +42,7 @@ export function Readout({ curves, place, units, angle }: ReadoutProps) {
               <span className="font-sans">{point?.reason ?? 'no value'}</span>
             ) : (
               <>
-                {formatNumber(point.dcs, 5)} {unitSymbol(units.dcs)}
+                {formatNumber(point.dcs, 5)} {unitSymbol(units.dcs)} {meaningOf(curve)}
                 <span className="text-muted">
                   {single ? ` · ${numericsText(point)}` : ''}
                   {point.thetaCm === undefined
