@@ -17,12 +17,19 @@ import { potentialCurve } from './observables/potential-curve.ts';
 import type { Window } from './observables/window.ts';
 import { goldenRuleWindow } from './observables/window.ts';
 import { finalStates } from './kinematics/final-states.ts';
+import { leptonFactor } from './lepton-factor.ts';
 import type { Problem } from './problem.ts';
+
+/** A factor that stands after the golden rule, and the cross section with it and all before. */
+export interface FactorAfter {
+  name: 'exchange' | 'spin' | 'mckinleyFeshbach' | 'incoherent';
+  dcs: number;
+}
 
 export interface GoldenRuleSheet extends GoldenRule {
   window: Window;
-  /** Cross section with exchange, angstrom²/sr; null for distinct particles or where it diverges. */
-  withExchange: number | null;
+  /** The cross section after each further factor, angstrom²/sr, one upon the other. */
+  factorsAfter: FactorAfter[];
 }
 
 export interface FirstBornResult {
@@ -73,9 +80,21 @@ function middleAngle({ angles, frame, collision }: Problem): number {
 }
 
 /** The curve of a problem from its amplitude, in the frame it is asked in. */
+/** What stands after the square of the amplitude. */
+export function beyondAmplitude(problem: Problem) {
+  const lepton = leptonFactor(problem);
+  return {
+    factor: lepton && (lepton.corrected ?? lepton.plain),
+    incoherent: incoherentOf(problem),
+  };
+}
+
+const incoherentOf = ({ terms }: Problem): number =>
+  terms.reduce((sum, { incoherent = 0 }) => sum + incoherent, 0);
+
 export function differential(problem: Problem, born: FirstBorn): FirstBornResult['differential'] {
   const { angles, frame, exchangeSpin, collision } = problem;
-  const input = { born, k: collision.k, exchangeSpin };
+  const input = { born, k: collision.k, exchangeSpin, ...beyondAmplitude(problem) };
   if (frame === 'cm') return { frame, points: angles.map((theta) => cmPoint(input, theta)) };
   return { frame, points: angles.map((theta) => labPoint(input, collision.frame, theta)) };
 }
@@ -87,6 +106,30 @@ function exchangedDcs(problem: Problem, born: FirstBorn, theta: number): number 
   const exchanged = born.amplitude(theta === Math.PI ? 0 : 2 * k * Math.cos(theta / 2));
   if (direct === null || exchanged === null) return null;
   return exchangeDcs(direct, exchanged, problem.exchangeSpin).value;
+}
+
+/** What the curve holds beyond the chain, factor by factor. */
+function factorsAfter(
+  problem: Problem,
+  born: FirstBorn,
+  theta: number,
+  plain: number,
+): FactorAfter[] {
+  const exchanged = exchangedDcs(problem, born, theta);
+  if (problem.exchangeSpin !== null) {
+    return exchanged === null ? [] : [{ name: 'exchange', dcs: exchanged }];
+  }
+  const lepton = leptonFactor(problem);
+  const found: FactorAfter[] = [];
+  if (lepton) found.push({ name: 'spin', dcs: plain * lepton.plain(theta).value });
+  if (lepton?.corrected) {
+    found.push({ name: 'mckinleyFeshbach', dcs: plain * lepton.corrected(theta).value });
+  }
+  const incoherent = incoherentOf(problem);
+  if (incoherent > 0) {
+    found.push({ name: 'incoherent', dcs: (found.at(-1)?.dcs ?? plain) + incoherent });
+  }
+  return found;
 }
 
 function goldenRuleSheet(
@@ -114,7 +157,7 @@ function goldenRuleSheet(
     range,
     totalRate: samples === null ? null : 8 * Math.PI * samples.moments[0] * sheet.flux,
   });
-  return { ...sheet, window, withExchange: exchangedDcs(problem, born, theta) };
+  return { ...sheet, window, factorsAfter: factorsAfter(problem, born, theta, sheet.dcs) };
 }
 
 /** An interaction without first order (a hard sphere): what the potential and the kinematics still say. */
@@ -166,6 +209,13 @@ function curveAndIntegrals(
   const { collision, exchangeSpin } = problem;
   return {
     differential: differential(problem, born),
-    integrals: crossSections({ born, k: collision.k, scales, samples, exchangeSpin }),
+    integrals: crossSections({
+      born,
+      k: collision.k,
+      scales,
+      samples,
+      exchangeSpin,
+      ...beyondAmplitude(problem),
+    }),
   };
 }

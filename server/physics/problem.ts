@@ -33,6 +33,8 @@ export interface Problem {
   angles: number[];
   /** Spin of identical particles; null for distinct ones. */
   exchangeSpin: number | null;
+  /** Corrections beyond first order that were asked for. */
+  corrections: readonly 'mckinleyFeshbach'[];
   goldenRule: {
     /** rad, centre of mass; null for the middle of the angles. */
     theta: number | null;

@@ -1,6 +1,7 @@
 import { COULOMB_EV_ANGSTROM } from './constants/codata2022.ts';
 import type { FirstBornResult, Unavailable } from './estimate.ts';
 import { differential, scalesOf } from './estimate.ts';
+import { leptonFactor } from './lepton-factor.ts';
 import { firstBorn } from './methods/born1.ts';
 import type { CmRange } from './observables/between-angles.ts';
 import { cmRanges, elasticBetween } from './observables/between-angles.ts';
@@ -90,9 +91,9 @@ function pointCharges(problem: Problem): PointCharges | Unavailable {
       targetCharge: target.charge,
     },
   );
-  const bare: Problem = { ...problem, terms: [term] };
+  const bare: Problem = { ...problem, terms: [term], corrections: [] };
   return {
-    kind: 'rutherford',
+    kind: leptonFactor(bare) === null ? 'rutherford' : 'mott',
     chargeProduct,
     charges,
     reference: differential(bare, firstBorn(bare.terms, collision.twoMuOverHbar2)),

@@ -1,21 +1,15 @@
 import { COULOMB_EV_ANGSTROM, BOHR } from './constants/codata2022.ts';
 import type { EstimateResult } from './estimate.ts';
 import { scalesOf } from './estimate.ts';
+import { leptonWarnings } from './lepton-warnings.ts';
+import type { Warning } from './warning.ts';
 import { twoBody } from './kinematics/two-body.ts';
 import type { Term } from './potentials/types.ts';
 import type { Problem } from './problem.ts';
 
-/** A caution in the words of the trade that says what to do; `info` where nothing is wrong. */
-export interface Warning {
-  code: string;
-  message: string;
-  level: 'caution' | 'info';
-  path?: string;
-}
-
 const FERMI = 1e-5;
+const BARN_PER_ANGSTROM2 = 1e8;
 const DEGREE = Math.PI / 180;
-const ELECTROSTATIC = ['coulomb', 'screenedCoulomb', 'moliere', 'krc', 'universalIon'];
 const TEN_RANGES = 10;
 const FAST = 0.1;
 
@@ -24,7 +18,7 @@ const degrees = (radians: number) => `${(radians / DEGREE).toPrecision(3)} degre
 const isActive = ({ strength }: Term) => strength.re !== 0 || strength.im !== 0;
 
 function chargeForms({ terms }: Problem): Term[] {
-  return terms.filter(({ form }) => ELECTROSTATIC.includes(form));
+  return terms.filter(({ chargeProduct }) => chargeProduct !== undefined);
 }
 
 /** Strength of all bare tails, eV angstrom: the charge product times e². */
@@ -50,18 +44,6 @@ function exchangePhase({ problem }: EstimateResult): Warning | null {
     level: 'caution',
     message:
       'First-order Coulomb amplitudes lack the phase eta ln sin²(theta/2), so the interference of the two identical particles is not that of the published (Mott) values. Trust the sum of the two directions, not its oscillation.',
-  };
-}
-
-function spinFactor({ problem }: EstimateResult): Warning | null {
-  const { projectile, regime, collision } = problem;
-  const charged = chargeForms(problem).some(isActive);
-  if (projectile.kind !== 'lepton' || regime !== 'relativistic' || !charged) return null;
-  const square = collision.betaLab ** 2;
-  return {
-    code: 'spinFactorMissing',
-    level: 'caution',
-    message: `The spin of the lepton is not in these numbers. Multiply dσ/dΩ by 1 − β² sin²(θ/2): ${(1 - square / 2).toPrecision(6)} at 90 degrees, ${(1 - square).toPrecision(6)} at 180 degrees (fixed or heavy target).`,
   };
 }
 
@@ -189,6 +171,30 @@ function identicalIntegrals({ problem }: EstimateResult): Warning | null {
   };
 }
 
+/** What the terms say of themselves, each once. */
+function ofTerms({ problem }: EstimateResult): Warning[] {
+  const said = new Set<string>();
+  return problem.terms.flatMap(({ cautions = [] }, i) =>
+    cautions.flatMap(({ code, message, level = 'caution' }) => {
+      if (said.has(message)) return [];
+      said.add(message);
+      return [{ code, message, level, path: `/interaction/terms/${i}` }];
+    }),
+  );
+}
+
+function incoherentAdded({ problem }: EstimateResult): Warning | null {
+  const incoherent = problem.terms.reduce((sum, term) => sum + (term.incoherent ?? 0), 0);
+  if (!(incoherent > 0)) return null;
+  const barn = 4 * Math.PI * incoherent * BARN_PER_ANGSTROM2;
+  return {
+    code: 'incoherentAdded',
+    level: 'info',
+    message: `dσ/dΩ and every integral contain the incoherent scattering of the target, ${barn.toPrecision(4)} barn in all directions alike; the amplitude and the golden-rule sheet do not.`,
+    path: '/interaction/terms',
+  };
+}
+
 function elasticOnly(): Warning {
   return {
     code: 'elasticOnly',
@@ -203,7 +209,7 @@ export function warningsOf(result: EstimateResult): Warning[] {
   const found = [
     nuclearContact(result),
     slowKinematics(result),
-    spinFactor(result),
+    ...leptonWarnings(result),
     finiteNucleus(result),
     exchangePhase(result),
     noCharge(result),
@@ -213,6 +219,8 @@ export function warningsOf(result: EstimateResult): Warning[] {
     boundLength(result),
     identicalIntegrals(result),
     notDrawn(result),
+    ...ofTerms(result),
+    incoherentAdded(result),
     elasticOnly(),
   ];
   return found.filter((warning) => warning !== null);

@@ -261,7 +261,10 @@ export const goldenRuleSchema = z.object({
   rate: quantity,
   flux: quantity,
   dcs: quantity,
-  /** Factors that stand after the golden rule: exchange, incoherent, spin. */
+  /**
+   * Factors that stand after the golden rule: exchange, spin (with the recoil of a light target), mckinleyFeshbach, incoherent.
+   * Each dcs is the cross section with this factor and those before it.
+   */
   factorsAfter: z.array(z.object({ name: z.string(), dcs: quantity })),
   window: z.union([z.object({ t0Min: quantity, t0Max: quantity }), noWindow]),
 });

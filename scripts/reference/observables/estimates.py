@@ -124,6 +124,19 @@ def pair(value):
     return [high, float(value - mpf(high))]
 
 
+def mott(body, charges, angle):
+    """Point charge with recoil in the lab: energies by conservation, solved for the momentum that is left."""
+    m, M, T = MASS["electron"], MASS[body["target"]["species"]], number(body["energy"], ENERGY)
+    E = T + m
+    p = sqrt(T * (T + 2 * m))
+    left = mp.findroot(
+        lambda x: E + M - sqrt(x**2 + m**2) - sqrt(M**2 + p**2 + x**2 - 2 * p * x * cos(angle)), p / (1 + E / M * (1 - cos(angle)))
+    )
+    half = sin(angle / 2) ** 2
+    point = charges[0] * charges[1] * ALPHA * HBAR_C * E / (2 * p**2 * half)
+    return point**2 * (1 - (p / E) ** 2 * half) * sqrt(left**2 + m**2) / E
+
+
 def estimate(body):
     k, mu, frame = kinematics(body)
     factor = 2 * mu / HBAR_C**2
@@ -137,16 +150,25 @@ def estimate(body):
     spin = SPIN[body["projectile"]["species"]]
     weight = 2 * (-1) ** int(2 * spin) / (2 * spin + 1)
 
+    charged = all(sent["form"] in ("coulomb", "screenedCoulomb") for sent in body["interaction"]["terms"])
+    lepton = body["projectile"]["species"] == "electron" and body.get("kinematics") == "relativistic" and charged
+    gamma = 1 + number(body["energy"], ENERGY) / MASS[body["projectile"]["species"]]
+    beta2 = 1 - 1 / gamma**2
+
     def dcs(t):
         direct = f(2 * k * t)
         if not identical:
-            return square(direct)
+            # The spin of a relativistic electron on a fixed charge, N. F. Mott (1929).
+            return square(direct) * (1 - beta2 * t**2 if lepton else 1)
         exchanged = f(2 * k * sqrt(1 - t**2))
         return square(direct) + square(exchanged) + weight * (direct * mp.conj(exchanged)).real
 
     rows = []
     for theta in body["angles"]["values"]:
         angle = mpf(repr(theta)) * pi / 180
+        if lepton and target["kind"] != "fixed":
+            rows.append({"theta": theta, "dcs": pair(mott(body, charges, angle))})
+            continue
         if body.get("frame") == "lab":
             ways = branches(angle, frame)
             value = sum(dcs(sin(cm / 2)) * jacobian for cm, jacobian in ways)
@@ -188,6 +210,8 @@ BODIES = [
     {**ELECTRON, "energy": q(0.01, "meV"), "interaction": {"terms": [{"form": "exponential", "V0": q(0.3, "eV"), "a": q(0.7, "angstrom")}]}},
     {**ELECTRON, "energy": q(100, "eV"), "interaction": {"terms": MIX}},
     {**ELECTRON, "energy": q(300, "keV"), "kinematics": "relativistic", "interaction": {"terms": [{"form": "screenedCoulomb", "a": q(0.2, "angstrom"), "chargeProduct": -6}]}},
+    {**ELECTRON, "energy": q(500, "MeV"), "kinematics": "relativistic", "target": {"kind": "species", "species": "proton"}, "frame": "lab",
+     "angles": {"unit": "deg", "values": [1, 10, 60, 90, 150, 180]}, "interaction": {"terms": [{"form": "coulomb"}]}},
     {**ELECTRON, "energy": q(100, "eV"), "interaction": {"terms": [{"form": "squareWell", "V0": q(-2, "eV"), "R": q(20, "angstrom")}]}},
     {**ELECTRON, "energy": q(100, "eV"), "interaction": {"terms": [{"form": "deltaShell", "g": q(-2, "eV angstrom"), "R": q(9.5, "angstrom")}]}},
     {**ELECTRON, "energy": q(2, "keV"), "interaction": {"terms": [{"form": "gaussian", "V0": q(-2, "eV"), "a": q(1.5, "angstrom")}]}},

@@ -48,10 +48,10 @@ export function presentGoldenRule(
     rate: { value: finite(sheet.rate), unit: '1/(s sr)' },
     flux: units.composed(sheet.flux, '1/(angstrom2 s)', `1/(${units.area} s)`),
     dcs: units.dcsQuantity(sheet.dcs),
-    factorsAfter:
-      sheet.withExchange === null
-        ? []
-        : [{ name: 'exchange', dcs: units.dcsQuantity(sheet.withExchange) }],
+    factorsAfter: sheet.factorsAfter.map(({ name, dcs }) => ({
+      name,
+      dcs: units.dcsQuantity(dcs),
+    })),
     window: windowOf(sheet),
   };
 }

@@ -3,6 +3,8 @@ import { toInternal } from '#shared/units/quantity.ts';
 import type { TwoBody } from '#server/physics/kinematics/two-body.ts';
 import { twoBody } from '#server/physics/kinematics/two-body.ts';
 import { exchangeSpin, identicalByRule } from '#server/physics/methods/exchange.ts';
+import { smallestCorrectedFactor } from '#server/physics/methods/lepton-spin.ts';
+import { leptonFactor, spinObstacle } from '#server/physics/lepton-factor.ts';
 import type { Particle, Problem } from '#server/physics/problem.ts';
 import { Faults } from './faults.ts';
 import { askedAngles, toAngles, toRadians } from './to-angles.ts';
@@ -80,6 +82,37 @@ function toCollision(
   );
 }
 
+/** Why McKinley and Feshbach's correction cannot be applied, in words; null where it can. */
+function correctionObstacle(problem: Problem): string | null {
+  const { projectile, energy } = problem;
+  const lepton = leptonFactor(problem);
+  if (!lepton) {
+    const why = spinObstacle(problem);
+    return `it belongs to relativistic electrons, positrons or muons scattered by charges${why === null ? '' : `, and ${why}`}`;
+  }
+  if (smallestCorrectedFactor(1 + energy / projectile.mass, lepton.chargeProduct) >= 0) return null;
+  return 'at this charge it would make the cross section negative; it holds for |alpha Z1 Z2| below about 0.2';
+}
+
+function refuseBeyondFirstOrder(problem: Problem, faults: Faults): void {
+  const { corrections, exchangeSpin, terms } = problem;
+  if (corrections.includes('mckinleyFeshbach')) {
+    const why = correctionObstacle(problem);
+    if (why !== null) {
+      faults.add(
+        `/corrections/${corrections.indexOf('mckinleyFeshbach')}`,
+        `The correction of McKinley and Feshbach cannot be applied: ${why}.`,
+      );
+    }
+  }
+  if (exchangeSpin !== null && terms.some(({ incoherent = 0 }) => incoherent > 0)) {
+    faults.add(
+      '/identical',
+      'Incoherent scattering belongs to targets that differ from the projectile; leave "identical" out, or give the scattering length b itself.',
+    );
+  }
+}
+
 /**
  * The problem an estimate asks: units end here, and every term is checked strictly against the register.
  * Throws DomainError('invalidInput') with all faults found, each with its JSON Pointer.
@@ -108,7 +141,7 @@ export function toProblem(request: EstimateRequest): Problem {
     faults,
   );
   faults.throwIfAny();
-  return {
+  const problem: Problem = {
     projectile,
     target,
     energy: toInternal(request.energy, 'energy'),
@@ -119,6 +152,10 @@ export function toProblem(request: EstimateRequest): Problem {
     frame: request.frame ?? 'cm',
     angles,
     exchangeSpin: spin,
+    corrections: request.corrections ?? [],
     goldenRule,
   };
+  refuseBeyondFirstOrder(problem, faults);
+  faults.throwIfAny();
+  return problem;
 }

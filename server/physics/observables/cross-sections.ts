@@ -1,7 +1,10 @@
-import type { FirstBorn } from '#server/physics/methods/born1.ts';
+import type { Amplitude, FirstBorn } from '#server/physics/methods/born1.ts';
 import { exchangeWeight } from '#server/physics/methods/exchange.ts';
+import type { AngularFactor } from '#server/physics/methods/lepton-spin.ts';
+import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import { DomainError } from '#shared/errors.ts';
 import type { ConeSamples, Scales } from './cone-samples.ts';
+import { sampleCone } from './cone-samples.ts';
 import type { Computed, CrossSections } from './integrals.ts';
 import { DIVERGENCES, absorption, directIntegrals, exchangeIntegrals, sumOf } from './integrals.ts';
 
@@ -13,6 +16,10 @@ export interface CrossSectionInput {
   samples: ConeSamples | null;
   /** Spin of identical particles; null for distinct ones. */
   exchangeSpin: number | null;
+  /** What stands after the square of the amplitude: the spin of a lepton; null without one. */
+  factor?: AngularFactor | null;
+  /** Incoherent scattering, angstrom²/sr. */
+  incoherent?: number;
 }
 
 const plus = (a: Computed, b: Computed): Computed => ({
@@ -49,10 +56,38 @@ export function crossSections(input: CrossSectionInput): CrossSections {
       viscosity: { divergent: DIVERGENCES.viscosity },
     };
   }
-  const [elastic, momentumTransfer, viscosity] = angular(input, samples);
+  const coherent = angular(input, withSpin(input, samples));
+  const [elastic, momentumTransfer, viscosity] = withIncoherent(coherent, input.incoherent ?? 0);
   for (const integral of [elastic, momentumTransfer, viscosity]) refuseCoarse(integral, born.floor);
   const total = sumOf(elastic, removed);
   return { elastic, absorption: removed, total, momentumTransfer, viscosity };
+}
+
+/** The amplitude sampled again with the square root of the factor: its moments are those of the whole. */
+function withSpin({ born, k, scales, factor }: CrossSectionInput, plain: ConeSamples): ConeSamples {
+  if (!factor) return plain;
+  const whole = (q: number): Amplitude => {
+    const { re, im, error } = born.shortRange(q);
+    const spin = factor(2 * Math.asin(Math.min(1, q / (2 * k))));
+    const root = Math.sqrt(spin.value);
+    const blur = root > 0 ? spin.error / (2 * root) : 0;
+    return { re: re * root, im: im * root, error: error * root + Math.hypot(re, im) * blur };
+  };
+  return sampleCone(whole, k, scales);
+}
+
+/** Isotropic scattering adds 4 pi, 4 pi and 8 pi/3 times itself to the three integrals. */
+function withIncoherent(
+  coherent: [Computed, Computed, Computed],
+  incoherent: number,
+): [Computed, Computed, Computed] {
+  const [elastic, momentumTransfer, viscosity] = coherent;
+  const add = (to: Computed, share: number): Computed => {
+    const more = share * incoherent;
+    return { value: to.value + more, error: to.error + 4 * UNIT_ROUNDOFF * more };
+  };
+  const sphere = 4 * Math.PI;
+  return [add(elastic, sphere), add(momentumTransfer, sphere), add(viscosity, (2 / 3) * sphere)];
 }
 
 function angular(

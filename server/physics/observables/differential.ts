@@ -1,4 +1,5 @@
 import type { Amplitude, FirstBorn } from '#server/physics/methods/born1.ts';
+import type { AngularFactor } from '#server/physics/methods/lepton-spin.ts';
 import { exchangeDcs } from '#server/physics/methods/exchange.ts';
 import type { Frame } from '#server/physics/kinematics/frames.ts';
 import { labToCm } from '#server/physics/kinematics/frames.ts';
@@ -10,6 +11,10 @@ export interface DifferentialInput {
   k: number;
   /** Spin of identical particles; null for distinct ones. */
   exchangeSpin: number | null;
+  /** What stands after the square of the amplitude: the spin of a lepton; null without one. */
+  factor?: AngularFactor | null;
+  /** Incoherent scattering, angstrom²/sr. */
+  incoherent?: number;
 }
 
 /** Cross section at one centre-of-mass angle; lengths in angstrom. */
@@ -51,10 +56,28 @@ export function reasonAt({ amplitude }: CmPoint): string {
   return amplitude === null ? FORWARD_DIVERGENCE : EXCHANGED_DIVERGENCE;
 }
 
+/** Spin factor and incoherent part, in this order: they belong to the cross section, not to the amplitude. */
+function after(
+  { factor, incoherent = 0 }: DifferentialInput,
+  { value, error, belowFloor }: NonNullable<CmPoint['dcs']>,
+  thetaCm: number,
+  blur: number,
+): NonNullable<CmPoint['dcs']> {
+  const spin = factor ? factor(thetaCm, blur) : { value: 1, error: 0 };
+  const carried = error * (spin.value + spin.error) + value * spin.error;
+  const whole = value * spin.value + incoherent;
+  return {
+    value: whole,
+    error: carried + 4 * UNIT_ROUNDOFF * incoherent,
+    belowFloor: belowFloor && incoherent === 0,
+  };
+}
+
 /**
  * dσ/dΩ at one angle of the centre of mass.
  *
- * Formula: |f(q)|², q = 2k sin(theta/2); for identical particles with the exchanged amplitude at 2k cos(theta/2).
+ * Formula: |f(q)|², q = 2k sin(theta/2), times the factor of a lepton's spin, plus what is incoherent; for identical particles with the
+ * exchanged amplitude at 2k cos(theta/2).
  *
  * @param thetaCm rad, 0 to pi
  * @param blur relative error of q beyond rounding
@@ -71,7 +94,13 @@ export function cmPoint(input: DifferentialInput, thetaCm: number, blur = 0): Cm
     const size = Math.hypot(amplitude.re, amplitude.im);
     const value = amplitude.re * amplitude.re + amplitude.im * amplitude.im;
     const error = (2 * size + amplitude.error) * amplitude.error + 3 * UNIT_ROUNDOFF * value;
-    return { thetaCm, q, amplitude, dcs: { value, error, belowFloor: size <= born.floor } };
+    const belowFloor = size <= born.floor;
+    return {
+      thetaCm,
+      q,
+      amplitude,
+      dcs: after(input, { value, error, belowFloor }, thetaCm, blur),
+    };
   }
   // At pi the partner goes forward: exactly 0, not the rounding of a cosine.
   const exchanged = born.amplitude(thetaCm === Math.PI ? 0 : 2 * k * Math.cos(thetaCm / 2), blur);

@@ -24,3 +24,8 @@ export function coulombStrength(read: ParameterReader, context: FormContext): nu
   const product = read.optional('chargeProduct') ?? context.projectileCharge * context.targetCharge;
   return product * FINE_STRUCTURE * HBAR_C_EV_ANGSTROM;
 }
+
+/** The charge product behind a Coulomb strength, eV·angstrom. */
+export function chargeProductOf(strength: number): number {
+  return strength / (FINE_STRUCTURE * HBAR_C_EV_ANGSTROM);
+}

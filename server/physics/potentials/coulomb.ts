@@ -1,5 +1,5 @@
 import type { NumericalResult } from '#server/physics/numerics/result.ts';
-import { chargeProductParameter, coulombStrength } from './charges.ts';
+import { chargeProductOf, chargeProductParameter, coulombStrength } from './charges.ts';
 import { readParameters } from './parameters.ts';
 import { closedResult } from './transform-error.ts';
 import type { Form } from './types.ts';
@@ -43,6 +43,7 @@ export const coulomb: Form = {
       closed,
       /** The tail is subtracted and closed; what is left to integrate is zero everywhere, so this is the tail alone. */
       quadrature: closed,
+      chargeProduct: chargeProductOf(strength),
       coulombTail: strength === 0 ? 0 : 1,
       norm: 0,
       firstMoment: null,

@@ -2,7 +2,7 @@ import type { NumericalResult } from '#server/physics/numerics/result.ts';
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import type { ChargeShape } from './charge-shapes.ts';
 import { dipoleCharge, gaussianCharge, uniformSphere } from './charge-shapes.ts';
-import { chargeProductParameter, coulombStrength } from './charges.ts';
+import { chargeProductOf, chargeProductParameter, coulombStrength } from './charges.ts';
 import { fermiCharge } from './fermi-charge.ts';
 import { helmCharge } from './helm-charge.ts';
 import { lengthParameter, readParameters, refuse } from './parameters.ts';
@@ -124,6 +124,7 @@ export const extendedCharge: Form<AnyParameter> = {
       v: (r) => shape.within(r) / r,
       closed: charged ? (q) => extendedChargeTransform(shape, q) : () => nothing,
       quadrature: charged ? quadratureOf(shape) : () => nothing,
+      chargeProduct: chargeProductOf(strength),
       coulombTail: charged ? 1 : 0,
       norm: shape.meanSquare / 6,
       firstMoment: null,

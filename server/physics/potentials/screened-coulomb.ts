@@ -1,5 +1,5 @@
 import { exponentialIntegralE1 } from '#server/physics/numerics/exponential-integral.ts';
-import { chargeProductParameter, coulombStrength } from './charges.ts';
+import { chargeProductOf, chargeProductParameter, coulombStrength } from './charges.ts';
 import { E_FOLDINGS, exponentialEdges, exponentialRemainder } from './exponential-tail.ts';
 import { lengthParameter, readParameters } from './parameters.ts';
 import { radialQuadrature } from './radial-quadrature.ts';
@@ -47,9 +47,11 @@ export const screenedCoulomb: Form = {
     const read = readParameters(parameters, values);
     const a = read.need('a');
     const norm = a ** 2;
+    const strength = coulombStrength(read, context);
     return {
       form: 'screenedCoulomb',
-      strength: { re: coulombStrength(read, context), im: 0 },
+      strength: { re: strength, im: 0 },
+      chargeProduct: chargeProductOf(strength),
       v: (r) => Math.exp(-r / a) / r,
       closed: (q) => screenedCoulombTransform(a, q),
       quadrature: radialQuadrature(

@@ -1,6 +1,7 @@
 import { screening, type ScreeningKey } from '#server/physics/tables/screening.ts';
 import { exponentialIntegralE1 } from '#server/physics/numerics/exponential-integral.ts';
 import type { NumericalResult } from '#server/physics/numerics/result.ts';
+import { chargeProductOf } from './charges.ts';
 import { E_FOLDINGS, exponentialEdges, exponentialRemainder } from './exponential-tail.ts';
 import { radialQuadrature } from './radial-quadrature.ts';
 import { closedResult } from './transform-error.ts';
@@ -92,6 +93,7 @@ export function screenedTerm(
   return {
     form,
     strength: { re: strength, im: 0 },
+    chargeProduct: chargeProductOf(strength),
     v: (r) => sum(({ rate }) => Math.exp((-rate * r) / a)) / r,
     closed: (q) => screeningTransform(screens, a, q),
     quadrature: quadratureOf(screens, a, norm),

@@ -61,6 +61,10 @@ export interface Term {
   breakpoints: number[];
   /** Why there is no first order (hard sphere); `closed` and `quadrature` are null then. */
   noBorn?: string;
+  /** Z1 Z2 of an electrostatic term: how it acts on the spin of a relativistic lepton is then known. */
+  chargeProduct?: number;
+  /** What a person should know of this term as it was given: codes are stable, `caution` is the default level. */
+  cautions?: readonly { code: string; message: string; level?: 'caution' | 'info' }[];
   /** Incoherent scattering, angstrom²/sr: adds to the cross section, never to the amplitude. Absent means none. */
   incoherent?: number;
   /**

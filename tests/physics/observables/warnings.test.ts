@@ -33,13 +33,18 @@ test('nuclear forces: the head-on distance against the radii and three fermi', (
   );
 });
 
-test('the spin of relativistic leptons: the factor it lacks', () => {
+test('the spin of relativistic leptons: applied where all terms are charges, else the factor that lacks', () => {
   const fast = {
     energy: Q(1, 'MeV'),
     kinematics: 'relativistic',
     target: { kind: 'fixed', charge: 13 },
   };
-  const found = warning({ ...fast, interaction: COULOMB }, 'spinFactorMissing');
+  expect(warning({ ...fast, interaction: COULOMB }, 'spinFactorApplied')?.level).toBe('info');
+  expect(warning({ ...fast, interaction: COULOMB }, 'spinFactorMissing')).toBeUndefined();
+  const [yukawa] = CONTRACT_BODY.interaction.terms;
+  const mixed = { terms: [...COULOMB.terms, yukawa] };
+  const found = warning({ ...fast, interaction: mixed }, 'spinFactorMissing');
+  expect(found?.message).toMatch(/the yukawa term is not the potential of a charge/);
   // Mott factor at 90 degrees and 1 MeV: 0.557185, recomputed outside this project.
   expectRelative(number(found?.message, /([\d.]+) at 90 degrees/), 0.557185, 2e-6);
   expect(warning(fast, 'spinFactorMissing')).toBeUndefined();

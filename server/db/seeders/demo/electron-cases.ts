@@ -81,7 +81,7 @@ const fastOnCarbon: DemoCase = {
   versions: [
     {
       author: 'theorist',
-      note: 'Shows relativistic kinematics at an energy far above our gun, where first order serves for a light element. The spin of the electron is left out, and the warning says what it would change at wide angles.',
+      note: 'Shows relativistic kinematics at an energy far above our gun, where first order serves for a light element. The spin of the electron is in the cross section at wide angles and not in the amplitude.',
       document: {
         ...screenedCarbon(THOMAS_FERMI_LENGTH),
         energy: { value: 100, unit: 'keV' },
