@@ -109,7 +109,7 @@ export default function PlotCanvas({ picture, onPoint, onWindow, onBand }: PlotC
   };
 
   return (
-    <div ref={box} className="h-full w-full">
+    <div ref={box} className="absolute inset-0 overflow-hidden">
       <EChartsReact
         ref={chart}
         echarts={echarts}

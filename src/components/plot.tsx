@@ -154,7 +154,7 @@ export function Plot(props: PlotProps) {
         aria-label={`${label}. The numbers stand in the table below.`}
         aria-busy={props.dimmed || undefined}
         className={classNames(
-          'h-[300px] transition-opacity delay-100 duration-150 sm:h-[350px]',
+          'relative h-[300px] transition-opacity delay-100 duration-150 sm:h-[350px]',
           props.dimmed && 'opacity-45',
           band && 'cursor-crosshair',
         )}

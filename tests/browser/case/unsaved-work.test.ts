@@ -2,6 +2,7 @@ import type { Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, expect, test } from 'vitest';
 import { saveCase } from '#tests/browser/support/case-factory.ts';
 import { openStage, type Stage } from '#tests/browser/support/stage.ts';
+import { TEST_PASSWORD } from '#tests/support/factories.ts';
 import { retype, settled } from './case-steps.ts';
 
 let stage: Stage;
@@ -101,4 +102,27 @@ test('what only the server can refuse stands beside its field', async () => {
   await nuclide.fill('ca40');
   await page.getByText('One input needs mending', { exact: false }).waitFor({ state: 'detached' });
   await settled(page);
+});
+
+test('a session that ends while typing is regained over the page, and the save goes on', async () => {
+  const { account, agent } = await stage.app.person('experimentalist');
+  const id = await saveCase(agent, 'Regained');
+  const visitor = await stage.visitor(account);
+  visitor.console.expect(/401/);
+  const { page, context, goTo } = visitor;
+  await goTo(`/cases/${id}`);
+  await settled(page);
+  await context.clearCookies();
+  await retype(page, energyOf(page), '777 eV');
+  const dialog = page.getByRole('dialog', { name: 'Sign in again' });
+  await dialog.waitFor();
+  await dialog.getByLabel('Password').fill(TEST_PASSWORD);
+  await page.keyboard.press('Enter');
+  await dialog.waitFor({ state: 'detached' });
+  expect(await energyOf(page).inputValue()).toBe('777 eV');
+  await settled(page);
+  await page.keyboard.press('ControlOrMeta+s');
+  await page.getByRole('dialog', { name: 'Save version 2' }).waitFor();
+  await page.keyboard.press('ControlOrMeta+s');
+  await page.getByText(/version 2, saved/).waitFor();
 });
