@@ -1,15 +1,16 @@
 import { FORMS } from '#server/physics/potentials/register.ts';
-import type { FormParameter, Term } from '#server/physics/potentials/types.ts';
+import type { AnyParameter, Term } from '#server/physics/potentials/types.ts';
 import { toInternal } from '#shared/units/quantity.ts';
+import type { Quantity } from '#shared/units/quantity.ts';
 import type { Dimension } from '#shared/units/vocabulary.ts';
 import { measure, shown } from './measure.ts';
 
 const POINTS = 181;
 
-function valueOf({ default: given, dimension }: FormParameter): number | undefined {
+function valueOf({ default: given, dimension }: AnyParameter): number | undefined {
   if (typeof given === 'number') return given;
   return typeof given === 'object' && 'unit' in given && 'value' in given
-    ? toInternal(given, dimension as Dimension)
+    ? toInternal(given as Quantity, dimension as Dimension)
     : undefined;
 }
 
