@@ -79,7 +79,6 @@ function middleAngle({ angles, frame, collision }: Problem): number {
   return labToCm(middle, collision.frame)[0]?.thetaCm ?? middle;
 }
 
-/** The curve of a problem from its amplitude, in the frame it is asked in. */
 /** What stands after the square of the amplitude. */
 export function beyondAmplitude(problem: Problem) {
   const lepton = leptonFactor(problem);
@@ -92,6 +91,7 @@ export function beyondAmplitude(problem: Problem) {
 const incoherentOf = ({ terms }: Problem): number =>
   terms.reduce((sum, { incoherent = 0 }) => sum + incoherent, 0);
 
+/** The curve of a problem from its amplitude, in the frame it is asked in. */
 export function differential(problem: Problem, born: FirstBorn): FirstBornResult['differential'] {
   const { angles, frame, exchangeSpin, collision } = problem;
   const input = { born, k: collision.k, exchangeSpin, ...beyondAmplitude(problem) };

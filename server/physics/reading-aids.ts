@@ -1,7 +1,6 @@
-import { COULOMB_EV_ANGSTROM } from './constants/codata2022.ts';
 import type { FirstBornResult, Unavailable } from './estimate.ts';
 import { differential, scalesOf } from './estimate.ts';
-import { leptonFactor } from './lepton-factor.ts';
+import { chargeProductOf, leptonFactor } from './lepton-factor.ts';
 import { firstBorn } from './methods/born1.ts';
 import type { CmRange } from './observables/between-angles.ts';
 import { cmRanges, elasticBetween } from './observables/between-angles.ts';
@@ -41,39 +40,21 @@ export interface ReadingAids {
   kinematics?: Way[][];
 }
 
-/** Forms whose strength is Z1 Z2 alpha hbar c. */
-const ELECTROSTATIC = [
-  'coulomb',
-  'screenedCoulomb',
-  'moliere',
-  'krc',
-  'universalIon',
-  'extendedCharge',
-];
 const NO_CHARGES: Unavailable = {
   unavailable:
     'There is no point-charge cross section to compare with: projectile or target has no charge. Give the target its charge, or the term a chargeProduct.',
 };
-/** A charge product is a whole number but for the rounding of its own strength. */
-const tidyProduct = (product: number) => Number(product.toPrecision(12));
 
 function noFirstOrder({ terms }: Problem): Unavailable | null {
   const reason = terms.find((term) => term.noBorn !== undefined)?.noBorn;
   return reason === undefined ? null : { unavailable: reason };
 }
 
-/** Strength of the electrostatic terms, over e², else the charges of the particles. */
-function chargesOf({
-  terms,
-  projectile,
-  target,
-}: Problem): Omit<PointCharges, 'own' | 'reference' | 'kind'> {
-  const strength = terms
-    .filter(({ form }) => ELECTROSTATIC.includes(form))
-    .reduce((sum, term) => sum + term.strength.re, 0);
-  if (strength !== 0) {
-    return { chargeProduct: tidyProduct(strength / COULOMB_EV_ANGSTROM), charges: 'interaction' };
-  }
+/** Z1 Z2 of the electrostatic terms, else that of the particles. */
+function chargesOf(problem: Problem): Pick<PointCharges, 'chargeProduct' | 'charges'> {
+  const ofTerms = chargeProductOf(problem);
+  if (ofTerms !== 0) return { chargeProduct: ofTerms, charges: 'interaction' };
+  const { projectile, target } = problem;
   return { chargeProduct: projectile.charge * target.charge, charges: 'particles' };
 }
 

@@ -73,6 +73,28 @@ describe('the ratio to Rutherford', () => {
     });
   });
 
+  test('of a relativistic electron holds its spin: the values of Mott at 90 degrees', () => {
+    // 1 MeV on aluminium and 100 keV on gold, fixed point charges, recomputed from Mott's formula outside this project.
+    for (const [charge, energy, barn] of [
+      [13, 1, 1.0903266],
+      [79, 0.1, 3260.87],
+    ] as const) {
+      const body = onGold(
+        { form: 'screenedCoulomb', a: Q(0.2, 'angstrom') },
+        {
+          projectile: { species: 'electron' },
+          target: { kind: 'fixed', charge },
+          energy: Q(energy, 'MeV'),
+          kinematics: 'relativistic',
+        },
+      );
+      const { kind, points } = referenceOf(body);
+      expect(kind).toBe('mott');
+      expectRelative(points[2]?.dcs ?? NaN, barn, 2e-6);
+      expect(points[1]?.ratio ?? 2).toBeLessThan(1);
+    }
+  });
+
   test('is refused in words without charges', () => {
     const found = answer({ ...CONTRACT_BODY, aids: { reference: true } }).aids?.reference;
     expect(found).toMatchObject({ unavailable: true });
