@@ -1,7 +1,6 @@
-import type { Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, test } from 'vitest';
 import type { Account } from '#server/modules/users/account.entity.ts';
-import { expectAccessible, expectNoSidewaysScroll } from '#tests/browser/support/accessibility.ts';
+import { expectSoundInEveryView } from '#tests/browser/support/accessibility.ts';
 import { saveCase } from '#tests/browser/support/case-factory.ts';
 import { openStage, type Stage } from '#tests/browser/support/stage.ts';
 import { settled } from './case-steps.ts';
@@ -19,29 +18,6 @@ beforeAll(async () => {
 });
 afterAll(() => stage.close());
 afterEach(() => stage.settle());
-
-/** Colours and sizes of a new view are there once it has been drawn. */
-async function painted(page: Page): Promise<void> {
-  await page.evaluate(
-    () => new Promise((done) => requestAnimationFrame(() => requestAnimationFrame(done))),
-  );
-}
-
-/** The page as it stands, in both themes, wide, narrow, and without sideways scroll on the narrowest. */
-async function expectSoundInEveryView(page: Page): Promise<void> {
-  for (const colorScheme of ['light', 'dark'] as const) {
-    await page.emulateMedia({ colorScheme });
-    for (const width of [1440, 390]) {
-      await page.setViewportSize({ width, height: 900 });
-      await painted(page);
-      await expectAccessible(page);
-      await expectNoSidewaysScroll(page);
-    }
-  }
-  await page.setViewportSize({ width: 360, height: 800 });
-  await painted(page);
-  await expectNoSidewaysScroll(page);
-}
 
 test('a new case with its table of numbers: no violation in any view', async () => {
   const { page, goTo } = await stage.visitor(owner);

@@ -1,8 +1,12 @@
-import type { Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, test } from 'vitest';
 import type { Role } from '#shared/roles.ts';
 import type { Account } from '#server/modules/users/account.entity.ts';
-import { expectAccessible, expectNoSidewaysScroll } from '#tests/browser/support/accessibility.ts';
+import {
+  expectAccessible,
+  expectNoSidewaysScroll,
+  expectSoundInEveryView,
+  painted,
+} from '#tests/browser/support/accessibility.ts';
 import { saveCase } from '#tests/browser/support/case-factory.ts';
 import { openStage, type Stage } from '#tests/browser/support/stage.ts';
 
@@ -32,18 +36,6 @@ const PAGES: ReadonlyArray<{ name: string; path: string; who?: Role | 'owner' }>
   { name: 'people, to others', path: '/people', who: 'manager' },
   { name: 'not found', path: '/nowhere', who: 'owner' },
 ];
-
-/** The page as it stands, in both themes, wide and narrow. */
-async function expectSoundInEveryView(page: Page): Promise<void> {
-  for (const colorScheme of ['light', 'dark'] as const) {
-    await page.emulateMedia({ colorScheme });
-    for (const width of [1440, 390]) {
-      await page.setViewportSize({ width, height: 900 });
-      await expectAccessible(page);
-      await expectNoSidewaysScroll(page);
-    }
-  }
-}
 
 test.each(PAGES)(
   '$name: no violation and no sideways scroll in any view',
@@ -76,6 +68,7 @@ test('the menu of a narrow screen: no violation in either theme', async () => {
   await page.getByRole('dialog', { name: 'Menu' }).waitFor();
   for (const colorScheme of ['light', 'dark'] as const) {
     await page.emulateMedia({ colorScheme });
+    await painted(page);
     await expectAccessible(page);
   }
 });

@@ -20,3 +20,26 @@ export async function expectNoSidewaysScroll(page: Page): Promise<void> {
   ]);
   expect(content).toBeLessThanOrEqual(window ?? 0);
 }
+
+/** Colours and sizes of a new view are there once it has been drawn. */
+export async function painted(page: Page): Promise<void> {
+  await page.evaluate(
+    () => new Promise((done) => requestAnimationFrame(() => requestAnimationFrame(done))),
+  );
+}
+
+/** The page as it stands, in both themes, wide, narrow, and without sideways scroll on the narrowest. */
+export async function expectSoundInEveryView(page: Page): Promise<void> {
+  for (const colorScheme of ['light', 'dark'] as const) {
+    await page.emulateMedia({ colorScheme });
+    for (const width of [1440, 390]) {
+      await page.setViewportSize({ width, height: 900 });
+      await painted(page);
+      await expectAccessible(page);
+      await expectNoSidewaysScroll(page);
+    }
+  }
+  await page.setViewportSize({ width: 360, height: 800 });
+  await painted(page);
+  await expectNoSidewaysScroll(page);
+}
