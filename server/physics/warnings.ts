@@ -4,6 +4,7 @@ import { scalesOf } from './estimate.ts';
 import { leptonWarnings } from './lepton-warnings.ts';
 import type { Warning } from './warning.ts';
 import { twoBody } from './kinematics/two-body.ts';
+import { LENGTH_FROM_TABLE } from './potentials/contact-by-name.ts';
 import type { Term } from './potentials/types.ts';
 import type { Problem } from './problem.ts';
 
@@ -146,7 +147,11 @@ function slowKinematics({ problem }: EstimateResult): Warning | null {
 
 function boundLength({ problem }: EstimateResult): Warning | null {
   const { terms, target, projectile } = problem;
-  if (!terms.some(({ form }) => form === 'contact') || target.mass === Infinity) return null;
+  const typed = terms.some(
+    ({ form, cautions = [] }) =>
+      form === 'contact' && !cautions.some(({ code }) => code === LENGTH_FROM_TABLE),
+  );
+  if (!typed || target.mass === Infinity) return null;
   const factor = target.mass / (projectile.mass + target.mass);
   return {
     code: 'freeLength',

@@ -2,7 +2,7 @@ import { z } from 'zod';
 import type { Quantity } from '#shared/units/quantity.ts';
 
 /** What a term may hold at most; the whole request has to stay below 1 MB besides. */
-export const MAX_POINTS = 20_000;
+export const MAX_POINTS = 2000;
 export const MAX_FORMULA = 2000;
 export const MAX_ORIGINAL = 500_000;
 export const MAX_PARAMETERS = 40;
@@ -17,7 +17,7 @@ const pointsSchema = z
   .array(row)
   .max(
     MAX_POINTS,
-    `A table may have at most ${MAX_POINTS.toLocaleString('en')} rows; thin it out.`,
+    `A table may have at most ${MAX_POINTS} rows; a spline through every tenth row is as good where V is smooth.`,
   );
 export type TablePoints = z.infer<typeof pointsSchema>;
 

@@ -125,6 +125,7 @@ export const atomicElectron: Form<AnyParameter> = {
     return {
       form: 'atomicElectron',
       strength: { re: -sign * UNIT, im: 0 },
+      chargeProduct: -sign * factor.atomicNumber,
       v: radialShape(bells),
       closed: joined(fit, tails.closed, joint),
       quadrature: joined(quadratureOf(bells, norm), tails.quadrature, joint),

@@ -68,6 +68,18 @@ function recoilFactor({ recoilFactor: factor }: FormContext): number {
   return factor;
 }
 
+/** Code of the note that says where a length came from. */
+export const LENGTH_FROM_TABLE = 'lengthFromTable';
+
+function fromTableNote(name: string, bound: number, factor: number) {
+  const free = factor === 1 ? '' : `, times M/(m + M) = ${factor.toPrecision(6)} for its recoil`;
+  return {
+    code: LENGTH_FROM_TABLE,
+    level: 'info' as const,
+    message: `The bound scattering length of ${name} is ${bound} fm (${NEUTRON_EDITION})${free}.`,
+  };
+}
+
 /**
  * Contact term from the table of neutron scattering lengths.
  *
@@ -90,9 +102,12 @@ function fromTable(key: Named, name: string, context: FormContext): Term {
   }
   const factor = recoilFactor(context);
   const length = { re: b.value * FERMI * factor, im: (imaginary ?? 0) * FERMI * factor };
-  if (sigmaIncoherent === null) return contactTerm(length, context);
-  const incoherent = (sigmaIncoherent.value * BARN * factor ** 2) / (4 * Math.PI);
-  return contactTerm(length, context, incoherent);
+  const incoherent =
+    sigmaIncoherent === null
+      ? undefined
+      : (sigmaIncoherent.value * BARN * factor ** 2) / (4 * Math.PI);
+  const term = contactTerm(length, context, incoherent);
+  return { ...term, cautions: [fromTableNote(name, b.value, factor)] };
 }
 
 /** `contact` with its length from the table as well as by hand. */

@@ -20,6 +20,13 @@ const parameters: FormParameter[] = [
   },
 ];
 
+function differingCharge(Z: number, targetCharge: number) {
+  return {
+    code: 'chargesDiffer',
+    message: `The Molière term is made for Z = ${Z}, the target has charge ${targetCharge}: Z wins, for strength and screening. Leave Z out to take the charge of the target.`,
+  };
+}
+
 export const moliere: Form = {
   key: 'moliere',
   label: 'Molière screening',
@@ -37,6 +44,9 @@ export const moliere: Form = {
       );
     }
     const strength = context.projectileCharge * Z * COULOMB_EV_ANGSTROM;
-    return screenedTerm('moliere', strength, screensOf('moliere'), thomasFermiLength(Z));
+    const term = screenedTerm('moliere', strength, screensOf('moliere'), thomasFermiLength(Z));
+    const { targetCharge } = context;
+    if (targetCharge === 0 || targetCharge === Z) return term;
+    return { ...term, cautions: [differingCharge(Z, targetCharge)] };
   },
 };

@@ -1,4 +1,5 @@
-import { contact } from './contact.ts';
+import { atomicElectron } from './atomic-electron.ts';
+import { contactByName } from './contact-by-name.ts';
 import { coulomb } from './coulomb.ts';
 import { deltaShell } from './delta-shell.ts';
 import { exponential } from './exponential.ts';
@@ -11,6 +12,7 @@ import { moliere } from './moliere.ts';
 import { polarization } from './polarization.ts';
 import { screenedCoulomb } from './screened-coulomb.ts';
 import { squareWell } from './square-well.ts';
+import { tabulated } from './tabulated.ts';
 import type { Form } from './types.ts';
 import { universalIon } from './universal-ion.ts';
 import { woodsSaxon } from './woods-saxon.ts';
@@ -25,6 +27,7 @@ export const FORMS: readonly Form[] = [
   moliere,
   krc,
   universalIon,
+  atomicElectron,
   squareWell,
   gaussian,
   exponential,
@@ -32,7 +35,8 @@ export const FORMS: readonly Form[] = [
   deltaShell,
   hulthen,
   polarization,
-  contact,
+  tabulated,
+  contactByName,
   hardSphere,
 ];
 

@@ -16,6 +16,8 @@ export const CONTEXT: FormContext = {
   twoMuOverHbar2: 0.26246842,
   projectileCharge: -1,
   targetCharge: 2,
+  projectile: 'electron',
+  recoilFactor: 1,
 };
 
 export function build(form: string, values: FormValues, context = CONTEXT): Term {
@@ -44,7 +46,7 @@ export function transform(term: Term, route: 'closed' | 'quadrature', q: number)
   return routine(q);
 }
 
-function defaultOf(parameter: AnyParameter): FormValue {
+export function defaultOf(parameter: AnyParameter): FormValue {
   const { default: start } = parameter;
   if (isNamed(parameter) || typeof start !== 'object') return start as FormValue;
   const { value, unit } = start as Exclude<FormParameter['default'], number>;

@@ -13,6 +13,7 @@ describe('register of forms', () => {
       'moliere',
       'krc',
       'universalIon',
+      'atomicElectron',
       'squareWell',
       'gaussian',
       'exponential',
@@ -20,6 +21,7 @@ describe('register of forms', () => {
       'deltaShell',
       'hulthen',
       'polarization',
+      'tabulated',
       'contact',
       'hardSphere',
     ]);
