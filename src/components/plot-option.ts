@@ -178,7 +178,7 @@ export function plotOption(picture: PlotPicture, palette: Palette): EChartsCoreO
       type: log ? 'log' : 'value',
       ...axisLook(y, palette),
       nameGap: 44,
-      ...(log ? logEnds(extentOf(picture)) : { scale: false }),
+      ...(log ? logEnds(extentOf(picture)) : { scale: false, boundaryGap: [0, '4%'] }),
       axisLabel: {
         ...axisLook(y, palette).axisLabel,
         formatter: log ? powerOfTen : (y.tick ?? plainTick),

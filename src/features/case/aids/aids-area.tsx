@@ -1,9 +1,10 @@
 import { useAidsState } from './aids-context.ts';
 import { BetweenAngles } from './between-angles.tsx';
 import { Disclosure } from './disclosure.tsx';
+import { KinematicsTable } from './kinematics-table.tsx';
 
 /** What helps to read the curve and to take it along: closed lines below it, each asked for when it is opened. */
-export function AidsArea() {
+export function AidsArea({ fileName }: { fileName: string }) {
   const { setMarking } = useAidsState();
   return (
     <section
@@ -18,6 +19,9 @@ export function AidsArea() {
         onOpen={setMarking}
       >
         <BetweenAngles />
+      </Disclosure>
+      <Disclosure title="Kinematics" says="recoil angle and both energies at every angle">
+        <KinematicsTable fileName={fileName} />
       </Disclosure>
     </section>
   );

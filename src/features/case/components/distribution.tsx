@@ -5,10 +5,16 @@ import { Segmented } from '#src/components/segmented.tsx';
 import type { Estimate } from '#shared/contracts/estimates.ts';
 import { formatComposed, formatNumber, unitSymbol } from '#shared/units/format.ts';
 import { useAidsState } from '../aids/aids-context.ts';
+import { RatioNote, ratioAt } from '../aids/ratio-note.tsx';
+import { useRatio } from '../aids/use-ratio.ts';
+import type { Ratio } from '../aids/use-ratio.ts';
+import { REFERENCE_NAMES, ratioRows, ratioSeries } from '../aids/model/ratio.ts';
 import { bandOf, draggedRange, rangeOver } from '../aids/model/angle-range.ts';
 import { PointMeaning } from '../aids/point-meaning.tsx';
 import { useEditing } from '../editing/editor-context.ts';
+import { csvOf } from '#src/lib/csv.ts';
 import { curvesCsv } from '../model/csv.ts';
+import type { TableUnits } from '../model/csv.ts';
 import { abscissaOf, curvesOf } from '../model/curves.ts';
 import type { Abscissa, Curve } from '../model/curves.ts';
 import { anglesOf } from '../model/table.ts';
@@ -38,10 +44,15 @@ function plotted(curves: readonly Curve[], abscissa: Abscissa) {
   });
 }
 
-function useSwitches() {
-  const [yScale, setScale] = useState<Scale>('log');
+/** Each of the two things the plot can show keeps a scale of its own: a ratio is read against one. */
+function useSwitches(shown: 'dcs' | 'ratio') {
+  const [scales, setScales] = useState<Record<typeof shown, Scale>>({
+    dcs: 'log',
+    ratio: 'linear',
+  });
   const [abscissa, setAbscissa] = useState<Abscissa>('theta');
-  return { yScale, setScale, abscissa, setAbscissa };
+  const setScale = (scale: Scale) => setScales({ ...scales, [shown]: scale });
+  return { yScale: scales[shown], setScale, abscissa, setAbscissa };
 }
 
 function xAxis(abscissa: Abscissa, curves: readonly Curve[], estimate: Estimate) {
@@ -92,6 +103,44 @@ function CurveMeaning(props: { curve: Curve; place: number; estimate: Estimate }
   );
 }
 
+interface Drawing {
+  ratio: Ratio;
+  series: ReturnType<typeof plotted>;
+  curves: readonly Curve[];
+  abscissa: Abscissa;
+  units: TableUnits;
+}
+
+/** What the plot shows: the curves, or once it is here their ratio to two point charges. */
+function drawnAs({ ratio, series, curves, abscissa, units }: Drawing) {
+  const { reference } = ratio;
+  const [first] = curves;
+  if (!reference || !first) {
+    return {
+      isRatio: false,
+      name: 'Differential cross section',
+      title: `dσ/dΩ (${unitSymbol(units.dcs)})`,
+      series,
+      csv: () => curvesCsv(curves, units),
+    };
+  }
+  const name = REFERENCE_NAMES[reference.kind];
+  return {
+    isRatio: true,
+    name: `Ratio to ${name}`,
+    title: `dσ/dΩ over ${name}`,
+    series: [
+      {
+        key: 'ratio',
+        name: `${first.name} over ${name}`,
+        points: ratioSeries(first, reference, abscissa),
+        style: 1,
+      },
+    ],
+    csv: () => csvOf(ratioRows(first, reference, units)),
+  };
+}
+
 interface DistributionProps {
   estimate: Estimate;
   dimmed: boolean;
@@ -101,7 +150,8 @@ interface DistributionProps {
 /** dσ/dΩ against angle, momentum transfer or cosine: as a plot, as a row at the crosshair and as a table. */
 export function Distribution({ estimate, dimmed, fileName }: DistributionProps) {
   const { draft, editDocument, readOnly, areaUnit } = useEditing();
-  const { yScale, setScale, abscissa, setAbscissa } = useSwitches();
+  const ratio = useRatio();
+  const { yScale, setScale, abscissa, setAbscissa } = useSwitches(ratio.on ? 'ratio' : 'dcs');
   const curves = useMemo(() => curvesOf(estimate, areaUnit), [estimate, areaUnit]);
   const series = useMemo(() => plotted(curves, abscissa), [curves, abscissa]);
   const [place, setPlace] = useState<number | null>(null);
@@ -122,21 +172,22 @@ export function Distribution({ estimate, dimmed, fileName }: DistributionProps) 
     return <p className="text-muted">None of the methods asked for yields a curve here.</p>;
   }
   const fixed = draft.document.target.kind === 'fixed';
+  const drawn = drawnAs({ ratio, series, curves, abscissa, units });
 
   return (
     <>
       <Plot
-        label={`Differential cross section against ${abscissa === 'theta' ? 'angle' : abscissa === 'q' ? 'momentum transfer' : 'cosine of the angle'}`}
-        series={series}
+        label={`${drawn.name} against ${abscissa === 'theta' ? 'angle' : abscissa === 'q' ? 'momentum transfer' : 'cosine of the angle'}`}
+        series={drawn.series}
         x={xAxis(abscissa, curves, estimate)}
-        y={{ title: `dσ/dΩ (${unitSymbol(dcsUnit)})` }}
+        y={{ title: drawn.title }}
         yScale={yScale}
         cursor={cursor}
         onCursor={setPlace}
         cursorText={`θ = ${angleText(at.theta, units.angle)}, dσ/dΩ = ${at.dcs === null ? (at.reason ?? 'none') : formatComposed(at.dcs, dcsUnit, 4)}`}
-        dimmed={dimmed}
-        fileName={fileName}
-        csv={() => curvesCsv(curves, units)}
+        dimmed={dimmed || ratio.stale}
+        fileName={drawn.isRatio ? `${fileName}-ratio` : fileName}
+        csv={drawn.csv}
         {...band}
         readout={
           <Readout
@@ -144,13 +195,25 @@ export function Distribution({ estimate, dimmed, fileName }: DistributionProps) 
             place={cursor}
             units={units}
             angle={angleText(at.theta, units.angle)}
+            {...(ratio.on && { ratio: ratioAt(ratio, cursor) })}
             meaningOf={(curve) => <CurveMeaning curve={curve} place={cursor} estimate={estimate} />}
           />
         }
         switches={
           <>
+            {ratio.offered && (
+              <Segmented
+                label="What is drawn"
+                value={ratio.on ? 'ratio' : 'dcs'}
+                choices={[
+                  { value: 'dcs', label: 'dσ/dΩ' },
+                  { value: 'ratio', label: 'ratio' },
+                ]}
+                onChange={(shown) => ratio.setOn(shown === 'ratio')}
+              />
+            )}
             <Segmented
-              label="Scale of dσ/dΩ"
+              label={ratio.on ? 'Scale of the ratio' : 'Scale of dσ/dΩ'}
               value={yScale}
               choices={[
                 { value: 'log', label: 'log' },
@@ -182,6 +245,7 @@ export function Distribution({ estimate, dimmed, fileName }: DistributionProps) 
           </>
         }
       />
+      {ratio.on && <RatioNote ratio={ratio} />}
       <details
         className="mt-3 border-t border-line pt-2"
         onToggle={(event) => setTableOpen(event.currentTarget.open)}

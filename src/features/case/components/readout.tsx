@@ -12,6 +12,8 @@ interface ReadoutProps {
   angle: string;
   /** What the value of a curve is, behind a question mark. */
   meaningOf: (curve: Curve) => ReactNode;
+  /** The ratio that is drawn, in words. */
+  ratio?: { name: string; text: string };
 }
 
 function Item({ name, children }: { name: string; children: ReactNode }) {
@@ -24,7 +26,7 @@ function Item({ name, children }: { name: string; children: ReactNode }) {
 }
 
 /** Everything at the crosshair in one row that never changes its height. */
-export function Readout({ curves, place, units, angle, meaningOf }: ReadoutProps) {
+export function Readout({ curves, place, units, angle, meaningOf, ratio }: ReadoutProps) {
   const first = curves[0]?.points[place];
   if (!first) return null;
   const single = curves.length === 1;
@@ -34,6 +36,7 @@ export function Readout({ curves, place, units, angle, meaningOf }: ReadoutProps
       {first.q !== null && (
         <Item name="momentum transfer">q = {formatComposed(first.q, units.wavenumber, 5)}</Item>
       )}
+      {ratio && <Item name={ratio.name}>{ratio.text}</Item>}
       {curves.map((curve) => {
         const point = curve.points[place];
         return (
