@@ -109,10 +109,13 @@ function nuclearContact({ problem }: EstimateResult): Warning | null {
   };
 }
 
+/** A charge that is all at the origin: nothing is left of its potential but the bare tail. */
+const isPointCharge = (term: Term) => isActive(term) && term.coulombTail !== 0 && term.norm === 0;
+
 /** Leptons whose wave resolves the nucleus. */
 function finiteNucleus({ problem }: EstimateResult): Warning | null {
-  const { projectile, target, collision } = problem;
-  if (projectile.kind !== 'lepton' || target.massNumber === null || tailOf(problem) === 0) {
+  const { projectile, target, collision, terms } = problem;
+  if (projectile.kind !== 'lepton' || target.massNumber === null || !terms.some(isPointCharge)) {
     return null;
   }
   const largest = 2 * collision.k * radiusOf(target.massNumber);
@@ -120,7 +123,7 @@ function finiteNucleus({ problem }: EstimateResult): Warning | null {
   return {
     code: 'pointNucleus',
     level: 'caution',
-    message: `The nucleus is taken as a point, but q times its radius reaches ${largest.toPrecision(3)}: its form factor lowers the cross section at large angles.`,
+    message: `The nucleus is taken as a point, but q times its radius reaches ${largest.toPrecision(3)}: its form factor lowers the cross section at large angles. The form extendedCharge has it.`,
     path: '/interaction/terms',
   };
 }

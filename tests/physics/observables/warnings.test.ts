@@ -91,6 +91,10 @@ test('a charge form without charge, a point nucleus at short waves, a free lengt
   };
   expect(warning({ ...electrons, energy: Q(100, 'MeV') }, 'pointNucleus')).toBeDefined();
   expect(warning({ ...electrons, energy: Q(1, 'MeV') }, 'pointNucleus')).toBeUndefined();
+  const extended = { form: 'extendedCharge', kind: 'uniformSphere', radius: Q(3.19, 'fm') };
+  const spread = { ...electrons, energy: Q(100, 'MeV'), interaction: { terms: [extended] } };
+  expect(warning(spread, 'pointNucleus')).toBeUndefined();
+  expect(warning(spread, 'coulombTotalDiverges')).toBeDefined();
   const neutron = {
     projectile: { species: 'neutron' },
     target: { kind: 'nuclide', nuclide: 'H-1' },
