@@ -2,7 +2,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { ENGINE } from '#server/compute/engine-kinds.ts';
 import type { Compute } from '#server/compute/compute.ts';
 import { removeDemo } from '#server/db/seeders/demo/remove-demo.ts';
-import { DEMO_ACCOUNTS, DEMO_PASSWORD } from '#server/db/seeders/demo/scenario.ts';
+import { DEMO_ACCOUNTS, DEMO_CAMPAIGNS, DEMO_PASSWORD } from '#server/db/seeders/demo/scenario.ts';
 import { DEMO_CASES, seedDemo } from '#server/db/seeders/demo/seed-demo.ts';
 import { openOrm } from '#server/db/orm.ts';
 import type { CaseListItem } from '#shared/contracts/cases.ts';
@@ -25,8 +25,12 @@ async function demoAgent(app: TestApp, role: Role): Promise<Agent> {
   await agent.post('/api/auth/sign-in').send({ email, password: DEMO_PASSWORD }).expect(200);
   return agent;
 }
+const CASES = DEMO_CASES.length;
+const VERSIONS = DEMO_CASES.reduce((sum, { versions }) => sum + versions.length, 0);
+const CAMPAIGNS = Object.keys(DEMO_CAMPAIGNS).length;
+
 const titles = async (agent: Agent): Promise<string[]> =>
-  (await read<{ items: CaseListItem[] }>(agent, '/api/cases?sort=number')).items.map(
+  (await read<{ items: CaseListItem[] }>(agent, '/api/cases?sort=number&pageSize=50')).items.map(
     ({ title }) => title,
   );
 const counts = (app: TestApp) =>
@@ -44,6 +48,11 @@ describe('seedDemo', () => {
   });
   afterAll(() => app.close());
 
+  it('holds at least fourteen worked cases, each under a title of its own', () => {
+    expect(CASES).toBeGreaterThanOrEqual(14);
+    expect(new Set(DEMO_CASES.map(({ title }) => title)).size).toBe(CASES);
+  });
+
   it('leaves nothing behind when it dies mid-way', async () => {
     let calls = 0;
     const failing: Compute = (kind, input) => {
@@ -58,10 +67,10 @@ describe('seedDemo', () => {
   });
 
   it('fills an empty database once, also when two start together', async () => {
-    expect((await Promise.all([seed(app), seed(app)])).sort()).toEqual([0, 8]);
+    expect((await Promise.all([seed(app), seed(app)])).sort((x, y) => x - y)).toEqual([0, CASES]);
     expect(await seed(app)).toBe(0);
     expect(await counts(app)).toEqual([
-      { accounts: 4, campaigns: 3, cases: 8, versions: 11, last: 8 },
+      { accounts: 4, campaigns: CAMPAIGNS, cases: CASES, versions: VERSIONS, last: CASES },
     ]);
   });
 
@@ -72,17 +81,28 @@ describe('seedDemo', () => {
       manager: await titles(await demoAgent(app, 'manager')),
     };
     expect(seen.manager).toEqual(DEMO_CASES.map(({ title }) => title));
-    const byCampaign = (...keys: (string | null)[]) =>
-      DEMO_CASES.filter(({ campaign }) => keys.includes(campaign)).map(({ title }) => title);
-    expect(seen.experimentalist).toEqual(byCampaign('carbon', 'gold'));
-    expect(seen.theorist).toEqual(byCampaign('carbon', 'neutrons', null));
+    const sharedWith = (role: Role) =>
+      DEMO_CASES.filter(({ campaign, versions: [{ author }] }) => {
+        const members: readonly Role[] = campaign ? DEMO_CAMPAIGNS[campaign].members : [];
+        return author === role || members.includes(role);
+      }).map(({ title }) => title);
+    for (const role of ['experimentalist', 'theorist'] as const) {
+      expect(seen[role]).toEqual(sharedWith(role));
+      expect(seen[role].length).toBeLessThan(CASES);
+    }
+    expect(seen.experimentalist).not.toContain('Thermal neutrons on bound nickel');
+    expect(seen.theorist).not.toContain('Source alphas on a gold foil');
+    expect(seen.theorist).toContain('Forward cone of 1 keV electrons on carbon');
     await (await demoAgent(app, 'administrator')).get('/api/cases').expect(403);
   });
 
   it('says of every case what it shows, and computes each by the one way', async () => {
     const agent = await demoAgent(app, 'manager');
-    const { items } = await read<{ items: CaseListItem[] }>(agent, '/api/cases?sort=number');
-    expect(items.map(({ number }) => number)).toEqual([1, 2, 3, 4, 5, 6, 7, 8]);
+    const { items } = await read<{ items: CaseListItem[] }>(
+      agent,
+      '/api/cases?sort=number&pageSize=50',
+    );
+    expect(items.map(({ number }) => number)).toEqual(DEMO_CASES.map((_, i) => i + 1));
     for (const item of items) {
       expect(item.version.note?.length).toBeGreaterThan(40);
       const version = await read<{ document: object; result: { estimate: object } }>(
@@ -141,7 +161,7 @@ describe('removeDemo', () => {
     await save(demo, filed.id, etag).expect(201);
     const trail = await query(app.database.ownerUrl, 'select count(*)::int as n from trail');
 
-    expect(await remove()).toEqual({ accounts: 4, cases: 8 });
+    expect(await remove()).toEqual({ accounts: 4, cases: CASES });
 
     const after = await query(app.database.ownerUrl, 'select count(*)::int as n from trail');
     await demo.get('/api/cases').expect(401);
@@ -163,6 +183,6 @@ describe('removeDemo', () => {
     );
     expect(await seed(app)).toBe(0);
     const { filed } = await fileCase(await app.signedIn('theorist'));
-    expect(filed.number).toBe(10);
+    expect(filed.number).toBe(CASES + 2);
   });
 });

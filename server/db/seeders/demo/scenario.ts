@@ -20,6 +20,7 @@ export const DEMO_CAMPAIGNS = {
   carbon: { name: 'Carbon film survey', members: ['experimentalist', 'theorist'] },
   gold: { name: 'Light ions on gold', members: ['experimentalist'] },
   neutrons: { name: 'Thermal neutron port', members: ['theorist'] },
+  theory: { name: 'Beyond the hall: reference cases', members: ['theorist'] },
 } as const satisfies Record<string, { name: string; members: readonly Role[] }>;
 export type DemoCampaign = keyof typeof DEMO_CAMPAIGNS;
 

@@ -6,16 +6,29 @@ import { createCase } from '#server/modules/cases/create-case.ts';
 import { etagOf } from '#server/modules/cases/etag.ts';
 import { saveVersion } from '#server/modules/cases/save-version.ts';
 import { createUser } from '#server/modules/users/create-user.ts';
+import { ATOM_CASES } from './atom-cases.ts';
 import { ELECTRON_CASES } from './electron-cases.ts';
 import { ION_CASES } from './ion-cases.ts';
+import { LIGHT_ION_CASES } from './light-ion-cases.ts';
 import { NEUTRON_CASES } from './neutron-cases.ts';
+import { SAMPLE_CASES } from './sample-cases.ts';
 import { DEMO_ACCOUNTS, DEMO_CAMPAIGNS, DEMO_PASSWORD } from './scenario.ts';
 import type { DemoCampaign, DemoCase } from './scenario.ts';
+import { THEORY_CASES } from './theory-cases.ts';
 
 /** Any number but those of the other locks: two programs that start at once seed one after the other. */
 const SEED_LOCK = 4_780_003;
 
-export const DEMO_CASES: readonly DemoCase[] = [...ELECTRON_CASES, ...ION_CASES, ...NEUTRON_CASES];
+/** In the order of their numbers: a case that was once in the demo keeps its place, new ones follow. */
+export const DEMO_CASES: readonly DemoCase[] = [
+  ...ELECTRON_CASES,
+  ...ION_CASES,
+  ...NEUTRON_CASES,
+  ...ATOM_CASES,
+  ...LIGHT_ION_CASES,
+  ...SAMPLE_CASES,
+  ...THEORY_CASES,
+];
 
 export interface SeedContext {
   em: EntityManager;
