@@ -1,11 +1,15 @@
 import type { Estimate, EstimateRequest } from '#shared/contracts/estimates.ts';
 import { computeEstimate } from '#server/modules/estimates/compute-estimate.ts';
+import type { MaterialAids, MaterialAidsRequest } from '#shared/contracts/material-aids.ts';
+import { computeMaterialAids } from '#server/modules/material-aids/compute-material-aids.ts';
 import { drawForm } from '#server/modules/reference/draw-form.ts';
 import type { FormSheet } from '#server/modules/reference/draw-form.ts';
 
 /** What the engine can be asked, with what goes in and what comes out: plain JSON both ways. */
 export interface EngineKinds {
   estimate: { input: EstimateRequest; output: Estimate };
+  /** The same collision in a material. */
+  materialAids: { input: MaterialAidsRequest; output: MaterialAids };
   /** What the Reference shows of a form: V(r), its transform, remarks. */
   formSheet: { input: EstimateRequest; output: FormSheet };
 }
@@ -15,5 +19,6 @@ export const ENGINE: {
   readonly [K in EngineKind]: (input: EngineKinds[K]['input']) => EngineKinds[K]['output'];
 } = {
   estimate: computeEstimate,
+  materialAids: computeMaterialAids,
   formSheet: drawForm,
 };

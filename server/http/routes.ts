@@ -5,6 +5,7 @@ import { versionRoutes } from '#server/modules/cases/versions.routes.ts';
 import { estimateRoutes } from '#server/modules/estimates/estimates.routes.ts';
 import { formRoutes } from '#server/modules/forms/forms.routes.ts';
 import { healthRoutes } from '#server/modules/health/health.routes.ts';
+import { materialAidRoutes } from '#server/modules/material-aids/material-aids.routes.ts';
 import { referenceRoutes } from '#server/modules/reference/reference.routes.ts';
 import { searchRoutes } from '#server/modules/search/search.routes.ts';
 import { tokenRoutes } from '#server/modules/tokens/tokens.routes.ts';
@@ -21,6 +22,7 @@ export const ROUTES: readonly Route[] = [
   ...caseRoutes,
   ...versionRoutes,
   ...estimateRoutes,
+  ...materialAidRoutes,
   ...formRoutes,
   ...referenceRoutes,
   ...searchRoutes,

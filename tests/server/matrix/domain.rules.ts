@@ -51,6 +51,11 @@ export const RULES: Record<string, Rule> = {
     expect: ALLOWED_TO_ALL,
     prepare: () => ({ body: yukawaDocument }),
   },
+  computeMaterialAids: {
+    access: 'estimate.compute',
+    expect: ALLOWED_TO_ALL,
+    prepare: () => ({ body: { estimate: yukawaDocument, material: { key: 'gold' } } }),
+  },
   listCases: { access: 'case.list', expect: RESEARCHERS_ONLY },
   createCase: { access: 'case.create', expect: RESEARCHERS_ONLY, prepare: () => ({ body }) },
   readCase: { access: 'case.read', expect: READ, prepare: caseOf },
