@@ -3,9 +3,23 @@ import { isNamedQuantities, isPoints, isQuantity } from '#shared/contracts/terms
 import { enteredQuantity, plainNumber } from './plain-quantity.ts';
 
 const FORM_NAMES: Partial<Record<string, string>> = {
+  yukawa: 'Yukawa',
   coulomb: 'Coulomb',
   screenedCoulomb: 'screened Coulomb',
+  moliere: 'Molière',
+  krc: 'Kr-C screening',
+  universalIon: 'universal screening',
+  atomicElectron: 'neutral atom',
   woodsSaxon: 'Woods–Saxon',
+  hulthen: 'Hulthén',
+  tabulated: 'table',
+  expression: 'formula',
+};
+const CHOICE_NAMES: Partial<Record<string, string>> = {
+  uniformSphere: 'uniform sphere',
+  gaussian: 'Gaussian',
+  fermi: 'Fermi',
+  helm: 'Helm',
 };
 const SYMBOLS: Partial<Record<string, string>> = {
   V0: 'V₀',
@@ -13,12 +27,20 @@ const SYMBOLS: Partial<Record<string, string>> = {
   chargeProduct: 'Z₁Z₂',
   Z1: 'Z₁',
   Z2: 'Z₂',
+  alpha: 'α',
+  radius: 'R',
+  diffuseness: 'a',
 };
 
 /** Strengths before lengths, as papers write them: the database keeps no order of members. */
-const ORDER = ['V0', 'W0', 'g', 'b', 'nuclide', 'element', 'chargeProduct', 'Z1', 'Z2', 'R', 'a'];
+const ORDER = [
+  ...['kind', 'formula', 'points', 'V0', 'W0', 'g', 'b', 'nuclide', 'element'],
+  ...['chargeProduct', 'Z1', 'Z2', 'R', 'radius', 'a', 'diffuseness'],
+];
 /** Members that say how a table is written, which a line about the potential need not repeat. */
 const UNSAID = ['form', 'original', 'lengthUnit', 'energyUnit'];
+/** Members whose text says by itself what it is. */
+const UNNAMED = ['nuclide', 'element', 'kind'];
 const LONGEST_FORMULA = 60;
 const rank = (key: string): number => (ORDER.includes(key) ? ORDER.indexOf(key) : ORDER.length);
 
@@ -41,7 +63,7 @@ function describeParameter(
   if (typeof value === 'number') return `${symbol} ${plainNumber(value)}`;
   if (typeof value === 'string') {
     if (key === 'formula') return describeFormula(value);
-    return ['nuclide', 'element', 'kind'].includes(key) ? value : `${symbol} ${value}`;
+    return UNNAMED.includes(key) ? (CHOICE_NAMES[value] ?? value) : `${symbol} ${value}`;
   }
   if (isPoints(value)) return `${value.length} points`;
   if (isQuantity(value)) return `${symbol} ${enteredQuantity(value, enteredAt(''))}`;

@@ -62,7 +62,7 @@ describe('GET /api/cases', () => {
     expect(mine.items[1]).toMatchObject({
       campaign: { id: campaignId, name: 'Winter beam' },
       owner: { id: account.id, name: 'Ada Öberg' },
-      summary: { beam: 'electron, 100 eV', interaction: 'yukawa, V₀ −10 eV, a 1 Å' },
+      summary: { beam: 'electron, 100 eV', interaction: 'Yukawa, V₀ −10 eV, a 1 Å' },
       version: { n: 1 },
     });
     expect(mine.items[3]).toMatchObject({ title: 'Renamed', version: { n: 2 } });

@@ -32,7 +32,7 @@ describe('summarise', () => {
     expect(summarise(yukawaDocument)).toEqual({
       beam: 'electron, 100 eV',
       target: 'fixed centre',
-      interaction: 'yukawa, V₀ −10 eV, a 1 Å',
+      interaction: 'Yukawa, V₀ −10 eV, a 1 Å',
       detectors: '5 angles, 0° to 180°',
     });
   });
@@ -45,6 +45,41 @@ describe('summarise', () => {
         'Coulomb, Z₁Z₂ 2 + Woods–Saxon, V₀ −45.5 MeV, W₀ −3 MeV, R 4 fm, a 6.5e-6 angstrom (0.65 fm) + contact, V-51',
       detectors: '181 angles, 0° to 180°, lab',
     });
+  });
+
+  it.each([
+    [{ form: 'moliere', Z: 6 }, 'Molière, Z 6'],
+    [{ form: 'universalIon', Z2: 79, Z1: 2 }, 'universal screening, Z₁ 2, Z₂ 79'],
+    [{ form: 'atomicElectron', element: 'Au' }, 'neutral atom, Au'],
+    [
+      {
+        form: 'extendedCharge',
+        diffuseness: { value: 0.55, unit: 'fm' },
+        radius: { value: 3.6, unit: 'fm' },
+        kind: 'fermi',
+      },
+      'extended charge, Fermi, R 3.6 fm, a 0.55 fm',
+    ],
+    [
+      {
+        form: 'tabulated',
+        tail: 'zero',
+        lengthUnit: 'fm',
+        energyUnit: 'MeV',
+        points: [
+          [0, -1],
+          [1, 0],
+        ] as [number, number][],
+      },
+      'table, 2 points, tail zero',
+    ],
+    [
+      { form: 'expression', parameters: { V0: { value: 2, unit: 'eV' } }, formula: 'V0 * 1' },
+      'formula, V0 * 1, V₀ 2 eV',
+    ],
+  ])('writes %o', (term, line) => {
+    const document: CaseDocument = { ...yukawaDocument, interaction: { terms: [term] } };
+    expect(summarise(document).interaction).toBe(line);
   });
 
   it('names custom particles, nuclides, charges and other angles', () => {
