@@ -98,6 +98,9 @@ function nuclearContact({ problem }: EstimateResult): Warning | null {
     return null;
   }
   if (projectile.massNumber === null || target.massNumber === null) return null;
+  // A term that is no charge is the nuclear force, as the person sees it.
+  const other = (term: Term) => isActive(term) && term.chargeProduct === undefined;
+  if (problem.terms.some(other)) return null;
   const touching = radiusOf(projectile.massNumber) + radiusOf(target.massNumber) + 3 * FERMI;
   const headOn = (product * COULOMB_EV_ANGSTROM) / collision.energyCm;
   if (headOn > touching) return null;

@@ -31,6 +31,10 @@ test('nuclear forces: the head-on distance against the radii and three fermi', (
     1.2 * (197 ** (1 / 3) + 4 ** (1 / 3)) + 3,
     5e-3,
   );
+
+  const well = { form: 'gaussian', V0: Q(-100, 'MeV'), a: Q(2, 'fm') };
+  const withForce = { ...alphas(25), interaction: { terms: [...COULOMB.terms, well] } };
+  expect(warning(withForce, 'nuclearForces')).toBeUndefined();
 });
 
 test('the spin of relativistic leptons: applied where all terms are charges, else the factor that lacks', () => {
