@@ -32,7 +32,7 @@ export function SearchBox(props: SearchBoxProps) {
   }, [text, value, onSearch]);
 
   return (
-    <div role="search" className="relative min-w-0 flex-1 basis-64">
+    <div role="search" aria-label="This list" className="relative min-w-0 flex-1 basis-64">
       <label htmlFor={id} className="sr-only">
         {label}
       </label>

@@ -21,19 +21,29 @@ function measured(entry: table.Measured | null, unit: string): Measured | null {
   return { value, unit, ...(uncertainty !== null && { uncertainty }) };
 }
 
+/** The table's own remark as a sentence; a sign keeps its case. */
+function inWords(remark: string): string {
+  const plain = remark
+    .replaceAll('sigma_abs', 'the absorption')
+    .replaceAll('sigma_inc', 'the incoherent cross section')
+    .replaceAll('sigma_coh', 'the coherent cross section');
+  const first = /^[a-z]{2}/.test(plain) ? plain.charAt(0).toUpperCase() : plain.charAt(0);
+  return `${first}${plain.slice(1)}.`;
+}
+
 function cautionsOf(entry: Entry): string[] {
   const { name, resonant, contradiction, sigmaCoherent, sigmaAbsorption, remark } = entry;
   const implied = ABSORPTION_CONTRADICTIONS.get(name);
   const sears = DIFFERS_FROM_SEARS.find(({ symbol }) => symbol === name);
   return [
     resonant &&
-      'Resonant absorber: the absorption does not follow 1/v and b changes with the energy; the values hold near 25 meV only.',
+      'Resonant: the absorption does not follow 1/v and b changes with energy; the values hold near 25 meV only.',
     contradiction !== null &&
       `Contradiction: 4π|b|² gives ${contradiction} b, the printed coherent cross section is ${sigmaCoherent?.value ?? 'missing'} b.`,
     implied !== undefined &&
       `Contradiction: the imaginary part implies an absorption of ${implied} b, ${sigmaAbsorption?.value ?? 'none'} b is printed.`,
     sears && `Sears (1992) has b = ${sears.sears} fm.`,
-    remark !== '' && `${remark.charAt(0).toUpperCase()}${remark.slice(1)}.`,
+    remark !== '' && inWords(remark),
   ].filter((line): line is string => typeof line === 'string');
 }
 

@@ -14,9 +14,9 @@ export function sketchOf({ potential }: FormPicture): [number, number][] | null 
   const whole = Math.max(...sizes);
   const top = whole > 2 * HEADROOM * outer ? HEADROOM * outer : whole;
   if (!(top > 0)) return null;
-  const all = potential.r.map((r, i): [number, number] => {
-    const height = Math.max(-1, Math.min(1, (potential.re[i] ?? 0) / top));
-    return [Number((r / end).toFixed(4)), Number(height.toFixed(4))];
+  const all = potential.r.flatMap((r, i): [number, number][] => {
+    const height = (potential.re[i] ?? 0) / top;
+    return Math.abs(height) > 1 ? [] : [[Number((r / end).toFixed(4)), Number(height.toFixed(4))]];
   });
   const step = Math.max(1, all.length / POINTS);
   const kept = Array.from(

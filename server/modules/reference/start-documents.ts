@@ -1,5 +1,6 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { InteractionTerm } from '#shared/contracts/estimates.ts';
+import { startingParameters } from '#shared/contracts/forms.ts';
 import type { Start, StartKind } from '#shared/contracts/reference.ts';
 import { DomainError } from '#shared/errors.ts';
 import { summarise } from '#server/documents/summarise.ts';
@@ -16,7 +17,7 @@ import { beamFor } from './start-beams.ts';
 import type { Beam } from './start-beams.ts';
 
 const WHOLE = { unit: 'deg', from: 0, to: 180, count: 181 } as const;
-/** Forward angles are left out where the charges are bare: the curve has no end there. */
+/** Where charges meet, forward angles are left out: they would hide the rest of the curve. */
 const BACKWARD = { unit: 'deg', from: 10, to: 180, count: 171 } as const;
 
 const ATOMS = { length: 'angstrom', area: 'angstrom2', energy: 'eV' } as const;
@@ -61,18 +62,24 @@ function formStart(key: string): Start {
   const form = formByKey(key);
   if (!form) throw new DomainError('notFound', `There is no interaction form \`${key}\`.`);
   const { parameters, label } = presentForm(form);
-  const given = parameters.filter(({ optional }) => !optional);
+  const given = startingParameters(parameters);
   const term = { form: key, ...Object.fromEntries(given.map((p) => [p.key, p.default])) };
   const { beam, scale, forward } = beamFor(key, parameters);
   const units = { atom: ATOMS, nucleus: NUCLEI, neutron: NEUTRONS }[scale];
   return begun(label, documentOf(beam, term, { angles: forward ? WHOLE : BACKWARD, units }));
 }
 
-/** Alpha particles on a nucleus: Rutherford scattering, where first order gives the exact cross section. */
+/** The Coulomb potential of a nucleus inside its atom. */
+function screenedBy(charge: number): InteractionTerm {
+  const length = Number(thomasFermiLength(charge).toPrecision(4));
+  return { form: 'screenedCoulomb', a: { value: length, unit: 'angstrom' } };
+}
+
+/** Alpha particles on an atom: Rutherford scattering, with the screening that keeps its total finite. */
 function nuclideStart(name: string, of = ''): Start {
-  nuclide(name);
+  const { atomicNumber: charge } = nuclide(name);
   const beam: Beam = { ...ALPHA, target: { kind: 'nuclide', nuclide: name } };
-  const document = documentOf(beam, { form: 'coulomb' }, { angles: BACKWARD, units: NUCLEI });
+  const document = documentOf(beam, screenedBy(charge), { angles: BACKWARD, units: NUCLEI });
   return begun(`Alpha particles on ${name}${of}`, document);
 }
 
@@ -109,6 +116,7 @@ function neutronStart(name: string, title = `Slow neutrons on ${name}`): Start {
 }
 
 const CARBON = 6;
+const GOLD = 79;
 
 /** Leptons on a screened carbon nucleus, neutrons on bound carbon, charged nuclei on gold. */
 function speciesStart(key: string): Start {
@@ -118,7 +126,7 @@ function speciesStart(key: string): Start {
   const projectile = { species: key } as Beam['projectile'];
   if (kind !== 'lepton') {
     const beam: Beam = { ...ALPHA, projectile, energy: { value: massNumber ?? 2, unit: 'MeV' } };
-    const document = documentOf(beam, { form: 'coulomb' }, { angles: BACKWARD, units: NUCLEI });
+    const document = documentOf(beam, screenedBy(GOLD), { angles: BACKWARD, units: NUCLEI });
     return begun(`${names} on Au-197`, document);
   }
   const light = key === 'electron' || key === 'positron';
@@ -127,9 +135,8 @@ function speciesStart(key: string): Start {
     target: { kind: 'fixed', charge: CARBON },
     energy: light ? { value: 10, unit: 'keV' } : { value: 1, unit: 'MeV' },
   };
-  const length = Number(thomasFermiLength(CARBON).toPrecision(4));
-  const term = { form: 'screenedCoulomb', a: { value: length, unit: 'angstrom' } };
-  return begun(`${names} on carbon`, documentOf(beam, term, { angles: WHOLE, units: ATOMS }));
+  const rest = { angles: WHOLE, units: ATOMS };
+  return begun(`${names} on carbon`, documentOf(beam, screenedBy(CARBON), rest));
 }
 
 const STARTS: Readonly<Record<StartKind, (name: string) => Start>> = {

@@ -6,6 +6,13 @@ import { Segmented } from '#src/components/segmented.tsx';
 import { csvOf } from '#src/lib/csv.ts';
 import { cutOf, rowsOf, seriesOf, type Curve } from '../model/curve.ts';
 
+/** The end of an axis in two digits, so that its last tick reads well. */
+function roundEnd(values: readonly number[]): number {
+  const last = values.at(-1) ?? 1;
+  const unit = 10 ** (Math.floor(Math.log10(last)) - 1);
+  return Number((Math.ceil(last / unit - 1e-9) * unit).toPrecision(2));
+}
+
 interface CurvePlotProps {
   /** Spoken name: what is drawn against what. */
   label: string;
@@ -31,7 +38,7 @@ export function CurvePlot({ label, curve, x, y, fileName }: CurvePlotProps) {
     <Plot
       label={label}
       series={series}
-      x={{ title: `${x.title} (${unitSymbol(x.unit)})` }}
+      x={{ title: `${x.title} (${unitSymbol(x.unit)})`, min: 0, max: roundEnd(curve.x) }}
       y={{ title: `${scale === 'log' ? `|${y.symbol}|` : y.title} (${unitSymbol(y.unit)})` }}
       yScale={scale}
       cursor={cursor}
@@ -61,7 +68,7 @@ export function CurvePlot({ label, curve, x, y, fileName }: CurvePlotProps) {
           </span>
           <span className="font-sans text-muted">
             {cut !== null &&
-              `cut off at ${formatComposed(cut, y.unit, 2)}; the log scale shows all`}
+              `cut off at ${formatComposed(Math.sign(curve.re[0] ?? 1) * cut, y.unit, 2)}; the log scale shows all`}
           </span>
         </div>
       }

@@ -3,6 +3,11 @@ import type { FormItem } from '#shared/contracts/reference.ts';
 import { Formula } from '#src/components/formula.tsx';
 import { Sketch } from './sketch.tsx';
 
+/** The potential itself, without the definitions that follow it. */
+function firstPart(tex: string): string {
+  return tex.split(/,?\s*\\q?quad/)[0] ?? tex;
+}
+
 /** The forms of the register, each with its V(r), formula and way to its page. */
 export function FormCards({ items }: { items: readonly FormItem[] }) {
   return (
@@ -23,8 +28,8 @@ export function FormCards({ items }: { items: readonly FormItem[] }) {
             </h2>
             <Sketch points={sketch} />
           </div>
-          <div className="max-w-full min-w-0 overflow-hidden py-1">
-            <Formula tex={formula} />
+          <div className="max-w-full min-w-0 overflow-hidden [mask-image:linear-gradient(to_right,black_calc(100%-2.5rem),transparent)] py-1 whitespace-nowrap">
+            <Formula tex={firstPart(formula)} />
           </div>
           <p className="mt-auto truncate text-xs text-muted">{source}</p>
         </li>

@@ -18,7 +18,7 @@ export function FormulaBlock({ name, tex }: { name: string; tex: string }) {
   return (
     <div className="min-w-0">
       <div className="flex items-center justify-between gap-2">
-        <h3 className="text-sm text-muted">{name}</h3>
+        <h2 className="text-sm text-muted">{name}</h2>
         <IconButton
           label={`Copy the TeX of ${name}`}
           className="size-7"

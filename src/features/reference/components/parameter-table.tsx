@@ -28,19 +28,22 @@ function unitOf(start: unknown): string {
   return named && typeof start.unit === 'string' ? ` ${unitSymbol(start.unit)}` : '';
 }
 
-/** What a parameter may be, in words. */
+function rangeText({ minimum, maximum, exclusiveMinimum = false, ...rest }: FormParameterInfo) {
+  const least = minimum === undefined ? [] : [exclusiveMinimum ? 'above' : 'from', plain(minimum)];
+  const most = maximum === undefined ? [] : ['to', plain(maximum)];
+  const words = [...least, ...most];
+  return words.length === 0 ? '' : `${words.join(' ')}${unitOf(rest.default)}`;
+}
+
+/** What a parameter may be, and when it is asked for, in words. */
 function boundsText(parameter: FormParameterInfo): string {
-  const { minimum, maximum, exclusiveMinimum = false, integer, optional } = parameter;
-  const choices = 'choices' in parameter ? (parameter.choices as readonly string[]) : undefined;
-  const unit = unitOf(parameter.default);
-  const least =
-    minimum === undefined ? '' : `${exclusiveMinimum ? 'above' : 'from'} ${plain(minimum)}`;
-  const most = maximum === undefined ? '' : `to ${plain(maximum)}`;
-  const range = [least, most].filter((part) => part !== '').join(' ');
+  const { choices, integer, optional, when, oneOf } = parameter;
   const parts = [
-    choices ? choices.join(', ') : range === '' ? '' : `${range}${unit}`,
+    choices ? choices.join(', ') : rangeText(parameter),
     integer ? 'whole number' : '',
     optional ? 'may be left out' : '',
+    when ? `with ${when.key} ${when.is.join(' or ')} only` : '',
+    oneOf === undefined ? '' : 'one of its alternatives is given',
   ];
   return parts.filter((part) => part !== '').join('; ') || 'any';
 }
@@ -49,7 +52,8 @@ const KINDS: Readonly<Record<string, string>> = {
   number: 'number',
   energyLength: 'energy × length',
   choice: 'one of a list',
-  points: 'points',
+  points: 'points (r, V)',
+  quantities: 'quantities by name',
 };
 
 /** The parameters of a form with what they mean, what they may be and where they begin. */
@@ -62,7 +66,7 @@ export function ParameterTable({ parameters }: { parameters: readonly FormParame
       role="region"
       aria-label="Parameters"
       tabIndex={0}
-      className="overflow-x-auto rounded border border-line bg-sheet"
+      className="relative overflow-x-auto rounded border border-line bg-sheet"
     >
       <table className="w-full border-collapse text-left">
         <caption className="sr-only">Parameters of the form</caption>

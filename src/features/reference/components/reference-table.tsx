@@ -89,7 +89,8 @@ interface ReferenceTableProps<T> {
 
 /** Numbers on their decimal points, names in a column that stays while the rest scrolls below it on a narrow screen. */
 export function ReferenceTable<T>(props: ReferenceTableProps<T>) {
-  const { label, columns, items, nameOf, startOf, address, dimmed } = props;
+  const { label, items, nameOf, startOf, address, dimmed } = props;
+  const columns = props.columns.filter(({ fileOnly }) => !fileOnly);
   const texts = columns.map((column) => {
     const plain = items.map((item) => textOf(column, item));
     return column.number ? aligned(plain) : plain;
@@ -102,7 +103,7 @@ export function ReferenceTable<T>(props: ReferenceTableProps<T>) {
       tabIndex={0}
       aria-busy={dimmed}
       className={classNames(
-        'overflow-x-auto rounded border border-line bg-sheet transition-opacity',
+        'relative overflow-x-auto rounded border border-line bg-sheet transition-opacity',
         dimmed && 'opacity-60',
       )}
     >
@@ -133,7 +134,7 @@ export function ReferenceTable<T>(props: ReferenceTableProps<T>) {
               <td className="px-2 py-0.5 align-top" data-screen-only>
                 <RowActions
                   name={nameOf(item)}
-                  line={lineOf(columns, item)}
+                  line={lineOf(props.columns, item)}
                   start={startOf(item)}
                 />
               </td>

@@ -1,5 +1,5 @@
 import { Copy, Waypoints } from 'lucide-react';
-import { ButtonLink, IconButton } from '#src/components/button.tsx';
+import { Button, ButtonLink } from '#src/components/button.tsx';
 import { startHref, type ReferenceStart } from '#src/lib/reference-start.ts';
 import { say } from '#src/lib/toasts.ts';
 import { useFilesCases } from './use-in-case.tsx';
@@ -38,12 +38,19 @@ export function RowActions({
           title={`Use ${name} in a case`}
         >
           <Waypoints aria-hidden="true" className="size-4 text-barn" />
-          <span className="max-xl:hidden">Use in a case</span>
+          <span className="text-muted max-xl:hidden">Use in a case</span>
         </ButtonLink>
       )}
-      <IconButton label={`Copy ${name}`} className="size-7" onClick={() => void copy(name, line)}>
+      <Button
+        look="quiet"
+        size="small"
+        aria-label={`Copy ${name}`}
+        title={`Copy ${name}`}
+        className="px-1.5!"
+        onClick={() => void copy(name, line)}
+      >
         <Copy aria-hidden="true" className="size-4 text-muted" />
-      </IconButton>
+      </Button>
     </div>
   );
 }

@@ -26,6 +26,8 @@ export interface Column<T> {
   cell?: (item: T) => ReactNode;
   /** Shown on wide screens only; files have it always. */
   wide?: boolean;
+  /** Not on the page: too long for a row, or said elsewhere. */
+  fileOnly?: boolean;
   /** This column names the row. */
   names?: boolean;
 }

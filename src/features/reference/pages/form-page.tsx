@@ -6,6 +6,7 @@ import { Failure } from '#src/components/failure.tsx';
 import { NotFound } from '#src/components/not-found.tsx';
 import { PageHead } from '#src/components/page-head.tsx';
 import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
+import { classNames } from '#src/lib/class-names.ts';
 import { ApiError } from '#src/lib/api.ts';
 import { formQuery } from '../api.ts';
 import { CurvePlot } from '../components/curve-plot.tsx';
@@ -65,6 +66,11 @@ function Curves({ detail: { form, picture, start } }: { detail: FormDetail }) {
   );
 }
 
+/** Formulas too long to stand side by side. */
+function isLong({ formula, transformFormula }: FormDetail['form']): boolean {
+  return Math.max(formula.length, transformFormula.length) > 130;
+}
+
 function Sheet({ detail }: { detail: FormDetail }) {
   const { form, remarks, table } = detail;
   return (
@@ -72,10 +78,15 @@ function Sheet({ detail }: { detail: FormDetail }) {
       <PageHead title={form.label}>
         <UseInCase start={{ kind: 'form', name: form.key }} look="primary" />
       </PageHead>
-      <div className="grid gap-x-10 gap-y-4 rounded border border-line bg-sheet px-4 py-3 lg:grid-cols-2">
+      <div
+        className={classNames(
+          'grid min-w-0 gap-x-10 gap-y-4 rounded border border-line bg-sheet px-4 py-3',
+          !isLong(form) && 'lg:grid-cols-2',
+        )}
+      >
         <FormulaBlock name="Potential" tex={form.formula} />
         <FormulaBlock name="Transform" tex={form.transformFormula} />
-        <p className="text-sm text-muted lg:col-span-2">Source: {form.source}</p>
+        <p className="col-span-full text-sm text-muted">Source: {form.source}</p>
       </div>
       <Curves detail={detail} />
       <div className="grid gap-x-10 gap-y-6 xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]">

@@ -33,7 +33,7 @@ const TABLE: TableDescription<MaterialItem> = {
       title: 'Molar mass',
       unit: 'g/mol',
       sortable: true,
-      wide: true,
+      fileOnly: true,
       number: ({ molarMass }) => ({ value: Number(molarMass.value.toPrecision(6)) }),
     },
     {
@@ -66,17 +66,16 @@ const TABLE: TableDescription<MaterialItem> = {
       title: 'Before use',
       text: ({ notes }) => notes,
       cell: ({ notes, source }) => (
-        <div className="min-w-56 text-sm text-muted" title={source}>
-          {notes}
+        <div className="min-w-44 text-sm text-muted" title={source}>
+          {notes || '–'}
         </div>
       ),
     },
     {
       key: 'source',
       title: 'Source',
-      wide: true,
+      fileOnly: true,
       text: ({ source }) => source,
-      cell: ({ source }) => <div className="min-w-40 text-xs text-muted">{source}</div>,
     },
   ],
 };

@@ -1,3 +1,4 @@
+import { TriangleAlert } from 'lucide-react';
 import type { NeutronItem } from '#shared/contracts/reference.ts';
 import { Select } from '#src/components/select.tsx';
 import type { TableAddress } from '../address.ts';
@@ -25,14 +26,24 @@ const TABLE: TableDescription<NeutronItem> = {
       names: true,
       sortable: true,
       text: ({ name }) => name,
-      cell: ({ name, isotope }) =>
-        isotope ? (
-          <span className="pl-3 font-normal">
-            <NuclideSign nuclide={name} />
-          </span>
-        ) : (
-          name
-        ),
+      cell: ({ name, isotope, resonant, contradictory }) => (
+        <span className="whitespace-nowrap">
+          {isotope ? (
+            <span className="pl-3 font-normal">
+              <NuclideSign nuclide={name} />
+            </span>
+          ) : (
+            name
+          )}
+          {(resonant || contradictory) && (
+            <TriangleAlert
+              role="img"
+              aria-label="see the cautions"
+              className="ml-1.5 inline size-3.5 align-[-0.1em] text-straw"
+            />
+          )}
+        </span>
+      ),
     },
     {
       key: 'b',
@@ -79,7 +90,7 @@ const TABLE: TableDescription<NeutronItem> = {
       title: 'Cautions',
       text: ({ cautions }) => cautions.join(' '),
       cell: ({ cautions }) => (
-        <div className="max-w-96 min-w-64">
+        <div className="max-w-md min-w-72">
           <Cautions lines={cautions} />
         </div>
       ),

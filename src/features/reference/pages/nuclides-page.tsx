@@ -30,7 +30,7 @@ const TABLE: TableDescription<NuclideItem> = {
         </Link>
       ),
     },
-    { key: 'element', title: 'Element', text: ({ element }) => element },
+    { key: 'element', title: 'Element', wide: true, text: ({ element }) => element },
     {
       key: 'atomicNumber',
       title: 'Z',

@@ -5,6 +5,7 @@ import { Failure } from '#src/components/failure.tsx';
 import { PageHead } from '#src/components/page-head.tsx';
 import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
 import { overviewQuery } from '../api.ts';
+import { FormStrip } from '../components/form-strip.tsx';
 
 interface Place {
   to: string;
@@ -12,10 +13,6 @@ interface Place {
 }
 
 const PLACES: Readonly<Record<string, Place>> = {
-  forms: {
-    to: '/reference/forms',
-    answers: 'Which shapes may V(r) have, and what is their Born transform?',
-  },
   species: {
     to: '/reference/species',
     answers: 'What do the particles of a beam weigh, and what charge and spin have they?',
@@ -51,11 +48,11 @@ function Shelf({ tables }: Overview) {
             className="relative grid gap-x-6 gap-y-0.5 px-4 py-3 hover:bg-soft md:grid-cols-[minmax(0,3fr)_minmax(0,2fr)_6rem]"
           >
             <div className="min-w-0">
-              <h2 className="text-lg font-semibold">
+              <h3 className="text-base font-semibold">
                 <Link to={place.to} className="rounded after:absolute after:inset-0 after:rounded">
                   {title}
                 </Link>
-              </h2>
+              </h3>
               <p className="text-muted">{place.answers}</p>
             </div>
             <div className="min-w-0 md:pt-0.5">
@@ -75,6 +72,18 @@ function Shelf({ tables }: Overview) {
   );
 }
 
+function Placeholders() {
+  return (
+    <Waiting what="the tables">
+      <div className="flex flex-col gap-4 rounded border border-line bg-sheet px-4 py-4">
+        {[0, 1, 2, 3, 4].map((row) => (
+          <Skeleton key={row} className="h-10" />
+        ))}
+      </div>
+    </Waiting>
+  );
+}
+
 /** The room of published numbers: what is here, in which edition. */
 export default function ReferenceOverviewPage() {
   const { data, error, refetch } = useQuery(overviewQuery);
@@ -87,17 +96,22 @@ export default function ReferenceOverviewPage() {
           publication it was read from. Editions are added, never replaced.
         </p>
       </div>
-      {error && <Failure what="The tables" error={error} onRetry={() => void refetch()} />}
-      {!data && !error && (
-        <Waiting what="the tables">
-          <div className="flex flex-col gap-4 rounded border border-line bg-sheet px-4 py-4">
-            {[0, 1, 2, 3, 4, 5].map((row) => (
-              <Skeleton key={row} className="h-10" />
-            ))}
-          </div>
-        </Waiting>
-      )}
-      {data && <Shelf tables={data.tables} />}
+      <section aria-labelledby="reference-forms" className="flex flex-col gap-2">
+        <h2 id="reference-forms" className="text-lg font-semibold">
+          <Link to="/reference/forms" className="rounded hover:underline">
+            Interaction forms
+          </Link>
+        </h2>
+        <FormStrip />
+      </section>
+      <section aria-labelledby="reference-tables" className="flex flex-col gap-2">
+        <h2 id="reference-tables" className="text-lg font-semibold">
+          Tables
+        </h2>
+        {error && <Failure what="The tables" error={error} onRetry={() => void refetch()} />}
+        {!data && !error && <Placeholders />}
+        {data && <Shelf tables={data.tables} />}
+      </section>
     </div>
   );
 }

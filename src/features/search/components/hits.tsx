@@ -38,7 +38,11 @@ export function Hits({ id, search, onOpen }: { id: string; search: Search; onOpe
         role="listbox"
         aria-label="Found"
         aria-busy={state === 'searching'}
-        className={classNames('flex flex-col gap-2', state === 'searching' && 'opacity-60')}
+        // It scrolls by itself, as the arrow keys walk.
+        className={classNames(
+          'flex max-h-[min(34rem,60svh)] flex-col gap-2 overflow-y-auto',
+          state === 'searching' && 'opacity-60',
+        )}
       >
         {groups.map(({ kind, title, places }) => (
           <div key={kind} role="group" aria-labelledby={`${id}-${kind}`}>

@@ -61,6 +61,7 @@ export function SearchField({ id, floating, hint, onDone, ref }: SearchFieldProp
   return (
     <div
       role="search"
+      aria-label="Everything"
       className="relative min-w-0 flex-1"
       onBlur={(event) => {
         if (!event.currentTarget.contains(event.relatedTarget)) setOpen(false);
@@ -111,8 +112,8 @@ export function SearchField({ id, floating, hint, onDone, ref }: SearchFieldProp
         hidden={!shown}
         className={
           floating
-            ? 'absolute top-full right-0 left-0 z-30 mt-1 max-h-[min(34rem,70svh)] overflow-y-auto rounded border border-line bg-sheet p-1.5 text-base text-ink shadow lg:min-w-[30rem]'
-            : 'mt-3 max-h-[60svh] overflow-y-auto'
+            ? 'absolute top-full right-0 left-0 z-30 mt-1 rounded border border-line bg-sheet p-1.5 text-base text-ink shadow lg:min-w-[30rem]'
+            : 'mt-3'
         }
       >
         <Hits id={listId} search={search} onOpen={done} />
