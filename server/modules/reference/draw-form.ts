@@ -1,6 +1,7 @@
 import type { EstimateRequest } from '#shared/contracts/estimates.ts';
 import type { FormPicture } from '#shared/contracts/reference.ts';
 import { potentialCurve } from '#server/physics/observables/potential-curve.ts';
+import type { PotentialCurve } from '#server/physics/observables/potential-curve.ts';
 import { transform } from '#server/physics/methods/transform.ts';
 import type { Term } from '#server/physics/potentials/types.ts';
 import type { Problem } from '#server/physics/problem.ts';
@@ -11,9 +12,28 @@ import { formRemarks } from './form-remarks.ts';
 const POINTS = 241;
 /** Momentum transfers are drawn to this many inverse ranges. */
 const RANGES = 12;
+/** How many sizes of a charge its 1/r potential is drawn to. */
+const SIZES = 5;
 
-function potentialOf({ terms, collision }: Problem, units: AnswerUnits): FormPicture['potential'] {
-  const curve = potentialCurve(terms, collision.wavelength);
+/** A 1/r tail would fill the picture: where such a term has a size, the curve ends a few of them out. */
+function curveOf(term: Term, wavelength: number): PotentialCurve {
+  const { v, range, coulombTail, strength } = term;
+  if (v === null || range === null || coulombTail === 0) return potentialCurve([term], wavelength);
+  const r = Array.from({ length: POINTS }, (_, i) => (SIZES * range * (i + 1)) / POINTS);
+  const shapes = r.map(v);
+  return {
+    r,
+    v: shapes.map((shape) => ({ re: strength.re * shape, im: strength.im * shape })),
+    note: null,
+  };
+}
+
+function potentialOf(
+  term: Term,
+  { collision }: Problem,
+  units: AnswerUnits,
+): FormPicture['potential'] {
+  const curve = curveOf(term, collision.wavelength);
   if ('unavailable' in curve) return { unavailable: true, reason: curve.unavailable };
   if (curve.v.every(({ re, im }) => re === 0 && im === 0)) {
     return { unavailable: true, reason: 'Infinite inside its radius and zero outside: no curve.' };
@@ -63,7 +83,7 @@ export function drawForm(request: EstimateRequest): FormSheet {
   if (!term) throw new Error('A form was drawn without a term.');
   return {
     picture: {
-      potential: potentialOf(problem, units),
+      potential: potentialOf(term, problem, units),
       transform: transformOf(term, problem.collision.k, units),
     },
     remarks: formRemarks(term, units),

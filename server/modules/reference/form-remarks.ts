@@ -41,6 +41,18 @@ const OWN: Readonly<Record<string, readonly string[]>> = {
   polarization: [
     'For neutral atoms and slow charged projectiles, far out; inside the cut-off length it is a convention.',
   ],
+  extendedCharge: [
+    'Outside the charge it is the Coulomb potential; inside it levels off, and the amplitude gets the form factor of the charge, with its zeros.',
+  ],
+  atomicElectron: [
+    'Made from fitted factors of free neutral atoms: bonds change small angles by several per cent, and beyond the fit the Mott–Bethe tail takes over.',
+  ],
+  tabulated: [
+    'Only as good as its points: between them a spline runs, beyond the last one the stated tail.',
+  ],
+  expression: [
+    'Arithmetic and elementary functions of r and named parameters; its dimensions are checked, its size and computing time are bounded.',
+  ],
   contact: [
     'First order only, by construction: the length already holds all orders. Slow neutrons, below about 1 eV.',
   ],

@@ -27,6 +27,9 @@ const ALIASES: Readonly<Record<string, readonly string[]>> = {
   extendedCharge: ['form factor', 'Helm', 'Fermi', 'dipole', 'uniform sphere', 'nuclear charge'],
   yukawa: ['exchange', 'meson'],
   polarization: ['induced dipole', 'Buckingham'],
+  tabulated: ['tabulated points', 'spline', 'own potential'],
+  expression: ['expression', 'own potential'],
+  hardSphere: ['billiard'],
 };
 
 export function rankForm(
@@ -48,13 +51,23 @@ function sheetOf(key: string, compute: Compute): Promise<FormSheet> {
   return drawing;
 }
 
+/** A list does not fail over one picture that the engine refuses, as when it has too much to do. */
+async function sketchIn(key: string, compute: Compute): Promise<FormItem['sketch']> {
+  try {
+    return sketchOf((await sheetOf(key, compute)).picture);
+  } catch (error) {
+    if (error instanceof DomainError) return null;
+    throw error;
+  }
+}
+
 export async function listForms(query: z.output<typeof formsQuerySchema>, compute: Compute) {
   const found = fitting(FORMS, (form) => rankForm(query.q ?? '', form));
   const { items, ...page } = pageOf(found, query);
   const shown: FormItem[] = await Promise.all(
     items.map(async (form) => ({
       ...presentForm(form),
-      sketch: sketchOf((await sheetOf(form.key, compute)).picture),
+      sketch: await sketchIn(form.key, compute),
     })),
   );
   return { ...page, items: shown, table: HEADS.forms };

@@ -106,11 +106,15 @@ function materialStart(key: string): Start {
   return nuclideStart(name, `, for ${withinSentence(label)}`);
 }
 
-/** Slow neutrons on nuclei that are held in place: the bound length is then the scattering length. */
+/**
+ * Slow neutrons on nuclei that are held in place, by the table's length and incoherent scattering. Where a resonance makes the length
+ * hold at one energy only, it is written out, for the engine takes none from the table there.
+ */
 function neutronStart(name: string, title = `Slow neutrons on ${name}`): Start {
   const { resonant } = neutronEntry(name);
   const { value } = boundLength(name);
-  const term = { form: 'contact', b: { value, unit: 'fm' } };
+  const named = name.includes('-') ? { nuclide: name } : { element: name };
+  const term = { form: 'contact', ...(resonant ? { b: { value, unit: 'fm' } } : named) };
   const document = documentOf(SLOW_NEUTRON, term, { angles: WHOLE, units: NEUTRONS });
   return begun(resonant ? `${title}, near a resonance` : title, document);
 }

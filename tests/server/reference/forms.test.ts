@@ -6,6 +6,9 @@ import { createCompute } from '#server/compute/compute.ts';
 import type { ComputePool } from '#server/compute/compute.ts';
 import { FORMS } from '#server/physics/potentials/register.ts';
 import { SPECIES } from '#server/physics/tables/species.ts';
+import { NEUTRON_ENTRIES } from '#server/physics/tables/neutron-lengths.ts';
+import { startDocument } from '#server/modules/reference/start-documents.ts';
+import { computeEstimate } from '#server/modules/estimates/compute-estimate.ts';
 import { MATERIALS } from '#server/physics/tables/materials.ts';
 import { createTestApp } from '#tests/support/test-app.ts';
 import type { Agent, TestApp } from '#tests/support/test-app.ts';
@@ -139,6 +142,18 @@ describe('documents to start from', () => {
     expect(title).not.toBe('');
     expect(summary.beam).not.toBe('');
     await agent.post('/api/estimates').send(document).expect(200);
+  });
+
+  it('every measured neutron length is computed, a resonant one by its written value', async () => {
+    const known = NEUTRON_ENTRIES.filter(({ b }) => b !== null);
+    for (const { name, resonant } of known) {
+      const { document } = startDocument('neutron', name);
+      const [term] = document.interaction.terms;
+      expect(term !== undefined && 'b' in term, name).toBe(resonant);
+      expect(computeEstimate(document).methods.born1, name).not.toHaveProperty('unavailable');
+    }
+    expect(known.length).toBeGreaterThan(300);
+    await agent.get('/api/reference/start').query({ kind: 'neutron', name: 'Eu-151' }).expect(422);
   });
 
   it('put what was asked for in its place', async () => {

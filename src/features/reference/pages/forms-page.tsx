@@ -70,7 +70,7 @@ export default function FormsPage() {
               }
             >
               A potential that is none of these can be written as a formula or given as a table of
-              points, where the register has those forms.
+              points.
             </EmptyState>
           ) : (
             <FormCards items={data.items} />
