@@ -34,11 +34,11 @@ describe('what is asked beside an estimate', () => {
   });
 
   test('a fault names its field', async () => {
-    const { body }: { body: unknown } = await agent
+    const answer = await agent
       .post('/api/estimates')
       .send({ ...yukawaDocument, aids: { angleRange: { from: 60, to: 30 } } })
       .expect(422);
-    expect((body as Problem).errors[0]?.path).toBe('/aids/angleRange/to');
+    expect((answer.body as Problem).errors[0]?.path).toBe('/aids/angleRange/to');
     const unknown = await agent
       .post('/api/estimates')
       .send({ ...yukawaDocument, aids: { horoscope: true } })
@@ -47,11 +47,11 @@ describe('what is asked beside an estimate', () => {
   });
 
   test('is no part of a case', async () => {
-    const { body }: { body: unknown } = await agent
+    const answer = await agent
       .post('/api/cases')
       .send({ title: 'With aids', document: { ...yukawaDocument, aids: { kinematics: true } } })
       .expect(422);
-    expect((body as Problem).errors[0]?.path).toBe('/document/aids');
+    expect((answer.body as Problem).errors[0]?.path).toBe('/document/aids');
     const { filed } = await fileCase(agent, {});
     const version = await agent.get(`/api/cases/${filed.id}/versions/1`).expect(200);
     expect((version.body as { result: { estimate: object } }).result.estimate).not.toHaveProperty(
@@ -63,11 +63,11 @@ describe('what is asked beside an estimate', () => {
 describe('POST /api/material-aids', () => {
   const estimate = { ...yukawaDocument, format: 1 };
   test('takes a saved document as it is', async () => {
-    const { body }: { body: unknown } = await agent
+    const answer = await agent
       .post('/api/material-aids')
       .send({ estimate, material: { key: 'gold' }, thickness: { value: 1, unit: 'nm' } })
       .expect(200);
-    expect(body).toMatchObject({
+    expect(answer.body).toMatchObject({
       scatterer: 'Au',
       material: { formula: 'Au', units: { unit: '1/cm3' } },
     });
@@ -86,12 +86,12 @@ describe('POST /api/material-aids', () => {
     ],
     [{ material: { key: 'gold' }, angleRange: { from: 90, to: 10 } }, '/angleRange/to'],
   ])('%o is refused at %s', async (change, path) => {
-    const { body }: { body: unknown } = await agent
+    const answer = await agent
       .post('/api/material-aids')
       .send({ estimate, ...change })
       .expect(422);
-    expect((body as Problem).errors.map((error) => error.path.slice(0, path.length))).toContain(
-      path,
-    );
+    expect(
+      (answer.body as Problem).errors.map((error) => error.path.slice(0, path.length)),
+    ).toContain(path);
   });
 });

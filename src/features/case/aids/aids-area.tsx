@@ -1,10 +1,16 @@
+import type { Estimate } from '#shared/contracts/estimates.ts';
+import { useEditing } from '../editing/editor-context.ts';
 import { useAidsState } from './aids-context.ts';
 import { BetweenAngles } from './between-angles.tsx';
 import { Disclosure } from './disclosure.tsx';
+import { InMaterial } from './in-material.tsx';
 import { KinematicsTable } from './kinematics-table.tsx';
 
 /** What helps to read the curve and to take it along: closed lines below it, each asked for when it is opened. */
-export function AidsArea({ fileName }: { fileName: string }) {
+export function AidsArea({ estimate, fileName }: { estimate: Estimate; fileName: string }) {
+  const { draft } = useEditing();
+  const { projectile } = draft.document;
+  const neutrons = 'species' in projectile && projectile.species === 'neutron';
   const { setMarking } = useAidsState();
   return (
     <section
@@ -22,6 +28,16 @@ export function AidsArea({ fileName }: { fileName: string }) {
       </Disclosure>
       <Disclosure title="Kinematics" says="recoil angle and both energies at every angle">
         <KinematicsTable fileName={fileName} />
+      </Disclosure>
+      <Disclosure
+        title="In a material"
+        says={
+          neutrons
+            ? 'mean free path, scattering length density, transmission'
+            : 'mean free path between collisions'
+        }
+      >
+        <InMaterial estimate={estimate} />
       </Disclosure>
     </section>
   );

@@ -15,7 +15,7 @@ export function Disclosure({ title, says, onOpen, children }: DisclosureProps) {
   const [open, setOpen] = useState(false);
   return (
     <details
-      className="group border-t border-line first-of-type:border-t-0"
+      className="group/aid border-t border-line first-of-type:border-t-0"
       onToggle={(event) => {
         const now = event.currentTarget.open;
         setOpen(now);
@@ -25,7 +25,7 @@ export function Disclosure({ title, says, onOpen, children }: DisclosureProps) {
       <summary className="flex cursor-pointer list-none items-baseline gap-x-2.5 rounded py-2 [&::-webkit-details-marker]:hidden">
         <ChevronRight
           aria-hidden="true"
-          className="size-4 shrink-0 self-center text-muted transition-transform group-open:rotate-90"
+          className="size-4 shrink-0 self-center text-muted transition-transform group-open/aid:rotate-90"
         />
         <span className="flex min-w-0 flex-wrap items-baseline gap-x-2.5">
           <span className="font-semibold">{title}</span>

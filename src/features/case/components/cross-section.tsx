@@ -58,7 +58,7 @@ export function CrossSection({ estimate, fileName }: { estimate: Estimate; fileN
         >
           <Distribution estimate={estimate} dimmed={stale} fileName={fileName} />
         </section>
-        <AidsArea fileName={fileName} />
+        <AidsArea estimate={estimate} fileName={fileName} />
         <UnavailableMethods estimate={estimate} />
         <div className="grid gap-4 @3xl:grid-cols-[20rem_minmax(0,1fr)]">
           <section
