@@ -1,9 +1,7 @@
-import { Field, TextInput } from '#src/components/field.tsx';
+import type { ReactNode } from 'react';
 import type { CaseDocument } from '#shared/contracts/cases.ts';
-import { useEditing } from '../editing/editor-context.ts';
-import { problemAt } from '../model/problems.ts';
-import { takeText, takeValue } from '../model/typing.ts';
 import type { Reading } from '../model/typing.ts';
+import { NameField } from './name-field.tsx';
 
 /** `C-12`, also typed as `c12` or `12C`. */
 export function readNuclide(text: string): Reading<string> {
@@ -21,31 +19,18 @@ interface NuclideFieldProps {
   pointer: string;
   value: string;
   put: (document: CaseDocument, nuclide: string) => CaseDocument;
-  hint?: string;
+  hint?: ReactNode;
+  label?: ReactNode;
 }
 
-export function NuclideField({ pointer, value, put, hint }: NuclideFieldProps) {
-  const { draft, edit, readOnly, problems } = useEditing();
-  return (
-    <Field label="Nuclide" hint={hint} error={problemAt(problems, pointer)}>
-      {(control) => (
-        <TextInput
-          {...control}
-          className="font-mono"
-          autoComplete="off"
-          spellCheck={false}
-          disabled={readOnly}
-          value={draft.open[pointer]?.text ?? draft.document.entered?.[pointer] ?? value}
-          onChange={(event) => {
-            const text = event.target.value;
-            edit(pointer, (before) => takeText(before, pointer, text, readNuclide(text), put));
-          }}
-          onBlur={() => {
-            if (draft.open[pointer] ?? draft.document.entered?.[pointer] === undefined) return;
-            edit(pointer, (before) => takeValue(before, pointer, (same) => same));
-          }}
-        />
-      )}
-    </Field>
-  );
+/** `C`, also typed as `c`. */
+export function readElement(text: string): Reading<string> {
+  const symbol = /^\s*([A-Za-z]{1,2})\s*$/.exec(text)?.[1];
+  return symbol === undefined
+    ? { problem: 'Write an element by its symbol, such as C or Au.' }
+    : { value: `${symbol.charAt(0).toUpperCase()}${symbol.slice(1).toLowerCase()}` };
+}
+
+export function NuclideField(props: NuclideFieldProps) {
+  return <NameField label="Nuclide" read={readNuclide} {...props} />;
 }

@@ -2,69 +2,12 @@ import { Trash2 } from 'lucide-react';
 import { IconButton } from '#src/components/button.tsx';
 import { Formula } from '#src/components/formula.tsx';
 import type { InteractionTerm } from '#shared/contracts/estimates.ts';
-import type { FormInfo, FormParameterInfo } from '#shared/contracts/forms.ts';
-import { isQuantity } from '#shared/contracts/terms.ts';
-import { UNITS } from '#shared/units/vocabulary.ts';
-import type { Dimension } from '#shared/units/vocabulary.ts';
+import type { FormInfo } from '#shared/contracts/forms.ts';
 import { useEditing } from '../editing/editor-context.ts';
-import { changedForm, removeTerm, setForm, setParameter } from '../model/terms.ts';
+import { changedForm, removeTerm, setForm } from '../model/terms.ts';
 import { formLabel } from '../model/words.ts';
 import { ChoiceField } from './choice-field.tsx';
-import { NumberField, QuantityField } from './typed-fields.tsx';
-
-function isDimension(name: string): name is Dimension {
-  return Object.hasOwn(UNITS, name);
-}
-
-function ParameterLabel({ parameter }: { parameter: FormParameterInfo }) {
-  return (
-    <>
-      {parameter.label} <Formula tex={parameter.symbol} className="text-ink" />
-      {parameter.optional && ' (may be empty)'}
-    </>
-  );
-}
-
-interface ParameterFieldProps {
-  term: InteractionTerm;
-  index: number;
-  parameter: FormParameterInfo;
-}
-
-/** One parameter, as the register describes it. */
-function ParameterField({ term, index, parameter }: ParameterFieldProps) {
-  const { key, dimension, minimum, maximum, exclusiveMinimum, integer, optional } = parameter;
-  const value = term[key];
-  const bounds = { minimum, maximum, exclusiveMinimum, integer, what: parameter.label };
-  const shared = {
-    pointer: `/interaction/terms/${index}/${key}`,
-    label: <ParameterLabel parameter={parameter} />,
-    optional: optional ?? false,
-    hint: parameter.description,
-  };
-  const initial = parameter.default;
-  if (isQuantity(initial) && isDimension(dimension)) {
-    return (
-      <QuantityField
-        {...shared}
-        name={`${parameter.label} of term ${index + 1}`}
-        dimension={dimension}
-        value={isQuantity(value) ? value : undefined}
-        fallbackUnit={initial.unit}
-        rules={{ ...bounds, unit: initial.unit }}
-        put={(document, next) => setParameter(document, index, key, next)}
-      />
-    );
-  }
-  return (
-    <NumberField
-      {...shared}
-      value={typeof value === 'number' ? value : undefined}
-      rules={bounds}
-      put={(document, next) => setParameter(document, index, key, next)}
-    />
-  );
-}
+import { ParameterFields } from './parameter-fields.tsx';
 
 /** Members the register does not describe are shown, never dropped. */
 function UnknownMembers({ term, form }: { term: InteractionTerm; form: FormInfo | undefined }) {
@@ -130,9 +73,7 @@ export function TermInputs({ term, index, several }: TermInputsProps) {
           <Formula display tex={form.formula} />
         </div>
       )}
-      {form?.parameters.map((parameter) => (
-        <ParameterField key={parameter.key} term={term} index={index} parameter={parameter} />
-      ))}
+      {form && <ParameterFields term={term} index={index} form={form} />}
       <UnknownMembers term={term} form={form} />
     </div>
   );

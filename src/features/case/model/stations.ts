@@ -37,11 +37,10 @@ function shortTerm(term: InteractionTerm, forms: readonly FormInfo[]): string {
   const shown = (form?.parameters ?? []).flatMap(({ key, symbol }) => {
     const value = term[key];
     const zero = isQuantity(value) && value.value === 0;
-    return value === undefined || zero
-      ? []
-      : [
-          `${symbolText(symbol)} ${isQuantity(value) ? briefQuantity(value) : termValueText(value)}`.trim(),
-        ];
+    if (value === undefined || zero) return [];
+    const text = isQuantity(value) ? briefQuantity(value) : termValueText(value);
+    // A name speaks for itself.
+    return [typeof value === 'string' ? text : `${symbolText(symbol)} ${text}`.trim()];
   });
   return shown.slice(0, 3).join(' · ');
 }

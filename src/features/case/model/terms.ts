@@ -1,7 +1,7 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { InteractionTerm } from '#shared/contracts/estimates.ts';
-import { startingParameters } from '#shared/contracts/forms.ts';
-import type { FormInfo } from '#shared/contracts/forms.ts';
+import { parameterApplies, startingParameters } from '#shared/contracts/forms.ts';
+import type { FormInfo, FormParameterInfo } from '#shared/contracts/forms.ts';
 import type { Draft } from './editor.ts';
 import { withoutEntered, withoutTermTexts } from './entered.ts';
 import { same } from './same.ts';
@@ -62,6 +62,38 @@ export function setParameter(
       if (value !== undefined) return { ...term, [key]: value };
       return { ...without(term, key), form: term.form };
     }),
+  );
+}
+
+/** A choice made: what hangs on another value of it goes, what hangs on this one begins with its default. */
+export function setChoice(
+  document: CaseDocument,
+  index: number,
+  form: FormInfo,
+  { key, value }: { key: string; value: string },
+): CaseDocument {
+  const chosen = setParameter(document, index, key, value);
+  const members = chosen.interaction.terms[index] ?? { form: form.key };
+  return form.parameters
+    .filter(({ when }) => when?.key === key)
+    .reduce((next, parameter) => {
+      if (!parameterApplies(parameter, members))
+        return setParameter(next, index, parameter.key, undefined);
+      const missing = members[parameter.key] === undefined && !parameter.optional;
+      return missing ? setParameter(next, index, parameter.key, parameter.default) : next;
+    }, chosen);
+}
+
+/** Of parameters of which exactly one is given, this one with its default. */
+export function setAlternative(
+  document: CaseDocument,
+  index: number,
+  alternatives: readonly FormParameterInfo[],
+  key: string,
+): CaseDocument {
+  return alternatives.reduce(
+    (next, one) => setParameter(next, index, one.key, one.key === key ? one.default : undefined),
+    document,
   );
 }
 

@@ -34,6 +34,22 @@ export const CRITERION_NAMES: Record<Criterion['name'], string> = {
   eta: 'Sommerfeld parameter',
 };
 
+/** Values that the register lists by a key, as people say them. */
+const CHOICE_NAMES: Readonly<Record<string, string>> = {
+  uniformSphere: 'uniform sphere',
+  gaussian: 'Gaussian',
+  fermi: 'two-parameter Fermi',
+  helm: 'Helm',
+  dipole: 'dipole',
+  zero: 'nothing',
+  exponential: 'exponential',
+  coulomb: 'falling as 1/r',
+};
+
+export function choiceName(key: string): string | undefined {
+  return CHOICE_NAMES[key];
+}
+
 /** A number with every digit it has, as prose shows it: 1e-7 stays readable, the minus is a minus. */
 export function digits(value: number): string {
   return fullDigits(value).replaceAll('-', '−');
@@ -86,7 +102,7 @@ export function formLabel(key: string, forms: readonly FormInfo[]): string {
 
 export function termValueText(value: TermValue | undefined): string {
   if (value === undefined) return 'not given';
-  if (typeof value === 'string') return value;
+  if (typeof value === 'string') return choiceName(value) ?? value;
   if (typeof value === 'number') return digits(value);
   if (isQuantity(value)) return quantityText(value);
   if (isPoints(value)) return tableText(value);
