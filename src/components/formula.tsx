@@ -5,7 +5,7 @@ interface FormulaProps {
   tex: string;
   /** Set on a line of its own. */
   display?: boolean;
-  className?: string;
+  className?: string | undefined;
 }
 
 async function typeset(element: HTMLElement, tex: string, display: boolean): Promise<void> {

@@ -70,7 +70,15 @@ export function TermInputs({ term, index, several }: TermInputsProps) {
       </div>
       {form && (
         <div className="rounded bg-soft px-3 py-1.5">
-          <Formula display tex={form.formula} />
+          {/* Beside the inputs there is little width: what stands after the potential takes lines of its own. */}
+          {form.formula.split(/[,;]\s*\\quad\s*/).map((tex) => (
+            <Formula
+              key={tex}
+              display
+              tex={tex}
+              className={tex.length > 60 ? 'text-sm' : undefined}
+            />
+          ))}
         </div>
       )}
       {form && <ParameterFields term={term} index={index} form={form} />}
