@@ -1,4 +1,4 @@
-import type { ReactNode } from 'react';
+import { Fragment, type ReactNode } from 'react';
 import { ArrowDown, ArrowUp, ChevronsUpDown } from 'lucide-react';
 import { Link } from 'react-router-dom';
 import { classNames } from '#src/lib/class-names.ts';
@@ -75,6 +75,18 @@ function Cell<T>({ column, item, text }: { column: Column<T>; item: T; text: str
   );
 }
 
+/** Held in sight while the columns above it are scrolled. */
+function Below({ content, columns }: { content: ReactNode; columns: number }) {
+  if (content === null) return null;
+  return (
+    <tr className="lg:hidden">
+      <td colSpan={columns} className="p-0">
+        <div className="sticky left-0 w-[min(36rem,100vw-2.25rem)] px-3 pb-2">{content}</div>
+      </td>
+    </tr>
+  );
+}
+
 interface ReferenceTableProps<T> {
   /** Spoken name of the table. */
   label: string;
@@ -82,6 +94,8 @@ interface ReferenceTableProps<T> {
   items: readonly T[];
   nameOf: (item: T) => string;
   startOf: (item: T) => ReferenceStart | null;
+  /** What stands under a row where the screen is too narrow for its column. */
+  below?: ((item: T) => ReactNode) | undefined;
   address: TableAddress;
   /** The rows are of the last question while the next answer is on its way. */
   dimmed: boolean;
@@ -89,7 +103,7 @@ interface ReferenceTableProps<T> {
 
 /** Numbers on their decimal points, names in a column that stays while the rest scrolls below it on a narrow screen. */
 export function ReferenceTable<T>(props: ReferenceTableProps<T>) {
-  const { label, items, nameOf, startOf, address, dimmed } = props;
+  const { label, items, nameOf, startOf, below, address, dimmed } = props;
   const columns = props.columns.filter(({ fileOnly }) => !fileOnly);
   const texts = columns.map((column) => {
     const plain = items.map((item) => textOf(column, item));
@@ -119,26 +133,26 @@ export function ReferenceTable<T>(props: ReferenceTableProps<T>) {
         </thead>
         <tbody>
           {items.map((item, row) => (
-            <tr
-              key={nameOf(item)}
-              className="group border-t border-line/70 first:border-t-0 hover:bg-soft"
-            >
-              {columns.map((column, place) => (
-                <Cell
-                  key={column.key}
-                  column={column}
-                  item={item}
-                  text={texts[place]?.[row] ?? ''}
-                />
-              ))}
-              <td className="px-2 py-0.5 align-top" data-screen-only>
-                <RowActions
-                  name={nameOf(item)}
-                  line={lineOf(props.columns, item)}
-                  start={startOf(item)}
-                />
-              </td>
-            </tr>
+            <Fragment key={nameOf(item)}>
+              <tr className="group border-t border-line/70 first:border-t-0 hover:bg-soft">
+                {columns.map((column, place) => (
+                  <Cell
+                    key={column.key}
+                    column={column}
+                    item={item}
+                    text={texts[place]?.[row] ?? ''}
+                  />
+                ))}
+                <td className="px-2 py-0.5 align-top" data-screen-only>
+                  <RowActions
+                    name={nameOf(item)}
+                    line={lineOf(props.columns, item)}
+                    start={startOf(item)}
+                  />
+                </td>
+              </tr>
+              <Below content={below?.(item) ?? null} columns={columns.length + 1} />
+            </Fragment>
           ))}
         </tbody>
       </table>

@@ -32,6 +32,8 @@ export interface TableDescription<T> {
   columns: ReadonlyArray<Column<T>>;
   nameOf: (item: T) => string;
   startOf: (item: T) => ReferenceStart | null;
+  /** What stands under a row on a narrow screen. */
+  below?: (item: T) => ReactNode;
   /** Filters by their key in the address, with the values each may have. */
   filters: Readonly<Record<string, readonly string[]>>;
 }
@@ -148,6 +150,7 @@ export function TablePage<T>({
               items={data.items}
               nameOf={table.nameOf}
               startOf={table.startOf}
+              below={table.below}
               address={address}
               dimmed={isPlaceholderData}
             />

@@ -89,18 +89,16 @@ function Sheet({ detail }: { detail: FormDetail }) {
         <p className="col-span-full text-sm text-muted">Source: {form.source}</p>
       </div>
       <Curves detail={detail} />
-      <div className="grid gap-x-10 gap-y-6 xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]">
-        <Section title="Parameters">
-          <ParameterTable parameters={form.parameters} />
-        </Section>
-        <Section title="Behaviour and limits">
-          <ul className="flex list-disc flex-col gap-1.5 pl-5 marker:text-barn">
-            {remarks.map((line) => (
-              <li key={line}>{line}</li>
-            ))}
-          </ul>
-        </Section>
-      </div>
+      <Section title="Behaviour and limits">
+        <ul className="flex max-w-[85ch] list-disc flex-col gap-1.5 pl-5 marker:text-barn">
+          {remarks.map((line) => (
+            <li key={line}>{line}</li>
+          ))}
+        </ul>
+      </Section>
+      <Section title="Parameters">
+        <ParameterTable parameters={form.parameters} />
+      </Section>
       <Provenance table={table} />
     </>
   );

@@ -18,6 +18,7 @@ const TABLE: TableDescription<NeutronItem> = {
   source: neutronTable,
   nameOf: ({ name }) => name,
   startOf: ({ name, b }) => (b === null ? null : { kind: 'neutron', name }),
+  below: ({ cautions }) => (cautions.length > 0 ? <Cautions lines={cautions} /> : null),
   filters: { caution: CAUTIONS, element: [] },
   columns: [
     {
@@ -88,6 +89,7 @@ const TABLE: TableDescription<NeutronItem> = {
     {
       key: 'cautions',
       title: 'Cautions',
+      wide: true,
       text: ({ cautions }) => cautions.join(' '),
       cell: ({ cautions }) => (
         <div className="max-w-md min-w-72">
