@@ -5,6 +5,7 @@ import { BetweenAngles } from './between-angles.tsx';
 import { Disclosure } from './disclosure.tsx';
 import { InMaterial } from './in-material.tsx';
 import { KinematicsTable } from './kinematics-table.tsx';
+import { TakeAlong } from './take-along.tsx';
 
 /** What helps to read the curve and to take it along: closed lines below it, each asked for when it is opened. */
 export function AidsArea({ estimate, fileName }: { estimate: Estimate; fileName: string }) {
@@ -38,6 +39,9 @@ export function AidsArea({ estimate, fileName }: { estimate: Estimate; fileName:
         }
       >
         <InMaterial estimate={estimate} />
+      </Disclosure>
+      <Disclosure title="Take it along" says="an address, Python, LaTeX">
+        <TakeAlong estimate={estimate} />
       </Disclosure>
     </section>
   );

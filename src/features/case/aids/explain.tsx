@@ -1,7 +1,10 @@
 import { useState, type ReactNode } from 'react';
-import { CircleHelp } from 'lucide-react';
+import { CircleHelp, Copy } from 'lucide-react';
+import { Button } from '#src/components/button.tsx';
 import { Dialog } from '#src/components/dialog.tsx';
 import { Formula } from '#src/components/formula.tsx';
+import { copyText } from './code-block.tsx';
+import { latexOf } from './model/latex.ts';
 import type { Meaning } from './model/meaning-amplitude.ts';
 
 interface MeaningDialogProps {
@@ -38,6 +41,11 @@ export function MeaningDialog({ meaning, value, onClose }: MeaningDialogProps) {
           </div>
         ))}
       </dl>
+      <div>
+        <Button size="small" onClick={() => void copyText(latexOf(meaning), 'The LaTeX')}>
+          <Copy aria-hidden="true" className="size-4" /> Copy as LaTeX
+        </Button>
+      </div>
     </Dialog>
   );
 }

@@ -19,12 +19,13 @@ export function useSection(): Section {
 
 /** The parts of a case, each with an address of its own. */
 export function SectionTabs({ section }: { section: Section }) {
-  const { search } = useLocation();
+  // A case that stands in the fragment of the address stays there.
+  const { search, hash } = useLocation();
   const addressOf = (name: Section) => {
     const parameters = new URLSearchParams(search);
     if (name === 'cross-section') parameters.delete('section');
     else parameters.set('section', name);
-    return { search: parameters.toString() };
+    return { search: parameters.toString(), hash };
   };
   return (
     <nav aria-label="Sections of the case" className="mb-4.5 border-b border-line" data-screen-only>

@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { useParams, useSearchParams } from 'react-router-dom';
+import { useLocation, useParams, useSearchParams } from 'react-router-dom';
 import { ButtonLink } from '#src/components/button.tsx';
 import { EmptyState } from '#src/components/empty-state.tsx';
 import { Failure } from '#src/components/failure.tsx';
@@ -14,6 +14,7 @@ import { VersionView } from '../components/version-view.tsx';
 import { Workspace } from '../components/workspace.tsx';
 import { contentOfCase } from '../editing/use-saving.ts';
 import { DEFAULT_DOCUMENT, DEFAULT_TITLE } from '../model/default-document.ts';
+import { isCaseLink, linkName, openLink } from '../model/permalink.ts';
 
 const NEW = { title: DEFAULT_TITLE, tags: [], document: DEFAULT_DOCUMENT };
 
@@ -89,8 +90,41 @@ function FromReference({ start }: { start: ReferenceStart }) {
   );
 }
 
+/** A case that stands in the address itself: it is unfolded and checked before anything is shown of it. */
+function FromLink({ fragment }: { fragment: string }) {
+  const opened = useQuery({
+    queryKey: ['case link', fragment],
+    queryFn: () => openLink(fragment),
+    staleTime: Infinity,
+  });
+  if (!opened.data) return <Loading />;
+  if ('content' in opened.data) {
+    const subject = `case:new:${linkName(fragment)}`;
+    const href = `/cases/new${fragment}`;
+    const { content } = opened.data;
+    return <Workspace key={subject} subject={subject} href={href} content={content} saved={null} />;
+  }
+  return (
+    <>
+      <PageTitle title="New case" className="mb-4" />
+      <EmptyState
+        title="This address opens no case."
+        actions={
+          <ButtonLink to="/cases/new" look="primary">
+            Begin a new case
+          </ButtonLink>
+        }
+      >
+        {opened.data.problem}
+      </EmptyState>
+    </>
+  );
+}
+
 function NewCase() {
   const [parameters] = useSearchParams();
+  const { hash } = useLocation();
+  if (isCaseLink(hash)) return <FromLink key={hash} fragment={hash} />;
   const start = referenceStartOf(parameters);
   if (start) return <FromReference start={start} />;
   return <PlainNewCase parameters={parameters} />;
