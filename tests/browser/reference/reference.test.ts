@@ -82,17 +82,18 @@ test('numbers stand on their decimal points', async () => {
   expect(new Set(places).size).toBe(1);
 });
 
-test('contradictions and resonances are said in words', async () => {
-  const { page, goTo } = await stage.visitor('experimentalist');
+test.each([1440, 390] as const)('cautions are said in words at %i px', async (width) => {
+  const { page, goTo } = await stage.visitor('experimentalist', { width });
+  const seen = (words: RegExp) => page.getByText(words).filter({ visible: true }).first();
   await goTo('/reference/neutron-lengths');
   await page.getByLabel('Cautions', { exact: true }).selectOption('resonant');
   await page.waitForURL(/caution=resonant/);
-  await page
-    .getByText(/absorption does not follow 1\/v/)
-    .first()
-    .waitFor();
+  await seen(/absorption does not follow 1\/v/).waitFor();
   await goTo('/reference/neutron-lengths?q=O-17');
-  await page.getByText(/4π\|b\|² gives 3\.941 b/).waitFor();
+  const words = seen(/4π\|b\|² gives 3\.941 b/);
+  await words.waitFor();
+  const box = await words.boundingBox();
+  expect((box?.x ?? Infinity) + (box?.width ?? 0)).toBeLessThanOrEqual(width);
 });
 
 test('a file holds names, a row of units and every row that fits', async () => {
