@@ -18,6 +18,8 @@ export const formParameterSchema = z.object({
   ]),
   /** What a parameter of dimension `choice` may be. */
   choices: z.array(z.string()).optional(),
+  /** What a `formula` knows by itself: r, constants and functions; every other name is a parameter. */
+  words: z.array(z.string()).optional(),
   /** The parameter belongs to these values of another one alone: needed with them, refused with others. */
   when: z.object({ key: z.string(), is: z.array(z.string()) }).optional(),
   /** Of the parameters that share this name exactly one is given. */

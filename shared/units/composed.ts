@@ -1,8 +1,8 @@
 import { DomainError } from '#shared/errors.ts';
 import { UNITS } from './vocabulary.ts';
 
-/** Powers of the base units a composed unit is made of, and its factor to them (eV, angstrom, s, sr, A, g, Pa, K, 1/s). */
-interface Composed {
+/** Powers of the base units a composed unit is made of, and its factor to them (eV, angstrom, s, sr, A, rad, g, Pa, K). */
+export interface Composed {
   factor: number;
   powers: Record<string, number>;
 }
@@ -69,7 +69,8 @@ export function splitUnit(unit: string): { above: string[]; below: string[] } {
   return { above: words(above), below: words(inner) };
 }
 
-function compose(unit: string): Composed {
+/** What a composed unit is made of. Throws DomainError('invalidInput') for what is no unit. */
+export function composedUnit(unit: string): Composed {
   const { above, below } = splitUnit(unit);
   const composed: Composed = { factor: 1, powers: {} };
   const take = (name: string, sign: 1 | -1) => {
@@ -97,8 +98,8 @@ function sameKind(a: Composed, b: Composed): boolean {
  */
 export function composedFactor(from: string, to: string): number {
   if (from === to) return 1;
-  const a = compose(from);
-  const b = compose(to);
+  const a = composedUnit(from);
+  const b = composedUnit(to);
   if (!sameKind(a, b)) {
     throw new DomainError(
       'invalidInput',

@@ -42,13 +42,14 @@ function presentNumber(parameter: FormParameter): FormParameterInfo {
 }
 
 function presentNamed(parameter: NamedParameter): FormParameterInfo {
-  const { choices, default: value } = parameter;
+  const { choices, words, default: value } = parameter;
   return {
     ...shared(parameter),
     default: Array.isArray(value)
       ? value.map(([r, v]: readonly [number, number]): [number, number] => [r, v])
       : (value as FormParameterInfo['default']),
     ...(choices && { choices: [...choices] }),
+    ...(words && { words: [...words] }),
   };
 }
 

@@ -3,6 +3,7 @@ import { contactByName } from './contact-by-name.ts';
 import { coulomb } from './coulomb.ts';
 import { deltaShell } from './delta-shell.ts';
 import { exponential } from './exponential.ts';
+import { expression } from './expression/expression.ts';
 import { extendedCharge } from './extended-charge.ts';
 import { gaussian } from './gaussian.ts';
 import { hardSphere } from './hard-sphere.ts';
@@ -36,6 +37,7 @@ export const FORMS: readonly Form[] = [
   hulthen,
   polarization,
   tabulated,
+  expression,
   contactByName,
   hardSphere,
 ];

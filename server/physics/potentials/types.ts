@@ -106,6 +106,8 @@ export interface NamedParameter extends Parameter {
   dimension: 'choice' | 'element' | 'nuclide' | 'points' | 'formula' | 'quantities';
   /** What a `choice` may be. */
   choices?: readonly string[];
+  /** What a `formula` knows by itself: r, constants and functions. */
+  words?: readonly string[];
   /** `points` in angstrom and eV. */
   default: string | Points | NamedQuantities;
 }

@@ -22,6 +22,7 @@ describe('register of forms', () => {
       'hulthen',
       'polarization',
       'tabulated',
+      'expression',
       'contact',
       'hardSphere',
     ]);
