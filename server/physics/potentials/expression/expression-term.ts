@@ -221,7 +221,7 @@ export function expressionTerm(
     reach: coulomb === 0 ? end : null,
     breakpoints: jumpsOf(
       compiled,
-      radii.branches.filter((r) => r < end),
+      radii.branches.filter((r) => r <= end),
     ),
   };
 }
