@@ -44,7 +44,7 @@ export function CaseBody({ section, notices, children }: CaseBodyProps) {
         <ProblemSummary problems={problems} onOpen={stations.openStation} />
       </div>
       <div className="grid items-start gap-x-5.5 gap-y-5 @3xl:grid-cols-[17.5rem_minmax(0,1fr)] @5xl:grid-cols-[20.75rem_minmax(0,1fr)] print:block">
-        <div className="order-2 @3xl:sticky @3xl:top-3 @3xl:order-1 @3xl:max-h-[calc(100svh-1.5rem)] @3xl:overflow-y-auto print:hidden">
+        <div className="order-2 min-w-0 @3xl:sticky @3xl:top-3 @3xl:order-1 @3xl:max-h-[calc(100svh-1.5rem)] @3xl:overflow-y-auto print:hidden">
           <InputsPanel
             summaries={summaries}
             closed={stations.closed}

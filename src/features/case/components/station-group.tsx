@@ -58,7 +58,7 @@ export function StationGroup(props: StationGroupProps) {
       <div id={`${id}-fields`} hidden={!open} className="px-4.5 pb-4.5">
         <fieldset
           disabled={readOnly}
-          className="flex min-w-0 flex-col gap-3.5 [&_:disabled]:opacity-100!"
+          className="flex min-w-0 flex-col gap-3.5 [&_:disabled:not([type=radio])]:opacity-100!"
         >
           {children}
         </fieldset>
