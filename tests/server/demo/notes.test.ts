@@ -51,6 +51,9 @@ const NICKEL = 'Nickel by element and by isotope';
 const NEUTRONS = 'Hydrogen, bound and free';
 const MOTT = '1 MeV electrons on aluminium: the spin of the electron';
 const CALCIUM = '250 MeV electrons on Ca-40: the shape of its charge';
+const FORMULA = 'Electrons on helium: the static field as a formula';
+const TABLE = 'Electrons on helium: the static field as a table';
+const GAUSSIANS = 'Alphas on helium with a nuclear force in two Gaussians';
 const HULTHEN = 'Neutrons on protons in a Hulthén well';
 
 /** A figure as a note prints it, and the value it stands for. */
@@ -75,6 +78,8 @@ const FIGURES: [string, number, string, (estimate: Estimate) => number][] = [
   [MOTT, 1, '1.0903', dcs(90)],
   [MOTT, 1, '1.957', (estimate) => amplitude(90)(estimate) ** 2 / 100],
   [HULTHEN, 1, '0.98', elastic],
+  [FORMULA, 1, '0.2709', elastic],
+  [GAUSSIANS, 1, '14.9', dcs(90)],
 ];
 
 describe('the figures in the notes', () => {
@@ -110,6 +115,32 @@ describe('what the notes say of two curves', () => {
     const beyond = ratios(CARBON, 1, 2).filter(({ theta }) => theta >= 22);
     for (const { ratio } of beyond) expect(Math.abs(ratio - 1)).toBeLessThan(0.04);
     expect(ratios(CARBON, 1, 2)[0]?.ratio).toBeGreaterThan(6);
+  });
+
+  it('helium: the formula is its closed form, the printed table is not quite', () => {
+    const hartree = (value: number) => ({ value, unit: 'hartree' });
+    const a = { value: 1 / 3.375, unit: 'bohr' };
+    const terms = [
+      { form: 'yukawa', V0: hartree(-6.75), a },
+      { form: 'exponential', V0: hartree(-3.375), a },
+    ];
+    const { document } = versionOf(FORMULA, 1);
+    const closed = ENGINE.estimate({ ...document, interaction: { terms } });
+    const [formula, table] = [estimateOf(FORMULA), estimateOf(TABLE)];
+    // The e² of the formula is typed with eight digits.
+    expectRelative(elastic(formula), elastic(closed), 2e-7);
+    expectRelative(1 - elastic(table) / elastic(closed), 6e-4, 0.05);
+    expectRelative(1 - dcs(180)(table) / dcs(180)(closed), 5e-3, 0.05);
+    const last = 0.01 * 1.1 ** 60;
+    expectRelative(last, 3.04, 2e-3);
+  });
+
+  it('a nuclear force in two Gaussians overdraws a partial wave eightfold', () => {
+    const { document, note } = versionOf(GAUSSIANS, 1);
+    const charges = ENGINE.estimate({ ...document, interaction: { terms: [{ form: 'coulomb' }] } });
+    expectRelative(dcs(90)(charges), 0.053, 0.01);
+    expectRelative(criterion('unitarity')(estimateOf(GAUSSIANS)), 8, 0.1);
+    expect(note).toContain('0.053');
   });
 
   it('backings: three and 36 times carbon, one partial wave beyond what comes in', () => {

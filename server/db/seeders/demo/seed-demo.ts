@@ -8,6 +8,8 @@ import { saveVersion } from '#server/modules/cases/save-version.ts';
 import { createUser } from '#server/modules/users/create-user.ts';
 import { ATOM_CASES } from './atom-cases.ts';
 import { ELECTRON_CASES } from './electron-cases.ts';
+import { FORMULA_CASES } from './formula-cases.ts';
+import { HELIUM_CASES } from './helium-cases.ts';
 import { ION_CASES } from './ion-cases.ts';
 import { LIGHT_ION_CASES } from './light-ion-cases.ts';
 import { NEUTRON_CASES } from './neutron-cases.ts';
@@ -28,6 +30,8 @@ export const DEMO_CASES: readonly DemoCase[] = [
   ...LIGHT_ION_CASES,
   ...SAMPLE_CASES,
   ...THEORY_CASES,
+  ...HELIUM_CASES,
+  ...FORMULA_CASES,
 ];
 
 export interface SeedContext {
