@@ -8,7 +8,10 @@ import { sendProblem } from './problem.ts';
 function reading(fault: Error): DomainError | undefined {
   const status = 'status' in fault ? fault.status : undefined;
   if (status === 413) {
-    return new DomainError('payloadTooLarge', 'The body is larger than 1 MB; send less at once.');
+    return new DomainError(
+      'payloadTooLarge',
+      'The body is larger than 1 MB; send less at once. A table of V(r) may have at most 2000 rows.',
+    );
   }
   if (status === 415) {
     return new DomainError(

@@ -54,5 +54,8 @@ function flatten(issue: Issue, prefix: readonly PropertyKey[]): FieldError[] {
 
 /** What a person can act upon: of a union the faults of the branch that was meant, unknown keys by name. */
 export function fieldErrors(issues: readonly Issue[]): FieldError[] {
-  return issues.slice(0, MAX_REPORTED).flatMap((issue) => flatten(issue, []));
+  return issues
+    .slice(0, MAX_REPORTED)
+    .flatMap((issue) => flatten(issue, []))
+    .slice(0, MAX_REPORTED);
 }
