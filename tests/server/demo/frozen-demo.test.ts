@@ -5,6 +5,7 @@ import { expectRelative } from '#tests/support/expect-relative.ts';
 import { keyDigits, movedDigits } from './key-digits.ts';
 import type { KeyDigits } from './key-digits.ts';
 import first from './frozen-0.1.0.json' with { type: 'json' };
+import second from './frozen-0.2.0.json' with { type: 'json' };
 
 /** Rounding of sin, exp and log may differ between machines. Criteria come from quadratures that are not asked for more. */
 const toleranceOf = (name: string): number => (name.startsWith('criterion') ? 1e-8 : 1e-12);
@@ -38,6 +39,7 @@ interface Frozen {
 }
 const FROZEN: readonly Frozen[] = [
   { version: first.engine.version, records: first.records, moved: SINCE_0_1_0 },
+  { version: second.engine.version, records: second.records, moved: {} },
 ];
 const versions = DEMO_CASES.flatMap(({ title, versions }) =>
   versions.map(({ document }, index) => ({ name: `${title}, version ${index + 1}`, document })),
@@ -60,6 +62,10 @@ describe.each(FROZEN)('the demo as it was computed by version $version', ({ reco
       `${why}; now: ${found.join('; ')}`,
     ).toEqual(figures);
   });
+});
+
+it('every worked case is frozen in the newest file', () => {
+  expect(Object.keys(second.records)).toEqual(versions.map(({ name }) => name));
 });
 
 it('the curve of the electrons moved by the Mott factor and by nothing else', () => {

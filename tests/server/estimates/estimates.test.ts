@@ -1,6 +1,7 @@
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { createCompute } from '#server/compute/compute.ts';
 import type { ComputePool } from '#server/compute/compute.ts';
+import { VERSION } from '#server/version.ts';
 import { estimateSchema } from '#shared/contracts/estimates.ts';
 import type { Estimate } from '#shared/contracts/estimates.ts';
 import type { Problem } from '#shared/contracts/problem-details.ts';
@@ -38,7 +39,7 @@ const YUKAWA = { form: 'yukawa', V0: Q(-10, 'eV'), a: Q(1, 'angstrom') };
 
 test('the body of the contract over HTTP, from a worker thread', async () => {
   const estimate = await ask({});
-  expect(estimate.engine).toEqual({ name: 'tallybarn', version: '0.1.0' });
+  expect(estimate.engine).toEqual({ name: 'tallybarn', version: VERSION });
   const born1 = estimate.methods.born1;
   if (!born1 || 'unavailable' in born1) throw new Error('unavailable');
   expectRelative(born1.differential[0]?.dcs ?? NaN, 6.888967358, 1e-10);
