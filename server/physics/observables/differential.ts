@@ -40,6 +40,8 @@ const EXCHANGED_DIVERGENCE =
   'The exchanged amplitude of a 1/r potential diverges where the partner goes forward.';
 /** Angles and the edge of a cone are known to a few roundings. */
 const ANGLE_ROUNDING = 8 * UNIT_ROUNDOFF;
+/** Of an angle as it was typed: the factor of its unit, the product, halving and cosine. */
+const TYPED_ANGLE_ROUNDING = 4 * UNIT_ROUNDOFF;
 const PROBE = 2 ** -24;
 
 /** An amplitude that is neither good to 1e-6 nor lost in the floor is refused: no silent wrong number. */
@@ -74,19 +76,35 @@ function after(
 }
 
 /**
+ * f at pi - theta, where the partner goes. Near pi its q is what is left of a cosine, and the last digit of the angle counts
+ * tan(theta/2) times as much as it does in q itself.
+ */
+function exchangedAmplitude(
+  { born, k }: DifferentialInput,
+  thetaCm: number,
+  angleError: number,
+): Amplitude | null {
+  // At pi the partner goes forward: exactly 0, not the rounding of a cosine.
+  if (thetaCm === Math.PI) return born.amplitude(0);
+  const error = angleError + TYPED_ANGLE_ROUNDING * thetaCm;
+  return born.amplitude(2 * k * Math.cos(thetaCm / 2), (error / 2) * Math.tan(thetaCm / 2));
+}
+
+/**
  * dσ/dΩ at one angle of the centre of mass.
  *
  * Formula: |f(q)|², q = 2k sin(theta/2), times the factor of a lepton's spin, plus what is incoherent; for identical particles with the
  * exchanged amplitude at 2k cos(theta/2).
  *
  * @param thetaCm rad, 0 to pi
- * @param blur relative error of q beyond rounding
+ * @param angleError of thetaCm beyond that of a typed angle, rad
  * @returns angstrom²/sr with a bound of its error, or null where a Coulomb tail diverges
  * @throws DomainError('tooMuchWork') where the amplitude is neither good to 1e-6 nor below the floor
  */
-export function cmPoint(input: DifferentialInput, thetaCm: number, blur = 0): CmPoint {
+export function cmPoint(input: DifferentialInput, thetaCm: number, angleError = 0): CmPoint {
   const { born, k, exchangeSpin } = input;
   const q = 2 * k * Math.sin(thetaCm / 2);
+  const blur = thetaCm > 0 ? Math.abs(angleError / (2 * Math.tan(thetaCm / 2))) : 0;
   const amplitude = born.amplitude(q, blur);
   if (amplitude === null) return { thetaCm, q, amplitude, dcs: null };
   refuseCoarse(amplitude, born.floor);
@@ -102,8 +120,7 @@ export function cmPoint(input: DifferentialInput, thetaCm: number, blur = 0): Cm
       dcs: after(input, { value, error, belowFloor }, thetaCm, blur),
     };
   }
-  // At pi the partner goes forward: exactly 0, not the rounding of a cosine.
-  const exchanged = born.amplitude(thetaCm === Math.PI ? 0 : 2 * k * Math.cos(thetaCm / 2), blur);
+  const exchanged = exchangedAmplitude(input, thetaCm, angleError);
   if (exchanged === null) return { thetaCm, q, amplitude, dcs: null };
   refuseCoarse(exchanged, born.floor);
   const { value, error } = exchangeDcs(amplitude, exchanged, exchangeSpin);
@@ -128,8 +145,7 @@ export function labPoint(input: DifferentialInput, frame: Frame, thetaLab: numbe
     const turn = (Math.abs(thetaCm - near.thetaCm) / PROBE) * ANGLE_ROUNDING;
     const angleError = turn + 4 * UNIT_ROUNDOFF * thetaCm;
     const stretch = (Math.abs(1 - near.jacobian / jacobian) / PROBE) * ANGLE_ROUNDING;
-    const blur = thetaCm > 0 ? angleError / (2 * Math.tan(thetaCm / 2)) : 0;
-    const point = cmPoint(input, thetaCm, Math.abs(blur));
+    const point = cmPoint(input, thetaCm, angleError);
     const { dcs } = point;
     if (dcs === null) return point;
     const value = dcs.value * jacobian;
