@@ -5,6 +5,7 @@ import { BetweenAngles } from './between-angles.tsx';
 import { Disclosure } from './disclosure.tsx';
 import { InMaterial } from './in-material.tsx';
 import { KinematicsTable } from './kinematics-table.tsx';
+import { MixUps } from './mix-ups.tsx';
 import { TakeAlong } from './take-along.tsx';
 
 /** What helps to read the curve and to take it along: closed lines below it, each asked for when it is opened. */
@@ -39,6 +40,12 @@ export function AidsArea({ estimate, fileName }: { estimate: Estimate; fileName:
         }
       >
         <InMaterial estimate={estimate} />
+      </Disclosure>
+      <Disclosure
+        title="Another source’s value"
+        says="which usual slip would explain the difference"
+      >
+        <MixUps estimate={estimate} />
       </Disclosure>
       <Disclosure title="Take it along" says="an address, Python, LaTeX">
         <TakeAlong estimate={estimate} />

@@ -26,9 +26,17 @@ export const emptyIn = (unit: string): TypedQuantity => ({
   problem: null,
 });
 
-function readTyped(text: string, unit: string, dimension: Dimension): TypedQuantity {
+/** What may follow a unit and changes nothing where the field already says it. */
+const PER_STERADIAN = /\s*(?:\/\s*sr|sr(?:\^-1|⁻¹))\s*$/;
+
+function readTyped(
+  text: string,
+  unit: string,
+  { dimension, perSteradian }: Pick<TypedQuantityFieldProps, 'dimension' | 'perSteradian'>,
+): TypedQuantity {
   if (text.trim() === '') return { ...emptyIn(unit), text };
-  const parsed = parseQuantity(text, dimension, { unit });
+  const plain = perSteradian ? text.replace(PER_STERADIAN, '') : text;
+  const parsed = parseQuantity(plain, dimension, { unit });
   return parsed.ok
     ? { text, unit: parsed.quantity.unit, value: parsed.quantity, problem: null }
     : { text, unit, value: null, problem: parsed.message };
@@ -42,6 +50,8 @@ interface TypedQuantityFieldProps {
   typed: TypedQuantity;
   onTyped: (typed: TypedQuantity) => void;
   hint?: ReactNode;
+  /** The quantity is per steradian, and may be typed so: `1.2 b/sr`. */
+  perSteradian?: boolean;
   /** What the server says of it. */
   error?: string | undefined;
   className?: string;
@@ -60,7 +70,7 @@ export function TypedQuantityField(props: TypedQuantityFieldProps) {
       hint={hint}
       error={typed.problem ?? error}
       {...(className === undefined ? {} : { className })}
-      onText={(text) => onTyped(readTyped(text, typed.unit, dimension))}
+      onText={(text) => onTyped(readTyped(text, typed.unit, props))}
       onUnit={(unit) =>
         onTyped(
           typed.value ? asTyped(convertQuantity(typed.value, unit, dimension)) : { ...typed, unit },
