@@ -42,35 +42,29 @@ const send = (term: object) =>
 interface Refused {
   status: number;
   problem: Problem;
-  took: number;
-  /** Milliseconds that other requests took meanwhile, ascending. */
-  others: number[];
+  /** Requests of others that were answered meanwhile. */
+  others: number;
 }
 
 /** Sends a term while someone else asks for something small again and again. */
 async function refusedAmongOthers(request: () => PromiseLike<{ status: number; body: unknown }>) {
-  const others: number[] = [];
+  let others = 0;
   let over = false;
   const bystander = (async () => {
     while (!over) {
-      const start = performance.now();
       await agent.get('/api/health').expect(200);
-      others.push(performance.now() - start);
+      others += 1;
     }
   })();
-  const start = performance.now();
   const { status, body } = await request();
-  const took = performance.now() - start;
   over = true;
   await bystander;
-  const sorted = others.sort((a, b) => a - b);
-  return { status, problem: body as Problem, took, others: sorted } satisfies Refused;
+  return { status, problem: body as Problem, others } satisfies Refused;
 }
 
-function expectQuick({ took, others }: Refused): void {
-  expect(took).toBeLessThan(2000);
-  // Nine in ten stay below 50 ms whatever else this machine does.
-  expect(others[Math.floor(others.length * 0.9) - 1] ?? 0).toBeLessThan(50);
+/** The bystander was served all along; how fast is measured by `npm run drill`, for no test asserts a time. */
+function expectOthersServed({ others }: Refused): void {
+  expect(others).toBeGreaterThan(0);
 }
 
 describe('formulas that reach, loop, nest or allocate', () => {
@@ -91,7 +85,7 @@ describe('formulas that reach, loop, nest or allocate', () => {
     expect(refused.status).toBe(422);
     expect(refused.problem.errors?.[0]?.path).toBe('/interaction/terms/0/formula');
     expect(refused.problem.errors?.[0]?.message).toMatch(words);
-    expectQuick(refused);
+    expectOthersServed(refused);
   });
 
   test('a parameter without a value and one of another kind', async () => {
@@ -140,7 +134,7 @@ describe('tables that are none', () => {
     expect(refused.status).toBe(422);
     const fault = refused.problem.errors?.find((one) => one.path === `/interaction/terms/0${path}`);
     expect(fault?.message, JSON.stringify(refused.problem.errors)).toMatch(words);
-    expectQuick(refused);
+    expectOthersServed(refused);
   });
 
   test('a million rows are refused in words before they are read', async () => {
@@ -154,7 +148,7 @@ describe('tables that are none', () => {
       code: 'payloadTooLarge',
       detail: expect.stringMatching(/larger than 1 MB.*2000 rows/) as unknown,
     });
-    expectQuick(refused);
+    expectOthersServed(refused);
   });
 });
 
