@@ -5,6 +5,7 @@ import { BetweenAngles } from './between-angles.tsx';
 import { Disclosure } from './disclosure.tsx';
 import { InMaterial } from './in-material.tsx';
 import { KinematicsTable } from './kinematics-table.tsx';
+import { Limits } from './limits.tsx';
 import { MixUps } from './mix-ups.tsx';
 import { TakeAlong } from './take-along.tsx';
 
@@ -46,6 +47,9 @@ export function AidsArea({ estimate, fileName }: { estimate: Estimate; fileName:
         says="which usual slip would explain the difference"
       >
         <MixUps estimate={estimate} />
+      </Disclosure>
+      <Disclosure title="Limits" says="the case against the forms it must take in its limits">
+        <Limits estimate={estimate} />
       </Disclosure>
       <Disclosure title="Take it along" says="an address, Python, LaTeX">
         <TakeAlong estimate={estimate} />
