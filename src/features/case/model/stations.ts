@@ -1,7 +1,7 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { Estimate, InteractionTerm } from '#shared/contracts/estimates.ts';
 import type { FormInfo } from '#shared/contracts/forms.ts';
-import { isQuantity } from '#shared/contracts/terms.ts';
+import { isNamedQuantities, isQuantity } from '#shared/contracts/terms.ts';
 import { formatComposed } from '#shared/units/format.ts';
 import { anglesText, briefQuantity, formLabel, projectileName, termValueText } from './words.ts';
 
@@ -39,8 +39,12 @@ function shortTerm(term: InteractionTerm, forms: readonly FormInfo[]): string {
     const zero = isQuantity(value) && value.value === 0;
     if (value === undefined || zero) return [];
     const text = isQuantity(value) ? briefQuantity(value) : termValueText(value);
-    // A name speaks for itself.
-    return [typeof value === 'string' ? text : `${symbolText(symbol)} ${text}`.trim()];
+    // A name speaks for itself, and so do parameters that carry their own.
+    return [
+      typeof value === 'string' || isNamedQuantities(value)
+        ? text
+        : `${symbolText(symbol)} ${text}`.trim(),
+    ];
   });
   return shown.slice(0, 3).join(' · ');
 }
