@@ -6,6 +6,8 @@ import { downloadCsv, downloadPng, downloadSvg } from './plot-export.ts';
 import type { PlotPicture } from './plot-types.ts';
 
 interface PlotExportMenuProps {
+  /** Spoken name, where a page has more than one plot. */
+  label?: string;
   fileName: string;
   picture: PlotPicture;
   csv: () => string;
@@ -14,7 +16,7 @@ interface PlotExportMenuProps {
 const item =
   'flex cursor-pointer justify-between gap-6 rounded px-3 py-1.5 outline-none data-highlighted:bg-soft';
 
-export function PlotExportMenu({ fileName, picture, csv }: PlotExportMenuProps) {
+export function PlotExportMenu({ label, fileName, picture, csv }: PlotExportMenuProps) {
   const attempt = (work: Promise<void>) => {
     work.catch((cause: unknown) => {
       console.info('Export failed', cause);
@@ -26,7 +28,7 @@ export function PlotExportMenu({ fileName, picture, csv }: PlotExportMenuProps) 
   return (
     <DropdownMenu.Root modal={false}>
       <DropdownMenu.Trigger asChild>
-        <Button size="small">
+        <Button size="small" aria-label={label}>
           <Download aria-hidden="true" className="size-4" />
           Export
         </Button>

@@ -19,7 +19,7 @@ export function TakeRows({ fileName, rows }: TakeRowsProps) {
           .map((row) => row.join('\t'))
           .join('\n'),
       );
-      say('The table is copied, with all digits and the units in the second row.', {
+      say('The table is copied, with all digits and units.', {
         tone: 'sound',
       });
     } catch (refused) {

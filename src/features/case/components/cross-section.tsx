@@ -3,6 +3,7 @@ import { METHODS } from '#shared/contracts/estimates.ts';
 import type { Estimate } from '#shared/contracts/estimates.ts';
 import { AidsArea } from '../aids/aids-area.tsx';
 import { AidsProvider } from '../aids/aids-provider.tsx';
+import { PotentialExport } from '../aids/potential-export.tsx';
 import { useEditing } from '../editing/editor-context.ts';
 import { METHOD_NAMES } from '../model/words.ts';
 import { CriteriaTable } from './criteria-table.tsx';
@@ -48,6 +49,7 @@ function UnavailableMethods({ estimate }: { estimate: Estimate }) {
 /** How much scatters, and where. */
 export function CrossSection({ estimate, fileName }: { estimate: Estimate; fileName: string }) {
   const { stale, areaUnit, setAreaUnit } = useEditing();
+  const base = fileName.replace(/-dcs$/, '');
   return (
     <AidsProvider>
       <div className="flex flex-col gap-4">
@@ -58,14 +60,17 @@ export function CrossSection({ estimate, fileName }: { estimate: Estimate; fileN
         >
           <Distribution estimate={estimate} dimmed={stale} fileName={fileName} />
         </section>
-        <AidsArea estimate={estimate} fileName={fileName} />
+        <AidsArea estimate={estimate} fileName={base} />
         <UnavailableMethods estimate={estimate} />
         <div className="grid gap-4 @3xl:grid-cols-[20rem_minmax(0,1fr)]">
           <section
             aria-label="Potential and wavelength"
             className="rounded border border-line bg-sheet px-4.5 py-4"
           >
-            <h2 className="mb-2 font-bold">V(r) and the wavelength</h2>
+            <div className="mb-2 flex items-center justify-between gap-2">
+              <h2 className="font-bold">V(r) and the wavelength</h2>
+              <PotentialExport estimate={estimate} fileName={`${base}-potential`} />
+            </div>
             <PotentialSketch estimate={estimate} dimmed={stale} />
             <KinematicsList estimate={estimate} />
           </section>

@@ -4,6 +4,8 @@ import { Notice } from '#src/components/notice.tsx';
 import { classNames } from '#src/lib/class-names.ts';
 import type { Estimate, GoldenRule as Sheet } from '#shared/contracts/estimates.ts';
 import { formatNumber, unitSymbol } from '#shared/units/format.ts';
+import { TakeRows } from '../aids/take-rows.tsx';
+import { chainRows } from '../aids/model/chain-rows.ts';
 import { useEditing } from '../editing/editor-context.ts';
 import { chainOf, transformTex } from '../model/chain.ts';
 import type { ChainStep } from '../model/chain.ts';
@@ -118,7 +120,7 @@ function FactorsAfter({ rule }: { rule: Sheet }) {
 }
 
 /** The chain from matrix element to cross section, laid out so that a reviewer can check it by hand. */
-export function GoldenRuleSheet({ estimate }: { estimate: Estimate }) {
+export function GoldenRuleSheet({ estimate, fileName }: { estimate: Estimate; fileName: string }) {
   const { draft, forms, stale } = useEditing();
   const { goldenRule: rule } = estimate;
   if ('unavailable' in rule) {
@@ -143,6 +145,9 @@ export function GoldenRuleSheet({ estimate }: { estimate: Estimate }) {
             <Step key={step.key} step={step} number={index + 1} />
           ))}
         </ol>
+        <div className="border-t border-line px-4.5 py-3" data-screen-only>
+          <TakeRows fileName={fileName} rows={() => chainRows(rule, estimate)} />
+        </div>
       </section>
       <section
         aria-label="Matrix element"

@@ -65,7 +65,10 @@ export function SectionContent({ section, saved, failure, onRetry }: SectionCont
       {trouble}
       <InputList />
       {section === 'golden-rule' ? (
-        <GoldenRuleSheet estimate={estimate} />
+        <GoldenRuleSheet
+          estimate={estimate}
+          fileName={fileNameOf(saved).replace(/-dcs$/, '-golden-rule')}
+        />
       ) : (
         <CrossSection estimate={estimate} fileName={fileNameOf(saved)} />
       )}
