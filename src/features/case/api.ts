@@ -11,6 +11,7 @@ import type { CaseDocument } from '#shared/contracts/cases.ts';
 import { estimateSchema } from '#shared/contracts/estimates.ts';
 import type { Estimate, EstimateRequest, Projectile } from '#shared/contracts/estimates.ts';
 import { formsSchema } from '#shared/contracts/forms.ts';
+import type { InteractionTerm } from '#shared/contracts/terms.ts';
 import { request, requestTagged } from '#src/lib/api.ts';
 import { massFromSpeed } from './model/beam-context.ts';
 import { without } from './model/without.ts';
@@ -37,9 +38,41 @@ function estimate(body: EstimateRequest, signal: AbortSignal): Promise<Estimate>
   return request('/api/estimates', { method: 'POST', body, answer: estimateSchema, signal });
 }
 
+/** A term without the text its table came from. */
+const bare = (term: InteractionTerm): InteractionTerm => ({
+  ...without(term, 'original'),
+  form: term.form,
+});
+
 /** The part of a document that decides the result: what was typed does not. */
 export function estimateBody(document: CaseDocument): EstimateRequest {
-  return without(document, 'entered', 'format', 'runPlan');
+  const interaction = { terms: document.interaction.terms.map(bare) };
+  return { ...without(document, 'entered', 'format', 'runPlan'), interaction };
+}
+
+export type PotentialUnits = EstimateRequest['units'];
+
+/** V(r) of one term on its own. Nothing but the potential is wanted, so the beam is slow and the answer quick. */
+export function potentialQuery(term: InteractionTerm, units: PotentialUnits) {
+  const asked = bare(term);
+  return queryOptions({
+    queryKey: ['potential', asked, units],
+    queryFn: async ({ signal }) => {
+      const body: EstimateRequest = {
+        projectile: { species: 'electron' },
+        target: { kind: 'fixed', charge: 0 },
+        energy: { value: 1, unit: 'meV' },
+        interaction: { terms: [asked] },
+        methods: ['born1'],
+        angles: { unit: 'deg', values: [90] },
+        ...(units && { units }),
+      };
+      return (await estimate(body, signal)).potential;
+    },
+    retry: false,
+    staleTime: Infinity,
+    gcTime: 60_000,
+  });
 }
 
 /** The running calculation of a case; the signal takes back the one that is no longer wanted. */

@@ -2,13 +2,16 @@ import { Formula } from '#src/components/formula.tsx';
 import type { InteractionTerm } from '#shared/contracts/estimates.ts';
 import { parameterApplies } from '#shared/contracts/forms.ts';
 import type { FormInfo, FormParameterInfo } from '#shared/contracts/forms.ts';
-import { isPoints, isQuantity } from '#shared/contracts/terms.ts';
+import { isQuantity } from '#shared/contracts/terms.ts';
 import { unitSymbol } from '#shared/units/format.ts';
 import { UNITS } from '#shared/units/vocabulary.ts';
 import type { Dimension } from '#shared/units/vocabulary.ts';
 import { useEditing } from '../editing/editor-context.ts';
 import { setAlternative, setChoice, setParameter } from '../model/terms.ts';
 import { choiceName } from '../model/words.ts';
+import { FormulaField, TermPotential } from '../expression/formula-field.tsx';
+import { NamedQuantitiesField } from '../expression/named-quantities.tsx';
+import { TableField } from '../table/table-field.tsx';
 import { ChoiceField } from './choice-field.tsx';
 import { NameField } from './name-field.tsx';
 import { readElement, readNuclide } from './nuclide-field.tsx';
@@ -112,8 +115,7 @@ function NamedField({ term, index, parameter }: ParameterFieldProps) {
 
 /** One parameter, as the register describes it. */
 function ParameterField(props: ParameterFieldProps) {
-  const { term, parameter } = props;
-  const value = term[parameter.key];
+  const { parameter } = props;
   switch (parameter.dimension) {
     case 'choice':
       return <ListedField {...props} />;
@@ -121,10 +123,15 @@ function ParameterField(props: ParameterFieldProps) {
     case 'element':
       return <NamedField {...props} />;
     case 'points':
+      return <TableField {...props} />;
+    case 'formula':
+      return <FormulaField {...props} />;
+    case 'quantities':
       return (
-        <p className="text-sm text-muted">
-          {parameter.label}: {isPoints(value) ? `${value.length} rows` : 'none'}
-        </p>
+        <>
+          <NamedQuantitiesField {...props} />
+          <TermPotential term={props.term} name="The formula" />
+        </>
       );
     default:
       return <NumericField {...props} />;

@@ -11,7 +11,7 @@ import { ParameterFields } from './parameter-fields.tsx';
 
 /** Members the register does not describe are shown, never dropped. */
 function UnknownMembers({ term, form }: { term: InteractionTerm; form: FormInfo | undefined }) {
-  const known = new Set(['form', ...(form?.parameters.map(({ key }) => key) ?? [])]);
+  const known = new Set(['form', 'original', ...(form?.parameters.map(({ key }) => key) ?? [])]);
   const extra = Object.keys(term).filter((key) => !known.has(key));
   if (!form || extra.length === 0) return null;
   return (

@@ -1,0 +1,152 @@
+import { guessLayout, numberIn, splitLine } from './layout.ts';
+import type { Layout } from './layout.ts';
+
+/** A pasted or uploaded text is read up to here. */
+export const MOST_TEXT = 5_000_000;
+export const MOST_LINES = 100_000;
+
+export interface TableLine {
+  /** Counted from 1, as editors do. */
+  line: number;
+  fields: string[];
+}
+
+/** A text cut into lines and columns, nothing judged yet. */
+export interface RawTable {
+  layout: Layout;
+  /** Names of the columns, where a line of words stands above the numbers. */
+  header: string[] | null;
+  columns: number;
+  lines: TableLine[];
+  /** Lines that hold remarks: they begin with #, %, ! or //. */
+  remarks: number;
+  /** Why the text was not read at all. */
+  refused: string | null;
+}
+
+export interface LineFault {
+  line: number;
+  message: string;
+}
+
+export type Row = [r: number, V: number];
+
+const REMARK = /^\s*(?:#|%|!|\/\/)\s*/;
+
+function refused(reason: string): RawTable {
+  const layout: Layout = { separator: 'space', decimal: 'point' };
+  return { layout, header: null, columns: 0, lines: [], remarks: 0, refused: reason };
+}
+
+/** Number of fields of a line that are numbers. */
+const numbersIn = (fields: readonly string[], { decimal }: Layout): number =>
+  fields.filter((field) => numberIn(field, decimal) !== null).length;
+
+/** Words above the first row of numbers; where there are several lines of them, the last with two or more. */
+function headerOf(above: readonly string[], layout: Layout): string[] | null {
+  const names = above
+    .map((line) => splitLine(line.replace(REMARK, ''), layout.separator))
+    .filter((fields) => fields.length > 1 && numbersIn(fields, layout) === 0);
+  return names.at(-1) ?? null;
+}
+
+/**
+ * Cuts a text into rows and columns.
+ *
+ * @param text as pasted or as the file holds it
+ * @param chosen separator and decimal sign, where the person has chosen; else they are guessed
+ */
+export function cutTable(text: string, chosen: Partial<Layout> = {}): RawTable {
+  if (text.length > MOST_TEXT) {
+    return refused(
+      `The text has ${text.length} characters; at most ${MOST_TEXT} are read. Thin the table out first.`,
+    );
+  }
+  if (text.includes('\u0000') || text.includes('\ufffd'))
+    return refused('This is no text: choose a file of plain numbers.');
+  const all = text.replace(/^\ufeff/, '').split(/\r\n|\r|\n/);
+  if (all.length > MOST_LINES) {
+    return refused(
+      `The text has ${all.length} lines; at most ${MOST_LINES} are read. Thin the table out first.`,
+    );
+  }
+  const layout = { ...guessLayout(all), ...chosen };
+  const filled = all
+    .map((content, i) => ({ content, line: i + 1 }))
+    .filter(({ content }) => content.trim() !== '');
+  const rows = filled.filter(({ content }) => !REMARK.test(content));
+  const lines = rows.map(({ content, line }) => ({
+    line,
+    fields: splitLine(content, layout.separator),
+  }));
+  const first = lines.findIndex(({ fields }) => numbersIn(fields, layout) > 0);
+  const data = first < 0 ? [] : lines.slice(first);
+  const start = data[0]?.line ?? Infinity;
+  const above = filled.filter(({ line }) => line < start).map(({ content }) => content);
+  return {
+    layout,
+    header: headerOf(above, layout),
+    columns: data.slice(0, 1000).reduce((most, { fields }) => Math.max(most, fields.length), 0),
+    lines: data,
+    remarks: filled.length - rows.length,
+    refused: data.length === 0 && filled.length > 0 ? 'No line of the text holds a number.' : null,
+  };
+}
+
+function fieldFault(line: TableLine, column: number, name: string): LineFault {
+  const field = line.fields[column];
+  const message =
+    field === undefined
+      ? `has ${line.fields.length} column${line.fields.length === 1 ? '' : 's'}; ${name} is missing.`
+      : `“${field.slice(0, 24)}” for ${name} is no number.`;
+  return { line: line.line, message };
+}
+
+export interface ReadRows {
+  rows: Row[];
+  faults: LineFault[];
+  /** True where nothing but the order of the rows is wrong. */
+  unsorted: boolean;
+}
+
+/** Rows whose r does not rise, in words. */
+function orderFaults(rows: readonly Row[], lines: readonly number[]): LineFault[] {
+  return rows.flatMap(([r], i) => {
+    const before = rows[i - 1]?.[0];
+    if (before === undefined || r > before) return [];
+    const how = r === before ? `r = ${r} stands there twice` : `r = ${r} comes after ${before}`;
+    return [{ line: lines[i] ?? 0, message: `${how}; r must rise from row to row.` }];
+  });
+}
+
+/** The rows of two columns, with a fault in words for every line that is none. */
+export function readRows(
+  { lines, layout }: RawTable,
+  columns: { r: number; V: number },
+  sorted: boolean,
+): ReadRows {
+  const found: { row: Row; line: number }[] = [];
+  const faults: LineFault[] = [];
+  for (const line of lines) {
+    const r = numberIn(line.fields[columns.r] ?? '', layout.decimal);
+    const V = numberIn(line.fields[columns.V] ?? '', layout.decimal);
+    if (r === null) faults.push(fieldFault(line, columns.r, 'r'));
+    else if (V === null) faults.push(fieldFault(line, columns.V, 'V'));
+    else if (r < 0) faults.push({ line: line.line, message: `r = ${r} is negative.` });
+    else found.push({ row: [r, V], line: line.line });
+  }
+  if (sorted) found.sort((a, b) => a.row[0] - b.row[0]);
+  const rows = found.map(({ row }) => row);
+  const order = orderFaults(
+    rows,
+    found.map(({ line }) => line),
+  );
+  return { rows, faults: [...faults, ...order], unsorted: faults.length === 0 && order.length > 0 };
+}
+
+/** Every n-th row and the last, so that no more than `most` are left. */
+export function thinned(rows: readonly Row[], most: number): Row[] {
+  const step = Math.ceil((rows.length - 1) / Math.max(1, most - 1));
+  if (step <= 1) return [...rows];
+  return rows.filter((_, i) => i % step === 0 || i === rows.length - 1);
+}

@@ -1,0 +1,109 @@
+import { Button } from '#src/components/button.tsx';
+import { Notice } from '#src/components/notice.tsx';
+import { MAX_ORIGINAL, MAX_POINTS } from '#shared/contracts/terms.ts';
+import { unitSymbol } from '#shared/units/format.ts';
+import { digits } from '../model/words.ts';
+import type { TableReading } from './use-table-reading.ts';
+
+const MOST_FAULTS = 6;
+const AHEAD = 4;
+const BEHIND = 2;
+
+/** What is wrong, line by line, and the mend that is at hand. */
+function Faults({ reading }: { reading: TableReading }) {
+  const { read, refusal, decide } = reading;
+  if (refusal !== null) return <Notice tone="fault">{refusal}</Notice>;
+  if (read.faults.length === 0) return null;
+  const more = read.faults.length - MOST_FAULTS;
+  return (
+    <Notice
+      tone="fault"
+      title={`${read.faults.length} ${read.faults.length === 1 ? 'line needs' : 'lines need'} mending.`}
+      actions={
+        read.unsorted && (
+          <Button size="small" onClick={() => decide({ sorted: true })}>
+            Sort the rows by r
+          </Button>
+        )
+      }
+    >
+      <ul>
+        {read.faults.slice(0, MOST_FAULTS).map(({ line, message }) => (
+          <li key={line}>
+            Line {line}: {message}
+          </li>
+        ))}
+        {more > 0 && <li>And {more} more.</li>}
+      </ul>
+    </Notice>
+  );
+}
+
+function Remarks({ reading }: { reading: TableReading }) {
+  const { raw, read, rows, kept, sorted, sound } = reading;
+  const said = [
+    `${read.rows.length} rows read.`,
+    raw.header && 'A line of names stands above them.',
+    raw.remarks > 0 && `${raw.remarks} lines of remarks are passed over.`,
+    sorted && 'The rows are sorted by r.',
+    rows.length < read.rows.length &&
+      `At most ${MAX_POINTS} rows are taken: ${rows.length} are kept, evenly through the table, first and last among them.`,
+    sound &&
+      !kept &&
+      `The text is longer than ${MAX_ORIGINAL} characters, so the case keeps the rows and not the original.`,
+  ].filter((text) => typeof text === 'string');
+  return <p className="text-sm text-muted">{said.join(' ')}</p>;
+}
+
+/** The first and last rows as they are understood. */
+function Rows({ reading }: { reading: TableReading }) {
+  const { rows, lengthUnit, energyUnit } = reading;
+  if (rows.length === 0) return null;
+  const whole = rows.length <= AHEAD + BEHIND + 1;
+  const shown = whole ? rows : [...rows.slice(0, AHEAD), null, ...rows.slice(-BEHIND)];
+  return (
+    <table className="w-full text-sm">
+      <caption className="text-left text-muted">Rows as they are read</caption>
+      <thead>
+        <tr className="border-b border-line text-left">
+          <th scope="col" className="py-0.5 pr-3 font-normal">
+            r ({unitSymbol(lengthUnit)})
+          </th>
+          <th scope="col" className="py-0.5 font-normal">
+            V ({unitSymbol(energyUnit)})
+          </th>
+        </tr>
+      </thead>
+      <tbody className="font-mono">
+        {shown.map((row, i) =>
+          row === null ? (
+            <tr key="between">
+              <td colSpan={2} className="text-muted">
+                … {rows.length - AHEAD - BEHIND} rows …
+              </td>
+            </tr>
+          ) : (
+            <tr key={i}>
+              <td className="pr-3">{digits(row[0])}</td>
+              <td>{digits(row[1])}</td>
+            </tr>
+          ),
+        )}
+      </tbody>
+    </table>
+  );
+}
+
+/** What came of the text: faults, remarks, rows. */
+export function TableFindings({ reading }: { reading: TableReading }) {
+  if (reading.source.text.trim() === '') {
+    return <p className="text-sm text-muted">Paste rows of r and V, or choose a file.</p>;
+  }
+  return (
+    <div className="flex flex-col gap-2" role="status">
+      <Faults reading={reading} />
+      <Remarks reading={reading} />
+      <Rows reading={reading} />
+    </div>
+  );
+}
