@@ -43,6 +43,15 @@ function Compared({ line: { limit, answers, failure } }: { line: LimitLine }) {
   const holds = shown.verdict === 'holds';
   return (
     <>
+      <td
+        className={classNames(
+          cell,
+          'font-semibold whitespace-nowrap',
+          holds ? 'text-field' : 'text-fault',
+        )}
+      >
+        {holds ? '● holds' : '○ departs'}
+      </td>
       <td className={number}>
         <Value reading={expected} />
       </td>
@@ -55,14 +64,11 @@ function Compared({ line: { limit, answers, failure } }: { line: LimitLine }) {
           of {brief(shown.allowed)} allowed
         </span>
       </td>
-      <td className={classNames(cell, 'font-semibold', holds ? 'text-field' : 'text-fault')}>
-        {holds ? '● holds' : '○ departs'}
-      </td>
     </>
   );
 }
 
-/** Limit, what must hold, both numbers, how far apart they are, and the verdict in a word. */
+/** The verdict stands beside the limit, so that it is in sight on a narrow screen; the numbers follow. */
 export function LimitsTable({ lines }: { lines: readonly LimitLine[] }) {
   return (
     <div
@@ -80,6 +86,9 @@ export function LimitsTable({ lines }: { lines: readonly LimitLine[] }) {
             <th scope="col" className={classNames(cell, 'text-left')}>
               Limit, and what must hold
             </th>
+            <th scope="col" className={classNames(cell, 'text-left')}>
+              Verdict
+            </th>
             <th scope="col" className={classNames(cell, 'text-right')}>
               Expected
             </th>
@@ -89,16 +98,15 @@ export function LimitsTable({ lines }: { lines: readonly LimitLine[] }) {
             <th scope="col" className={classNames(cell, 'text-right')}>
               Deviation
             </th>
-            <th scope="col" className={classNames(cell, 'text-left')}>
-              Verdict
-            </th>
           </tr>
         </thead>
         <tbody>
           {lines.map((line) => (
             <tr key={line.limit.key} className="border-t border-line">
-              <th scope="row" className={classNames(cell, 'min-w-56 text-left font-normal')}>
-                <span className="font-semibold">{line.limit.limit}</span>
+              <th scope="row" className={classNames(cell, 'min-w-52 text-left font-normal')}>
+                <span className="block font-semibold first-letter:uppercase">
+                  {line.limit.limit}
+                </span>
                 <span className="block text-muted">{line.limit.holds}</span>
               </th>
               <Compared line={line} />

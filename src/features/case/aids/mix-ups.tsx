@@ -4,6 +4,7 @@ import { Field, TextInput } from '#src/components/field.tsx';
 import { Notice } from '#src/components/notice.tsx';
 import { Segmented } from '#src/components/segmented.tsx';
 import type { Estimate } from '#shared/contracts/estimates.ts';
+import { slipsOfCase } from '#shared/mix-up-factors.ts';
 import { computedSlip, judgeMixUp, usualSlips } from '#shared/mix-ups.ts';
 import type { ComparedKind, Judgement } from '#shared/mix-ups.ts';
 import { formatComposed, formatNumber, fullDigits } from '#shared/units/format.ts';
@@ -13,6 +14,7 @@ import { useEditing } from '../editing/editor-context.ts';
 import { useSettled } from '../editing/use-estimate.ts';
 import { angleWithUnit } from './model/angle-words.ts';
 import { alternativesOf, atAngle, readValue } from './model/alternatives.ts';
+import { factsOf } from './model/case-facts.ts';
 import { angleValues, anglesOf } from '../model/table.ts';
 import { FRAME_NAMES } from '../model/words.ts';
 import { readEnd } from './model/angle-range.ts';
@@ -114,6 +116,7 @@ export function MixUps({ estimate }: { estimate: Estimate }) {
             theirs.unit,
             kind === 'dcs' ? theta * (UNITS.angle[unit] ?? 1) : null,
           ),
+          ...slipsOfCase(factsOf(draft.document, estimate)),
           ...slips.flatMap(({ key, words, value }) => {
             const slip = value === null ? null : computedSlip(key, words, value, ours);
             return slip ? [slip] : [];

@@ -71,7 +71,7 @@ function slow({ body, k }: Start): Limit[] {
       ? [
           {
             key: 'forward',
-            limit: 'q = 0 at this energy and at the low one, without relativity',
+            limit: 'straight forward, at this energy and at the low one, without relativity',
             holds: 'dσ/dΩ forward is the volume integral of V, whatever the energy',
             expected: { body: gentle, read: { place: FORWARD }, factor: 1 },
             obtained: { body: moment, read: { place: FORWARD }, factor: 1 },

@@ -34,7 +34,7 @@ function unscreened({ body, k }: Start, term: InteractionTerm): Limit[] {
   return [
     {
       key: 'unscreened',
-      limit: 'a without bound, V₀a kept, without relativity',
+      limit: 'range a without bound, V₀a kept, without relativity',
       holds: 'dσ/dΩ at 60° becomes that of a Coulomb potential of the same V₀a',
       expected: { body: withTerm(body, coulomb, SLOW), read: AT_60, factor: 1 },
       obtained: { body: withTerm(body, wide, SLOW), read: AT_60, factor: 1 },
