@@ -1,5 +1,6 @@
 import type { FirstBorn } from './methods/born1.ts';
 import { firstBorn } from './methods/born1.ts';
+import { transform, transformWithoutTail } from './methods/transform.ts';
 import { exchangeDcs } from './methods/exchange.ts';
 import { labToCm } from './kinematics/frames.ts';
 import type { Assessment } from './observables/assess.ts';
@@ -143,7 +144,8 @@ function goldenRuleSheet(
   const hasTail = born.tail.re !== 0 || born.tail.im !== 0;
   if (hasTail && theta === 0) return FORWARD;
   const box = asked.boxSide ?? (range > 0 ? RANGES_IN_A_BOX * range : asked.boxWithoutRange);
-  const sheet = goldenRule(terms, collision, theta, box);
+  const route = hasTail ? transform : transformWithoutTail;
+  const sheet = goldenRule(terms, collision, theta, box, route);
   if (sheet === null) return FORWARD;
   const window = goldenRuleWindow({
     theta,

@@ -1,7 +1,8 @@
 import type { Complex, Term } from '#server/physics/potentials/types.ts';
+import type { NumericalResult } from '#server/physics/numerics/result.ts';
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import { Q_ALLOWANCE } from '#server/physics/potentials/transform-error.ts';
-import { transform } from './transform.ts';
+import { transform, transformWithoutTail } from './transform.ts';
 
 /** A scattering amplitude, angstrom; `error` bounds its distance from the true one in the complex plane. */
 export interface Amplitude extends Complex {
@@ -26,7 +27,6 @@ export interface FirstBorn {
 /** 2 mu/hbar² is a quotient of rounded numbers, and a strength is converted from the unit it was typed in. */
 const FACTOR_ROUNDING = 6 * UNIT_ROUNDOFF;
 const PROBE = 2 ** -20;
-const NEARLY_FORWARD = 1e-4;
 const FLOOR = 1e-14;
 
 /** A bare point charge at all distances: nothing is left of it when its tail is taken away. */
@@ -60,9 +60,12 @@ export function firstBorn(terms: readonly Term[], twoMuOverHbar2: number): First
     twoMuOverHbar2 *
     rest.reduce((sum, { strength, norm }) => sum + Math.hypot(strength.re, strength.im) * norm, 0);
 
-  const regular = (q: number) => sumTerms(rest, twoMuOverHbar2, q, false);
-  const shortRange = (q: number) => sumTerms(rest, twoMuOverHbar2, q, true);
+  const regular = (q: number) => sumTerms(rest, twoMuOverHbar2, (term) => transform(term, q));
+  const shortRange = (q: number) =>
+    sumTerms(rest, twoMuOverHbar2, (term) => transformWithoutTail(term, q));
   const whole = (q: number): Amplitude => {
+    // Tails that cancel, as those of a nucleus and its electrons, would leave nothing but rounding at small q.
+    if (!hasTail) return shortRange(q);
     const sum = regular(q);
     if (purePart.re === 0 && purePart.im === 0) return sum;
     const square = q * q;
@@ -108,21 +111,21 @@ function addTails(pure: Complex, rest: readonly Term[], factor: number): Complex
   return Math.hypot(re, im) <= lost ? { re: 0, im: 0 } : { re, im };
 }
 
-function sumTerms(terms: readonly Term[], factor: number, q: number, cutTail: boolean): Amplitude {
+function sumTerms(
+  terms: readonly Term[],
+  factor: number,
+  route: (term: Term) => NumericalResult,
+): Amplitude {
   let re = 0;
   let im = 0;
   let error = 0;
   for (const term of terms) {
-    const { strength, coulombTail } = term;
+    const { strength } = term;
     const size = factor * Math.hypot(strength.re, strength.im);
-    // The rest of a tail has a limit at q = 0 that its parts have not: it is read close by.
-    const at = cutTail && coulombTail !== 0 && q === 0 ? NEARLY_FORWARD / (term.range ?? 1) : q;
-    const tail = cutTail ? coulombTail / (at * at || 1) : 0;
-    const s = transform(term, at);
-    const shape = s.value - tail;
-    re -= factor * strength.re * shape;
-    im -= factor * strength.im * shape;
-    error += size * (s.error + FACTOR_ROUNDING * (Math.abs(s.value) + Math.abs(tail)));
+    const shape = route(term);
+    re -= factor * strength.re * shape.value;
+    im -= factor * strength.im * shape.value;
+    error += size * (shape.error + FACTOR_ROUNDING * Math.abs(shape.value));
   }
   return { re, im, error };
 }

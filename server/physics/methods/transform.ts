@@ -2,9 +2,26 @@ import { DomainError } from '#shared/errors.ts';
 import type { NumericalResult } from '#server/physics/numerics/result.ts';
 import type { Term } from '#server/physics/potentials/types.ts';
 
+const NOTHING: NumericalResult = { value: 0, error: 0, evaluations: 0, status: 'converged' };
+
 /** What closed form and quadrature must agree to: 1e-9 of the value, or 1e-14 of ∫ r² |s| dr where that is larger. */
 function goodEnough({ value, error }: NumericalResult, norm: number): boolean {
   return error <= Math.max(1e-9 * Math.abs(value), 1e-14 * norm);
+}
+
+/**
+ * Transform of one shape without the Coulomb tail it may have.
+ *
+ * Formula: S(q) - c/q².
+ *
+ * @param term shape s(r), r in angstrom
+ * @param q momentum transfer, 1/angstrom, >= 0
+ * @returns value and a bound of its error; nothing for a bare point charge
+ * @throws as `transform`
+ */
+export function transformWithoutTail(term: Term, q: number): NumericalResult {
+  if (term.coulombTail === 0) return transform(term, q);
+  return term.withoutTail?.(q) ?? NOTHING;
 }
 
 /**

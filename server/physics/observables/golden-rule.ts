@@ -65,6 +65,7 @@ function matrixElement(
  * @param collision kinematics
  * @param theta rad, centre of mass
  * @param boxSide L, angstrom, > 0
+ * @param route transform of a term; `transformWithoutTail` where the tails of all terms cancel
  * @returns every step; dcs does not depend on L but by rounding. Null where the matrix element diverges
  * @throws DomainError('invalidInput') for a box so small or large that its volume leaves double precision
  *
@@ -77,10 +78,11 @@ export function goldenRule(
   collision: TwoBody,
   theta: number,
   boxSide: number,
+  route = transform,
 ): GoldenRule | null {
   const { k, twoMuOverHbar2, relativeVelocity } = collision;
   const q = 2 * k * Math.sin(theta / 2);
-  const element = matrixElement(terms, (term) => transform(term, q));
+  const element = matrixElement(terms, (term) => route(term, q));
   if (element === null) return null;
   const volume = boxSide ** 3;
   const re = element.re / volume;

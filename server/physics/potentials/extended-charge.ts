@@ -1,5 +1,6 @@
 import type { NumericalResult } from '#server/physics/numerics/result.ts';
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
+import { chargeRemainder } from './charge-remainder.ts';
 import type { ChargeShape } from './charge-shapes.ts';
 import { dipoleCharge, gaussianCharge, uniformSphere } from './charge-shapes.ts';
 import { chargeProductOf, chargeProductParameter, coulombStrength } from './charges.ts';
@@ -126,6 +127,7 @@ export const extendedCharge: Form<AnyParameter> = {
       quadrature: charged ? quadratureOf(shape) : () => nothing,
       chargeProduct: chargeProductOf(strength),
       coulombTail: charged ? 1 : 0,
+      ...(charged && { withoutTail: chargeRemainder(shape) }),
       norm: shape.meanSquare / 6,
       firstMoment: null,
       lineIntegral: () => null,

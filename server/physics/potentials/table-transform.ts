@@ -39,16 +39,21 @@ function divergent(coulomb: number): NumericalResult {
 const isForward = (q: number, { R }: Table) => q < 1e-100 / R;
 
 /**
- * Transform of the spline, exact but for rounding.
+ * Transform of the spline, exact but for rounding; without its Coulomb tail where that is asked.
  *
  * Formula: S(q) = c/q² + ∫_0^R (r V - c) sin(qr)/q dr + tail; polynomials of degree four times a sine on each piece, see
  *   polynomialSine, and the exponential beyond R in closed form. c is that of a Coulomb tail, 0 otherwise.
  *
  * @param table pieces and tail
  * @param norm ∫ r² |V - c/r| dr
+ * @param cutTail leaves c/q² out
  * @returns S in eV·angstrom³ as a function of q in 1/angstrom; Infinity at q = 0 with a Coulomb tail
  */
-export function closedTransform(table: Table, norm: number): (q: number) => NumericalResult {
+export function closedTransform(
+  table: Table,
+  norm: number,
+  cutTail = false,
+): (q: number) => NumericalResult {
   const { pieces, exponential, coulomb, R } = table;
   const quartics = pieces.map((piece) => weighted(piece, coulomb));
   const v = shapeOf(table);
@@ -60,12 +65,13 @@ export function closedTransform(table: Table, norm: number): (q: number) => Nume
   const last = exponential ? R + 3 * exponential.length : R;
   return (q) => {
     const still = isForward(q, table);
-    if (still && coulomb !== 0) return divergent(coulomb);
+    const hasTail = coulomb !== 0 && !cutTail;
+    if (still && hasTail) return divergent(coulomb);
     const inner = still
       ? { value: forward, rounding: 8 * UNIT_ROUNDOFF * norm }
       : polynomialSine(quartics, q);
     const outer = exponential ? exponentialTailTransform(exponential, still ? 0 : q) : NOTHING;
-    const point = coulomb === 0 ? 0 : coulomb / (q * q);
+    const point = hasTail ? coulomb / (q * q) : 0;
     const value = point + inner.value + outer.value;
     const slope = norm * Math.min(1.3, (q * last) ** 2) + 2 * Math.abs(point);
     const rounding = inner.rounding + outer.rounding + table.splineRounding;

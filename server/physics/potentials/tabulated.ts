@@ -48,6 +48,7 @@ function termOf(r: readonly number[], V: readonly number[], tail: TableTail): Te
     closed,
     quadrature: tableQuadrature(table, norm),
     coulombTail: coulomb,
+    ...(coulomb !== 0 && { withoutTail: closedTransform(table, norm, true) }),
     norm,
     firstMoment: coulomb === 0 ? integral(table, (x) => x * v(x)) : null,
     lineIntegral: lineOf(table),

@@ -46,6 +46,11 @@ export interface Term {
   quadrature: ((q: number) => NumericalResult) | null;
   /** Part of the transform that is a bare Coulomb tail, c in c/q² (0 if none): needed for divergence and the floor. */
   coulombTail: number;
+  /**
+   * S(q) - coulombTail/q², what the tail leaves, without the cancellation of the two and finite at q = 0: where the tails of several
+   * terms cancel, a neutral whole, it alone is left. Terms with a tail have it, unless the tail leaves nothing (norm 0).
+   */
+  withoutTail?: (q: number) => NumericalResult;
   /** ∫ r² |s(r)| dr of what is left after the Coulomb tail is subtracted (the floor of the numerical error rests on it). */
   norm: number;
   /** ∫ r s(r) dr over 0..∞ (eV-free; slow criterion); null where it diverges or has no meaning. */

@@ -203,14 +203,16 @@ export function expressionTerm(
     { integrand: g, edges, tail: fitted.remainder.moment },
     fitted.norm,
   );
+  const rest = fromPanels(fitted);
   const hasLine = coulomb === 0 && rise < 2 - 1e-3;
   return {
     form: 'expression',
     strength: { re: 1, im: 0 },
     v: compiled.at,
-    closed: withTail(coulomb, fromPanels(fitted)),
+    closed: withTail(coulomb, rest),
     quadrature: withTail(coulomb, quadrature),
     coulombTail: coulomb,
+    ...(coulomb !== 0 && { withoutTail: rest }),
     norm: fitted.norm,
     firstMoment: hasLine
       ? fitted.panels.reduce((sum, { half, c }) => sum + 2 * half * (c[0] ?? 0), 0)
