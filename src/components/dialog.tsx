@@ -23,6 +23,8 @@ export function Dialog(props: DialogProps) {
   const { open, onOpenChange, title, description, children, actions, width = 'narrow' } = props;
   // The dialog itself receives focus, so that its title is read and no button is pressed by accident.
   const content = useRef<HTMLDivElement>(null);
+  /** What had the focus before: Radix gives it back to its own trigger alone, and these dialogs have none. */
+  const opener = useRef<Element>(null);
   return (
     <Radix.Root open={open} onOpenChange={onOpenChange}>
       <Radix.Portal>
@@ -34,7 +36,13 @@ export function Dialog(props: DialogProps) {
             onOpenAutoFocus={(event) => {
               const first = content.current?.querySelector<HTMLElement>('[data-autofocus]');
               event.preventDefault();
+              opener.current = document.activeElement;
               (first ?? content.current)?.focus();
+            }}
+            onCloseAutoFocus={(event) => {
+              event.preventDefault();
+              const lost = document.activeElement === document.body;
+              if (lost && opener.current instanceof HTMLElement) opener.current.focus();
             }}
             className={`pointer-events-auto flex max-h-full w-full flex-col gap-4 overflow-y-auto rounded border border-line bg-sheet p-5 shadow ${width === 'wide' ? 'max-w-3xl' : 'max-w-lg'}`}
           >

@@ -63,3 +63,16 @@ test('the dialog that files a new case: no violation in any view', async () => {
   await page.getByRole('dialog').waitFor();
   await expectSoundInEveryView(page);
 });
+
+test('the dialog that reads a table, with a faulty line: no violation in any view', async () => {
+  const { page, goTo } = await stage.visitor(owner);
+  await goTo('/cases/new');
+  await settled(page);
+  await page.getByLabel('Form', { exact: true }).selectOption('tabulated');
+  await settled(page);
+  await page.getByRole('button', { name: /the table …/ }).click();
+  const dialog = page.getByRole('dialog');
+  await dialog.getByRole('textbox').fill('r (fm);V (MeV)\n0;-5\n0,5;-4\n1;x\n2;-1\n3;-0,5');
+  await dialog.getByText(/Line 4: /).waitFor();
+  await expectSoundInEveryView(page);
+});

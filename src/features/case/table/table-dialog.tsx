@@ -125,6 +125,16 @@ export function TableDialog({ term, initial, tails, onClose, onTake }: TableDial
             className="font-mono text-sm"
             spellCheck={false}
             value={reading.source.text}
+            onPaste={(event) => {
+              const { length } = event.clipboardData.getData('text');
+              const tooLong = length > MOST_TEXT;
+              if (tooLong) event.preventDefault();
+              setTrouble(
+                tooLong
+                  ? `What was pasted has ${length} characters; at most ${MOST_TEXT} are read. Thin the table out first.`
+                  : null,
+              );
+            }}
             onChange={(event) =>
               reading.setSource({ name: reading.source.name, text: event.target.value })
             }

@@ -1,8 +1,8 @@
 import { guessLayout, numberIn, splitLine } from './layout.ts';
 import type { Layout } from './layout.ts';
 
-/** A pasted or uploaded text is read up to here. */
-export const MOST_TEXT = 5_000_000;
+/** A pasted or uploaded text is read up to here: a text box that holds more freezes the page. */
+export const MOST_TEXT = 1_000_000;
 export const MOST_LINES = 100_000;
 
 export interface TableLine {
