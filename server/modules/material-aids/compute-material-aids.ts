@@ -104,7 +104,7 @@ function warningsOf(
     found.push({
       code: path.collisions > 1 ? 'singleScatteringNotValid' : 'multipleScattering',
       level: 'caution',
-      message: `A particle collides ${path.collisions.toPrecision(3)} times on average in this thickness: ${path.collisions > 1 ? 'single scattering is not valid' : 'more than a tenth scatters twice or is lost on the way; correct for it, or take a thinner sample'}.`,
+      message: `A particle collides ${Number(path.collisions.toPrecision(3))} times on average in this thickness: ${path.collisions > 1 ? 'single scattering is not valid' : 'more than a tenth scatters twice or is lost on the way; correct for it, or take a thinner sample'}.`,
     });
   }
   if (material.atoms.length > 1) {

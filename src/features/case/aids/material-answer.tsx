@@ -39,7 +39,7 @@ function Path({ name, path }: { name: string; path: MeanFreePath }) {
     <Line name={name}>
       <Figure value={value} unit={unit} label={name} />
       <Remark>
-        1/(nσ), σ = {formatComposed(crossSection.value, crossSection.unit, 4)}
+        first Born · 1/(nσ), σ = {formatComposed(crossSection.value, crossSection.unit, 4)}
         {relativeError !== undefined && ` · ${numericsText({ relativeError })}`}
         {collisions !== undefined &&
           ` · ${formatNumber(collisions, 3)} collisions in the thickness given`}

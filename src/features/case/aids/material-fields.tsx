@@ -40,7 +40,7 @@ function choicesOf(materials: readonly MaterialItem[]) {
 function densityHint(item: MaterialItem | undefined): string | undefined {
   if (!item?.range) return undefined;
   const [low, high] = item.range;
-  return `Sold between ${formatQuantity(low, 3)} and ${formatQuantity(high, 3)}.`;
+  return `Sold between ${formatQuantity(low, 4)} and ${formatQuantity(high, 4)}.`;
 }
 
 /** Which material: one of the table, or a formula with what makes a number of atoms of it. */

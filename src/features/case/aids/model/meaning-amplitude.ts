@@ -33,6 +33,11 @@ export type PointLike = Pick<
   'theta' | 'q' | 'dcs' | 'relativeError' | 'absoluteError' | 'amplitude'
 >;
 
+/** What the curve holds beside the squared amplitude, by name: spin, correction, incoherent scattering, exchange. */
+export function factorsBeyond({ goldenRule }: Estimate): string[] {
+  return 'unavailable' in goldenRule ? [] : goldenRule.factorsAfter.map(({ name }) => name);
+}
+
 /** 2µ/ħ² in units of the answer. */
 function strengthFactor({ kinematics, units }: Estimate): { value: number; unit: string } {
   const { reducedMass } = kinematics;

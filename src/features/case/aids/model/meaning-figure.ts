@@ -1,7 +1,7 @@
 import type { Estimate, Integral } from '#shared/contracts/estimates.ts';
 import { unitSymbol } from '#shared/units/format.ts';
 import { texNumber, texQuantity, texUnit } from '../../model/tex.ts';
-import { amplitudeSteps } from './meaning-amplitude.ts';
+import { amplitudeSteps, factorsBeyond } from './meaning-amplitude.ts';
 import type { Given, Meaning, MeaningStep } from './meaning-amplitude.ts';
 import { ERROR_OF_INTEGRAL, errorText, errorsOf, facts } from './meaning-facts.ts';
 
@@ -62,7 +62,8 @@ function stepOf(kind: FigureKind, born: Answered, estimate: Estimate): MeaningSt
   }
   const { law, weight } = LAWS[kind];
   const half = estimate.identical ? '\\tfrac{1}{2}' : '';
-  const square = estimate.identical ? '\\dfrac{d\\sigma}{d\\Omega}' : '|f_1(2kt)|^2';
+  const isSquare = !estimate.identical && factorsBeyond(estimate).length === 0;
+  const square = isSquare ? '|f_1(2kt)|^2' : '\\dfrac{d\\sigma}{d\\Omega}';
   return {
     name: NAMES[kind],
     law: estimate.identical ? law.replace('= ', '= \\tfrac{1}{2}') : law,

@@ -3,7 +3,7 @@ import { composedFactor } from '#shared/units/composed.ts';
 import { unitSymbol } from '#shared/units/format.ts';
 import { texComplex, texNumber, texQuantity, texUnit } from '../../model/tex.ts';
 import { FRAME_NAMES } from '../../model/words.ts';
-import { amplitudeSteps } from './meaning-amplitude.ts';
+import { amplitudeSteps, factorsBeyond } from './meaning-amplitude.ts';
 import type { Given, Meaning, MeaningStep, PointLike } from './meaning-amplitude.ts';
 import { ERROR_OF_POINT, errorText, errorsOf, facts } from './meaning-facts.ts';
 
@@ -78,11 +78,12 @@ function restStep({ point, way, estimate }: PointGiven): MeaningStep[] {
   const size = (amplitude.re ** 2 + amplitude.im ** 2) * composedFactor(`${length}2`, area);
   const jacobian = estimate.frame === 'lab' ? (way?.jacobian ?? null) : 1;
   if (jacobian === null) return [];
+  const names = factorsBeyond(estimate);
   const rest = dcs / (size * jacobian);
   if (!(Math.abs(rest - 1) > 1e-9)) return [];
   return [
     {
-      name: 'What the curve has beside |f|²: spin, incoherent scattering',
+      name: `What the curve has beside |f|²${names.length > 0 ? `: ${names.join(', ')}` : ''}`,
       law: '\\dfrac{d\\sigma}{d\\Omega} = |f_1|^2 \\times \\text{factors}',
       substituted: `\\text{factors} = ${texNumber(rest, 6)},\\quad \\dfrac{d\\sigma}{d\\Omega} = ${texNumber(dcs)}\\,${texUnit(`${area}/sr`)}`,
     },
