@@ -53,7 +53,9 @@ test.each(FORWARDED)(
 
 test('the sign-in page hears of the demo only where its accounts work', async () => {
   const here = await request(app.url).get('/api/health');
-  const throughProxy = await request(app.url).get('/api/health').set('x-forwarded-for', '192.0.2.1');
+  const throughProxy = await request(app.url)
+    .get('/api/health')
+    .set('x-forwarded-for', '192.0.2.1');
   expect([here.body, throughProxy.body]).toMatchObject([{ demo: true }, { demo: false }]);
 });
 

@@ -56,9 +56,7 @@ function toBytes(text: string): Uint8Array<ArrayBuffer> {
 }
 
 const through = (bytes: Uint8Array<ArrayBuffer>, change: CompressionStream | DecompressionStream) =>
-  new Blob([bytes])
-    .stream()
-    .pipeThrough(change);
+  new Blob([bytes]).stream().pipeThrough(change);
 
 export function isCaseLink(fragment: string): boolean {
   return fragment.startsWith(MARK);
