@@ -1,12 +1,18 @@
 import { FINE_STRUCTURE, HBAR_C_EV_ANGSTROM } from './constants/codata2022.ts';
 import type { EstimateResult } from './estimate.ts';
 import { isRelativisticLepton, leptonFactor, spinObstacle } from './lepton-factor.ts';
+import type { AngularFactor } from './methods/lepton-spin.ts';
+import { leptonSpinWithMass } from './methods/lepton-spin.ts';
 import { MCKINLEY_FESHBACH_LIMIT } from './methods/spin-factor.ts';
 import type { Problem } from './problem.ts';
 import type { Warning } from './warning.ts';
 
 /** Of the square of the momentum over that of the target's mass: below it a magnetic moment does not show. */
 const MAGNETIC = 1e-3;
+
+/** Share of dσ/dΩ at 90 degrees from which the mass of the lepton in the recoil is told; ten times that far back. */
+const NOTICED = 1e-3;
+const TEN_TIMES_NOTICED = 10 * NOTICED;
 
 const isElectrostatic = ({ terms }: Problem): boolean =>
   terms.some(
@@ -59,12 +65,32 @@ function magneticMoment({ target, collision }: Problem): Warning | null {
   };
 }
 
+/** Mott's formula takes the lepton for light; what that costs where it is not. */
+function massInRecoil(
+  { projectile, target, collision }: Problem,
+  plain: AngularFactor,
+): Warning | null {
+  if (target.mass === Infinity) return null;
+  const kept = leptonSpinWithMass(projectile.mass, target.mass, collision);
+  const more = (theta: number) => kept(theta) / plain(theta).value - 1;
+  const [across, back] = [more(Math.PI / 2), more((5 * Math.PI) / 6)];
+  if (!(Math.abs(across) > NOTICED || Math.abs(back) > TEN_TIMES_NOTICED)) return null;
+  const percent = (share: number) =>
+    `${(100 * Math.abs(share)).toPrecision(2)} % ${share > 0 ? 'larger' : 'smaller'}`;
+  return {
+    code: 'leptonMassInRecoil',
+    level: 'caution',
+    message: `The Mott formula with the recoil E′/E takes the lepton for much lighter than its energy. With its mass kept, first order for a target without spin is ${percent(across)} at 90 degrees and ${percent(back)} at 150 degrees (centre of mass).`,
+  };
+}
+
 /** What is said of the spin of a relativistic lepton. */
 export function leptonWarnings({ problem }: EstimateResult): (Warning | null)[] {
   if (!isRelativisticLepton(problem) || !isElectrostatic(problem)) return [];
   const factor = leptonFactor(problem);
   if (!factor) return [missing(problem)];
   return [
+    massInRecoil(problem, factor.plain),
     magneticMoment(problem),
     factor.corrected && correctionRange(factor.chargeProduct),
     applied(problem),
