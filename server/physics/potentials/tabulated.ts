@@ -22,7 +22,7 @@ const parameters: AnyParameter[] = [
   {
     key: 'tail',
     label: 'Beyond the last row',
-    symbol: '\\text{tail}',
+    symbol: 'V(r > r_n)',
     dimension: 'choice',
     choices: TABLE_TAILS,
     default: 'zero',

@@ -38,7 +38,7 @@ const parameters: AnyParameter[] = [
 export const expression: Form = {
   key: 'expression',
   label: 'Formula',
-  formula: String.raw`V(r) = \text{your formula in } r \text{ and named parameters}`,
+  formula: String.raw`V(r) = f(r;\, p_1, p_2, \dots)`,
   transformFormula: String.raw`\int_0^\infty r^2 V(r)\,j_0(qr)\,dr = \frac{c}{q^2} + \frac{1}{q}\int_0^\infty \left(r V(r) - c\right)\sin qr\,dr,\quad c = \lim_{r\to\infty} r V(r)`,
   source:
     'Your own formula; transform by Legendre panels after N. S. Bakhvalov and L. G. Vasil’eva, USSR Comput. Math. Math. Phys. 8 (1968) 241',

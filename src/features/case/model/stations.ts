@@ -1,7 +1,7 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { Estimate, InteractionTerm } from '#shared/contracts/estimates.ts';
 import type { FormInfo } from '#shared/contracts/forms.ts';
-import { isNamedQuantities, isQuantity } from '#shared/contracts/terms.ts';
+import { isNamedQuantities, isPoints, isQuantity } from '#shared/contracts/terms.ts';
 import { formatComposed } from '#shared/units/format.ts';
 import { anglesText, briefQuantity, formLabel, projectileName, termValueText } from './words.ts';
 
@@ -37,11 +37,12 @@ function shortTerm(term: InteractionTerm, forms: readonly FormInfo[]): string {
   const shown = (form?.parameters ?? []).flatMap(({ key, symbol }) => {
     const value = term[key];
     const zero = isQuantity(value) && value.value === 0;
-    if (value === undefined || zero) return [];
+    // The units of a table stand in its rows.
+    if (value === undefined || zero || key === 'lengthUnit' || key === 'energyUnit') return [];
     const text = isQuantity(value) ? briefQuantity(value) : termValueText(value);
     // A name speaks for itself, and so do parameters that carry their own.
     return [
-      typeof value === 'string' || isNamedQuantities(value)
+      typeof value === 'string' || isNamedQuantities(value) || isPoints(value)
         ? text
         : `${symbolText(symbol)} ${text}`.trim(),
     ];

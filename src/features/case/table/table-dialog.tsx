@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useMemo, useState } from 'react';
 import { Button, buttonClasses } from '#src/components/button.tsx';
 import { Dialog } from '#src/components/dialog.tsx';
 import { Field, FieldError, TextArea } from '#src/components/field.tsx';
@@ -60,14 +60,11 @@ function FileChoice({
 
 /** Spline and tail of the rows, as the server draws them. */
 function Preview({ reading, tail }: { reading: TableReading; tail: string }) {
-  const { members, lengthUnit, energyUnit, rows } = reading;
-  const term = members && {
-    form: 'tabulated',
-    lengthUnit,
-    energyUnit,
-    points: members.points,
-    tail,
-  };
+  const { sound, lengthUnit, energyUnit, rows } = reading;
+  const term = useMemo(
+    () => (sound ? { form: 'tabulated', lengthUnit, energyUnit, points: rows, tail } : null),
+    [sound, lengthUnit, energyUnit, rows, tail],
+  );
   const { potential, stale, errors, failure } = usePotential(term, {
     length: lengthUnit,
     energy: energyUnit,

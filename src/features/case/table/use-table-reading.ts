@@ -5,6 +5,7 @@ import type { Layout } from './model/layout.ts';
 import type { Columns } from './model/columns.ts';
 import { guessColumns, unitIn } from './model/columns.ts';
 import { cutTable, readRows, thinned } from './model/read-table.ts';
+import type { RawTable, ReadRows } from './model/read-table.ts';
 
 export interface Source {
   name: string;
@@ -23,11 +24,12 @@ interface Decisions {
 const UNDECIDED: Decisions = { layout: {}, columns: {}, sorted: false };
 const FEWEST_ROWS = 4;
 
-function refusalOf(count: number, columns: number, refused: string | null): string | null {
+function refusalOf({ rows, faults }: ReadRows, { columns, refused }: RawTable): string | null {
+  const count = rows.length;
   if (refused !== null) return refused;
   if (columns === 1)
     return 'There is one column only; a table needs r and V. Is the separator right?';
-  return count > 0 && count < FEWEST_ROWS
+  return faults.length === 0 && count > 0 && count < FEWEST_ROWS
     ? `${count} rows are too few for a spline; at least ${FEWEST_ROWS} are needed.`
     : null;
 }
@@ -57,7 +59,7 @@ export function useTableReading(initial: Source, before: InteractionTerm) {
     given('lengthUnit', 'angstrom');
   const energyUnit =
     decided.energyUnit ?? unitIn(raw.header?.[columns.V], 'energy') ?? given('energyUnit', 'eV');
-  const refusal = refusalOf(read.rows.length, raw.columns, raw.refused);
+  const refusal = refusalOf(read, raw);
   const sound = refusal === null && read.faults.length === 0 && rows.length >= FEWEST_ROWS;
   const kept = source.text.length <= MAX_ORIGINAL;
   return {
