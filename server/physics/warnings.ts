@@ -2,17 +2,24 @@ import { COULOMB_EV_ANGSTROM, BOHR } from './constants/codata2022.ts';
 import type { EstimateResult } from './estimate.ts';
 import { scalesOf } from './estimate.ts';
 import { leptonWarnings } from './lepton-warnings.ts';
+import {
+  boundLength,
+  chargesDiffer,
+  fastNeutron,
+  incoherentAdded,
+  ofTerms,
+} from './term-warnings.ts';
 import type { Warning } from './warning.ts';
 import { twoBody } from './kinematics/two-body.ts';
-import { LENGTH_FROM_TABLE } from './potentials/contact-by-name.ts';
 import type { Term } from './potentials/types.ts';
 import type { Problem } from './problem.ts';
 
 const FERMI = 1e-5;
-const BARN_PER_ANGSTROM2 = 1e8;
 const DEGREE = Math.PI / 180;
 const TEN_RANGES = 10;
 const FAST = 0.1;
+/** Equal masses have the same wave number with relativity as without. */
+const UNCHANGED = 1e-9;
 
 const percent = (fraction: number) => `${(100 * fraction).toPrecision(2)} %`;
 const degrees = (radians: number) => `${(radians / DEGREE).toPrecision(3)} degrees`;
@@ -77,13 +84,19 @@ function screening({ problem }: EstimateResult): Warning | null {
   const { target, projectile, collision } = problem;
   if (tailOf(problem) === 0 || projectile.charge === 0) return null;
   if (target.massNumber === null || !(target.charge > 1)) return null;
-  const sine = 1 / (2 * collision.k * screeningLength(target.charge));
+  const length = screeningLength(target.charge);
+  const sine = 1 / (2 * collision.k * length);
+  const points = problem.terms.every((term) => term.coulombTail === 0 || isPointCharge(term));
+  // A cloud of <r²> = 6a² screens small angles as exp(-r/a) does.
+  const mend = points
+    ? `add their screening with the screened Coulomb form (a about ${length.toPrecision(3)} angstrom)`
+    : `add them as an extendedCharge of opposite chargeProduct with the rms radius of the atom (about ${(Math.sqrt(6) * length).toPrecision(3)} angstrom)`;
   const where =
     sine < 1 ? `below about ${degrees(2 * Math.asin(sine))} (centre of mass)` : 'at every angle';
   return {
     code: 'screeningLeftOut',
     level: 'caution',
-    message: `The electrons of the atom are left out by a bare Coulomb potential. They matter ${where}; add their screening with the screened Coulomb form (a about ${screeningLength(target.charge).toPrecision(3)} angstrom).`,
+    message: `The electrons of the atom are left out by a bare Coulomb potential. They matter ${where}; ${mend}.`,
     path: '/interaction/terms',
   };
 }
@@ -141,29 +154,21 @@ function slowKinematics({ problem }: EstimateResult): Warning | null {
     regime: 'relativistic',
   });
   if (!(exact.betaLab > FAST)) return null;
-  const point = (c: { reducedMass: number; k: number }) => (c.reducedMass / c.k ** 2) ** 2;
-  const change = point(exact) / point(collision) - 1;
+  const charged = chargeForms(problem).some(isActive);
+  const power = charged ? 2 : 0;
+  const size = (c: { reducedMass: number; k: number }) => (c.reducedMass / c.k ** power) ** 2;
+  const change = size(exact) / size(collision) - 1;
+  const faster = exact.k / collision.k - 1;
+  const wave =
+    faster < UNCHANGED
+      ? 'the wave number is right'
+      : `the wave number is ${percent(faster)} too small`;
+  const what = charged ? 'a point-charge cross section' : 'the forward cross section';
   return {
     code: 'nonrelativisticKinematics',
     level: 'caution',
-    message: `The projectile moves at ${exact.betaLab.toPrecision(3)} c. Without relativity the wave number is ${percent(Math.abs(exact.k / collision.k - 1))} too small and a point-charge cross section ${percent(Math.abs(change))} too ${change > 0 ? 'small' : 'large'}; choose relativistic kinematics.`,
+    message: `The projectile moves at ${exact.betaLab.toPrecision(3)} c. Without relativity ${wave} and ${what} ${percent(Math.abs(change))} too ${change > 0 ? 'small' : 'large'}; choose relativistic kinematics.`,
     path: '/kinematics',
-  };
-}
-
-function boundLength({ problem }: EstimateResult): Warning | null {
-  const { terms, target, projectile } = problem;
-  const typed = terms.some(
-    ({ form, cautions = [] }) =>
-      form === 'contact' && !cautions.some(({ code }) => code === LENGTH_FROM_TABLE),
-  );
-  if (!typed || target.mass === Infinity) return null;
-  const factor = target.mass / (projectile.mass + target.mass);
-  return {
-    code: 'freeLength',
-    level: 'info',
-    message: `The target recoils, so b is taken as the free scattering length. Tables list bound ones: multiply those by ${factor.toPrecision(6)}.`,
-    path: '/interaction/terms',
   };
 }
 
@@ -179,30 +184,6 @@ function identicalIntegrals({ problem }: EstimateResult): Warning | null {
     level: 'info',
     message:
       'Projectile and target are identical: dσ/dΩ counts both, and every integral is half of that over the sphere, so that it counts collisions.',
-  };
-}
-
-/** What the terms say of themselves, each once. */
-function ofTerms({ problem }: EstimateResult): Warning[] {
-  const said = new Set<string>();
-  return problem.terms.flatMap(({ cautions = [] }, i) =>
-    cautions.flatMap(({ code, message, level = 'caution' }) => {
-      if (said.has(message)) return [];
-      said.add(message);
-      return [{ code, message, level, path: `/interaction/terms/${i}` }];
-    }),
-  );
-}
-
-function incoherentAdded({ problem }: EstimateResult): Warning | null {
-  const incoherent = problem.terms.reduce((sum, term) => sum + (term.incoherent ?? 0), 0);
-  if (!(incoherent > 0)) return null;
-  const barn = 4 * Math.PI * incoherent * BARN_PER_ANGSTROM2;
-  return {
-    code: 'incoherentAdded',
-    level: 'info',
-    message: `dσ/dΩ and every integral contain the incoherent scattering of the target, ${barn.toPrecision(4)} barn in all directions alike; the amplitude and the golden-rule sheet do not.`,
-    path: '/interaction/terms',
   };
 }
 
@@ -224,6 +205,8 @@ export function warningsOf(result: EstimateResult): Warning[] {
     finiteNucleus(result),
     exchangePhase(result),
     noCharge(result),
+    chargesDiffer(result),
+    fastNeutron(result),
     screening(result),
     smallBox(result),
     coulombTotal(result),

@@ -19,7 +19,7 @@ const OWN: Readonly<Record<string, readonly string[]>> = {
     'With a → ∞ at constant V₀a it becomes the Coulomb potential; the first Born total stays finite only for finite a.',
   ],
   coulomb: [
-    'First order gives the exact (Rutherford) cross section of distinct particles; the phase of the amplitude is not the exact one, so interference with other terms and between identical particles is not exact.',
+    'Without relativity first order gives the exact (Rutherford) cross section of distinct particles; the phase of the amplitude is not the exact one, so interference with other terms and between identical particles is not exact.',
   ],
   screenedCoulomb: [
     'With a → ∞ it becomes the bare Coulomb potential. One exponential is a rough atom: near the nucleus and far out Molière or tabulated factors are closer.',

@@ -45,7 +45,7 @@ function eta({ born, k }: AssessInput): Criterion | null {
     name: 'eta',
     value,
     meaning:
-      "Sommerfeld's parameter |Z1 Z2| alpha c/v of the Coulomb tail. Above one the waves are far from plane; the first-order cross section of two bare, distinct point charges nevertheless equals the exact one.",
+      "Sommerfeld's parameter |Z1 Z2| alpha c/v of the Coulomb tail. Above one the waves are far from plane; the first-order cross section of two bare, distinct point charges nevertheless equals the exact one without relativity.",
   };
 }
 

@@ -119,3 +119,83 @@ test('what cannot be drawn is said', () => {
     unavailable: true,
   });
 });
+
+test('equal masses: with relativity the wave number is the same, and that is what is said', () => {
+  const protons = {
+    projectile: { species: 'proton' },
+    target: { kind: 'species', species: 'proton' },
+    energy: Q(100, 'MeV'),
+    interaction: COULOMB,
+  };
+  const { message } = warning(protons, 'nonrelativisticKinematics') ?? {};
+  // mu grows by sqrt(1 + T/2m), so the point-charge cross section by 1 + T/2m.
+  expect(message).toMatch(
+    /the wave number is right and a point-charge cross section 5\.3 % too small/,
+  );
+});
+
+test('without charges it is the forward cross section that is told', () => {
+  const neutrons = {
+    projectile: { species: 'neutron' },
+    energy: Q(100, 'MeV'),
+    interaction: { terms: [{ form: 'gaussian', V0: Q(-1, 'MeV'), a: Q(2, 'fm') }] },
+  };
+  const { message } = warning(neutrons, 'nonrelativisticKinematics') ?? {};
+  // A fixed centre: E/m - 1 = 100/939.565, squared.
+  expectRelative(
+    number(message, /the forward cross section ([\d.]+) % too small/),
+    100 * ((1 + 100 / 939.565) ** 2 - 1),
+    0.02,
+  );
+});
+
+test('screening beside a charge that is no point: electrons of the same mean square radius', () => {
+  const fast = {
+    projectile: { species: 'electron' },
+    target: { kind: 'nuclide', nuclide: 'Au-197' },
+    energy: Q(250, 'MeV'),
+    kinematics: 'relativistic',
+  };
+  const term = { form: 'extendedCharge', kind: 'gaussian', radius: Q(5.4, 'fm') };
+  const { message } =
+    warning({ ...fast, interaction: { terms: [term] } }, 'screeningLeftOut') ?? {};
+  expectRelative(number(message, /about ([\d.]+) angstrom\)/), Math.sqrt(6) * 0.1091865, 3e-3);
+
+  // With them the whole is neutral, and nothing is left to say.
+  const radius = Q(Math.sqrt(6) * 0.1091865, 'angstrom');
+  const cloud = { form: 'extendedCharge', kind: 'dipole', radius, chargeProduct: 79 };
+  const whole = { ...fast, interaction: { terms: [term, cloud] } };
+  expect(warning(whole, 'screeningLeftOut')).toBeUndefined();
+  expect(warning(whole, 'coulombTotalDiverges')).toBeUndefined();
+});
+
+test('atoms of a term that are not those of beam and target', () => {
+  const pair = (Z1: number, Z2: number) => ({ terms: [{ form: 'universalIon', Z1, Z2 }] });
+  expect(warning({ ...alphas(1), interaction: pair(2, 79) }, 'chargesDiffer')).toBeUndefined();
+  expect(warning({ ...alphas(1), interaction: pair(2, 29) }, 'chargesDiffer')?.message).toMatch(
+    /Z1 Z2 = 58, Alpha particle and Au-197 have 158/,
+  );
+  const neutrons = { ...alphas(1), projectile: { species: 'neutron' }, interaction: pair(2, 79) };
+  expect(warning(neutrons, 'chargesDiffer')).toBeDefined();
+
+  const ion = { species: 'custom', mass: Q(4, 'u'), charge: 1, spin: 0 };
+  const partly = { ...alphas(1), projectile: ion, interaction: pair(2, 79) };
+  expect(warning(partly, 'chargesDiffer')).toBeUndefined();
+
+  const atom = { terms: [{ form: 'atomicElectron', element: 'C' }] };
+  const onCarbon = { target: { kind: 'nuclide', nuclide: 'C-12' }, interaction: atom };
+  expect(warning({ interaction: atom }, 'chargesDiffer')).toBeUndefined();
+  expect(warning(onCarbon, 'chargesDiffer')).toBeUndefined();
+  const onGold = { ...onCarbon, target: { kind: 'nuclide', nuclide: 'Au-197' } };
+  expect(warning(onGold, 'chargesDiffer')?.message).toMatch(/Z1 Z2 = -6, .* have -79/);
+});
+
+test('lengths of the neutron table are those of slow neutrons', () => {
+  const vanadium = (energy: number) => ({
+    projectile: { species: 'neutron' },
+    energy: Q(energy, 'eV'),
+    interaction: { terms: [{ form: 'contact', nuclide: 'V-51' }] },
+  });
+  expect(warning(vanadium(0.0253), 'lengthForSlowNeutrons')).toBeUndefined();
+  expect(warning(vanadium(1e6), 'lengthForSlowNeutrons')?.level).toBe('caution');
+});
