@@ -2,6 +2,7 @@ import { COULOMB_EV_ANGSTROM, BOHR } from './constants/codata2022.ts';
 import type { EstimateResult } from './estimate.ts';
 import { scalesOf } from './estimate.ts';
 import { leptonWarnings } from './lepton-warnings.ts';
+import { tableResolution } from './table-warnings.ts';
 import {
   boundLength,
   chargesDiffer,
@@ -214,6 +215,7 @@ export function warningsOf(result: EstimateResult): Warning[] {
     identicalIntegrals(result),
     notDrawn(result),
     ...ofTerms(result),
+    tableResolution(result),
     incoherentAdded(result),
     elasticOnly(),
   ];

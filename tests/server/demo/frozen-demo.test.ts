@@ -37,6 +37,10 @@ const FORWARD: Moved = {
   figures: ['criterion secondOrder'],
 };
 const SINCE_0_2_0: Record<string, Moved> = {
+  'Electrons on helium: the static field as a table, version 1': {
+    why: 'a table says what another reading between its rows would change',
+    figures: ['warnings'],
+  },
   '250 MeV electrons on Ca-40: the shape of its charge, version 1': FORWARD,
   '250 MeV electrons on Ca-40: the shape of its charge, version 2': FORWARD,
 };

@@ -44,6 +44,22 @@ describe('differences in words and units', () => {
     ]);
   });
 
+  test('tables with as many rows and the same ends are told apart, and corrections are named', () => {
+    const points = (V: number): [number, number][] => [
+      [0, 1],
+      [1, V],
+      [2, 3],
+    ];
+    const table = (V: number) =>
+      withDocument({ interaction: { terms: [{ form: 'tabulated', points: points(V) }] } });
+    const [difference] = differences(table(1), table(2), FORMS);
+    expect(difference?.before).toMatch(/^3 points, r 0 to 2, mark \w{6}$/);
+    expect(difference?.after).not.toBe(difference?.before);
+    expect(differences(base, withDocument({ corrections: ['mckinleyFeshbach'] }), FORMS)).toEqual([
+      { key: '/corrections', label: 'Corrections', before: 'none', after: 'McKinley and Feshbach' },
+    ]);
+  });
+
   test('nothing where only the order of members or a default differs', () => {
     const { kinematics: _left, ...document } = DEFAULT_DOCUMENT;
     expect(_left).toBe('nonrelativistic');

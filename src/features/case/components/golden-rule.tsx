@@ -95,6 +95,13 @@ function Quadrature({ rule }: { rule: Sheet }) {
   );
 }
 
+const FACTOR_NAMES: Readonly<Record<string, string>> = {
+  exchange: 'exchange of identical particles',
+  spin: 'spin of the lepton (Mott), recoil included',
+  mckinleyFeshbach: 'correction of McKinley and Feshbach',
+  incoherent: 'incoherent scattering added',
+};
+
 function FactorsAfter({ rule }: { rule: Sheet }) {
   if (rule.factorsAfter.length === 0) return null;
   return (
@@ -110,8 +117,13 @@ function FactorsAfter({ rule }: { rule: Sheet }) {
             key={name}
             className="flex flex-wrap justify-between gap-x-4 border-t border-line py-1.5"
           >
-            <span>{name}</span>
-            <Figure value={dcs.value} unit={dcs.unit} label={`dσ/dΩ with ${name}`} digits={6} />
+            <span>{FACTOR_NAMES[name] ?? name}</span>
+            <Figure
+              value={dcs.value}
+              unit={dcs.unit}
+              label={`dσ/dΩ with ${FACTOR_NAMES[name] ?? name}`}
+              digits={6}
+            />
           </li>
         ))}
       </ol>

@@ -2,6 +2,7 @@ import { Plus } from 'lucide-react';
 import { Button } from '#src/components/button.tsx';
 import { useEditing } from '../editing/editor-context.ts';
 import { addTerm, defaultTerm } from '../model/terms.ts';
+import { CorrectionField } from './correction-field.tsx';
 import { TermInputs } from './term-inputs.tsx';
 
 export const MOST_TERMS = 12;
@@ -20,6 +21,7 @@ export function InteractionInputs() {
           <TermInputs term={term} index={index} several={terms.length > 1} />
         </div>
       ))}
+      <CorrectionField />
       {!readOnly && next && (
         <Button
           size="small"

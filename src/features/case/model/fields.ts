@@ -1,8 +1,11 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { FormInfo } from '#shared/contracts/forms.ts';
 import { unitSymbol } from '#shared/units/format.ts';
+import { isOriginal, isPoints } from '#shared/contracts/terms.ts';
+import type { TermValue } from '#shared/contracts/terms.ts';
 import { same } from './same.ts';
 import {
+  CORRECTION_NAMES,
   FRAME_NAMES,
   METHOD_NAMES,
   REGIME_NAMES,
@@ -106,6 +109,9 @@ const BEAM: FieldSpec[] = [
   member('kinematics', 'Kinematics', (d) => REGIME_NAMES[d.kinematics ?? 'nonrelativistic']),
   member('target', 'Target', ({ target }) => targetText(target)),
   member('identical', 'Identical particles', ({ identical }) => identicalText(identical)),
+  member('corrections', 'Corrections', ({ corrections = [] }) =>
+    corrections.length === 0 ? 'none' : corrections.map((one) => CORRECTION_NAMES[one]).join(', '),
+  ),
 ];
 const TABLE: FieldSpec[] = [
   member('methods', 'Methods', ({ methods }) => methods.map((m) => METHOD_NAMES[m]).join(', ')),
@@ -128,6 +134,22 @@ function takeParameter(into: Content, from: Content, index: number, key: string)
   return { ...into, document: takeEntered(document, from.document, pointer) };
 }
 
+/** Rows and originals read alike when they are as many: a mark tells those apart that differ. */
+function distinctText(value: TermValue | undefined): string {
+  const text = termValueText(value);
+  if (!isPoints(value) && !isOriginal(value)) return text;
+  return `${text}, mark ${fingerprint(isPoints(value) ? value.flat().join(' ') : value.text)}`;
+}
+
+/** Six letters and figures that another text hardly has too (FNV-1a). */
+function fingerprint(text: string): string {
+  let hash = 0x811c9dc5;
+  for (let i = 0; i < text.length; i++) {
+    hash = Math.imul(hash ^ text.charCodeAt(i), 0x01000193) >>> 0;
+  }
+  return hash.toString(36).padStart(6, '0').slice(-6);
+}
+
 function parameterSpec(
   index: number,
   parameter: { key: string; label: string },
@@ -138,7 +160,7 @@ function parameterSpec(
     key: `/interaction/terms/${index}/${parameter.key}`,
     label: `${prefix}${parameter.label}`,
     value: read,
-    text: (content) => termValueText(read(content)),
+    text: (content) => distinctText(read(content)),
     take: (into, from) => takeParameter(into, from, index, parameter.key),
   };
 }

@@ -13,7 +13,7 @@ export function stationOf(pointer: string): StationKey {
   const [, root = ''] = pointer.split('/');
   if (root === 'projectile' || root === 'energy' || root === 'kinematics') return 'beam';
   if (root === 'target' || root === 'identical') return 'target';
-  return root === 'interaction' ? 'interaction' : 'detectors';
+  return root === 'interaction' || root === 'corrections' ? 'interaction' : 'detectors';
 }
 
 export interface StationSummary {

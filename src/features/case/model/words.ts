@@ -1,5 +1,6 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type {
+  Correction,
   Criterion,
   InteractionTerm,
   Method,
@@ -17,6 +18,10 @@ export const METHOD_NAMES: Record<Method, string> = {
   born2: 'second Born',
   eikonal: 'eikonal',
   partialWaves: 'exact (phase shifts)',
+};
+
+export const CORRECTION_NAMES: Record<Correction, string> = {
+  mckinleyFeshbach: 'McKinley and Feshbach',
 };
 
 export const REGIME_NAMES = {
