@@ -127,6 +127,18 @@ export function cmPoint(input: DifferentialInput, thetaCm: number, angleError = 
   return { thetaCm, q, amplitude, dcs: { value, error, belowFloor: value <= born.floor ** 2 } };
 }
 
+/** The frame of masses that differ by a little less. */
+function otherMasses(frame: Frame): Frame {
+  const rhoMinusOne = frame.rhoMinusOne * (1 - PROBE);
+  if (!(rhoMinusOne > 0)) return { ...frame, rhoMinusOne };
+  const cone = Math.atan2(Math.tan(frame.thetaMax), Math.sqrt(1 - PROBE));
+  return { ...frame, rhoMinusOne, thetaMax: cone };
+}
+
+/** What the last digits of two masses are of their difference; equal masses are equal. */
+const massRounding = ({ rho, rhoMinusOne }: Frame): number =>
+  rhoMinusOne === 0 ? 0 : 4 * UNIT_ROUNDOFF * ((rho + 1) / Math.abs(rhoMinusOne));
+
 /**
  * dσ/dΩ at one lab angle, branch by branch.
  *
@@ -139,12 +151,18 @@ export function cmPoint(input: DifferentialInput, thetaCm: number, angleError = 
 export function labPoint(input: DifferentialInput, frame: Frame, thetaLab: number): LabPoint {
   const found = labToCm(thetaLab, frame);
   if (found.length === 0) return { branches: [], reason: outsideCone(frame) };
-  const beside = labToCm(thetaLab * (1 - PROBE), frame);
+  const shifts = [
+    { ways: labToCm(thetaLab * (1 - PROBE), frame), rounding: ANGLE_ROUNDING },
+    { ways: labToCm(thetaLab, otherMasses(frame)), rounding: massRounding(frame) },
+  ];
   const branches = found.map(({ thetaCm, jacobian }, i) => {
-    const near = beside[i] ?? { thetaCm, jacobian };
-    const turn = (Math.abs(thetaCm - near.thetaCm) / PROBE) * ANGLE_ROUNDING;
-    const angleError = turn + 4 * UNIT_ROUNDOFF * thetaCm;
-    const stretch = (Math.abs(1 - near.jacobian / jacobian) / PROBE) * ANGLE_ROUNDING;
+    let angleError = 4 * UNIT_ROUNDOFF * thetaCm;
+    let stretch = 0;
+    for (const { ways, rounding } of shifts) {
+      const near = ways[i] ?? { thetaCm, jacobian };
+      angleError += (Math.abs(thetaCm - near.thetaCm) / PROBE) * rounding;
+      stretch += (Math.abs(1 - near.jacobian / jacobian) / PROBE) * rounding;
+    }
     const point = cmPoint(input, thetaCm, angleError);
     const { dcs } = point;
     if (dcs === null) return point;
