@@ -132,7 +132,7 @@ test('the curve leaves as numbers with units, as a drawing and as a picture', as
     [/SVG/, 'svg'],
     [/PNG/, 'png'],
   ] as const) {
-    await page.getByRole('button', { name: 'Export' }).click();
+    await page.getByRole('button', { name: 'Export', exact: true }).click();
     const waiting = page.waitForEvent('download');
     await page.getByRole('menuitem', { name }).click();
     const download = await waiting;

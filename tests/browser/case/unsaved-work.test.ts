@@ -95,7 +95,7 @@ test('what only the server can refuse stands beside its field', async () => {
   await goTo('/cases/new');
   await settled(page);
   await page.getByLabel('Kind of target').selectOption('nuclide');
-  const nuclide = page.getByLabel('Nuclide');
+  const nuclide = page.getByRole('textbox', { name: 'Nuclide', exact: true });
   await nuclide.fill('Xx-12');
   await page.getByText('One input needs mending', { exact: false }).waitFor();
   expect(await nuclide.getAttribute('aria-invalid')).toBe('true');
