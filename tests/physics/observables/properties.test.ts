@@ -25,8 +25,55 @@ const term = fc.oneof(
   fc.record({ form: fc.constant('coulomb'), chargeProduct: charges }),
   fc.record({ form: fc.constant('deltaShell'), g: depth, R: size }),
   fc.record({ form: fc.constant('contact'), b: signed(-6, -3) }),
+  fc.record({ form: fc.constant('hulthen'), V0: depth, a: size }),
+  fc.record({ form: fc.constant('polarization'), alpha: decades(-3, 3), d: size }),
+  fc.record({ form: fc.constant('moliere'), Z: fc.integer({ min: 1, max: 90 }) }),
+  fc.record({
+    form: fc.constantFrom('krc', 'universalIon'),
+    Z1: fc.integer({ min: 1, max: 90 }),
+    Z2: fc.integer({ min: 1, max: 90 }),
+  }),
+  fc.record({
+    form: fc.constant('extendedCharge'),
+    kind: fc.constantFrom('uniformSphere', 'gaussian', 'dipole'),
+    radius: size,
+    chargeProduct: charges,
+  }),
+  fc.record({
+    form: fc.constant('extendedCharge'),
+    kind: fc.constantFrom('fermi', 'helm'),
+    radius: size,
+    diffuseness: size,
+    chargeProduct: charges,
+  }),
+  fc.record({ form: fc.constant('atomicElectron'), element: fc.constantFrom('H', 'C', 'Au') }),
+  fc.record({
+    form: fc.constant('expression'),
+    formula: fc.constantFrom(
+      'V0*exp(-r/a)/(1 + r/a)',
+      'V0*cos(3*r/a)*exp(-(r/a)^2)',
+      'r < a ? V0*(1 - r/a) : 0',
+      'V0/(1 + (r/a)^2)^3',
+      'V0*a/r*(1 - exp(-r/a))',
+    ),
+    V0: depth,
+    a: size,
+  }),
+  fc.record({
+    form: fc.constant('tabulated'),
+    tail: fc.constantFrom('zero', 'exponential', 'coulomb'),
+    V0: depth,
+    a: size,
+  }),
 );
 type Sent = Record<string, string | number>;
+
+/** Twenty rows of a falling potential. */
+function rows(V0: number, a: number): [number, number][] {
+  return Array.from({ length: 20 }, (_, i) => [(i * a) / 4, V0 * Math.exp(-i / 4)]);
+}
+
+const PLAIN = ['chargeProduct', 'Z', 'Z1', 'Z2'];
 
 interface Scale {
   energy: string;
@@ -41,9 +88,22 @@ const NUCLEAR: Scale = { energy: 'MeV', perEnergy: 1e-6, length: 'fm', perLength
 function write(sent: Sent, wave: number, scale: Scale): Record<string, unknown> {
   const energy = (x: number) => Q(x * scale.perEnergy, scale.energy);
   const length = (x: number) => Q(x * wave * scale.perLength, scale.length);
+  if (sent['form'] === 'expression') {
+    const { form, formula, V0, a } = sent;
+    return { form, formula, parameters: { V0: energy(Number(V0)), a: length(Number(a)) } };
+  }
+  if (sent['form'] === 'tabulated') {
+    const { form, tail, V0, a } = sent;
+    const points = rows(energy(Number(V0)).value, length(Number(a)).value);
+    return { form, tail, points, lengthUnit: scale.length, energyUnit: scale.energy };
+  }
   return Object.fromEntries(
     Object.entries(sent).map(([key, value]): [string, unknown] => {
-      if (typeof value === 'string' || key === 'chargeProduct') return [key, value];
+      if (typeof value === 'string' || PLAIN.includes(key)) return [key, value];
+      if (key === 'alpha') {
+        const unit = scale === ATOMIC ? 'angstrom3' : 'fm3';
+        return [key, Q(value * (wave * scale.perLength) ** 3, unit)];
+      }
       if (key === 'g') {
         const unit = scale === ATOMIC ? 'eV angstrom' : 'MeV fm';
         return [key, Q(value * wave * scale.perEnergy * scale.perLength, unit)];
