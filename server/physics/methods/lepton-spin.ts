@@ -48,7 +48,8 @@ export function leptonSpin(input: LeptonSpinInput): AngularFactor {
   const prefix = (((energy + mass) / reducedMass) * (k / kLab) ** 2) ** 2;
   return (thetaCm, blur = 0) => {
     const { thetaLab, jacobian } = cmToLab(thetaCm, frame);
-    const angle = Math.min(thetaLab, Math.PI);
+    // Straight back is straight back: the last digit of pi would turn a fast centre of mass by more than 1/gamma.
+    const angle = thetaCm === Math.PI ? Math.PI : Math.min(thetaLab, Math.PI);
     const spin =
       correctedFor === null
         ? spinFactor(gamma, angle)

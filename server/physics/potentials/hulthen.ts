@@ -47,6 +47,11 @@ export function hulthenTransform(a: number, q: number) {
   return closedResult(value, rounding, 4 * value * Math.min(1, y * y));
 }
 
+/** -ln(1 - e^{-x}): near 0 the 1 cancels, far out the logarithm. */
+function lineFrom(x: number): number {
+  return x < Math.LN2 ? -Math.log(-Math.expm1(-x)) : -Math.log1p(-Math.exp(-x));
+}
+
 export const hulthen: Form = {
   key: 'hulthen',
   label: 'Hulthén',
@@ -75,7 +80,7 @@ export const hulthen: Form = {
       coulombTail: 0,
       norm,
       firstMoment: (Math.PI ** 2 / 6) * a ** 2,
-      lineIntegral: (from) => -a * Math.log1p(-Math.exp(-from / a)),
+      lineIntegral: (from) => a * lineFrom(from / a),
       range: a,
       tail: 'exponential',
       reach: E_FOLDINGS * a,

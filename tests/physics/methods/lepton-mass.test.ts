@@ -46,6 +46,21 @@ describe('the spin of a lepton with its mass kept in the recoil', () => {
   });
 });
 
+test('straight back nothing but 1/gamma² is left of the spin, however fast the centre of mass', () => {
+  const [mass, targetMass, energy] = [ELECTRON_MASS, PROTON_MASS, 1e17];
+  const collision = twoBody({ projectileMass: mass, targetMass, energy, regime: 'relativistic' });
+  const { value } = leptonSpin({ mass, targetMass, energy, collision, correctedFor: null })(
+    Math.PI,
+  );
+  // The formula at L = theta = pi: (E/mu)² (k/k_lab)⁴ (E'/E)/(J gamma²), every factor from the invariants.
+  const { momentumCm: p, momentumLab: pLab, reducedMass, frame } = collision;
+  const total = energy + mass;
+  const kept = (total - (2 * p * p) / targetMass) / total;
+  const jacobian = (frame.gamma * frame.rhoMinusOne) ** 2;
+  const point = (total / reducedMass) ** 2 * (p / pLab) ** 4;
+  expectRelative(value, (point * kept) / jacobian / (total / mass) ** 2, 1e-6);
+});
+
 describe('the caution about it', () => {
   const caution = (species: string, nuclide: string, energy: number) =>
     answer({

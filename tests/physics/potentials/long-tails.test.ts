@@ -6,6 +6,16 @@ import { expectRelative } from '#tests/support/expect-relative.ts';
 import { build, CONTEXT, transform, unitTerm } from './build-term.ts';
 
 describe('hulthen', () => {
+  it('∫ s dr from near the origin on: -a ln(x - x²/2 + x³/6), finite however small x = from/a', () => {
+    const { lineIntegral } = unitTerm('hulthen', { a: 0.7 });
+    for (const x of [1e-30, 1e-17, 1e-10, 1e-4]) {
+      const exact = -0.7 * (Math.log(x) + Math.log1p(-x / 2 + x ** 2 / 6));
+      expectRelative(lineIntegral(0.7 * x) ?? NaN, exact, 1e-13);
+    }
+    // Far out one exponential is left.
+    expectRelative(lineIntegral(28) ?? NaN, 0.7 * Math.exp(-40), 1e-13);
+  });
+
   it('is a geometric series of exponentials', () => {
     const term = unitTerm('hulthen', { a: 0.7 });
     for (const q of [0, 0.4, 3]) {
