@@ -1,4 +1,8 @@
-import { neutronEntry, NEUTRON_EDITION } from '#server/physics/tables/neutron-lengths.ts';
+import {
+  neutronEntry,
+  NEUTRON_EDITION,
+  NEUTRON_WAVELENGTH,
+} from '#server/physics/tables/neutron-lengths.ts';
 import type { NeutronEntry } from '#server/physics/tables/neutron-lengths.ts';
 import { contact, contactTerm, lengthB } from './contact.ts';
 import { lookUp, readParameters, refuse, type ParameterReader } from './parameters.ts';
@@ -80,6 +84,24 @@ function fromTableNote(name: string, bound: number, factor: number) {
   };
 }
 
+/** Shares of the scattering from which an absorption that is not counted is told, and from which it is a caution. */
+const TOLD = 0.01;
+const GRAVE = 0.1;
+
+/** The table prints an imaginary part for strong absorbers only; what the others absorb is in no amplitude. */
+function absorptionNote({ name, imaginary, ...row }: NeutronEntry) {
+  const absorbed = row.sigmaAbsorption?.value ?? 0;
+  const scattered = (row.sigmaCoherent?.value ?? 0) + (row.sigmaIncoherent?.value ?? 0);
+  if (imaginary !== null || !(absorbed > TOLD * scattered)) return [];
+  return [
+    {
+      code: 'absorptionLeftOut',
+      level: absorbed > GRAVE * scattered ? ('caution' as const) : ('info' as const),
+      message: `The absorption of ${name} is not in these numbers, for the table gives no imaginary length: ${absorbed} barn at ${NEUTRON_WAVELENGTH} angstrom, in proportion to the wavelength (${NEUTRON_EDITION}).`,
+    },
+  ];
+}
+
 /**
  * Contact term from the table of neutron scattering lengths.
  *
@@ -90,7 +112,8 @@ function fromTableNote(name: string, bound: number, factor: number) {
  */
 function fromTable(key: Named, name: string, context: FormContext): Term {
   refuseOthers(key, context);
-  const { b, imaginary, resonant, sigmaIncoherent } = rowOf(key, name);
+  const row = rowOf(key, name);
+  const { b, imaginary, resonant, sigmaIncoherent } = row;
   if (resonant) {
     refuse(
       key,
@@ -107,7 +130,7 @@ function fromTable(key: Named, name: string, context: FormContext): Term {
       ? undefined
       : (sigmaIncoherent.value * BARN * factor ** 2) / (4 * Math.PI);
   const term = contactTerm(length, context, incoherent);
-  return { ...term, cautions: [fromTableNote(name, b.value, factor)] };
+  return { ...term, cautions: [fromTableNote(name, b.value, factor), ...absorptionNote(row)] };
 }
 
 /** `contact` with its length from the table as well as by hand. */

@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest';
 import { expectRelative } from '#tests/support/expect-relative.ts';
-import { CONTRACT_BODY, NUCLEAR_UNITS, Q, answer } from './bodies.ts';
+import { CONTRACT_BODY, NUCLEAR_UNITS, Q, answer, born1, integral } from './bodies.ts';
 
 const COULOMB = { terms: [{ form: 'coulomb' }] };
 const warning = (body: object, code: string) =>
@@ -261,4 +261,23 @@ test('lengths of the neutron table are those of slow neutrons', () => {
   });
   expect(warning(vanadium(0.0253), 'lengthForSlowNeutrons')).toBeUndefined();
   expect(warning(vanadium(1e6), 'lengthForSlowNeutrons')?.level).toBe('caution');
+});
+
+test('absorption that the table of lengths cannot give', () => {
+  const slow = (nuclide: string) => ({
+    projectile: { species: 'neutron' },
+    energy: Q(25.3, 'meV'),
+    interaction: { terms: [{ form: 'contact', nuclide }] },
+  });
+  // Boron-10 absorbs 3,835 barn at 2200 m/s; V. F. Sears, Neutron News 3 no. 3 (1992) 26.
+  expect(warning(slow('B-10'), 'absorptionLeftOut')).toMatchObject({
+    level: 'caution',
+    message: expect.stringMatching(/3835 barn at 1\.798 angstrom/) as string,
+  });
+  expect(warning(slow('Ne-20'), 'absorptionLeftOut')?.level).toBe('info');
+  expect(warning(slow('H-2'), 'absorptionLeftOut')).toBeUndefined();
+  // He-3 has its imaginary length in the table: 4 pi b''/k is 5,333 barn to the digits of b''.
+  expect(warning(slow('He-3'), 'absorptionLeftOut')).toBeUndefined();
+  const { absorption } = born1(answer({ ...CONTRACT_BODY, ...slow('He-3') }));
+  expectRelative(integral(absorption).value, 5333e-8, 5e-3);
 });

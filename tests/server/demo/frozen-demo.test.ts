@@ -31,12 +31,20 @@ const SINCE_0_1_0: Record<string, Moved> = {
     ],
   },
 };
-/** What moved on purpose since 0.2.0 was frozen: digits 7 and 8 of a criterion. */
+/** What moved on purpose since 0.2.0 was frozen: digits 7 and 8 of a criterion, and what is said of tables. */
 const FORWARD: Moved = {
   why: 'the forward value of what a Coulomb tail leaves is exact, not read close by',
   figures: ['criterion secondOrder'],
 };
+const ABSORPTION: Moved = {
+  why: 'a length from the table says what absorption it leaves out',
+  figures: ['warnings'],
+};
 const SINCE_0_2_0: Record<string, Moved> = {
+  'Vanadium, the standard of the thermal port, version 1': ABSORPTION,
+  'Nickel by element and by isotope, version 1': ABSORPTION,
+  'Nickel by element and by isotope, version 2': ABSORPTION,
+  'Nickel by element and by isotope, version 3': ABSORPTION,
   'Electrons on helium: the static field as a table, version 1': {
     why: 'a table says what another reading between its rows would change',
     figures: ['warnings'],
