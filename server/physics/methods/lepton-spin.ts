@@ -53,7 +53,7 @@ export function leptonSpin(input: LeptonSpinInput): AngularFactor {
     const spin =
       correctedFor === null
         ? spinFactor(gamma, angle)
-        : mckinleyFeshbachFactor(gamma, angle, correctedFor);
+        : mckinleyFeshbachFactor(gamma, angle, correctedFor, energy / mass);
     const recoil = recoilRatio(mass, targetMass, energy, angle);
     const point = prefix * geometry(thetaCm, thetaLab, jacobian) * recoil.value;
     const value = point * spin.value;

@@ -56,6 +56,7 @@ export function spinFactor(gamma: number, theta: number): NumericalResult {
  * @param gamma total energy of the lepton over its mc², >= 1
  * @param theta scattering angle, rad, 0 to pi
  * @param chargeProduct Z1 Z2
+ * @param excess kinetic energy over mc²: gamma - 1 without the rounding of a slow lepton's gamma
  * @returns factor of dσ/dΩ; may be negative for positrons far outside its validity
  * @throws RangeError outside the domain
  *
@@ -67,11 +68,12 @@ export function mckinleyFeshbachFactor(
   gamma: number,
   theta: number,
   chargeProduct: number,
+  excess = gamma - 1,
 ): NumericalResult {
   const first = spinFactor(gamma, theta);
   const sine = Math.sin(theta / 2);
   const cosine = Math.cos(theta / 2);
-  const beta = Math.sqrt((gamma - 1) * (gamma + 1)) / gamma;
+  const beta = Math.sqrt(excess * (excess + 2)) / gamma;
   // 1 - sin(theta/2) = cos²(theta/2)/(1 + sin(theta/2))
   const angular = (sine * cosine * cosine) / (1 + sine);
   const second = Math.PI * FINE_STRUCTURE * chargeProduct * beta * angular;
@@ -156,7 +158,7 @@ export function mottCrossSection(input: MottInput): NumericalResult {
   const gamma = 1 + energy / mass;
   const spin =
     input.mckinleyFeshbach === true
-      ? mckinleyFeshbachFactor(gamma, theta, chargeProduct)
+      ? mckinleyFeshbachFactor(gamma, theta, chargeProduct, energy / mass)
       : spinFactor(gamma, theta);
   const sine = Math.sin(theta / 2);
   const length =

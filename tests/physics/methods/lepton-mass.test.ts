@@ -1,8 +1,13 @@
 import { describe, expect, test } from 'vitest';
-import { ELECTRON_MASS, MUON_MASS, PROTON_MASS } from '#server/physics/constants/codata2022.ts';
+import {
+  ELECTRON_MASS,
+  FINE_STRUCTURE,
+  MUON_MASS,
+  PROTON_MASS,
+} from '#server/physics/constants/codata2022.ts';
 import { twoBody } from '#server/physics/kinematics/two-body.ts';
 import { leptonSpin, leptonSpinWithMass } from '#server/physics/methods/lepton-spin.ts';
-import { spinFactor } from '#server/physics/methods/spin-factor.ts';
+import { mckinleyFeshbachFactor, spinFactor } from '#server/physics/methods/spin-factor.ts';
 import { expectRelative } from '#tests/support/expect-relative.ts';
 import { Q, answer } from '../observables/bodies.ts';
 
@@ -83,4 +88,21 @@ describe('the caution about it', () => {
     expect(caution('electron', 'Ca-40', 250)).toBeUndefined();
     expect(caution('muon+', 'Pb-208', 30)).toBeUndefined();
   });
+});
+
+test('the correction of a slow lepton grows with its speed, not with what rounding leaves of gamma', () => {
+  const mass = ELECTRON_MASS;
+  for (const energy of [1e-9, 1e-5, 0.3, 20]) {
+    const gamma = 1 + energy / mass;
+    const corrected = mckinleyFeshbachFactor(gamma, 1, -1e6, energy / mass).value;
+    const speed = Math.sqrt((2 * energy) / mass);
+    const sine = Math.sin(0.5);
+    // beta is sqrt(2T/m) but for 3T/4m of itself.
+    const second = Math.PI * FINE_STRUCTURE * 1e6 * speed * sine * (1 - sine);
+    expectRelative(
+      corrected - spinFactor(gamma, 1).value,
+      second,
+      (2 * energy) / mass + 1e-11 + 1e-15 / second,
+    );
+  }
 });
