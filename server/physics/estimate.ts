@@ -70,6 +70,7 @@ export function scalesOf({ terms }: Pick<Problem, 'terms'>): Scales {
     range: Math.max(0, ...active.map((term) => term.range ?? 0)),
     edge: Math.max(0, ...active.flatMap((term) => term.breakpoints)),
     terms: Math.max(1, active.length),
+    kinks: active.flatMap((term) => term.kinks ?? []),
   };
 }
 

@@ -11,6 +11,8 @@ export interface Scales {
   edge: number;
   /** Number of terms, for the bound of the work. */
   terms: number;
+  /** q where the slope of the amplitude jumps, 1/angstrom. */
+  kinks?: readonly number[];
 }
 
 /** Values of an amplitude at the nodes of a composite rule over all angles; t = q/(2k) = sin(theta/2). */
@@ -100,8 +102,8 @@ function panelOn(f: (q: number) => Amplitude, k: number, a: number, b: number): 
   return { a, b, fine, error, noise: momentsOf(nodes, squareError), nodes };
 }
 
-/** Panels that double in width from half the inverse range on, none wider than three periods of |f|² of a sharp edge. */
-export function coneEdges(k: number, { range, edge, terms }: Scales): number[] {
+/** Panels that double in width from half the inverse range on, none wider than three periods of |f|² of a sharp edge; kinks are edges too. */
+export function coneEdges(k: number, { range, edge, terms, kinks = [] }: Scales): number[] {
   const widest = edge > 0 ? (3 * Math.PI) / (2 * k * edge) : 1;
   if ((1 / widest) * CALLS_PER_PANEL * terms > MAX_TRANSFORMS) throw tooFine();
   const edges = [0];
@@ -112,7 +114,8 @@ export function coneEdges(k: number, { range, edge, terms }: Scales): number[] {
     edges.push(at);
     width = Math.min(at, widest);
   }
-  return edges;
+  const cuts = kinks.map((q) => q / (2 * k)).filter((t) => t < 1 && !edges.includes(t));
+  return [...edges, ...cuts].sort((a, b) => a - b);
 }
 
 function tooFine(): DomainError {

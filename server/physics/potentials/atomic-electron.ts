@@ -142,6 +142,7 @@ export const atomicElectron: Form<AnyParameter> = {
       tail: 'exponential',
       reach: REACH * widest,
       breakpoints: [],
+      kinks: tails.kinks,
     };
   },
 };

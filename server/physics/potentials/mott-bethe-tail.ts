@@ -9,6 +9,8 @@ import { Q_ALLOWANCE } from './transform-error.ts';
 export interface TailRoutes {
   closed: (q: number) => NumericalResult;
   quadrature: (q: number) => NumericalResult;
+  /** Where one formula goes over into the next, 1/angstrom. */
+  kinks: readonly number[];
 }
 
 /** The join ends at this multiple of its start (s = 2 to 3 per angstrom). */
@@ -109,5 +111,9 @@ export function mottBetheTail(symbol: string, joint: number, atJoint: number): T
         status: 'converged',
       };
     };
-  return { closed: routeBy(closed), quadrature: routeBy(numerical) };
+  return {
+    closed: routeBy(closed),
+    quadrature: routeBy(numerical),
+    kinks: [joint, JOIN * joint, last],
+  };
 }

@@ -64,6 +64,8 @@ export interface Term {
   reach: number | null;
   /** Radii where s or its derivative jumps, angstrom, ascending. */
   breakpoints: number[];
+  /** q at which the slope of the transform jumps, 1/angstrom; integrals over angle are cut there. Absent means none. */
+  kinks?: readonly number[];
   /** Why there is no first order (hard sphere); `closed` and `quadrature` are null then. */
   noBorn?: string;
   /** Z1 Z2 of an electrostatic term: how it acts on the spin of a relativistic lepton is then known. */
