@@ -1,3 +1,4 @@
+import type { Unavailable } from './methods/amplitude.ts';
 import type { FirstBorn } from './methods/born1.ts';
 import { firstBorn } from './methods/born1.ts';
 import { transform, transformWithoutTail } from './methods/transform.ts';
@@ -36,11 +37,6 @@ export interface GoldenRuleSheet extends GoldenRule {
 export interface FirstBornResult {
   differential: { frame: 'cm'; points: CmPoint[] } | { frame: 'lab'; points: LabPoint[] };
   integrals: CrossSections;
-}
-
-/** What the interaction does not allow, and why. */
-export interface Unavailable {
-  unavailable: string;
 }
 
 /** What the engine answers, in internal units throughout. */

@@ -1,6 +1,7 @@
-import type { FirstBornResult, Unavailable } from './estimate.ts';
+import type { FirstBornResult } from './estimate.ts';
 import { differential, scalesOf } from './estimate.ts';
 import { chargeProductOf, leptonFactor } from './lepton-factor.ts';
+import type { Unavailable } from './methods/amplitude.ts';
 import { firstBorn } from './methods/born1.ts';
 import type { CmRange } from './observables/between-angles.ts';
 import { cmRanges, elasticBetween } from './observables/between-angles.ts';

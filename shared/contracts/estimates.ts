@@ -73,7 +73,10 @@ export const interactionSchema = z.strictObject({
     .array(termSchema)
     .min(1, 'An interaction needs at least one term.')
     .max(12, 'An interaction may have at most 12 terms.'),
+  /** Where the terms were taken from: a version of an interaction in the lab's library. Kept and shown, never computed with. */
+  citation: z.strictObject({ id: z.uuid(), version: z.int().min(1) }).optional(),
 });
+export type Citation = NonNullable<z.infer<typeof interactionSchema>['citation']>;
 
 const angleUnit = z.enum(Object.keys(UNITS.angle) as [string, ...string[]]);
 export const anglesSchema = z.union(
@@ -187,6 +190,7 @@ const branch = z.object({
   relativeError: z.number().optional(),
   absoluteError: z.number().optional(),
   amplitude: complexAmplitude.nullable(),
+  analysingPower: z.number().nullable().optional(),
 });
 
 export const differentialPointSchema = z.object({
@@ -198,22 +202,66 @@ export const differentialPointSchema = z.object({
   absoluteError: z.number().optional(),
   amplitude: complexAmplitude.nullable().optional(),
   branches: z.array(branch).optional(),
+  /** With a spin-orbit term: left-right asymmetry of a fully polarised beam, Madison convention; null where dcs is. */
+  analysingPower: z.number().nullable().optional(),
 });
 export type DifferentialPoint = z.infer<typeof differentialPointSchema>;
 
 export const unavailableSchema = z.object({ unavailable: z.literal(true), reason: z.string() });
 
-export const methodResultSchema = z.union([
-  z.object({
-    differential: z.array(differentialPointSchema),
-    elastic: integral,
-    absorption: integral,
-    total: integral,
-    momentumTransfer: integral,
-    viscosity: integral,
-  }),
-  unavailableSchema,
-]);
+/** A number that says whether a method may be used. */
+export const conditionSchema = z.object({
+  name: z.string(),
+  value: z.number(),
+  /** What it should stay below, or above; absent where it is only reported. */
+  most: z.number().optional(),
+  least: z.number().optional(),
+  holds: z.boolean(),
+  meaning: z.string(),
+});
+export type Condition = z.infer<typeof conditionSchema>;
+
+export const phaseShiftSchema = z.object({
+  l: z.int(),
+  /** l + 1/2 or l - 1/2, with a spin-orbit term only. */
+  j: z.number().optional(),
+  /** rad, between -pi/2 and pi/2; relative to the Coulomb phase where there is one. */
+  delta: z.number(),
+  /** |S_l| */
+  eta: z.number(),
+  /** Bound of the numerical error of delta, rad. */
+  absoluteError: z.number(),
+  /** First-order phase of the same wave, rad; absent where first order has none. */
+  born: z.number().optional(),
+});
+export type PhaseShift = z.infer<typeof phaseShiftSchema>;
+
+const computedLength = quantity.extend({ absoluteError: z.number() });
+export const lowEnergySchema = z.object({
+  scatteringLength: computedLength.nullable(),
+  effectiveRange: computedLength.nullable(),
+  boundStates: z.int().nullable(),
+  remark: z.string().nullable(),
+});
+
+export const computedMethodSchema = z.object({
+  differential: z.array(differentialPointSchema),
+  elastic: integral,
+  absorption: integral,
+  total: integral,
+  momentumTransfer: integral,
+  viscosity: integral,
+  /** Conditions of this method, each with its number; absent for born1, whose conditions are the criteria of the verdict. */
+  conditions: z.array(conditionSchema).optional(),
+  /** partialWaves only. */
+  phaseShifts: z.array(phaseShiftSchema).optional(),
+  lMax: z.int().optional(),
+  lowEnergy: lowEnergySchema.optional(),
+  /** (4 pi/k) Im f(0) against elastic and absorption by integration: their difference relative to the total. */
+  opticalTheorem: z.object({ residual: z.number() }).optional(),
+});
+export type ComputedMethod = z.infer<typeof computedMethodSchema>;
+export const methodResultSchema = z.union([computedMethodSchema, unavailableSchema]);
 export type MethodResult = z.infer<typeof methodResultSchema>;
 
 export const criterionSchema = z.object({
@@ -231,8 +279,25 @@ export const VERDICTS = ['sound', 'usable', 'notValid', 'unassessed'] as const;
 export const validitySchema = z.object({
   verdict: z.enum(VERDICTS),
   basis: z.enum(['exact', 'criteria']),
+  /** What decided where the basis is exact: of the elastic total, or the weighted one where that diverges; relative. */
   deviation: z.number().optional(),
+  /** First order against partial waves, relative; each curve's point to the larger value, or 1e-3 of the forward one. */
+  deviations: z
+    .object({
+      largest: z.number(),
+      /** Where, centre of mass, in the unit of `angles`. */
+      largestAt: z.number(),
+      /** Weighted by solid angle. */
+      weighted: z.number(),
+      /** Of the elastic total; absent where it diverges. */
+      elastic: z.number().optional(),
+      decides: z.enum(['elastic', 'weighted']),
+      limits: z.object({ sound: z.number(), usable: z.number() }),
+    })
+    .optional(),
   reason: z.string().optional(),
+  /** What to use instead, in words; absent where first order is sound. */
+  instead: z.string().optional(),
   criteria: z.array(criterionSchema),
 });
 export type Validity = z.infer<typeof validitySchema>;

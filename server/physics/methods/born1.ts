@@ -1,28 +1,12 @@
 import type { Complex, Term } from '#server/physics/potentials/types.ts';
+import type { Amplitude, ScatteringAmplitude } from './amplitude.ts';
 import type { NumericalResult } from '#server/physics/numerics/result.ts';
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import { Q_ALLOWANCE } from '#server/physics/potentials/transform-error.ts';
 import { transform, transformWithoutTail } from './transform.ts';
 
-/** A scattering amplitude, angstrom; `error` bounds its distance from the true one in the complex plane. */
-export interface Amplitude extends Complex {
-  error: number;
-}
-
-/** The first-order amplitude of one interaction at one energy; lengths in angstrom, q in 1/angstrom. */
-export interface FirstBorn {
-  /**
-   * f1(q), q >= 0; null where it diverges (a Coulomb tail at q = 0). `blur` is a relative error of q beyond the roundings that
-   * every transform allows for.
-   */
-  amplitude: (q: number, blur?: number) => Amplitude | null;
-  /** f1(q) without the Coulomb tail -tail/q². */
-  shortRange: (q: number, blur?: number) => Amplitude;
-  /** (2 mu/hbar²) Σ strength · c, 1/angstrom: the Coulomb tail of the amplitude is -tail/q². Zero without one. */
-  tail: Complex;
-  /** Below this an amplitude is lost in rounding, angstrom: 1e-14 (2 mu/hbar²) ∫ r² |V| dr of what the tail leaves. */
-  floor: number;
-}
+/** The first-order amplitude of one interaction at one energy; its floor is 1e-14 (2 mu/hbar²) ∫ r² |V| dr of what the tail leaves. */
+export type FirstBorn = ScatteringAmplitude;
 
 /** 2 mu/hbar² is a quotient of rounded numbers, and a strength is converted from the unit it was typed in. */
 const FACTOR_ROUNDING = 6 * UNIT_ROUNDOFF;

@@ -1,4 +1,4 @@
-import type { Amplitude } from '#server/physics/methods/born1.ts';
+import type { Amplitude } from '#server/physics/methods/amplitude.ts';
 import { gaussRule } from '#server/physics/numerics/gauss-rule.ts';
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import { DomainError } from '#shared/errors.ts';

@@ -1,4 +1,4 @@
-import type { Amplitude, FirstBorn } from '#server/physics/methods/born1.ts';
+import type { Amplitude, ScatteringAmplitude } from '#server/physics/methods/amplitude.ts';
 import { exchangeWeight } from '#server/physics/methods/exchange.ts';
 import type { AngularFactor } from '#server/physics/methods/lepton-spin.ts';
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
@@ -9,7 +9,7 @@ import type { Computed, CrossSections } from './integrals.ts';
 import { DIVERGENCES, absorption, directIntegrals, exchangeIntegrals, sumOf } from './integrals.ts';
 
 export interface CrossSectionInput {
-  born: FirstBorn;
+  born: ScatteringAmplitude;
   k: number;
   scales: Scales;
   /** Null where the interaction has a Coulomb tail: there is nothing to integrate then. */

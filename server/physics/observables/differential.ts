@@ -1,4 +1,4 @@
-import type { Amplitude, FirstBorn } from '#server/physics/methods/born1.ts';
+import type { Amplitude, ScatteringAmplitude } from '#server/physics/methods/amplitude.ts';
 import type { AngularFactor } from '#server/physics/methods/lepton-spin.ts';
 import { exchangeDcs } from '#server/physics/methods/exchange.ts';
 import type { Frame } from '#server/physics/kinematics/frames.ts';
@@ -7,7 +7,7 @@ import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import { DomainError } from '#shared/errors.ts';
 
 export interface DifferentialInput {
-  born: FirstBorn;
+  born: ScatteringAmplitude;
   k: number;
   /** Spin of identical particles; null for distinct ones. */
   exchangeSpin: number | null;

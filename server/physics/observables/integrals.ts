@@ -1,4 +1,4 @@
-import type { Amplitude, FirstBorn } from '#server/physics/methods/born1.ts';
+import type { Amplitude, ScatteringAmplitude } from '#server/physics/methods/amplitude.ts';
 import { integrate } from '#server/physics/numerics/quadrature.ts';
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import type { ConeSamples, Scales } from './cone-samples.ts';
@@ -61,7 +61,7 @@ export function directIntegrals(samples: ConeSamples): [Computed, Computed, Comp
  *
  * @returns angstrom², with its error; divergent where the imaginary part has a Coulomb tail
  */
-export function absorption(born: FirstBorn, k: number): Integral {
+export function absorption(born: ScatteringAmplitude, k: number): Integral {
   if (born.tail.im !== 0) return { divergent: DIVERGENCES.absorption };
   const forward = born.shortRange(0);
   if (forward.im === 0) return { value: 0, error: 0 };
