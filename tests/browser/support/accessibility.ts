@@ -21,11 +21,19 @@ export async function expectNoSidewaysScroll(page: Page): Promise<void> {
   expect(content).toBeLessThanOrEqual(window ?? 0);
 }
 
-/** Colours and sizes of a new view are there once it has been drawn. */
+/** Colours and sizes of a new view are there once it has been drawn and no transition is under way, however short. */
 export async function painted(page: Page): Promise<void> {
-  await page.evaluate(
-    () => new Promise((done) => requestAnimationFrame(() => requestAnimationFrame(done))),
-  );
+  await page.evaluate(async () => {
+    const frame = () => new Promise((done) => requestAnimationFrame(done));
+    await frame();
+    await frame();
+    const running = document.getAnimations().filter(({ effect }) => {
+      const end = effect?.getComputedTiming().endTime;
+      return typeof end === 'number' && Number.isFinite(end);
+    });
+    await Promise.allSettled(running.map(({ finished }) => finished));
+    await frame();
+  });
 }
 
 /** The page as it stands, in both themes, wide, narrow, and without sideways scroll on the narrowest. */
