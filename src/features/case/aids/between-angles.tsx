@@ -191,7 +191,7 @@ export function BetweenAngles() {
       <div
         aria-busy={stale || undefined}
         aria-live="polite"
-        className={classNames('transition-opacity delay-100', stale && 'opacity-45')}
+        className={classNames(stale && 'stale')}
       >
         {failure !== null && <p className="text-sm text-fault">{failure}</p>}
         {found && estimate && failure === null && 'unavailable' in found && (

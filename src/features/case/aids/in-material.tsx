@@ -126,7 +126,7 @@ export function InMaterial({ estimate }: { estimate: Estimate }) {
       </div>
       <div
         aria-busy={(question !== null && stale) || undefined}
-        className={classNames('transition-opacity delay-100', stale && aids && 'opacity-45')}
+        className={classNames(stale && aids && 'stale')}
       >
         {question === null && (
           <p className="text-sm text-muted">

@@ -72,7 +72,7 @@ export function KinematicsTable({ fileName }: { fileName: string }) {
   return (
     <div
       aria-busy={stale || undefined}
-      className={classNames('flex flex-col gap-2 transition-opacity', stale && 'opacity-45')}
+      className={classNames('flex flex-col gap-2', stale && 'stale')}
     >
       <p className="max-w-prose text-sm">
         {fixed

@@ -98,6 +98,14 @@ function kindsOf(estimate: Estimate, method: Method): Kind[] {
     : ['elastic', 'momentumTransfer', 'viscosity'];
 }
 
+/** The last cell takes what its row has left: in rows of two, and in rows of three where there is room. */
+function spanOfLast(cells: number): string {
+  if (cells === 4) return '';
+  const inTwo = cells % 2 === 1 ? 'col-span-2' : '';
+  const inThree = ['@lg:col-span-1', '@lg:col-span-3', '@lg:col-span-2'][cells % 3] ?? '';
+  return `${inTwo} ${inThree}`;
+}
+
 interface FiguresStripProps {
   estimate: Estimate;
   dimmed: boolean;
@@ -120,6 +128,7 @@ export function FiguresStrip({ estimate, dimmed, unit, onUnit }: FiguresStripPro
       integral: result[kind],
     }));
   });
+  const fourInOneRow = shown.length === 3;
   const divergent = shown.flatMap(({ label, integral }) =>
     'divergent' in integral ? [{ label, reason: integral.reason }] : [],
   );
@@ -128,10 +137,9 @@ export function FiguresStrip({ estimate, dimmed, unit, onUnit }: FiguresStripPro
       <dl
         aria-busy={dimmed || undefined}
         className={classNames(
-          'grid grid-cols-2 gap-px overflow-clip rounded border border-line bg-line transition-opacity delay-100',
-          // Four stand in one row; more break evenly.
-          shown.length === 3 ? '@2xl:grid-cols-4' : '@lg:grid-cols-3',
-          dimmed && '[&_dd]:opacity-45',
+          'grid grid-cols-2 gap-px overflow-clip rounded border border-line bg-line',
+          fourInOneRow ? '@2xl:grid-cols-4' : '@lg:grid-cols-3',
+          dimmed && 'stale',
         )}
       >
         {shown.map(({ key, ...cell }) => (
@@ -139,7 +147,7 @@ export function FiguresStrip({ estimate, dimmed, unit, onUnit }: FiguresStripPro
             <Cell {...cell} unit={unit} onUnit={onUnit} />
           </div>
         ))}
-        <div className="bg-sheet px-4 py-3 max-@2xl:last:odd:col-span-2">
+        <div className={classNames('bg-sheet px-4 py-3', spanOfLast(shown.length + 1))}>
           <VerdictCell estimate={estimate} />
         </div>
       </dl>

@@ -144,12 +144,7 @@ export function GoldenRuleSheet({ estimate, fileName }: { estimate: Estimate; fi
   }
   const transforms = transformTex(draft.document.interaction.terms, forms);
   return (
-    <div
-      className={classNames(
-        'flex flex-col gap-4 transition-opacity delay-100',
-        stale && '[&_li]:opacity-60',
-      )}
-    >
+    <div className={classNames('flex flex-col gap-4', stale && 'stale')}>
       <BoxSide rule={rule} estimate={estimate} />
       <section aria-label="Chain" className="rounded border border-line bg-sheet">
         <ol>

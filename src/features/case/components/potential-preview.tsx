@@ -103,7 +103,7 @@ export function PotentialPreview({ potential, rows = [], dimmed, name }: Potenti
       viewBox={`0 0 ${W} ${H}`}
       role="img"
       aria-label={spoken(sketch, potential, rows, name)}
-      className={classNames('w-full max-w-md font-sans transition-opacity', dimmed && 'opacity-45')}
+      className={classNames('w-full max-w-md font-sans', dimmed && 'stale')}
     >
       <text x={LEFT + 6} y={TOP - 9} className="fill-muted text-[12px]">
         V(r), {formatNumber(sketch.v[0], 3)} to {formatNumber(sketch.v[1], 3)} {unitSymbol(unit.v)}

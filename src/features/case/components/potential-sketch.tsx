@@ -115,7 +115,7 @@ export function PotentialSketch({ estimate, dimmed }: PotentialSketchProps) {
   const length = wavelength.value * composedFactor(wavelength.unit, potential.unit.r);
   const spoken = `V(r) from ${formatNumber(sketch.v[0], 3)} to ${formatNumber(sketch.v[1], 3)} ${potential.unit.v} up to r = ${formatNumber(sketch.r[1], 3)} ${potential.unit.r}; the wavelength is ${formatNumber(length, 3)} ${potential.unit.r}.`;
   return (
-    <figure className={classNames('transition-opacity delay-100', dimmed && 'opacity-45')}>
+    <figure className={classNames(dimmed && 'stale')}>
       <svg
         viewBox={`0 0 ${W} ${H}`}
         role="img"
