@@ -24,8 +24,8 @@ function pathOf(points: Sketch['curves'][number]['points'], sketch: Sketch): str
 
 function yOf(sketch: Sketch): (v: number) => number {
   const [low, high] = sketch.v;
-  const span = high - low || 1;
-  return (v) => TOP + ((BOTTOM - TOP) * (high - v)) / span;
+  const span = high - low;
+  return (v) => (span > 0 ? TOP + ((BOTTOM - TOP) * (high - v)) / span : BOTTOM);
 }
 
 /** The wavelength as a bar on the scale of r, or in words where it does not fit the picture. */
@@ -85,15 +85,46 @@ function Axes({ sketch, rUnit, vUnit }: { sketch: Sketch; rUnit: string; vUnit: 
       >
         r to {formatNumber(sketch.r[1], 3)} {unitSymbol(rUnit)}
       </text>
-      <path d={`M${LEFT - 4},${y}h8`} className="stroke-edge" />
-      <text
-        x={RIGHT}
-        y={deep < 0 ? BOTTOM + 3 : TOP + 3}
-        textAnchor="end"
-        className="fill-muted text-[12px]"
-      >
-        {sketch.cut ? 'cut off at' : deep < 0 ? 'deepest' : 'highest'} {formatNumber(deep, 3)}{' '}
-        {unitSymbol(vUnit)}
+      {deep !== 0 && (
+        <>
+          <path d={`M${LEFT - 4},${y}h8`} className="stroke-edge" />
+          <text
+            x={RIGHT}
+            y={deep < 0 ? BOTTOM + 3 : TOP + 3}
+            textAnchor="end"
+            className="fill-muted text-[12px]"
+          >
+            {sketch.cut ? 'cut off at' : deep < 0 ? 'deepest' : 'highest'} {formatNumber(deep, 3)}{' '}
+            {unitSymbol(vUnit)}
+          </text>
+        </>
+      )}
+    </g>
+  );
+}
+
+/** Where V is infinite: hatched up to the wall. */
+function Wall({ radius, end, unit }: { radius: number; end: number; unit: string }) {
+  const width = ((RIGHT - LEFT) * radius) / end;
+  const height = BOTTOM - TOP;
+  const step = 14;
+  const strokes = Array.from({ length: Math.ceil((width + height) / step) }, (_, i) => {
+    const at = step * (i + 1);
+    const [x1, y1] = [Math.max(0, at - height), Math.min(at, height)];
+    const [x2, y2] = [Math.min(at, width), Math.max(0, at - width)];
+    return `M${LEFT + x1},${TOP + y1}L${LEFT + x2},${TOP + y2}`;
+  });
+  return (
+    <g>
+      <path d={strokes.join('')} className="fill-none stroke-line" />
+      <path
+        d={`M${LEFT + width},${TOP}V${BOTTOM}`}
+        className="fill-none stroke-barn"
+        strokeWidth="2.2"
+      />
+      <rect x={LEFT + 8} y={TOP + 34} width="176" height="22" className="fill-sheet" />
+      <text x={LEFT + 14} y={TOP + 49} className="fill-ink text-[12px]">
+        V = ∞ within r = {formatNumber(radius, 4)} {unitSymbol(unit)}
       </text>
     </g>
   );
@@ -113,7 +144,11 @@ export function PotentialSketch({ estimate, dimmed }: PotentialSketchProps) {
   const sketch = sketchOf(potential);
   const { wavelength } = kinematics;
   const length = wavelength.value * composedFactor(wavelength.unit, potential.unit.r);
-  const spoken = `V(r) from ${formatNumber(sketch.v[0], 3)} to ${formatNumber(sketch.v[1], 3)} ${potential.unit.v} up to r = ${formatNumber(sketch.r[1], 3)} ${potential.unit.r}; the wavelength is ${formatNumber(length, 3)} ${potential.unit.r}.`;
+  const wall =
+    sketch.wall === null
+      ? ''
+      : `V is infinite within r = ${formatNumber(sketch.wall, 4)} ${potential.unit.r}; beyond, `;
+  const spoken = `${wall}V(r) from ${formatNumber(sketch.v[0], 3)} to ${formatNumber(sketch.v[1], 3)} ${potential.unit.v} up to r = ${formatNumber(sketch.r[1], 3)} ${potential.unit.r}; the wavelength is ${formatNumber(length, 3)} ${potential.unit.r}.`;
   return (
     <figure className={classNames(dimmed && 'stale')}>
       <svg
@@ -122,6 +157,9 @@ export function PotentialSketch({ estimate, dimmed }: PotentialSketchProps) {
         aria-label={spoken}
         className="w-full max-w-md font-sans"
       >
+        {sketch.wall !== null && (
+          <Wall radius={sketch.wall} end={sketch.r[1]} unit={potential.unit.r} />
+        )}
         <Axes sketch={sketch} rUnit={potential.unit.r} vUnit={potential.unit.v} />
         {sketch.curves.map((curve, i) => (
           <path

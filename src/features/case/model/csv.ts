@@ -1,4 +1,5 @@
 import { fullDigits } from '#shared/units/format.ts';
+import { csvOf } from '#src/lib/csv.ts';
 import type { Curve } from './curves.ts';
 
 export interface TableUnits {
@@ -8,10 +9,6 @@ export interface TableUnits {
   /** Of dσ/dΩ: angstrom2/sr. */
   dcs: string;
   frame: 'cm' | 'lab';
-}
-
-function cell(text: string): string {
-  return /[",\n]/.test(text) ? `"${text.replaceAll('"', '""')}"` : text;
 }
 
 const number = (value: number | null | undefined) =>
@@ -40,8 +37,7 @@ export function curvesRows(curves: readonly Curve[], units: TableUnits): string[
 }
 
 export function curvesCsv(curves: readonly Curve[], units: TableUnits): string {
-  const lines = curvesRows(curves, units).map((row) => row.map(cell).join(','));
-  return `${lines.join('\r\n')}\r\n`;
+  return csvOf(curvesRows(curves, units));
 }
 
 /** For the clipboard: a spreadsheet takes columns parted by tabs as they are. */

@@ -14,6 +14,8 @@ export interface Sketch {
   v: [number, number];
   /** The curve goes on beyond the lower or upper end. */
   cut: boolean;
+  /** Radius within which V is infinite and has no points. */
+  wall: number | null;
 }
 
 const COMPLEX = (v: Potential['v'][number]): { re: number; im: number } =>
@@ -36,6 +38,11 @@ function usefulEnd(r: readonly number[], sizes: readonly number[]): number {
     end = r[i] ?? end;
   }
   return Math.max(end * 1.1 < last ? end * 1.1 : last, last / 20);
+}
+
+/** Finite potentials are sampled from next to the origin; where the first points are missing, nothing enters. */
+function wallOf([first = 0, second = 0]: readonly number[]): number | null {
+  return first > 5 * (second - first) ? first : null;
 }
 
 /** V(r) cut to a window that shows its shape, real and imaginary part. */
@@ -61,5 +68,6 @@ export function sketchOf(potential: Potential): Sketch {
     r: [0, end],
     v: [Math.min(0, ...ys), Math.max(0, ...ys)],
     cut: Math.max(...sizes, 0) > top,
+    wall: wallOf(potential.r),
   };
 }
