@@ -28,7 +28,7 @@ echarts.use([
 
 interface PlotCanvasProps {
   picture: PlotPicture;
-  onPoint: (x: number) => void;
+  onPoint: (x: number, y: number) => void;
   onWindow: (window: [number, number]) => void;
   /** Where dragging marks a band: its two ends, in the order they were drawn. */
   onBand?: ((from: number, to: number) => void) | undefined;
@@ -55,6 +55,7 @@ export default function PlotCanvas({ picture, onPoint, onWindow, onBand }: PlotC
   const box = useRef<HTMLDivElement>(null);
   /** Where a drag began: it outlives the redrawing that it causes. */
   const pressed = useRef<Pointer>(null);
+  const grids = picture.panel ? 2 : 1;
 
   // The wrapper ignores the first resize after a remount, so the plot watches its box itself.
   useEffect(() => {
@@ -69,20 +70,23 @@ export default function PlotCanvas({ picture, onPoint, onWindow, onBand }: PlotC
     const instance = chart.current?.getEchartsInstance();
     const surface = instance?.getZr();
     if (!instance || !surface) return;
-    const abscissaAt = ({ offsetX, offsetY }: Pointer) => {
-      const [x] = instance.convertFromPixel('grid', [offsetX, offsetY]);
-      return typeof x === 'number' && Number.isFinite(x) ? x : null;
+    const placeAt = ({ offsetX, offsetY }: Pointer) => {
+      const [x, y] = instance.convertFromPixel('grid', [offsetX, offsetY]);
+      return typeof x === 'number' && Number.isFinite(x) ? [x, y ?? 0] : null;
     };
+    const abscissaAt = (pointer: Pointer) => placeAt(pointer)?.[0] ?? null;
     const inside = ({ offsetX, offsetY }: Pointer) =>
-      instance.containPixel('grid', [offsetX, offsetY]);
+      Array.from({ length: grids }, (_, gridIndex) => gridIndex).some((gridIndex) =>
+        instance.containPixel({ gridIndex }, [offsetX, offsetY]),
+      );
     const follow = (event: Pointer) => {
       const start = pressed.current;
       if (start && onBand && Math.abs(event.offsetX - start.offsetX) >= DRAG_PIXELS) {
         const [from, to] = [abscissaAt(start), abscissaAt(event)];
         if (from !== null && to !== null) onBand(from, to);
       }
-      const x = inside(event) ? abscissaAt(event) : null;
-      if (x !== null) onPoint(x);
+      const [x, y] = (inside(event) ? placeAt(event) : null) ?? [];
+      if (x !== undefined && y !== undefined) onPoint(x, y);
     };
     const press = (event: Pointer) => {
       const { offsetX, offsetY } = event;
@@ -101,7 +105,7 @@ export default function PlotCanvas({ picture, onPoint, onWindow, onBand }: PlotC
       surface.off('mousedown', press);
       surface.off('mouseup', release);
     };
-  }, [onPoint, onBand]);
+  }, [onPoint, onBand, grids]);
 
   const onZoom = (event: ZoomEvent) => {
     const { start, end } = event.batch?.[0] ?? event;

@@ -21,17 +21,20 @@ export function downloadCsv(name: string, text: string): void {
   download(`${name}.csv`, new Blob(['\ufeff', text], { type: 'text/csv;charset=utf-8' }));
 }
 
-async function svgText(picture: PlotPicture): Promise<string> {
-  const [echarts] = await Promise.all([import('echarts/core'), import('./plot-canvas.tsx')]);
-  const chart = echarts.init(null, null, {
-    renderer: 'svg',
-    ssr: true,
-    width: WIDTH,
-    height: HEIGHT,
-  });
+/** A plane stays square on paper too; two plots above each other need the height. */
+function sizeOf({ plane, panel }: PlotPicture): { width: number; height: number } {
+  if (plane) return { width: 640, height: 640 };
+  return { width: WIDTH, height: panel ? 1.3 * HEIGHT : HEIGHT };
+}
+
+/** The picture as it goes out: light, with its legend inside, without crosshair and marked band. */
+function exported(picture: PlotPicture) {
   const shown = picture.series.filter(({ key }) => !picture.hidden.has(key));
-  chart.setOption({
-    ...plotOption({ ...picture, cursor: null, band: null }, light),
+  const margins = picture.plane
+    ? { left: 78, right: 26, top: 44, bottom: 60 }
+    : { left: 78, right: 24, top: 44, bottom: 58 };
+  return {
+    ...plotOption({ ...picture, cursor: null, band: null }, light, margins),
     backgroundColor: light.sheet,
     legend: {
       data: shown.map(({ name }) => name),
@@ -40,8 +43,13 @@ async function svgText(picture: PlotPicture): Promise<string> {
       textStyle: { color: light.ink },
       itemWidth: 34,
     },
-    grid: { left: 78, right: 24, top: 44, bottom: 58 },
-  });
+  };
+}
+
+async function svgText(picture: PlotPicture): Promise<string> {
+  const [echarts] = await Promise.all([import('echarts/core'), import('./plot-canvas.tsx')]);
+  const chart = echarts.init(null, null, { renderer: 'svg', ssr: true, ...sizeOf(picture) });
+  chart.setOption(exported(picture));
   const text = chart.renderToSVGString();
   chart.dispose();
   return text;
@@ -57,23 +65,10 @@ export async function downloadPng(name: string, picture: PlotPicture): Promise<v
   await import('./plot-canvas.tsx');
   const chart = echarts.init(document.createElement('div'), null, {
     renderer: 'canvas',
-    width: WIDTH,
-    height: HEIGHT,
     devicePixelRatio: 2,
+    ...sizeOf(picture),
   });
-  const shown = picture.series.filter(({ key }) => !picture.hidden.has(key));
-  chart.setOption({
-    ...plotOption({ ...picture, cursor: null, band: null }, light),
-    backgroundColor: light.sheet,
-    legend: {
-      data: shown.map((entry) => entry.name),
-      top: 8,
-      right: 18,
-      textStyle: { color: light.ink },
-      itemWidth: 34,
-    },
-    grid: { left: 78, right: 24, top: 44, bottom: 58 },
-  });
+  chart.setOption(exported(picture));
   const canvas = chart.getRenderedCanvas({ pixelRatio: 2, backgroundColor: light.sheet });
   const blob = await new Promise<Blob | null>((resolve) => canvas.toBlob(resolve, 'image/png'));
   chart.dispose();

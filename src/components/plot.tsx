@@ -1,12 +1,13 @@
-import { Suspense, lazy, useCallback, useId, useState, type ReactNode } from 'react';
+import { Suspense, lazy, useCallback, useEffect, useId, useState, type ReactNode } from 'react';
 import { ZoomIn, ZoomOut } from 'lucide-react';
 import { classNames } from '#src/lib/class-names.ts';
 import { usePalette } from '#src/lib/theme.ts';
 import { IconButton } from './button.tsx';
 import { PlotExportMenu } from './plot-export-menu.tsx';
 import { PlotHandle } from './plot-handle.tsx';
-import { styleOf } from './plot-option.ts';
-import type { PlotAxis, PlotPicture, PlotSeries, Scale } from './plot-types.ts';
+import { styleOf } from './plot-curves.ts';
+import { planeAxes } from './plot-plane.ts';
+import type { PlotAxis, PlotPanel, PlotPicture, PlotSeries, Scale } from './plot-types.ts';
 
 const PlotCanvas = lazy(() => import('./plot-canvas.tsx'));
 const WHOLE = [0, 100] as const;
@@ -31,6 +32,10 @@ interface PlotProps {
   dimmed?: boolean;
   fileName: string;
   csv: () => string;
+  /** A second plot below, over the same abscissa. */
+  panel?: PlotPanel | null;
+  /** Complex numbers in their plane, in the order of a parameter that the slider goes through. */
+  plane?: { guides?: ReadonlyArray<PlotSeries['points']> };
   /** A part of the abscissa marked by dragging; without it dragging moves a zoomed plot. */
   band?: { ends: readonly [number, number] | null; onBand: (from: number, to: number) => void };
 }
@@ -79,12 +84,25 @@ function Legend(props: {
   );
 }
 
-function nearestPlace(points: PlotSeries['points'], x: number): number {
+/** The point next to the pointer: along the abscissa, or in a plane in both directions. */
+function nearestPlace(points: PlotSeries['points'], x: number, y: number | null): number {
   let best = 0;
-  points.forEach(([at], place) => {
-    if (Math.abs(at - x) < Math.abs((points[best]?.[0] ?? Infinity) - x)) best = place;
+  let least = Infinity;
+  points.forEach(([atX, atY], place) => {
+    const away = y === null ? Math.abs(atX - x) : Math.hypot(atX - x, (atY ?? Infinity) - y);
+    if (away < least) [best, least] = [place, away];
   });
   return best;
+}
+
+/** True once something has lasted for a moment, false at once: what passes quickly does not flicker. */
+function useLasting(now: boolean): boolean {
+  const [lasting, setLasting] = useState(false);
+  useEffect(() => {
+    const timer = setTimeout(() => setLasting(now), now ? 120 : 0);
+    return () => clearTimeout(timer);
+  }, [now]);
+  return now && lasting;
 }
 
 function zoomed([from, to]: readonly [number, number], about: number): [number, number] {
@@ -93,25 +111,45 @@ function zoomed([from, to]: readonly [number, number], about: number): [number, 
   return [middle - half, middle + half];
 }
 
+/** A plane is square; two plots above each other need more room than one. */
+function heightOf(isPlane: boolean, hasPanel: boolean): string {
+  if (isPlane) return 'mx-auto aspect-square w-full max-w-[26rem]';
+  return hasPanel ? 'h-[400px] sm:h-[480px]' : 'h-[300px] sm:h-[350px]';
+}
+
 /** The one plot of the application: legend that toggles, crosshair for mouse, touch and keyboard, zoom, and export. */
 export function Plot(props: PlotProps) {
-  const { label, series, x, y, yScale, cursor, onCursor, band } = props;
+  const { label, series, yScale, cursor, onCursor, band, panel = null, plane } = props;
   const [hidden, setHidden] = useState<ReadonlySet<string>>(new Set());
   const [window, setWindow] = useState<readonly [number, number]>(WHOLE);
   const sliderId = useId();
   const first = series[0]?.points;
-  const at = first?.[Math.min(cursor, first.length - 1)]?.[0] ?? null;
+  const place = Math.min(cursor, (first?.length ?? 1) - 1);
+  const [at = null, level = null] = first?.[place] ?? [];
+  const isPlane = plane !== undefined;
+  const guides = plane?.guides ?? [];
+  const shown = series.filter(({ key }) => !hidden.has(key)).map(({ points }) => points);
+  const { x, y } = isPlane
+    ? planeAxes(
+        props,
+        [...shown, ...guides],
+        100 / (window[1] - window[0]),
+        at === null || level === null ? null : [at, level],
+      )
+    : props;
   const picture: PlotPicture = {
-    ...{ series, x, y, yScale, hidden, cursor: at, window },
+    ...{ series, x, y, yScale, hidden, cursor: at, place, window, panel, guides },
+    plane: isPlane,
     band: band?.ends ?? null,
     marking: band !== undefined,
+    faded: useLasting(props.dimmed ?? false),
   };
 
   const onPoint = useCallback(
-    (value: number) => {
-      if (first) onCursor(nearestPlace(first, value));
+    (pointX: number, pointY: number) => {
+      if (first) onCursor(nearestPlace(first, pointX, isPlane ? pointY : null));
     },
-    [first, onCursor],
+    [first, onCursor, isPlane],
   );
   const toggle = (key: string) =>
     setHidden((keys) => {
@@ -119,7 +157,8 @@ export function Plot(props: PlotProps) {
       if (!next.delete(key)) next.add(key);
       return next;
     });
-  const descending = first !== undefined && (first[0]?.[0] ?? 0) > (first.at(-1)?.[0] ?? 0);
+  const descending =
+    first !== undefined && !isPlane && (first[0]?.[0] ?? 0) > (first.at(-1)?.[0] ?? 0);
   const last = Math.max(0, (first?.length ?? 1) - 1);
   const ends = first ? [first[0]?.[0] ?? 0, first[last]?.[0] ?? 1] : [0, 1];
   const [low = 0, high = 1] = [Math.min(...ends), Math.max(...ends)];
@@ -154,8 +193,8 @@ export function Plot(props: PlotProps) {
         aria-label={`${label}. The numbers stand in the table below.`}
         aria-busy={props.dimmed || undefined}
         className={classNames(
-          'relative h-[300px] transition-opacity delay-100 duration-150 sm:h-[350px]',
-          props.dimmed && 'opacity-45',
+          'relative',
+          heightOf(isPlane, panel !== null),
           band && 'cursor-crosshair',
         )}
       >
@@ -170,7 +209,7 @@ export function Plot(props: PlotProps) {
       </div>
       <div>
         {/* Inset as the axis is, so that the handle stands below the crosshair. */}
-        <div className="flex pr-[11px] pl-[55px]" data-screen-only>
+        <div className={classNames('flex', !isPlane && 'pr-[11px] pl-[55px]')} data-screen-only>
           <label htmlFor={sliderId} className="sr-only">
             Crosshair
           </label>

@@ -35,7 +35,7 @@ function angleInterval(curves: readonly Curve[], unit: string): { interval?: num
 }
 
 function plotted(curves: readonly Curve[], abscissa: Abscissa) {
-  return curves.flatMap(({ key, name, points }, style) => {
+  return curves.flatMap(({ key, name, style, points }) => {
     const pairs = points.flatMap((point): [number, number | null][] => {
       const x = abscissaOf(point, abscissa);
       return x === null ? [] : [[x, point.dcs]];

@@ -23,8 +23,19 @@ export interface CurvePoint {
 export interface Curve {
   key: string;
   name: string;
+  /** Place in the list of colours and dashes: a method looks the same wherever it is drawn. */
+  style: number;
   points: CurvePoint[];
 }
+
+/** The exact curve comes second, as it is the one most often drawn beside first order. */
+export const METHOD_STYLES: Record<Method, number> = {
+  born1: 0,
+  partialWaves: 1,
+  born2: 2,
+  eikonal: 3,
+};
+const BRANCH_STYLES = { low: 4, high: 5 } as const;
 
 interface Scale {
   toRadians: number;
@@ -79,36 +90,51 @@ function curvesOfMethod(
   method: Method,
   points: readonly DifferentialPoint[],
   scale: Scale,
+  apart: boolean,
 ): Curve[] {
   const name = METHOD_NAMES[method];
-  const sum = { key: method, name, points: points.map((point) => pointOf(point, scale)) };
+  const sum = {
+    key: method,
+    name,
+    style: METHOD_STYLES[method],
+    points: points.map((point) => pointOf(point, scale)),
+  };
   if (!points.some((point) => (point.branches?.length ?? 0) > 0)) return [sum];
+  const both = { ...sum, name: `${name}, both branches` };
+  if (!apart) return [both];
   return [
-    { ...sum, name: `${name}, both branches` },
+    both,
     {
       key: `${method}-low`,
       name: `${name}, smaller θ cm`,
+      style: BRANCH_STYLES.low,
       points: branchPoints(points, 0, scale),
     },
     {
       key: `${method}-high`,
       name: `${name}, larger θ cm`,
+      style: BRANCH_STYLES.high,
       points: branchPoints(points, 1, scale),
     },
   ];
 }
 
-/** The curves of an estimate, dσ/dΩ in `areaUnit` per steradian. */
-export function curvesOf(estimate: Estimate, areaUnit: string): Curve[] {
+/**
+ * The curves of an estimate, dσ/dΩ in `areaUnit` per steradian; two branches of the lab are told apart in the first method alone, and
+ * with `sums` in none.
+ */
+export function curvesOf(estimate: Estimate, areaUnit: string, { sums = false } = {}): Curve[] {
   const scale = {
     toRadians: UNITS.angle[estimate.units.angle] ?? Math.PI / 180,
     area: composedFactor(estimate.units.area, areaUnit),
   };
-  return METHODS.flatMap((method) => {
+  const computed = METHODS.flatMap((method) => {
     const result = estimate.methods[method];
-    if (!result || 'unavailable' in result) return [];
-    return curvesOfMethod(method, result.differential, scale);
+    return !result || 'unavailable' in result ? [] : [{ method, points: result.differential }];
   });
+  return computed.flatMap(({ method, points }, place) =>
+    curvesOfMethod(method, points, scale, place === 0 && !sums),
+  );
 }
 
 export function abscissaOf(point: CurvePoint, abscissa: Abscissa): number | null {
