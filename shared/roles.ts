@@ -24,6 +24,11 @@ export const ACTIONS = [
   'case.write',
   'case.withdraw',
   'campaign.list',
+  'interaction.read',
+  'interaction.publish',
+  'interaction.retire',
+  'settings.read',
+  'settings.write',
   'session.own',
   'token.own',
   'user.list',
@@ -37,6 +42,11 @@ const everyone = {
   'session.own': 'own',
   'token.own': 'own',
   'campaign.list': 'any',
+  'interaction.read': 'any',
+  'interaction.publish': 'none',
+  'interaction.retire': 'none',
+  'settings.read': 'any',
+  'settings.write': 'none',
 } as const satisfies Partial<Record<Action, Reach>>;
 
 const researcher = {
@@ -50,11 +60,16 @@ const researcher = {
   'user.write': 'none',
 } as const satisfies Record<Action, Reach>;
 
-/** The table. An administrator reads no case; a lab manager reads all and writes their own. */
+/** The table. An administrator reads no case; a lab manager reads all and writes their own; a theorist keeps the library. */
 export const PERMISSIONS: Record<Role, Record<Action, Reach>> = {
   experimentalist: researcher,
-  theorist: researcher,
-  manager: { ...researcher, 'case.read': 'any', 'case.write': 'own' },
+  theorist: { ...researcher, 'interaction.publish': 'any', 'interaction.retire': 'own' },
+  manager: {
+    ...researcher,
+    'case.read': 'any',
+    'case.write': 'own',
+    'interaction.retire': 'any',
+  },
   administrator: {
     ...everyone,
     'case.list': 'none',
@@ -64,5 +79,6 @@ export const PERMISSIONS: Record<Role, Record<Action, Reach>> = {
     'case.withdraw': 'none',
     'user.list': 'any',
     'user.write': 'any',
+    'settings.write': 'any',
   },
 };

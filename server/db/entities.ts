@@ -2,6 +2,12 @@ import { Renewal, Session, SignInFailure } from '#server/modules/auth/session.en
 import { Campaign, CampaignMember } from '#server/modules/campaigns/campaign.entity.ts';
 import { CaseVersion, VersionStatus } from '#server/modules/cases/case-version.entity.ts';
 import { Case } from '#server/modules/cases/case.entity.ts';
+import {
+  Interaction,
+  InteractionStatusRow,
+  InteractionVersion,
+} from '#server/modules/library/interaction.entity.ts';
+import { SettingsVersion } from '#server/modules/settings/settings-version.entity.ts';
 import { PersonalToken } from '#server/modules/tokens/personal-token.entity.ts';
 import { Account } from '#server/modules/users/account.entity.ts';
 import { OutboxDelivery, OutboxMessage } from '#server/outbox/outbox.entity.ts';
@@ -18,6 +24,10 @@ export const ENTITIES = [
   Case,
   CaseVersion,
   VersionStatus,
+  Interaction,
+  InteractionVersion,
+  InteractionStatusRow,
+  SettingsVersion,
   TrailEntry,
   OutboxMessage,
   OutboxDelivery,

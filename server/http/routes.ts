@@ -5,9 +5,11 @@ import { versionRoutes } from '#server/modules/cases/versions.routes.ts';
 import { estimateRoutes } from '#server/modules/estimates/estimates.routes.ts';
 import { formRoutes } from '#server/modules/forms/forms.routes.ts';
 import { healthRoutes } from '#server/modules/health/health.routes.ts';
+import { libraryRoutes } from '#server/modules/library/library.routes.ts';
 import { materialAidRoutes } from '#server/modules/material-aids/material-aids.routes.ts';
 import { referenceRoutes } from '#server/modules/reference/reference.routes.ts';
 import { searchRoutes } from '#server/modules/search/search.routes.ts';
+import { settingsRoutes } from '#server/modules/settings/settings.routes.ts';
 import { tokenRoutes } from '#server/modules/tokens/tokens.routes.ts';
 import { userRoutes } from '#server/modules/users/users.routes.ts';
 import type { Route } from './route.ts';
@@ -25,5 +27,7 @@ export const ROUTES: readonly Route[] = [
   ...materialAidRoutes,
   ...formRoutes,
   ...referenceRoutes,
+  ...libraryRoutes,
+  ...settingsRoutes,
   ...searchRoutes,
 ];

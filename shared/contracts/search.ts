@@ -2,6 +2,7 @@ import { z } from 'zod';
 
 export const SEARCH_KINDS = [
   'cases',
+  'interactions',
   'nuclides',
   'elements',
   'forms',
@@ -15,7 +16,7 @@ export const HITS_PER_GROUP = 8;
 export const searchQuerySchema = z.object({ q: z.string().max(200) });
 
 export const hitSchema = z.object({
-  /** What names it: identifier of a case, nuclide, symbol, key of a form, material or species. */
+  /** What names it: identifier of a case or an interaction, nuclide, symbol, key of a form, material or species. */
   key: z.string(),
   label: z.string(),
   /** One line that tells it from its neighbours. */

@@ -23,7 +23,7 @@ export interface ComputeContext {
 }
 
 /** A fault of the document, told by its place in what was sent: the document is a member there. */
-function withinDocument(fault: unknown): unknown {
+export function withinDocument(fault: unknown): unknown {
   if (!(fault instanceof DomainError) || fault.code !== 'invalidInput') return fault;
   const given = fault.details.errors ?? [{ path: '', message: fault.message }];
   const errors = given.map(({ path, message }) => ({ path: `/document${path}`, message }));

@@ -9,6 +9,7 @@ import type { Saving } from './add-version.ts';
 import { Case } from './case.entity.ts';
 import { computeContent } from './compute-content.ts';
 import type { ComputeContext } from './compute-content.ts';
+import { requireSoundCitation } from './sound-citation.ts';
 import { claimKey, findSaved } from './save-key.ts';
 import type { SaveKey, Saved } from './save-key.ts';
 import { searchText } from './search-text.ts';
@@ -33,6 +34,7 @@ export async function createCase(
   if (before) return before;
   const campaignId = input.campaignId ?? null;
   if (campaignId !== null) await requireCampaign(em, actor, campaignId);
+  await requireSoundCitation(em, input.document);
   const content = await computeContent(input.document, context);
   const saved: Saved = { caseId: randomUUID(), n: 1, lock: 1 };
   const kept = await em.transactional(async (tx) => {

@@ -7,6 +7,7 @@ import { CaseVersion } from './case-version.entity.ts';
 import { computeContent } from './compute-content.ts';
 import type { ComputeContext } from './compute-content.ts';
 import { findCase, lockCase, requireCurrent } from './lock-case.ts';
+import { requireSoundCitation } from './sound-citation.ts';
 import { claimKey, findSaved } from './save-key.ts';
 import type { SaveKey, Saved } from './save-key.ts';
 import { searchText } from './search-text.ts';
@@ -28,6 +29,7 @@ export async function saveVersion(
   const before = await findSaved(em, key);
   if (before) return before;
   requireCurrent(await findCase(em, caseId), ifMatch);
+  await requireSoundCitation(em, input.document);
   const content = await computeContent(input.document, context);
   const saved = await em.transactional(async (tx) => {
     const current = await lockCase(tx, caseId);

@@ -4,6 +4,8 @@ import type { Hit, SearchAnswer, SearchKind } from '#shared/contracts/search.ts'
 import type { Actor } from '#server/http/actor.ts';
 import { can } from '#server/http/can.ts';
 import { listCases } from '#server/modules/cases/list-cases.ts';
+import { describeTerms } from '#server/modules/library/interaction-content.ts';
+import { listInteractions } from '#server/modules/library/list-interactions.ts';
 import { plainNumber } from '#server/documents/plain-quantity.ts';
 import { elementName, findNuclides } from '#server/modules/reference/find-nuclides.ts';
 import { rankForm } from '#server/modules/reference/forms.ts';
@@ -83,6 +85,27 @@ async function cases(em: EntityManager, actor: Actor, q: string): Promise<Group>
   };
 }
 
+/** The lab's published interactions, by the search of the library. */
+async function interactions(em: EntityManager, q: string): Promise<Group> {
+  const { rows, total } = await listInteractions(em, {
+    ...{ q, status: 'published', sort: 'name' },
+    ...{ page: 1, pageSize: HITS_PER_GROUP },
+  });
+  const ranked = rows
+    .map((row) => ({ row, at: rank(q, { names: [row.content.name] }) ?? 4 }))
+    .sort((one, other) => one.at - other.at);
+  return {
+    kind: 'interactions',
+    hits: ranked.map(({ row }) => ({
+      key: row.id,
+      label: row.content.name,
+      detail: `Version ${row.n}: ${describeTerms(row.content.terms)}`,
+    })),
+    total,
+    best: ranked[0]?.at ?? Infinity,
+  };
+}
+
 function tables(q: string): Group[] {
   return [
     nuclides(q),
@@ -141,7 +164,8 @@ export async function searchEverything(
   const asked = q.trim();
   if (fold(asked) === '') return { q: asked, groups: [] };
   const own = can(actor, 'case.list') ? [await cases(em, actor, asked)] : [];
-  const groups = [...own, ...tables(asked)]
+  const library = can(actor, 'interaction.read') ? [await interactions(em, asked)] : [];
+  const groups = [...own, ...library, ...tables(asked)]
     .filter(({ total }) => total > 0)
     .sort((one, other) => one.best - other.best);
   return { q: asked, groups: groups.map(({ kind, hits, total }) => ({ kind, hits, total })) };

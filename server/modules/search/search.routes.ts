@@ -7,7 +7,8 @@ export const searchRoutes = [
     method: 'get',
     path: '/api/search',
     operationId: 'search',
-    summary: 'Cases you may read, nuclides, elements, forms, materials and particles, in groups',
+    summary:
+      'Cases you may read, interactions of the library, nuclides, elements, forms, materials and particles, in groups',
     tag: 'Reference',
     access: 'reference.read',
     query: searchQuerySchema,

@@ -2,6 +2,7 @@ import type { Hit, SearchAnswer, SearchKind } from '#shared/contracts/search.ts'
 
 export const KIND_WORDS: Record<SearchKind, string> = {
   cases: 'Cases',
+  interactions: 'Library',
   nuclides: 'Nuclides',
   elements: 'Elements',
   forms: 'Interaction forms',
@@ -9,9 +10,13 @@ export const KIND_WORDS: Record<SearchKind, string> = {
   species: 'Particles',
 };
 
+/** What many are called, where the heading does not say it. */
+const MANY: Partial<Record<SearchKind, string>> = { interactions: 'of the library' };
+
 /** The page of a hit. */
 const PAGES: Record<SearchKind, (hit: Hit) => string> = {
   cases: ({ key }) => `/cases/${encodeURIComponent(key)}`,
+  interactions: ({ key }) => `/library/interactions/${encodeURIComponent(key)}`,
   nuclides: ({ key }) => `/reference/nuclides/${encodeURIComponent(key)}`,
   elements: ({ key }) => `/reference/elements?q=${encodeURIComponent(key)}`,
   forms: ({ key }) => `/reference/forms/${encodeURIComponent(key)}`,
@@ -22,6 +27,7 @@ const PAGES: Record<SearchKind, (hit: Hit) => string> = {
 /** The list that holds all hits of a group. */
 const LISTS: Record<SearchKind, string> = {
   cases: '/cases',
+  interactions: '/library',
   nuclides: '/reference/nuclides',
   elements: '/reference/elements',
   forms: '/reference/forms',
@@ -53,7 +59,7 @@ export function placesOf({ groups, q }: SearchAnswer): PlaceGroup[] {
     const rest = {
       id: `hit-${kind}-all`,
       to: `${LISTS[kind]}?q=${encodeURIComponent(q)}`,
-      label: `All ${total} ${KIND_WORDS[kind].toLowerCase()}`,
+      label: `All ${total} ${MANY[kind] ?? KIND_WORDS[kind].toLowerCase()}`,
       detail: '',
     };
     return {
