@@ -1,5 +1,6 @@
 import type { Estimate, EstimateRequest } from '#shared/contracts/estimates.ts';
 import { computeEstimate } from '#server/modules/estimates/compute-estimate.ts';
+import type { EstimateTask } from '#server/modules/estimates/to-problem.ts';
 import type { MaterialAids, MaterialAidsRequest } from '#shared/contracts/material-aids.ts';
 import { computeMaterialAids } from '#server/modules/material-aids/compute-material-aids.ts';
 import { drawForm } from '#server/modules/reference/draw-form.ts';
@@ -7,7 +8,7 @@ import type { FormSheet } from '#server/modules/reference/draw-form.ts';
 
 /** What the engine can be asked, with what goes in and what comes out: plain JSON both ways. */
 export interface EngineKinds {
-  estimate: { input: EstimateRequest; output: Estimate };
+  estimate: { input: EstimateTask; output: Estimate };
   /** The same collision in a material. */
   materialAids: { input: MaterialAidsRequest; output: MaterialAids };
   /** What the Reference shows of a form: V(r), its transform, remarks. */

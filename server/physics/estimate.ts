@@ -5,13 +5,17 @@ import { transform, transformWithoutTail } from './methods/transform.ts';
 import { exchangeDcs } from './methods/exchange.ts';
 import { labToCm } from './kinematics/frames.ts';
 import type { Assessment } from './observables/assess.ts';
-import { assess } from './observables/assess.ts';
+import { assess, unassessed } from './observables/assess.ts';
+import type { Beyond } from './beyond-first-order.ts';
+import { beyondFirstOrder } from './beyond-first-order.ts';
+import type { Deviations } from './observables/deviation.ts';
+import { deviations } from './observables/deviation.ts';
 import type { ConeSamples, Scales } from './observables/cone-samples.ts';
 import { sampleCone } from './observables/cone-samples.ts';
 import type { CrossSections } from './observables/integrals.ts';
 import { crossSections } from './observables/cross-sections.ts';
-import type { CmPoint, LabPoint } from './observables/differential.ts';
-import { cmPoint, labPoint } from './observables/differential.ts';
+import type { Curve } from './observables/differential.ts';
+import { curveOf } from './observables/differential.ts';
 import type { GoldenRule } from './observables/golden-rule.ts';
 import { goldenRule } from './observables/golden-rule.ts';
 import type { PotentialCurve } from './observables/potential-curve.ts';
@@ -35,7 +39,7 @@ export interface GoldenRuleSheet extends GoldenRule {
 }
 
 export interface FirstBornResult {
-  differential: { frame: 'cm'; points: CmPoint[] } | { frame: 'lab'; points: LabPoint[] };
+  differential: Curve;
   integrals: CrossSections;
 }
 
@@ -45,6 +49,8 @@ export interface EstimateResult {
   potential: PotentialCurve;
   /** Null where it was not asked for. */
   firstBorn: FirstBornResult | Unavailable | null;
+  /** The other methods that were asked for. */
+  beyond: Beyond;
   goldenRule: GoldenRuleSheet | Unavailable;
   goldenRuleTheta: number;
   assessment: Assessment;
@@ -89,12 +95,11 @@ export function beyondAmplitude(problem: Problem) {
 const incoherentOf = ({ terms }: Problem): number =>
   terms.reduce((sum, { incoherent = 0 }) => sum + incoherent, 0);
 
-/** The curve of a problem from its amplitude, in the frame it is asked in. */
-export function differential(problem: Problem, born: FirstBorn): FirstBornResult['differential'] {
+/** The first-order curve of a problem, in the frame it is asked in. */
+export function differential(problem: Problem, born: FirstBorn): Curve {
   const { angles, frame, exchangeSpin, collision } = problem;
   const input = { born, k: collision.k, exchangeSpin, ...beyondAmplitude(problem) };
-  if (frame === 'cm') return { frame, points: angles.map((theta) => cmPoint(input, theta)) };
-  return { frame, points: angles.map((theta) => labPoint(input, collision.frame, theta)) };
+  return curveOf(input, angles, frame, collision.frame);
 }
 
 function exchangedDcs(problem: Problem, born: FirstBorn, theta: number): number | null {
@@ -159,15 +164,21 @@ function goldenRuleSheet(
   return { ...sheet, window, factorsAfter: factorsAfter(problem, born, theta, sheet.dcs) };
 }
 
-/** An interaction without first order (a hard sphere): what the potential and the kinematics still say. */
+/** An interaction without first order (a hard sphere): what the exact curve, the potential and the kinematics still say. */
 function withoutFirstOrder(problem: Problem, reason: string): EstimateResult {
+  const { terms, collision } = problem;
+  const rest = firstBorn(
+    terms.filter(({ noBorn }) => noBorn === undefined),
+    collision.twoMuOverHbar2,
+  );
   return {
     problem,
-    potential: potentialCurve(problem.terms, problem.collision.wavelength),
-    firstBorn: problem.wantsFirstBorn ? { unavailable: reason } : null,
+    potential: potentialCurve(terms, collision.wavelength),
+    firstBorn: problem.methods.includes('born1') ? { unavailable: reason } : null,
+    beyond: beyondFirstOrder(problem, rest, scalesOf(problem)),
     goldenRule: { unavailable: reason },
     goldenRuleTheta: problem.goldenRule.theta ?? middleAngle(problem),
-    assessment: { verdict: 'unassessed', criteria: [], reason },
+    assessment: unassessed(reason),
   };
 }
 
@@ -180,7 +191,7 @@ function withoutFirstOrder(problem: Problem, reason: string): EstimateResult {
  *   DomainError('invalidInput') for a box that leaves double precision
  */
 export function estimate(problem: Problem): EstimateResult {
-  const { terms, collision } = problem;
+  const { terms, collision, thresholds } = problem;
   const { k, twoMuOverHbar2 } = collision;
   const reason = terms.find((term) => term.noBorn !== undefined)?.noBorn;
   if (reason !== undefined) return withoutFirstOrder(problem, reason);
@@ -189,14 +200,49 @@ export function estimate(problem: Problem): EstimateResult {
   const hasTail = born.tail.re !== 0 || born.tail.im !== 0;
   const samples = hasTail ? null : sampleCone((q) => born.shortRange(q), k, scales);
   const theta = problem.goldenRule.theta ?? middleAngle(problem);
+  const beyond = beyondFirstOrder(problem, born, scales);
+  const off = deviationsOf(problem, born, scales, samples, beyond);
   return {
     problem,
     potential: potentialCurve(terms, collision.wavelength),
-    firstBorn: problem.wantsFirstBorn ? curveAndIntegrals(problem, born, scales, samples) : null,
+    firstBorn: problem.methods.includes('born1')
+      ? curveAndIntegrals(problem, born, scales, samples)
+      : null,
+    beyond,
     goldenRule: goldenRuleSheet(problem, born, theta, scales, samples),
     goldenRuleTheta: theta,
-    assessment: assess({ terms, born, k, twoMuOverHbar2, scales, samples }),
+    assessment: assess({
+      terms,
+      born,
+      k,
+      twoMuOverHbar2,
+      scales,
+      samples,
+      deviations: off,
+      thresholds,
+    }),
   };
+}
+
+/** First order against the exact curve, amplitude against amplitude; null where there is no exact one. */
+function deviationsOf(
+  { collision, exchangeSpin }: Problem,
+  born: FirstBorn,
+  scales: Scales,
+  samples: ConeSamples | null,
+  { partialWaves: exact }: Beyond,
+): Deviations | null {
+  if (!exact || 'unavailable' in exact) return null;
+  const { k } = collision;
+  const plain = crossSections({ born, k, scales, samples, exchangeSpin });
+  return deviations({
+    born,
+    exact: exact.amplitude,
+    k,
+    scales,
+    exchangeSpin,
+    elastic: { born: plain.elastic, exact: exact.integrals.elastic },
+  });
 }
 
 function curveAndIntegrals(

@@ -1,4 +1,5 @@
 import type { Regime, TwoBody } from './kinematics/two-body.ts';
+import type { Thresholds } from './observables/assess.ts';
 import type { Term } from './potentials/types.ts';
 
 /** A particle as the engine sees it; masses as mc² in eV. */
@@ -17,6 +18,8 @@ export interface Particle {
   massNumber: number | null;
 }
 
+export type MethodName = 'born1' | 'born2' | 'eikonal' | 'partialWaves';
+
 /** An estimate with all units ended: eV, angstrom, radian. */
 export interface Problem {
   projectile: Particle;
@@ -26,8 +29,10 @@ export interface Problem {
   regime: Regime;
   collision: TwoBody;
   terms: Term[];
-  /** Whether first order is asked for: the curve and its integrals are computed then. */
-  wantsFirstBorn: boolean;
+  /** Methods whose curve and integrals are asked for. */
+  methods: readonly MethodName[];
+  /** What decides the verdict. */
+  thresholds: Thresholds;
   frame: 'cm' | 'lab';
   /** rad, 0 to pi. */
   angles: number[];

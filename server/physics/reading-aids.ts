@@ -1,11 +1,10 @@
-import type { FirstBornResult } from './estimate.ts';
 import { differential, scalesOf } from './estimate.ts';
 import { chargeProductOf, leptonFactor } from './lepton-factor.ts';
 import type { Unavailable } from './methods/amplitude.ts';
 import { firstBorn } from './methods/born1.ts';
 import type { CmRange } from './observables/between-angles.ts';
 import { cmRanges, elasticBetween } from './observables/between-angles.ts';
-import type { CmPoint } from './observables/differential.ts';
+import type { CmPoint, Curve } from './observables/differential.ts';
 import { DIVERGENCES } from './observables/integrals.ts';
 import type { Integral } from './observables/integrals.ts';
 import type { Way } from './observables/kinematics-table.ts';
@@ -31,8 +30,8 @@ export interface PointCharges {
   kind: 'rutherford' | 'mott';
   chargeProduct: number;
   charges: 'interaction' | 'particles';
-  reference: FirstBornResult['differential'];
-  own: FirstBornResult['differential'];
+  reference: Curve;
+  own: Curve;
 }
 
 export interface ReadingAids {

@@ -2,6 +2,7 @@ import { COULOMB_EV_ANGSTROM, BOHR } from './constants/codata2022.ts';
 import type { EstimateResult } from './estimate.ts';
 import { scalesOf } from './estimate.ts';
 import { leptonWarnings } from './lepton-warnings.ts';
+import { methodWarnings } from './method-warnings.ts';
 import { tableResolution } from './table-warnings.ts';
 import {
   boundLength,
@@ -46,13 +47,17 @@ function coulombTotal({ problem }: EstimateResult): Warning | null {
   };
 }
 
-function exchangePhase({ problem }: EstimateResult): Warning | null {
+function exchangePhase({ problem, beyond }: EstimateResult): Warning | null {
   if (problem.exchangeSpin === null || tailOf(problem) === 0) return null;
+  const exact = beyond.partialWaves;
+  const instead =
+    exact && !('unavailable' in exact)
+      ? 'The curve of partial waves has the phase: take the interference from it.'
+      : 'Trust the sum of the two directions, not its oscillation, or ask for partial waves, which have the phase.';
   return {
     code: 'coulombPhaseMissing',
     level: 'caution',
-    message:
-      'First-order Coulomb amplitudes lack the phase eta ln sin²(theta/2), so the interference of the two identical particles is not that of the published (Mott) values. Trust the sum of the two directions, not its oscillation.',
+    message: `First-order Coulomb amplitudes lack the phase eta ln sin²(theta/2), so the interference of the two identical particles is not that of the published (Mott) values. ${instead}`,
   };
 }
 
@@ -213,6 +218,7 @@ export function warningsOf(result: EstimateResult): Warning[] {
     coulombTotal(result),
     boundLength(result),
     identicalIntegrals(result),
+    ...methodWarnings(result),
     notDrawn(result),
     ...ofTerms(result),
     tableResolution(result),

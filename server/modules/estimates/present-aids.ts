@@ -1,6 +1,6 @@
 import type { Aids, ElasticBetween, KinematicsRow, Reference } from '#shared/contracts/aids.ts';
 import type { EstimateRequest } from '#shared/contracts/estimates.ts';
-import type { FirstBornResult } from '#server/physics/estimate.ts';
+import type { Curve } from '#server/physics/observables/differential.ts';
 import type { CmPoint, LabPoint } from '#server/physics/observables/differential.ts';
 import type { Way } from '#server/physics/observables/kinematics-table.ts';
 import type { Problem } from '#server/physics/problem.ts';
@@ -64,7 +64,7 @@ interface Sum {
 }
 
 /** dσ/dΩ at every angle, branches added; null where there is none. */
-function sums(curve: FirstBornResult['differential']): (Sum | null)[] {
+function sums(curve: Curve): (Sum | null)[] {
   const one = ({ dcs }: CmPoint): Sum | null => dcs;
   const both = ({ branches }: LabPoint): Sum | null => {
     const parts = branches.map(one);

@@ -1,6 +1,5 @@
 import type { DifferentialPoint } from '#shared/contracts/estimates.ts';
-import type { FirstBornResult } from '#server/physics/estimate.ts';
-import type { CmPoint, LabPoint } from '#server/physics/observables/differential.ts';
+import type { CmPoint, Curve, LabPoint } from '#server/physics/observables/differential.ts';
 import { reasonAt } from '#server/physics/observables/differential.ts';
 import type { AnswerUnits } from './answer-units.ts';
 import { errorOf } from './answer-units.ts';
@@ -15,6 +14,12 @@ function dcsOf({ dcs }: CmPoint, units: AnswerUnits) {
   return { dcs: value, ...errorOf(value, units.areaOf(dcs.error), dcs.belowFloor) };
 }
 
+/** The analysing power, where there is one; null where there is no cross section. */
+function powerOf({ analysingPower, dcs }: CmPoint) {
+  if (analysingPower === undefined) return {};
+  return { analysingPower: dcs === null ? null : analysingPower };
+}
+
 function single(theta: number, point: CmPoint, units: AnswerUnits): DifferentialPoint {
   return {
     theta,
@@ -22,6 +27,7 @@ function single(theta: number, point: CmPoint, units: AnswerUnits): Differential
     ...dcsOf(point, units),
     ...(point.dcs === null && { reason: reasonAt(point) }),
     amplitude: amplitudeOf(point, units),
+    ...powerOf(point),
   };
 }
 
@@ -42,6 +48,7 @@ function double(theta: number, points: readonly CmPoint[], units: AnswerUnits): 
     q: units.inverseLengthOf(point.q),
     ...dcsOf(point, units),
     amplitude: amplitudeOf(point, units),
+    ...powerOf(point),
   }));
   return { theta, ...whole, branches };
 }
@@ -53,7 +60,7 @@ function labPointOf(theta: number, point: LabPoint, units: AnswerUnits): Differe
 }
 
 export function presentDifferential(
-  differential: FirstBornResult['differential'],
+  differential: Curve,
   typed: readonly number[],
   units: AnswerUnits,
 ): DifferentialPoint[] {

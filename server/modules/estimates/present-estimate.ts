@@ -1,24 +1,13 @@
-import type { Estimate, EstimateRequest, Integral, Method } from '#shared/contracts/estimates.ts';
+import type { Estimate, EstimateRequest, Validity } from '#shared/contracts/estimates.ts';
 import { ENGINE } from '#server/physics/version.ts';
 import type { EstimateResult } from '#server/physics/estimate.ts';
-import type { Integral as Computed } from '#server/physics/observables/integrals.ts';
+import { insteadOf } from '#server/physics/instead.ts';
+import type { Assessment } from '#server/physics/observables/assess.ts';
 import { warningsOf } from '#server/physics/warnings.ts';
-import { AnswerUnits, errorOf, finite } from './answer-units.ts';
-import { presentDifferential } from './present-differential.ts';
+import { AnswerUnits, finite } from './answer-units.ts';
 import { presentGoldenRule } from './present-golden-rule.ts';
+import { presentMethods } from './present-methods.ts';
 import { askedAngles } from './to-angles.ts';
-
-const NOT_YET: Record<Exclude<Method, 'born1'>, string> = {
-  born2: 'The second Born amplitude is not part of this version; first order (born1) is.',
-  eikonal: 'The eikonal amplitude is not part of this version; first order (born1) is.',
-  partialWaves: 'Partial waves are not part of this version; first order (born1) is.',
-};
-
-function integralOf(integral: Computed, units: AnswerUnits): Integral {
-  if ('divergent' in integral) return { divergent: true, reason: integral.divergent };
-  const value = units.areaOf(integral.value);
-  return { value, unit: units.area, ...errorOf(value, units.areaOf(integral.error)) };
-}
 
 function kinematicsOf({ problem }: EstimateResult, units: AnswerUnits): Estimate['kinematics'] {
   const { collision } = problem;
@@ -44,37 +33,31 @@ function potentialOf({ potential }: EstimateResult, units: AnswerUnits): Estimat
   };
 }
 
-function methodsOf(
-  { firstBorn }: EstimateResult,
-  request: EstimateRequest,
-  units: AnswerUnits,
-): Estimate['methods'] {
-  const methods: Estimate['methods'] = {};
-  for (const method of request.methods) {
-    if (method !== 'born1') methods[method] = { unavailable: true, reason: NOT_YET[method] };
-    else if (firstBorn && 'unavailable' in firstBorn) {
-      methods.born1 = { unavailable: true, reason: firstBorn.unavailable };
-    } else if (firstBorn) {
-      const { differential, integrals } = firstBorn;
-      methods.born1 = {
-        differential: presentDifferential(differential, askedAngles(request).values, units),
-        elastic: integralOf(integrals.elastic, units),
-        absorption: integralOf(integrals.absorption, units),
-        total: integralOf(integrals.total, units),
-        momentumTransfer: integralOf(integrals.momentumTransfer, units),
-        viscosity: integralOf(integrals.viscosity, units),
-      };
-    }
-  }
-  return methods;
+function deviationsOf({ deviations }: Assessment, units: AnswerUnits): Partial<Validity> {
+  if (!deviations) return {};
+  const { largest, largestAt, weighted, elastic, decides, limits } = deviations;
+  return {
+    deviation: finite(elastic ?? weighted),
+    deviations: {
+      largest: finite(largest),
+      largestAt: units.angleOf(largestAt),
+      weighted: finite(weighted),
+      ...(elastic !== null && { elastic: finite(elastic) }),
+      decides,
+      limits: { ...limits },
+    },
+  };
 }
 
-function validityOf({ assessment }: EstimateResult): Estimate['validity'] {
-  const { verdict, criteria, reason } = assessment;
+function validityOf(result: EstimateResult, units: AnswerUnits): Validity {
+  const { verdict, basis, criteria, reason } = result.assessment;
+  const instead = insteadOf(result);
   return {
     verdict,
-    basis: 'criteria',
+    basis,
+    ...deviationsOf(result.assessment, units),
     ...(reason !== null && { reason }),
+    ...(instead !== null && { instead }),
     criteria: criteria.map(({ name, value, limits, meaning, decides }) => ({
       name,
       value: finite(value),
@@ -107,9 +90,9 @@ export function presentEstimate(result: EstimateResult, request: EstimateRequest
     kinematics: kinematicsOf(result, units),
     identical: result.problem.exchangeSpin !== null,
     potential: potentialOf(result, units),
-    methods: methodsOf(result, request, units),
+    methods: presentMethods(result, request, units),
     goldenRule: presentGoldenRule(result, goldenRuleAngle(result, request, units), units),
-    validity: validityOf(result),
+    validity: validityOf(result, units),
     warnings: warningsOf(result),
     units: { length, area, energy, angle },
     frame: result.problem.frame,

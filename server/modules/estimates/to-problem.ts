@@ -5,6 +5,8 @@ import { twoBody } from '#server/physics/kinematics/two-body.ts';
 import { exchangeSpin, identicalByRule } from '#server/physics/methods/exchange.ts';
 import { smallestCorrectedFactor } from '#server/physics/methods/lepton-spin.ts';
 import { leptonFactor, spinObstacle } from '#server/physics/lepton-factor.ts';
+import type { Thresholds } from '#server/physics/observables/assess.ts';
+import { DEFAULT_THRESHOLDS } from '#server/physics/observables/assess.ts';
 import type { Particle, Problem } from '#server/physics/problem.ts';
 import { Faults } from './faults.ts';
 import { askedAngles, toAngles, toRadians } from './to-angles.ts';
@@ -113,11 +115,16 @@ function refuseBeyondFirstOrder(problem: Problem, faults: Faults): void {
   }
 }
 
+/** What a person asks, and by which thresholds of the lab its verdict is found; the defaults where none are given. */
+export interface EstimateTask extends EstimateRequest {
+  thresholds?: Thresholds;
+}
+
 /**
  * The problem an estimate asks: units end here, and every term is checked strictly against the register.
  * Throws DomainError('invalidInput') with all faults found, each with its JSON Pointer.
  */
-export function toProblem(request: EstimateRequest): Problem {
+export function toProblem(request: EstimateTask): Problem {
   const faults = new Faults();
   const projectile = toProjectile(request.projectile, faults);
   const target = toTarget(request.target, projectile?.charge ?? 1, faults);
@@ -148,7 +155,8 @@ export function toProblem(request: EstimateRequest): Problem {
     regime: request.kinematics ?? 'nonrelativistic',
     collision,
     terms,
-    wantsFirstBorn: request.methods.includes('born1'),
+    methods: request.methods,
+    thresholds: request.thresholds ?? DEFAULT_THRESHOLDS,
     frame: request.frame ?? 'cm',
     angles,
     exchangeSpin: spin,

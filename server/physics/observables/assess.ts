@@ -3,6 +3,7 @@ import type { Term } from '#server/physics/potentials/types.ts';
 import { largestBornPhase } from './born-phases.ts';
 import type { ConeSamples, Scales } from './cone-samples.ts';
 import { sampleCone } from './cone-samples.ts';
+import type { Deviations } from './deviation.ts';
 
 export type CriterionName = 'unitarity' | 'secondOrder' | 'slow' | 'fast' | 'eta';
 
@@ -15,9 +16,24 @@ export interface Criterion {
 
 export type Verdict = 'sound' | 'usable' | 'notValid' | 'unassessed';
 
+/** Below `sound` the approximation is sound, below `usable` usable. */
+export interface Limits {
+  sound: number;
+  usable: number;
+}
+
+/** What decides where an exact curve stands beside the first order, and where none does. */
+export interface Thresholds {
+  exact: Limits;
+  criteria: Limits;
+}
+
 export interface Assessment {
   verdict: Verdict;
-  criteria: (Criterion & { decides: boolean; limits: { sound: number; usable: number } })[];
+  basis: 'exact' | 'criteria';
+  /** Of the exact curve; null where none was computed. */
+  deviations: (Deviations & { decides: 'elastic' | 'weighted'; limits: Limits }) | null;
+  criteria: (Criterion & { decides: boolean; limits: Limits })[];
   /** Why nothing could be judged. */
   reason: string | null;
 }
@@ -30,10 +46,19 @@ export interface AssessInput {
   scales: Scales;
   /** Samples of the short-range amplitude where they are at hand already. */
   samples: ConeSamples | null;
+  /** First order against the exact curve; null where that was not asked for or there is none. */
+  deviations: Deviations | null;
+  thresholds: Thresholds;
 }
 
-/** Below the first the approximation is sound, below the second usable. */
-export const LIMITS = { sound: 0.1, usable: 1 } as const;
+export const DEFAULT_THRESHOLDS: Thresholds = {
+  exact: { sound: 0.02, usable: 0.2 },
+  criteria: { sound: 0.1, usable: 1 },
+};
+
+export function verdictOf(value: number, { sound, usable }: Limits): Verdict {
+  return value < sound ? 'sound' : value < usable ? 'usable' : 'notValid';
+}
 
 const isShortRange = (term: Term) => !(term.tail === 'coulomb' && term.norm === 0);
 const isActive = ({ strength }: Term) => strength.re !== 0 || strength.im !== 0;
@@ -130,36 +155,59 @@ function nothingThere(): Criterion {
 }
 
 /**
- * Is the first Born approximation to be trusted? Criteria, each with its number, and the verdict of the worst of them.
+ * Is the first Born approximation to be trusted? Where the exact curve was computed it decides; otherwise criteria do, each with
+ * its number, and the worst of them.
  *
- * Formula: max |T_l|; k sigma/(4 pi |f1(0)|); (2 mu/hbar²) |∫ r V dr| where k times the range is below one, else
- * |∫_{1/k}^∞ V dr|/(hbar v); Sommerfeld's eta for a Coulomb tail, the others then judge what the tail leaves.
+ * Formula: the deviation of the elastic total, or the weighted one where the total diverges; else max |T_l|;
+ * k sigma/(4 pi |f1(0)|); (2 mu/hbar²) |∫ r V dr| where k times the range is below one, else |∫_{1/k}^∞ V dr|/(hbar v);
+ * Sommerfeld's eta for a Coulomb tail, the others then judge what the tail leaves.
  *
- * @returns sound below 0.1, usable below 1, notValid above; unassessed with the reason where no criterion applies
+ * @returns sound or usable below the thresholds, notValid above; unassessed with the reason where no criterion applies
  *
- * Validity: orders of magnitude, not error bars; an exact calculation overrules them.
+ * Validity: criteria are orders of magnitude, not error bars; an exact calculation overrules them.
  *
  * Source: textbook; e.g. L. I. Schiff, Quantum Mechanics, 3rd ed. (1968), sec. 38.
  */
 export function assess(input: AssessInput): Assessment {
+  const { deviations, thresholds } = input;
+  const criteria = criteriaOf(input);
+  const worst = Math.max(...criteria.map(({ value }) => value));
+  const deciding = deviations ? -1 : criteria.findIndex(({ value }) => value === worst);
+  const listed = criteria.map((entry, i) => ({
+    ...entry,
+    limits: thresholds.criteria,
+    decides: i === deciding,
+  }));
+  if (deviations) {
+    const decides = deviations.elastic === null ? 'weighted' : 'elastic';
+    return {
+      verdict: verdictOf(deviations.elastic ?? deviations.weighted, thresholds.exact),
+      basis: 'exact',
+      deviations: { ...deviations, decides, limits: thresholds.exact },
+      criteria: listed,
+      reason: null,
+    };
+  }
+  const none = criteria.length === 0;
+  return {
+    verdict: none ? 'unassessed' : verdictOf(worst, thresholds.criteria),
+    basis: 'criteria',
+    deviations: null,
+    criteria: listed,
+    reason: none ? 'None of the criteria applies to this interaction.' : null,
+  };
+}
+
+function criteriaOf(input: AssessInput): Criterion[] {
   const hasTail = input.born.tail.re !== 0 || input.born.tail.im !== 0;
   const acts = hasTail || input.terms.some((term) => isActive(term) && isShortRange(term));
   const found = acts ? [eta(input), ...shortRangeCriteria(input)] : [nothingThere()];
-  const criteria = found.filter(
+  return found.filter(
     (entry): entry is Criterion => entry !== null && Number.isFinite(entry.value),
   );
-  const worst = Math.max(...criteria.map(({ value }) => value));
-  if (criteria.length === 0) {
-    return {
-      verdict: 'unassessed',
-      criteria: [],
-      reason: 'None of the criteria applies to this interaction.',
-    };
-  }
-  const deciding = criteria.findIndex(({ value }) => value === worst);
-  return {
-    verdict: worst < LIMITS.sound ? 'sound' : worst < LIMITS.usable ? 'usable' : 'notValid',
-    criteria: criteria.map((entry, i) => ({ ...entry, limits: LIMITS, decides: i === deciding })),
-    reason: null,
-  };
+}
+
+/** Where there is no first order, nothing can be judged. */
+export function unassessed(reason: string): Assessment {
+  return { verdict: 'unassessed', basis: 'criteria', deviations: null, criteria: [], reason };
 }

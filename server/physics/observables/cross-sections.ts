@@ -5,7 +5,7 @@ import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import { DomainError } from '#shared/errors.ts';
 import type { ConeSamples, Scales } from './cone-samples.ts';
 import { sampleCone } from './cone-samples.ts';
-import type { Computed, CrossSections } from './integrals.ts';
+import type { Computed, CrossSections, Integral } from './integrals.ts';
 import { DIVERGENCES, absorption, directIntegrals, exchangeIntegrals, sumOf } from './integrals.ts';
 
 export interface CrossSectionInput {
@@ -20,6 +20,8 @@ export interface CrossSectionInput {
   factor?: AngularFactor | null;
   /** Incoherent scattering, angstrom²/sr. */
   incoherent?: number;
+  /** What complex depths remove, where the method knows it by itself; first order's (4 pi/k) Im f(0) otherwise. */
+  absorption?: Integral;
 }
 
 const plus = (a: Computed, b: Computed): Computed => ({
@@ -46,7 +48,7 @@ function refuseCoarse({ value, error }: Computed, floor: number): void {
  */
 export function crossSections(input: CrossSectionInput): CrossSections {
   const { born, k, samples } = input;
-  const removed = absorption(born, k);
+  const removed = input.absorption ?? absorption(born, k);
   if (samples === null) {
     return {
       elastic: { divergent: DIVERGENCES.elastic },

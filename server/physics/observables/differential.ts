@@ -15,7 +15,12 @@ export interface DifferentialInput {
   factor?: AngularFactor | null;
   /** Incoherent scattering, angstrom²/sr. */
   incoherent?: number;
+  /** Spin-flip amplitude, angstrom; null without a spin-orbit term. */
+  flip?: ((q: number) => Amplitude) | null;
 }
+
+/** The curve of a method in the frame it is asked in. */
+export type Curve = { frame: 'cm'; points: CmPoint[] } | { frame: 'lab'; points: LabPoint[] };
 
 /** Cross section at one centre-of-mass angle; lengths in angstrom. */
 export interface CmPoint {
@@ -25,6 +30,8 @@ export interface CmPoint {
   amplitude: Amplitude | null;
   /** angstrom²/sr, with a bound of its error; null where it diverges. */
   dcs: { value: number; error: number; belowFloor: boolean } | null;
+  /** Of a fully polarised beam, with a spin-orbit term only. */
+  analysingPower?: number;
 }
 
 /** Cross section at one lab angle: none, one or two ways to get there. */
@@ -91,6 +98,24 @@ function exchangedAmplitude(
 }
 
 /**
+ * With a spin-orbit term: dσ/dΩ = |f|² + |g|² of an unpolarised beam, and A = 2 Im(f g*)/(|f|² + |g|²) of a polarised one, for the
+ * amplitude f + i g σ·n with n along k × k' (Madison convention).
+ */
+function polarised(
+  f: Amplitude,
+  g: Amplitude,
+  { thetaCm, q, floor }: { thetaCm: number; q: number; floor: number },
+): CmPoint {
+  const value = f.re * f.re + f.im * f.im + g.re * g.re + g.im * g.im;
+  const size = Math.sqrt(value);
+  const blur = f.error + g.error;
+  const error = (2 * size + blur) * blur + 5 * UNIT_ROUNDOFF * value;
+  const analysingPower = value > 0 ? (2 * (f.im * g.re - f.re * g.im)) / value : 0;
+  const dcs = { value, error, belowFloor: size <= floor };
+  return { thetaCm, q, amplitude: f, dcs, analysingPower };
+}
+
+/**
  * dσ/dΩ at one angle of the centre of mass.
  *
  * Formula: |f(q)|², q = 2k sin(theta/2), times the factor of a lepton's spin, plus what is incoherent; for identical particles with the
@@ -108,6 +133,7 @@ export function cmPoint(input: DifferentialInput, thetaCm: number, angleError = 
   const amplitude = born.amplitude(q, blur);
   if (amplitude === null) return { thetaCm, q, amplitude, dcs: null };
   refuseCoarse(amplitude, born.floor);
+  if (input.flip) return polarised(amplitude, input.flip(q), { thetaCm, q, floor: born.floor });
   if (exchangeSpin === null) {
     const size = Math.hypot(amplitude.re, amplitude.im);
     const value = amplitude.re * amplitude.re + amplitude.im * amplitude.im;
@@ -179,4 +205,15 @@ function outsideCone({ rhoMinusOne, thetaMax }: Frame): string {
   }
   const degrees = (thetaMax * 180) / Math.PI;
   return `The projectile is heavier than its target and never leaves a cone of ${degrees.toPrecision(6)} degrees in the lab; on its edge the cross section diverges.`;
+}
+
+/** dσ/dΩ at every angle, in the frame it is asked in. */
+export function curveOf(
+  input: DifferentialInput,
+  angles: readonly number[],
+  frame: 'cm' | 'lab',
+  between: Frame,
+): Curve {
+  if (frame === 'cm') return { frame, points: angles.map((theta) => cmPoint(input, theta)) };
+  return { frame, points: angles.map((theta) => labPoint(input, between, theta)) };
 }

@@ -53,37 +53,61 @@ const SINCE_0_2_0: Record<string, Moved> = {
   '250 MeV electrons on Ca-40: the shape of its charge, version 2': FORWARD,
 };
 
+/** Cautions that later versions know, left out where an older one is compared. */
+const KNOWN_SINCE_0_3_0 = ['signUnseen', 'spinlessBeyondFirstOrder'];
+
+function without(codes: readonly string[], digits: KeyDigits): KeyDigits {
+  const kept = String(digits['warnings'])
+    .split(' ')
+    .filter((code) => !codes.includes(code));
+  return { ...digits, warnings: kept.join(' ') };
+}
+
 interface Frozen {
   version: string;
   records: Record<string, KeyDigits>;
   moved: Record<string, Moved>;
+  knownSince: readonly string[];
 }
 const FROZEN: readonly Frozen[] = [
-  { version: first.engine.version, records: first.records, moved: SINCE_0_1_0 },
-  { version: second.engine.version, records: second.records, moved: SINCE_0_2_0 },
+  {
+    version: first.engine.version,
+    records: first.records,
+    moved: SINCE_0_1_0,
+    knownSince: KNOWN_SINCE_0_3_0,
+  },
+  {
+    version: second.engine.version,
+    records: second.records,
+    moved: SINCE_0_2_0,
+    knownSince: KNOWN_SINCE_0_3_0,
+  },
 ];
 const versions = DEMO_CASES.flatMap(({ title, versions }) =>
   versions.map(({ document }, index) => ({ name: `${title}, version ${index + 1}`, document })),
 );
 
-describe.each(FROZEN)('the demo as it was computed by version $version', ({ records, moved }) => {
-  const kept = versions.filter(({ name }) => name in records);
+describe.each(FROZEN)(
+  'the demo as it was computed by version $version',
+  ({ records, moved, knownSince }) => {
+    const kept = versions.filter(({ name }) => name in records);
 
-  it('keeps its cases, in their places before those that came later', () => {
-    expect(kept.map(({ name }) => name).sort()).toEqual(Object.keys(records).sort());
-    expect(versions.slice(0, kept.length)).toEqual(kept);
-  });
+    it('keeps its cases, in their places before those that came later', () => {
+      expect(kept.map(({ name }) => name).sort()).toEqual(Object.keys(records).sort());
+      expect(versions.slice(0, kept.length)).toEqual(kept);
+    });
 
-  it.each(kept)('$name keeps its digits', ({ name, document }) => {
-    const now = keyDigits(ENGINE.estimate(document));
-    const found = movedDigits(records[name] ?? {}, now, toleranceOf);
-    const { figures, why } = moved[name] ?? { figures: [], why: 'nothing moved on purpose' };
-    expect(
-      found.map((line) => line.split(':')[0]),
-      `${why}; now: ${found.join('; ')}`,
-    ).toEqual(figures);
-  });
-});
+    it.each(kept)('$name keeps its digits', ({ name, document }) => {
+      const now = without(knownSince, keyDigits(ENGINE.estimate(document)));
+      const found = movedDigits(records[name] ?? {}, now, toleranceOf);
+      const { figures, why } = moved[name] ?? { figures: [], why: 'nothing moved on purpose' };
+      expect(
+        found.map((line) => line.split(':')[0]),
+        `${why}; now: ${found.join('; ')}`,
+      ).toEqual(figures);
+    });
+  },
+);
 
 it('every worked case is frozen in the newest file', () => {
   expect(Object.keys(second.records)).toEqual(versions.map(({ name }) => name));
