@@ -30,11 +30,12 @@ const trailOf = (id: string) =>
 
 describe('POST /api/interactions', () => {
   it('publishes version 1, with a hash over what it says and an entry of the trail', async () => {
-    const sent = publication({ note: 'As used since spring.' });
+    const content = publication();
+    const note = 'As used since spring.';
+    const sent = { ...content, note };
     const answer = await agent.post('/api/interactions').send(sent).expect(201);
     expect(answer.headers['etag']).toBe('"1"');
     const published = answer.body as InteractionDetail;
-    const { note, ...content } = sent;
     expect(published).toMatchObject({
       ...content,
       status: 'published',
