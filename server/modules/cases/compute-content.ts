@@ -1,5 +1,6 @@
 import { CURRENT_FORMAT } from '#shared/contracts/cases.ts';
 import type { CaseDocument } from '#shared/contracts/cases.ts';
+import type { EntityManager } from '@mikro-orm/postgresql';
 import type { Estimate } from '#shared/contracts/estimates.ts';
 import { DomainError } from '#shared/errors.ts';
 import type { Compute } from '#server/compute/compute.ts';
@@ -16,6 +17,7 @@ export interface VersionContent {
 }
 
 export interface ComputeContext {
+  em: EntityManager;
   /** Whose computations are counted. */
   actor: { id: string };
   compute: Compute;

@@ -15,8 +15,8 @@ export const estimateRoutes = [
     body: estimateRequestSchema,
     response: estimateSchema,
     refusals: ['tooMuchWork', 'tooManyRequests'],
-    async handler({ actor, body, compute, signal }) {
-      return withSlot(actor.id, () => estimate(body, { compute, signal }));
+    async handler({ em, actor, body, compute, signal }) {
+      return withSlot(actor.id, () => estimate(body, { em, compute, signal }));
     },
   }),
 ];
