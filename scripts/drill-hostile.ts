@@ -1,8 +1,11 @@
 /** Hostile formulas and tables against a running application while someone else asks for small things: `npm run drill:hostile`. */
+import { setTimeout as sleep } from 'node:timers/promises';
 import { startApplication, stopApplication } from './drill/application.ts';
+import { startBystander } from './drill/start-bystander.ts';
 import { temporaryPlace } from './drill/temporary-place.ts';
 
 const CREDENTIALS = { email: 'theorist@lowmoor.example', password: 'lowmoor-demo' };
+const AFTERWARDS_MILLISECONDS = 500;
 const eV = (value: number) => ({ value, unit: 'eV' });
 const angstrom = (value: number) => ({ value, unit: 'angstrom' });
 
@@ -21,6 +24,8 @@ function table(points: unknown) {
 const rows = (count: number) => Array.from({ length: count }, (_, i) => [i * 0.01, -1 / (1 + i)]);
 
 const HOSTILE: [string, unknown][] = [
+  // What the others take when nobody is hostile: the ground to read the rest against.
+  ['nothing hostile', { form: 'yukawa', V0: eV(-10), a: angstrom(1) }],
   ['a loop', formula('while(1)')],
   ['globals', formula('constructor.constructor("return process")()')],
   ['2,000 deep', formula(`${'('.repeat(999)}r${')'.repeat(999)}`)],
@@ -46,6 +51,7 @@ function body(term: unknown): string {
 
 const place = await temporaryPlace();
 const application = await startApplication(place);
+const bystander = startBystander();
 const base = `http://127.0.0.1:${place.port}`;
 let cookie = '';
 
@@ -65,27 +71,25 @@ try {
   for (let i = 0; i < 4; i++) await post('/api/estimates', body(formula('V0*exp(-r/a)')));
   for (const [name, term] of HOSTILE) {
     const text = body(term);
-    const others: number[] = [];
-    let over = false;
-    const bystander = (async () => {
-      while (!over) {
-        const begun = performance.now();
-        await (await post('/api/estimates', small)).text();
-        others.push(performance.now() - begun);
-      }
-    })();
+    const others = await bystander.begin({
+      url: `${base}/api/estimates`,
+      headers: { 'content-type': 'application/json', origin: base, cookie },
+      body: small,
+    });
     const begun = performance.now();
     const answer = await post('/api/estimates', text);
     const { detail = 'answered' } = (await answer.json()) as { detail?: string };
     const took = performance.now() - begun;
-    over = true;
-    await bystander;
-    const worst = Math.max(...others);
+    // What a refusal leaves behind (collecting garbage, a thread begun anew) may come after it.
+    await sleep(AFTERWARDS_MILLISECONDS);
+    const times = await others.end();
+    const worst = Math.max(...times);
     console.log(
-      `${name.padEnd(24)} ${answer.status} in ${took.toFixed(0).padStart(5)} ms; others at most ${worst.toFixed(0).padStart(4)} ms (${others.length}); ${detail.slice(0, 90)}`,
+      `${name.padEnd(24)} ${answer.status} in ${took.toFixed(0).padStart(5)} ms; others at most ${worst.toFixed(0).padStart(4)} ms (${times.length}); ${detail.slice(0, 90)}`,
     );
   }
 } finally {
+  bystander.stop();
   await stopApplication(application);
   place.remove();
 }
