@@ -96,8 +96,8 @@ describe('GET /api/search', () => {
       expect(found?.hits.map(({ label }) => label)).toEqual(['Calcium well']);
       expect(found?.hits[0]?.detail).toMatch(/^Version 1: Woods–Saxon/);
     }
-    const { body } = await agent.get('/api/search').query({ q: 'argon, screened' });
-    expect(searchSchema.parse(body).groups[0]?.kind).toBe('interactions');
+    const answer = await agent.get('/api/search').query({ q: 'argon, screened' }).expect(200);
+    expect(searchSchema.parse(answer.body).groups[0]?.kind).toBe('interactions');
   });
 
   it('leaves retired ones out', async () => {
