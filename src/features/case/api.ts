@@ -10,18 +10,12 @@ import {
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import { estimateSchema } from '#shared/contracts/estimates.ts';
 import type { Estimate, EstimateRequest, Projectile } from '#shared/contracts/estimates.ts';
-import { formsSchema } from '#shared/contracts/forms.ts';
 import type { InteractionTerm } from '#shared/contracts/terms.ts';
 import { request, requestTagged } from '#src/lib/api.ts';
 import { massFromSpeed } from './model/beam-context.ts';
 import { without } from './model/without.ts';
 
-export const formsQuery = queryOptions({
-  queryKey: ['forms'],
-  queryFn: async ({ signal }) =>
-    (await request('/api/forms', { answer: formsSchema, signal })).forms,
-  staleTime: Infinity,
-});
+export { formsQuery } from '#src/lib/forms.ts';
 
 export const campaignsQuery = queryOptions({
   queryKey: ['campaigns'],

@@ -4,7 +4,7 @@ import { DEFAULT_DOCUMENT } from '#src/features/case/model/default-document.ts';
 import { differences } from '#src/features/case/model/fields.ts';
 import type { Content } from '#src/features/case/model/fields.ts';
 import { compareWork, mergeWork } from '#src/features/case/model/merge.ts';
-import { same } from '#src/features/case/model/same.ts';
+import { same } from '#src/lib/same.ts';
 
 const parameter = (key: string, label: string, dimension: string) => ({
   key,

@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { sketchOf } from '#src/features/case/model/sketch.ts';
+import { sketchOf } from '#src/components/potential-shape.ts';
 
 const unit = { r: 'angstrom', v: 'eV' };
 const from = (first: number) => Array.from({ length: 40 }, (_, i) => first + 0.02 * i);

@@ -4,7 +4,7 @@ import { PlotHandle } from '#src/components/plot-handle.tsx';
 import type { Estimate, GoldenRule } from '#shared/contracts/estimates.ts';
 import { formatComposed } from '#shared/units/format.ts';
 import { useEditing } from '../editing/editor-context.ts';
-import { same } from '../model/same.ts';
+import { same } from '#src/lib/same.ts';
 import { withGoldenRule } from '../model/table.ts';
 import { takeValue } from '../model/typing.ts';
 import { brief as briefError } from '../model/verdict.ts';

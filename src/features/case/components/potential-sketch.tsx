@@ -2,8 +2,8 @@ import { classNames } from '#src/lib/class-names.ts';
 import type { Estimate } from '#shared/contracts/estimates.ts';
 import { composedFactor } from '#shared/units/composed.ts';
 import { formatComposed, formatNumber, unitSymbol } from '#shared/units/format.ts';
-import { sketchOf } from '../model/sketch.ts';
-import type { Sketch } from '../model/sketch.ts';
+import { sketchOf } from '#src/components/potential-shape.ts';
+import type { Sketch } from '#src/components/potential-shape.ts';
 
 const W = 320;
 const H = 226;

@@ -1,12 +1,12 @@
 import { useState } from 'react';
 import { Button } from '#src/components/button.tsx';
 import { Dialog } from '#src/components/dialog.tsx';
+import { DifferenceTable } from '#src/components/difference-table.tsx';
+import type { Difference } from '#src/components/difference-table.tsx';
 import { Field, TextArea } from '#src/components/field.tsx';
 import { Notice } from '#src/components/notice.tsx';
 import type { FieldError } from '#shared/errors.ts';
 import { inWords } from '#src/lib/api.ts';
-import type { Difference } from '../model/fields.ts';
-import { DifferenceTable } from './difference-table.tsx';
 import { TagsField, tagsOf, tagsProblem } from './tags-field.tsx';
 import { Unsound } from './open-texts.tsx';
 

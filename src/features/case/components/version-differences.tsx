@@ -9,7 +9,7 @@ import { versionQuery } from '../api.ts';
 import { useEditing } from '../editing/editor-context.ts';
 import { differences } from '../model/fields.ts';
 import type { Content } from '../model/fields.ts';
-import { DifferenceTable } from './difference-table.tsx';
+import { DifferenceTable } from '#src/components/difference-table.tsx';
 
 const contentOf = ({ title, document }: VersionDetail): Content => ({ title, tags: [], document });
 

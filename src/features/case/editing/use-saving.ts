@@ -7,7 +7,7 @@ import { clearDraft } from '#src/lib/drafts.ts';
 import { say } from '#src/lib/toasts.ts';
 import { caseQuery, createCase, saveVersion, versionQuery } from '../api.ts';
 import type { Content } from '../model/fields.ts';
-import { same } from '../model/same.ts';
+import { same } from '#src/lib/same.ts';
 import { ownKey } from './kept-draft.ts';
 import { contentOf, draftOf } from './use-work.ts';
 import type { Base, Work } from './use-work.ts';

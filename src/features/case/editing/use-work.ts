@@ -2,7 +2,7 @@ import { useEffect, useMemo, useState } from 'react';
 import { clearDraft } from '#src/lib/drafts.ts';
 import type { Draft } from '../model/editor.ts';
 import type { Content } from '../model/fields.ts';
-import { same } from '../model/same.ts';
+import { same } from '#src/lib/same.ts';
 import { keep, otherWork, ownKey, ownWork } from './kept-draft.ts';
 import type { KeptWork } from './kept-draft.ts';
 import { useEditor } from './use-editor.ts';

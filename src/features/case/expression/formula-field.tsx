@@ -3,7 +3,7 @@ import { Formula } from '#src/components/formula.tsx';
 import type { FormParameterInfo } from '#shared/contracts/forms.ts';
 import { MAX_FORMULA, isNamedQuantities } from '#shared/contracts/terms.ts';
 import type { InteractionTerm, NamedQuantities } from '#shared/contracts/terms.ts';
-import { PotentialPreview } from '../components/potential-preview.tsx';
+import { PotentialPreview } from '#src/components/potential-preview.tsx';
 import { useEditing } from '../editing/editor-context.ts';
 import { usePotential } from '../editing/use-potential.ts';
 import type { Draft } from '../model/editor.ts';

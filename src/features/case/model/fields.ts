@@ -1,9 +1,10 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { FormInfo } from '#shared/contracts/forms.ts';
 import { unitSymbol } from '#shared/units/format.ts';
+import type { Difference } from '#src/components/difference-table.tsx';
 import { isOriginal, isPoints } from '#shared/contracts/terms.ts';
 import type { TermValue } from '#shared/contracts/terms.ts';
-import { same } from './same.ts';
+import { same } from '#src/lib/same.ts';
 import {
   CORRECTION_NAMES,
   FRAME_NAMES,
@@ -193,13 +194,6 @@ function interactionSpecs(contents: readonly Content[], forms: readonly FormInfo
 /** Every field of these contents, in the order of the beam line. */
 export function fieldsOf(contents: readonly Content[], forms: readonly FormInfo[]): FieldSpec[] {
   return [TITLE, TAGS, ...BEAM, ...interactionSpecs(contents, forms), ...TABLE];
-}
-
-export interface Difference {
-  key: string;
-  label: string;
-  before: string;
-  after: string;
 }
 
 /** Field by field, in words and units, what turns `before` into `after`. */

@@ -1,7 +1,7 @@
 import type { FormInfo } from '#shared/contracts/forms.ts';
 import { fieldsOf } from './fields.ts';
 import type { Content, FieldSpec } from './fields.ts';
-import { same } from './same.ts';
+import { same } from '#src/lib/same.ts';
 
 export type Side = 'mine' | 'theirs';
 

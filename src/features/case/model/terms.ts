@@ -4,7 +4,7 @@ import { parameterApplies, startingParameters } from '#shared/contracts/forms.ts
 import type { FormInfo, FormParameterInfo } from '#shared/contracts/forms.ts';
 import type { Draft } from './editor.ts';
 import { withoutEntered, withoutTermTexts } from './entered.ts';
-import { same } from './same.ts';
+import { same } from '#src/lib/same.ts';
 import { without } from './without.ts';
 
 /** A term with the defaults of the register; parameters that may be left out are left out. */

@@ -4,7 +4,7 @@ import { Dialog } from '#src/components/dialog.tsx';
 import { Field, FieldError, TextArea } from '#src/components/field.tsx';
 import { Select } from '#src/components/select.tsx';
 import type { InteractionTerm } from '#shared/contracts/terms.ts';
-import { PotentialPreview } from '../components/potential-preview.tsx';
+import { PotentialPreview } from '#src/components/potential-preview.tsx';
 import { usePotential } from '../editing/use-potential.ts';
 import { choiceName } from '../model/words.ts';
 import { MOST_TEXT } from './model/read-table.ts';

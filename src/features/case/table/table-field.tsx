@@ -4,7 +4,7 @@ import { FieldError } from '#src/components/field.tsx';
 import type { FormInfo, FormParameterInfo } from '#shared/contracts/forms.ts';
 import { isOriginal, isPoints } from '#shared/contracts/terms.ts';
 import type { InteractionTerm } from '#shared/contracts/terms.ts';
-import { PotentialPreview } from '../components/potential-preview.tsx';
+import { PotentialPreview } from '#src/components/potential-preview.tsx';
 import { useEditing } from '../editing/editor-context.ts';
 import { usePotential } from '../editing/use-potential.ts';
 import { problemAt } from '../model/problems.ts';

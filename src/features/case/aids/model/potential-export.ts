@@ -1,7 +1,7 @@
 import type { PlotPicture } from '#src/components/plot-types.ts';
 import type { Estimate } from '#shared/contracts/estimates.ts';
 import { fullDigits, unitSymbol } from '#shared/units/format.ts';
-import { sketchOf } from '../../model/sketch.ts';
+import { sketchOf } from '#src/components/potential-shape.ts';
 
 export type Potential = Extract<Estimate['potential'], { r: number[] }>;
 

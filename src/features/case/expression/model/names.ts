@@ -1,6 +1,6 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { NamedQuantities } from '#shared/contracts/terms.ts';
-import { same } from '../../model/same.ts';
+import { same } from '#src/lib/same.ts';
 
 /** Numbers are passed over whole: the e of 2e3 is no name, the 0 of V0 no number. */
 const WORDS =

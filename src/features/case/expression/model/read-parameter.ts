@@ -6,7 +6,7 @@ import { readNumber } from '#shared/units/read-number.ts';
 import { readUnit, simplify } from '#shared/units/unit-words.ts';
 import { DIMENSION_NAMES, isUnit } from '#shared/units/vocabulary.ts';
 import type { Dimension } from '#shared/units/vocabulary.ts';
-import { same } from '../../model/same.ts';
+import { same } from '#src/lib/same.ts';
 import { typedForm } from '../../model/typing.ts';
 import type { Reading } from '../../model/typing.ts';
 

@@ -1,5 +1,12 @@
 import { ArrowRight } from 'lucide-react';
-import type { Difference } from '../model/fields.ts';
+
+/** One thing that differs between two states of something, in words and units. */
+export interface Difference {
+  key: string;
+  label: string;
+  before: string;
+  after: string;
+}
 
 /** Field by field, in words and units: what it was, what it is. */
 export function DifferenceTable({ differences }: { differences: readonly Difference[] }) {

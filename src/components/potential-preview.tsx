@@ -1,8 +1,8 @@
 import { classNames } from '#src/lib/class-names.ts';
 import type { Estimate } from '#shared/contracts/estimates.ts';
 import { formatNumber, unitSymbol } from '#shared/units/format.ts';
-import { sketchOf } from '../model/sketch.ts';
-import type { Sketch } from '../model/sketch.ts';
+import { sketchOf } from './potential-shape.ts';
+import type { Sketch } from './potential-shape.ts';
 
 const W = 320;
 const H = 150;
