@@ -2,32 +2,17 @@ import { once } from 'node:events';
 import { createServer } from 'node:http';
 import type { Server } from 'node:http';
 import type { AddressInfo } from 'node:net';
-import type { MikroORM } from '@mikro-orm/postgresql';
-import type { Logger } from 'pino';
 import { createApp } from './app.ts';
 import { createCompute } from './compute/compute.ts';
 import { ConfigError, parseConfig, readSigningKey, requireDatabaseUrl } from './config.ts';
 import type { ServerConfig } from './config.ts';
-import { isDatabaseAway } from './db/faults.ts';
+import { checkSchema } from './db/check-schema.ts';
 import { openOrm } from './db/orm.ts';
-import { pendingMigrations } from './db/pending.ts';
+import { endStreams } from './http/event-stream.ts';
 import { createLogger } from './http/logging.ts';
+import { stopWish } from './stop-wish.ts';
 
 const STOP_MILLISECONDS = 8_000;
-
-/** The database must have the schema of this version; one that is away may come back, and is waited for. */
-async function checkSchema(orm: MikroORM, logger: Logger): Promise<void> {
-  try {
-    const pending = await pendingMigrations(orm);
-    if (pending.length === 0) return;
-    throw new ConfigError(
-      `The database lacks ${pending.join(', ')}: run the migrations (\`npm start\` does).`,
-    );
-  } catch (fault) {
-    if (!isDatabaseAway(fault)) throw fault;
-    logger.warn({ err: fault }, 'the database does not answer yet');
-  }
-}
 
 async function listen(server: Server, { host, port }: ServerConfig): Promise<AddressInfo> {
   server.listen(port, host);
@@ -52,21 +37,13 @@ async function listen(server: Server, { host, port }: ServerConfig): Promise<Add
 /** Lets requests under way finish, within a bound. */
 async function drain(server: Server): Promise<void> {
   const closed = new Promise((resolve) => server.close(resolve));
+  endStreams();
   // A connection falls idle when its last answer is sent, so they are looked for until none is left.
   const sweep = setInterval(() => server.closeIdleConnections(), 50);
   const bound = setTimeout(() => server.closeAllConnections(), STOP_MILLISECONDS);
   await closed;
   clearInterval(sweep);
   clearTimeout(bound);
-}
-
-function onStopWish(config: ServerConfig, stop: (reason: string) => void): void {
-  process.once('SIGTERM', stop);
-  process.once('SIGINT', stop);
-  if (!config.stopWithStdin) return;
-  // Whoever started this holds the other end: when it is gone, so are we.
-  for (const event of ['end', 'close', 'error']) process.stdin.once(event, () => stop('stdin'));
-  process.stdin.resume();
 }
 
 async function main(): Promise<void> {
@@ -80,7 +57,7 @@ async function main(): Promise<void> {
     const deps = { orm, logger, compute: pool.compute, clock: () => new Date() };
     const app = createApp({ ...deps, config: { ...config, signingKey } });
     const server = createServer({ requestTimeout: 60_000, headersTimeout: 20_000 }, app);
-    const wish = new Promise<string>((resolve) => onStopWish(config, resolve));
+    const wish = stopWish(config);
     const { address, port } = await listen(server, config);
     logger.info({ address, port, version: config.version }, 'listening');
     logger.info({ reason: await wish }, 'stopping');

@@ -1,3 +1,4 @@
+import { Job } from '#server/jobs/job.entity.ts';
 import { Renewal, Session, SignInFailure } from '#server/modules/auth/session.entity.ts';
 import { Campaign, CampaignMember } from '#server/modules/campaigns/campaign.entity.ts';
 import { CaseVersion, VersionStatus } from '#server/modules/cases/case-version.entity.ts';
@@ -28,6 +29,7 @@ export const ENTITIES = [
   InteractionVersion,
   InteractionStatusRow,
   SettingsVersion,
+  Job,
   TrailEntry,
   OutboxMessage,
   OutboxDelivery,

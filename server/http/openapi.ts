@@ -24,11 +24,16 @@ function refusalsOf(route: Route): Set<ErrorCode> {
   return codes;
 }
 
+const TEXT = { type: 'string' };
+
 function responsesOf(route: Route, schemas: JsonSchemas): JsonSchema {
   const done = route.response
     ? {
         description: 'Done.',
-        content: { 'application/json': { schema: schemas.of(route.response, 'output') } },
+        content: {
+          'application/json': { schema: schemas.of(route.response, 'output') },
+          ...Object.fromEntries(route.otherTypes.map((type) => [type, { schema: TEXT }])),
+        },
       }
     : { description: 'Done; nothing to answer.' };
   const problem = { schema: schemas.of(problemSchema, 'output') };

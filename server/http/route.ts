@@ -7,6 +7,7 @@ import type { Actor } from './actor.ts';
 import { can, dependsOnOwner } from './can.ts';
 import type { Resource } from './can.ts';
 import type { LoadContext, RequestContext, RouteInput } from './context.ts';
+import type { OtherAnswer } from './other-answer.ts';
 import { validate } from './validate.ts';
 
 export type Access = 'public' | Action;
@@ -69,7 +70,11 @@ export interface RouteSpec<
   headers?: readonly RouteHeader[];
   /** Refusals worth naming in the OpenAPI document, beyond those every route has. */
   refusals?: readonly ErrorCode[];
-  handler: (context: HandlerContext<A, P, Q, B, R>) => Promise<z.input<S>> | z.input<S>;
+  /** Content types it may answer in besides JSON, for the OpenAPI document. */
+  otherTypes?: readonly string[];
+  handler: (
+    context: HandlerContext<A, P, Q, B, R>,
+  ) => Promise<z.input<S> | OtherAnswer> | z.input<S> | OtherAnswer;
 }
 
 /** A route as the router, the OpenAPI document and the permission test see it. */
@@ -88,6 +93,7 @@ export interface Route {
   query: z.ZodType | undefined;
   body: z.ZodType | undefined;
   response: z.ZodType | undefined;
+  otherTypes: readonly string[];
   headers: readonly RouteHeader[];
   refusals: readonly ErrorCode[];
   run: (context: RequestContext, input: RouteInput) => Promise<unknown>;
@@ -162,6 +168,7 @@ export function defineRoute<
     query: spec.query,
     body: spec.body,
     response: spec.response,
+    otherTypes: spec.otherTypes ?? [],
     headers: spec.headers ?? [],
     refusals: spec.refusals ?? [],
     async run(context, input) {

@@ -9,6 +9,7 @@ import { groupBy } from './group-by.ts';
 import { logOf, requestIdOf } from './logging.ts';
 import { checkOrigin } from './origin.ts';
 import { readJson } from './read-body.ts';
+import { OtherAnswer } from './other-answer.ts';
 import type { Route } from './route.ts';
 
 /** Who asks, by cookie or token; refuses (401) whoever cannot be told. */
@@ -94,7 +95,8 @@ function handlerOf(route: Route, deps: AppDeps, authenticate: Authenticate): Req
       query: req.query,
       readBody: () => (route.method === 'get' ? Promise.resolve(undefined) : readJson(req, res)),
     });
-    send(route, res, answer, deps, req);
+    if (answer instanceof OtherAnswer) await answer.send(res);
+    else send(route, res, answer, deps, req);
   };
 }
 

@@ -5,9 +5,11 @@ import { versionRoutes } from '#server/modules/cases/versions.routes.ts';
 import { estimateRoutes } from '#server/modules/estimates/estimates.routes.ts';
 import { formRoutes } from '#server/modules/forms/forms.routes.ts';
 import { healthRoutes } from '#server/modules/health/health.routes.ts';
+import { jobRoutes } from '#server/modules/jobs/jobs.routes.ts';
 import { libraryRoutes } from '#server/modules/library/library.routes.ts';
 import { materialAidRoutes } from '#server/modules/material-aids/material-aids.routes.ts';
 import { referenceRoutes } from '#server/modules/reference/reference.routes.ts';
+import { scanRoutes } from '#server/modules/scans/scans.routes.ts';
 import { searchRoutes } from '#server/modules/search/search.routes.ts';
 import { settingsRoutes } from '#server/modules/settings/settings.routes.ts';
 import { tokenRoutes } from '#server/modules/tokens/tokens.routes.ts';
@@ -25,6 +27,8 @@ export const ROUTES: readonly Route[] = [
   ...versionRoutes,
   ...estimateRoutes,
   ...materialAidRoutes,
+  ...scanRoutes,
+  ...jobRoutes,
   ...formRoutes,
   ...referenceRoutes,
   ...libraryRoutes,

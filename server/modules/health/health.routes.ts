@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { DomainError } from '#shared/errors.ts';
 import { demoAccountsUsable } from '#server/modules/auth/demo-gate.ts';
 import { defineRoute } from '#server/http/route.ts';
+import { countWorkers } from '#server/jobs/living-workers.ts';
 
 const healthSchema = z.object({
   status: z.literal('ok'),
@@ -9,6 +10,8 @@ const healthSchema = z.object({
   database: z.literal('ok'),
   /** Whether the demo's accounts can sign in from where this is asked. */
   demo: z.boolean(),
+  /** Workers alive on this database; without one, jobs wait. */
+  workers: z.int(),
 });
 
 export const healthRoutes = [
@@ -21,8 +24,9 @@ export const healthRoutes = [
     access: 'public',
     response: healthSchema,
     async handler({ em, config, log, headers }) {
+      let workers: number;
       try {
-        await em.getConnection().execute('select 1');
+        workers = await countWorkers(em);
       } catch (fault) {
         log.warn({ err: fault }, 'the database does not answer');
         throw new DomainError('unavailable', 'The database does not answer.', {
@@ -34,6 +38,7 @@ export const healthRoutes = [
         version: config.version,
         database: 'ok' as const,
         demo: demoAccountsUsable(config, headers),
+        workers,
       };
     },
   }),

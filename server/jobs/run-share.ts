@@ -1,0 +1,195 @@
+import { setTimeout as sleep } from 'node:timers/promises';
+import type { EntityManager } from '@mikro-orm/postgresql';
+import type { Logger } from 'pino';
+import { DomainError } from '#shared/errors.ts';
+import type { Compute } from '#server/compute/compute.ts';
+import { isDatabaseAway } from '#server/db/faults.ts';
+import { VERSION } from '#server/version.ts';
+import type { JobKind, OpenJob, PartTools } from './job-kind.ts';
+import { JOB_KINDS } from './kinds.ts';
+import {
+  failJob,
+  findParts,
+  keepParts,
+  keepShare,
+  keptParts,
+  partValues,
+  releaseShare,
+} from './shares.ts';
+import type { Part, Share } from './shares.ts';
+
+const HEARTBEAT_MILLISECONDS = 700;
+const KEEP_EVERY_MILLISECONDS = 400;
+/** Two parts are with the thread at once, so that it never waits for the way to and fro. */
+const AHEAD = 2;
+/** Workers lost on one share before its job is given up: it would end every worker in turn. */
+const MOST_LOSSES = 5;
+
+export interface ShareContext {
+  em: () => EntityManager;
+  compute: Compute;
+  logger: Logger;
+  /** Aborts when the worker is to stop. */
+  stopping: AbortSignal;
+}
+
+/** Why work on a share ends before its end. */
+class LetGo extends Error {
+  override readonly name = 'LetGo';
+}
+
+/** Tries again while the database is away; a worker that is to stop gives up. */
+async function persistently<T>(work: () => Promise<T>, { stopping, logger }: ShareContext) {
+  for (let tries = 0; ; tries += 1) {
+    try {
+      return await work();
+    } catch (fault) {
+      if (!isDatabaseAway(fault) || stopping.aborted) throw fault;
+      if (tries === 0) logger.warn({ err: fault }, 'the database is away; waiting for it');
+      await sleep(500);
+    }
+  }
+}
+
+/** Gives signs of life for a share; `lost` aborts when it is another's, or its job no longer runs. */
+function watchShare(share: Share, { em, logger }: ShareContext) {
+  const lost = new AbortController();
+  let beating = false;
+  const beat = async () => {
+    if (beating) return;
+    beating = true;
+    try {
+      if (!(await keepShare(em(), share))) lost.abort();
+    } catch (fault) {
+      // Whether the share is still ours shows when the database is back.
+      if (!isDatabaseAway(fault)) logger.error({ err: fault }, 'no sign of life could be given');
+    } finally {
+      beating = false;
+    }
+  };
+  const timer = setInterval(() => void beat(), HEARTBEAT_MILLISECONDS);
+  return { lost: lost.signal, end: () => clearInterval(timer) };
+}
+
+/** Collects parts and keeps them every so often: not each by itself, and never many unkept. */
+class Keeper {
+  private waiting: Part[] = [];
+  private keptAt = Date.now();
+
+  constructor(
+    private readonly share: Share,
+    private readonly context: ShareContext,
+  ) {}
+
+  async add(part: Part): Promise<void> {
+    this.waiting.push(part);
+    if (Date.now() - this.keptAt >= KEEP_EVERY_MILLISECONDS) await this.keep();
+  }
+
+  async keep(end?: { finished: true; result?: unknown }): Promise<void> {
+    const { share, context, waiting } = this;
+    if (waiting.length === 0 && !end) return;
+    // Written twice after a lost answer, a part is still there once: its number is its key.
+    const kept = await persistently(() => keepParts(context.em(), share, waiting, end), context);
+    if (!kept) throw new LetGo('the share is another worker’s, or its job no longer runs');
+    this.waiting = [];
+    this.keptAt = Date.now();
+  }
+}
+
+/** Parts of the share that are to be computed still, after those that were computed before under the same content. */
+async function missingParts(share: Share, job: OpenJob, context: ShareContext, keeper: Keeper) {
+  const kept = await persistently(() => keptParts(context.em(), share), context);
+  const numbers = Array.from({ length: share.end - share.first }, (_, i) => share.first + i);
+  const missing = numbers
+    .filter((n) => !kept.has(n))
+    .map((n) => ({ n, contentHash: job.contentHash?.(n) ?? null }));
+  const hashes = missing.flatMap(({ contentHash }) => contentHash ?? []);
+  const known = await persistently(() => findParts(context.em(), hashes), context);
+  const fresh: typeof missing = [];
+  for (const part of missing) {
+    const found = part.contentHash === null ? undefined : known.get(part.contentHash);
+    if (found) await keeper.add({ ...found, n: part.n });
+    else fresh.push(part);
+  }
+  return fresh;
+}
+
+async function computeParts(
+  share: Share,
+  job: OpenJob,
+  context: ShareContext,
+  tools: PartTools,
+): Promise<Keeper> {
+  const keeper = new Keeper(share, context);
+  const underWay: Promise<Part>[] = [];
+  const begin = ({ n, contentHash }: { n: number; contentHash: string | null }) => {
+    const part = job.part(n, tools).then((value) => ({ n, contentHash, engine: VERSION, value }));
+    // Looked at in its turn; meanwhile its failure is nobody's.
+    part.catch(() => undefined);
+    underWay.push(part);
+  };
+  const collect = async () => {
+    const part = await underWay.shift();
+    tools.signal.throwIfAborted();
+    if (part) await keeper.add(part);
+  };
+  for (const missing of await missingParts(share, job, context, keeper)) {
+    tools.signal.throwIfAborted();
+    begin(missing);
+    if (underWay.length >= AHEAD) await collect();
+  }
+  while (underWay.length > 0) await collect();
+  return keeper;
+}
+
+async function work(share: Share, context: ShareContext, tools: PartTools): Promise<void> {
+  const kind: JobKind = JOB_KINDS[share.kind];
+  if (share.first < share.end) {
+    const keeper = await computeParts(share, kind.open(share.input), context, tools);
+    await keeper.keep({ finished: true });
+    return;
+  }
+  const parts = await persistently(() => partValues(context.em(), share.jobId), context);
+  const result = await kind.finish?.(share.input, parts, tools);
+  tools.signal.throwIfAborted();
+  await new Keeper(share, context).keep({ finished: true, result });
+}
+
+function wordsOf(fault: unknown): string {
+  if (fault instanceof DomainError) return fault.message;
+  return 'Something went wrong on our side; the log of the worker has the details.';
+}
+
+/**
+ * Computes one share to its end. Left in the middle, by a stop or because it was lost, what was computed is kept and the rest is
+ * free for others; a fault of the work itself ends the job.
+ */
+export async function runShare(share: Share, context: ShareContext): Promise<void> {
+  const { em, logger, stopping } = context;
+  const log = logger.child({ job: share.jobId, share: share.n, attempt: share.attempt });
+  if (share.losses >= MOST_LOSSES) {
+    const words = `It was given up: ${share.losses} workers ended or fell silent on the same share of it.`;
+    await persistently(() => failJob(em(), share, words), context);
+    log.error(words);
+    return;
+  }
+  const { lost, end } = watchShare(share, context);
+  const signal = AbortSignal.any([lost, stopping]);
+  try {
+    await work(share, context, { compute: context.compute, signal });
+  } catch (fault) {
+    if (lost.aborted || fault instanceof LetGo) {
+      log.info('the share was let go');
+    } else if (stopping.aborted) {
+      await releaseShare(em(), share).catch((err: unknown) => {
+        log.warn({ err }, 'the share could not be given back; another worker takes it in seconds');
+      });
+    } else {
+      log.error({ err: fault }, 'the job failed');
+      await persistently(() => failJob(em(), share, wordsOf(fault)), context);
+    }
+  } finally {
+    end();
+  }
+}
