@@ -1,18 +1,25 @@
+import { Link } from 'react-router-dom';
 import { Chip } from '#src/components/chip.tsx';
 import type { Criterion, Validity } from '#shared/contracts/estimates.ts';
 import { formatNumber } from '#shared/units/format.ts';
 import { VERDICT_WORDS, decidingNumber } from '../model/verdict.ts';
 import { CRITERION_NAMES } from '../model/words.ts';
+import { useSectionAddress } from './section-tabs.tsx';
 
 function gradeOf({ value, limits }: Criterion): Validity['verdict'] {
   if (value < limits.sound) return 'sound';
   return value < limits.usable ? 'usable' : 'notValid';
 }
 
-function Grade({ verdict }: { verdict: Validity['verdict'] }) {
+/** The verdict in a word, with a sign of its own. */
+export function Grade({ verdict, large }: { verdict: Validity['verdict']; large?: boolean }) {
   const { word, tone, sign } = VERDICT_WORDS[verdict];
   return (
-    <Chip tone={tone} icon={<span aria-hidden="true">{sign}</span>}>
+    <Chip
+      tone={tone}
+      icon={<span aria-hidden="true">{sign}</span>}
+      {...(large ? { className: 'text-base' } : {})}
+    >
       {word}
     </Chip>
   );
@@ -21,7 +28,7 @@ function Grade({ verdict }: { verdict: Validity['verdict'] }) {
 const SCALE = 132;
 
 /** Where the number stands between its limits, on a logarithmic scale of six decades. */
-function Scale({ value, limits }: Criterion) {
+export function Scale({ value, limits }: Pick<Criterion, 'value' | 'limits'>) {
   const middle = Math.log10(limits.sound * limits.usable) / 2;
   const x = (v: number) => (SCALE * (Math.log10(v) - middle + 3)) / 6;
   const at = Math.min(SCALE - 4, Math.max(4, value > 0 ? x(value) : 0));
@@ -67,8 +74,20 @@ function Row({ criterion }: { criterion: Criterion }) {
   );
 }
 
-/** Is the first Born approximation to be trusted here: each criterion with its number, its limits and what it means. */
+/** Each criterion with its number, its limits and what it means. */
+export function CriteriaList({ validity }: { validity: Validity }) {
+  return (
+    <ul>
+      {validity.criteria.map((criterion) => (
+        <Row key={criterion.name} criterion={criterion} />
+      ))}
+    </ul>
+  );
+}
+
+/** Is the first Born approximation to be trusted here, in brief; the section Validity has the rest. */
 export function CriteriaTable({ validity }: { validity: Validity }) {
+  const address = useSectionAddress();
   return (
     <section aria-label="Verdict" className="rounded border border-line bg-sheet px-4.5 py-4">
       <h2 className="flex flex-wrap items-center gap-2 font-bold">
@@ -78,13 +97,17 @@ export function CriteriaTable({ validity }: { validity: Validity }) {
         {validity.basis === 'exact'
           ? `Against the exact calculation: ${decidingNumber(validity)}.`
           : 'Judged by criteria, not by an exact calculation of this case. The largest decides.'}{' '}
-        {validity.reason}
+        {validity.reason}{' '}
+        <Link
+          to={address('validity')}
+          state={{ keepFocus: true }}
+          className="text-ink underline underline-offset-4"
+          data-screen-only
+        >
+          {validity.basis === 'exact' ? 'All of it under Validity' : 'Held against every method'}
+        </Link>
       </p>
-      <ul>
-        {validity.criteria.map((criterion) => (
-          <Row key={criterion.name} criterion={criterion} />
-        ))}
-      </ul>
+      <CriteriaList validity={validity} />
     </section>
   );
 }

@@ -3,7 +3,7 @@ import { Plot } from '#src/components/plot.tsx';
 import type { Scale } from '#src/components/plot-types.ts';
 import { Segmented } from '#src/components/segmented.tsx';
 import type { Estimate } from '#shared/contracts/estimates.ts';
-import { formatComposed, formatNumber, unitSymbol } from '#shared/units/format.ts';
+import { formatComposed, unitSymbol } from '#shared/units/format.ts';
 import { useAidsState } from '../aids/aids-context.ts';
 import { RatioNote, ratioAt } from '../aids/ratio-note.tsx';
 import { useRatio } from '../aids/use-ratio.ts';
@@ -15,24 +15,12 @@ import { useEditing } from '../editing/editor-context.ts';
 import { csvOf } from '#src/lib/csv.ts';
 import { curvesCsv } from '../model/csv.ts';
 import type { TableUnits } from '../model/csv.ts';
+import { ABSCISSA_WORDS, abscissaAxis, angleText } from '../model/abscissa-axis.ts';
 import { abscissaOf, curvesOf } from '../model/curves.ts';
 import type { Abscissa, Curve } from '../model/curves.ts';
 import { anglesOf } from '../model/table.ts';
-import { FRAME_NAMES } from '../model/words.ts';
 import { NumbersTable } from './numbers-table.tsx';
 import { Readout } from './readout.tsx';
-
-function angleText(value: number, unit: string): string {
-  const text = formatNumber(Number(value.toPrecision(6)), 6).replace(/(\.\d*?)0+$/, '$1');
-  return unit === 'deg' ? `${text.replace(/\.$/, '')}°` : `${text.replace(/\.$/, '')} ${unit}`;
-}
-
-/** Ticks at 30° over a wide range, as the trade is used to. */
-function angleInterval(curves: readonly Curve[], unit: string): { interval?: number } {
-  const angles = curves[0]?.points.map(({ theta }) => theta) ?? [];
-  const span = Math.max(...angles) - Math.min(...angles);
-  return unit === 'deg' && span > 90 ? { interval: 30 } : {};
-}
 
 function plotted(curves: readonly Curve[], abscissa: Abscissa) {
   return curves.flatMap(({ key, name, style, points }) => {
@@ -53,20 +41,6 @@ function useSwitches(shown: 'dcs' | 'ratio') {
   const [abscissa, setAbscissa] = useState<Abscissa>('theta');
   const setScale = (scale: Scale) => setScales({ ...scales, [shown]: scale });
   return { yScale: scales[shown], setScale, abscissa, setAbscissa };
-}
-
-function xAxis(abscissa: Abscissa, curves: readonly Curve[], estimate: Estimate) {
-  const { angle, length } = estimate.units;
-  const frame = FRAME_NAMES[estimate.frame];
-  if (abscissa === 'theta') {
-    return {
-      title: `scattering angle θ, ${frame}${angle === 'deg' ? '' : ` (${angle})`}`,
-      ...(angle === 'deg' ? { tick: (value: number) => angleText(value, 'deg') } : {}),
-      ...angleInterval(curves, angle),
-    };
-  }
-  if (abscissa === 'cos') return { title: `cos θ, ${frame}` };
-  return { title: `momentum transfer q, centre of mass (${unitSymbol(`1/${length}`)})` };
 }
 
 /** The range of angles marked on the plot, while an aid asks for one. */
@@ -177,9 +151,9 @@ export function Distribution({ estimate, dimmed, fileName }: DistributionProps) 
   return (
     <>
       <Plot
-        label={`${drawn.name} against ${abscissa === 'theta' ? 'angle' : abscissa === 'q' ? 'momentum transfer' : 'cosine of the angle'}`}
+        label={`${drawn.name} against ${ABSCISSA_WORDS[abscissa]}`}
         series={drawn.series}
-        x={xAxis(abscissa, curves, estimate)}
+        x={abscissaAxis(abscissa, curves, estimate)}
         y={{ title: drawn.title }}
         yScale={yScale}
         cursor={cursor}

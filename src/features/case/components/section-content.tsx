@@ -8,6 +8,7 @@ import { GoldenRuleSheet } from './golden-rule.tsx';
 import { InputList } from './input-list.tsx';
 import { Record } from './record.tsx';
 import type { Section } from './section-tabs.tsx';
+import { ValiditySection } from '../validity/validity-section.tsx';
 import { NothingFiled } from './withdraw.tsx';
 
 interface SectionContentProps {
@@ -37,6 +38,14 @@ export function SectionContent({ section, saved, failure, onRetry }: SectionCont
   if (section === 'record') {
     return saved ? <Record detail={saved.detail} etag={saved.etag} /> : <NothingFiled />;
   }
+  if (section === 'validity') {
+    return (
+      <>
+        <InputList />
+        <ValiditySection fileName={fileNameOf(saved).replace(/-dcs$/, '')} />
+      </>
+    );
+  }
   const trouble = failure !== null && (
     <Notice
       live
@@ -64,12 +73,13 @@ export function SectionContent({ section, saved, failure, onRetry }: SectionCont
     <>
       {trouble}
       <InputList />
-      {section === 'golden-rule' ? (
+      {section === 'golden-rule' && (
         <GoldenRuleSheet
           estimate={estimate}
           fileName={fileNameOf(saved).replace(/-dcs$/, '-golden-rule')}
         />
-      ) : (
+      )}
+      {section === 'cross-section' && (
         <CrossSection estimate={estimate} fileName={fileNameOf(saved)} />
       )}
     </>

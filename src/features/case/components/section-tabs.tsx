@@ -1,12 +1,13 @@
 import { Link, useLocation, useSearchParams } from 'react-router-dom';
 import { classNames } from '#src/lib/class-names.ts';
 
-export const SECTIONS = ['cross-section', 'golden-rule', 'record'] as const;
+export const SECTIONS = ['cross-section', 'golden-rule', 'validity', 'record'] as const;
 export type Section = (typeof SECTIONS)[number];
 
 const NAMES: Record<Section, string> = {
   'cross-section': 'Cross section',
   'golden-rule': 'Golden rule',
+  validity: 'Validity',
   record: 'Record',
 };
 
@@ -17,16 +18,21 @@ export function useSection(): Section {
   return SECTIONS.find((section) => section === named) ?? 'cross-section';
 }
 
-/** The parts of a case, each with an address of its own. */
-export function SectionTabs({ section }: { section: Section }) {
+/** Where each section of the case on the page is found. */
+export function useSectionAddress(): (name: Section) => { search: string; hash: string } {
   // A case that stands in the fragment of the address stays there.
   const { search, hash } = useLocation();
-  const addressOf = (name: Section) => {
+  return (name) => {
     const parameters = new URLSearchParams(search);
     if (name === 'cross-section') parameters.delete('section');
     else parameters.set('section', name);
     return { search: parameters.toString(), hash };
   };
+}
+
+/** The parts of a case, each with an address of its own. */
+export function SectionTabs({ section }: { section: Section }) {
+  const addressOf = useSectionAddress();
   return (
     <nav aria-label="Sections of the case" className="mb-4.5 border-b border-line" data-screen-only>
       <ul className="flex gap-6 overflow-x-auto">

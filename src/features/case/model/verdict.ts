@@ -15,8 +15,10 @@ export const VERDICT_WORDS: Record<
 /** The number that decided, in a line: what it is, its value, and the limit it met or missed. */
 export function decidingNumber(validity: Validity): string {
   if (validity.basis === 'exact' && validity.deviation !== undefined) {
-    const percent = 100 * validity.deviation;
-    return `elastic ${percent > 0 ? '+' : ''}${formatNumber(percent, 3)} % against exact`;
+    const number = `${formatNumber(100 * validity.deviation, 3)} %`;
+    return validity.deviations?.decides === 'weighted'
+      ? `${number} from exact, weighted by solid angle`
+      : `elastic ${number} from exact`;
   }
   const decides = validity.criteria.find((criterion) => criterion.decides);
   if (decides) return `by criteria: ${criterionText(decides)}`;
