@@ -103,3 +103,46 @@ test('the keyboard alone opens the dialog, fills it and takes the rows; the focu
     .toBe(true);
   expect(await summary(page).textContent()).toMatch(/5 (rows|points)/);
 });
+
+test('what is no table is refused in words, and nothing can be taken of it', async () => {
+  const { page, goTo } = await stage.visitor('experimentalist');
+  await goTo('/cases/new');
+  await settled(page);
+  await chooseTable(page);
+  const dialog = await openTable(page);
+  const text = textOf(dialog);
+  await text.focus();
+  await page.keyboard.press('ControlOrMeta+a');
+  await page.keyboard.insertText('Scattering of slow neutrons\nby hydrogen, as it was measured.');
+  await dialog.getByText('No line of the text holds a number.').waitFor();
+  expect(await takeIn(dialog).isDisabled()).toBe(true);
+  await text.fill('<table><tr><td>0</td><td>-10</td></tr></table>');
+  await dialog.getByText('No line of the text holds a number.').waitFor();
+  expect(await takeIn(dialog).isDisabled()).toBe(true);
+});
+
+test('faulty lines are left out by a tick, named, and the text stays whole', async () => {
+  const { page, goTo } = await stage.visitor('experimentalist');
+  await goTo('/cases/new');
+  await settled(page);
+  await chooseTable(page);
+  const dialog = await openTable(page);
+  const text = 'r/pm;V/eV\n0;-10,5\n50;1.234\n100;-2,5\n40;-6\n150;oops\n200;-0,25';
+  await textOf(dialog).fill(text);
+  await dialog.getByLabel('Decimal sign').selectOption('comma');
+  await dialog.getByText(/“1\.234” for V has a point .* write 1,234 or 1234/).waitFor();
+  await dialog.getByText('3 lines need mending.').waitFor();
+  await dialog.getByRole('checkbox', { name: /^Leave these 2 lines out/ }).check();
+  await dialog.getByText('2 lines are left out.').waitFor();
+  await dialog.getByText(/Line 6: “oops”/).waitFor();
+  // A row out of order is no line to leave out.
+  expect(await takeIn(dialog).isDisabled()).toBe(true);
+  await dialog.getByRole('button', { name: 'Sort the rows by r' }).click();
+  await dialog.getByText('4 rows read.', { exact: false }).waitFor();
+  await takeIn(dialog).click();
+  await dialog.waitFor({ state: 'detached' });
+  await settled(page);
+  expect(await summary(page).textContent()).toMatch(/4 (rows|points)/);
+  const again = await openTable(page);
+  expect(await textOf(again).inputValue()).toBe(text);
+});

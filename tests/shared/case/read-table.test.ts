@@ -1,11 +1,13 @@
 import { expect, test } from 'vitest';
 import { guessColumns, unitIn } from '#src/features/case/table/model/columns.ts';
 import { cutTable, readRows, thinned } from '#src/features/case/table/model/read-table.ts';
+import type { Mends } from '#src/features/case/table/model/read-table.ts';
 import type { Layout } from '#src/features/case/table/model/layout.ts';
 
-function read(text: string, chosen: Partial<Layout> = {}, sorted = false) {
+function read(text: string, chosen: Partial<Layout> = {}, mends: Partial<Mends> = {}) {
   const raw = cutTable(text, chosen);
-  return { raw, ...readRows(raw, guessColumns(raw), sorted) };
+  const decided = { sorted: false, leftOut: false, ...mends };
+  return { raw, ...readRows(raw, guessColumns(raw), decided) };
 }
 
 const ROWS = [
@@ -109,7 +111,7 @@ test('a falling table only wants sorting; with r twice sorting does not mend it'
   const before = read(falling);
   expect(before.unsorted).toBe(true);
   expect(before.faults).toHaveLength(3);
-  const after = read(falling, {}, true);
+  const after = read(falling, {}, { sorted: true });
   expect(after.faults).toEqual([]);
   expect(after.rows).toEqual([
     [0, 4],
@@ -117,7 +119,94 @@ test('a falling table only wants sorting; with r twice sorting does not mend it'
     [2, 2],
     [3, 1],
   ]);
-  expect(read('1 1\n0 2\n1 3', {}, true).faults).toHaveLength(1);
+  expect(read('1 1\n0 2\n1 3', {}, { sorted: true }).faults).toHaveLength(1);
+});
+
+test('lines that are no row are left out on request, each named, and the others stay as they are', () => {
+  const text = '0 -10\n1 oops\n2 -1\n-3 0\n2 -1\n4 -0.5\n5 -0.1';
+  const before = read(text);
+  expect(before.faults.map(({ line }) => line)).toEqual([2, 4, 5]);
+  expect(before.leavable).toEqual(before.faults);
+  const after = read(text, {}, { leftOut: true });
+  expect(after.faults).toEqual([]);
+  expect(after.leavable).toEqual(before.leavable);
+  expect(after.rows).toEqual([
+    [0, -10],
+    [2, -1],
+    [4, -0.5],
+    [5, -0.1],
+  ]);
+});
+
+test('rows out of order are sorted, never left out, and both mends go together', () => {
+  const text = '0 -10\n3 -2\n1 -5\nx -9\n3 -7\n4 -1';
+  const left = read(text, {}, { leftOut: true });
+  expect(left.leavable.map(({ line }) => line)).toEqual([4]);
+  expect(left.faults.map(({ message }) => message)).toEqual([
+    'r = 1 comes after 3; r must rise from row to row.',
+  ]);
+  expect(left.unsorted).toBe(true);
+  const both = read(text, {}, { leftOut: true, sorted: true });
+  expect(both.faults).toEqual([]);
+  // Sorted, the second row at r = 3 is seen to stand there twice; the first of the text is kept.
+  expect(both.leavable.map(({ line }) => line)).toEqual([4, 5]);
+  expect(both.rows).toEqual([
+    [0, -10],
+    [1, -5],
+    [3, -2],
+    [4, -1],
+  ]);
+});
+
+test('the sign that is not the decimal one is refused with both things it may mean, never dropped', () => {
+  const points = read('0;1,5\n1;1.234\n2;0,5', { decimal: 'comma' });
+  expect(points.rows).toEqual([
+    [0, 1.5],
+    [2, 0.5],
+  ]);
+  expect(points.faults).toEqual([
+    {
+      line: 2,
+      message:
+        '“1.234” for V has a point where the decimal sign is a comma: write 1,234 or 1234, whichever it is.',
+    },
+  ]);
+  const commas = read('0;1.5\n1;-1,5\n2;0.5');
+  expect(commas.raw.layout.decimal).toBe('point');
+  expect(commas.faults.map(({ message }) => message)).toEqual([
+    '“-1,5” for V has a comma where the decimal sign is a point: write -1.5 or -15, whichever it is.',
+  ]);
+});
+
+test('commas that may all separate thousands are asked about; one that cannot settles it, and so does a choice', () => {
+  const thousands = '0 -4,567\n1 -3,456\n2 -2,345\n3 -1,234';
+  expect(read(thousands).raw.ambiguous).toBe('-4,567');
+  expect(read(`${thousands}\n4 -0,123`).raw.ambiguous).toBeNull();
+  expect(read(`${thousands}\n4,5 -1,000`).raw.ambiguous).toBeNull();
+  const chosen = read(thousands, { decimal: 'comma' });
+  expect(chosen.raw.ambiguous).toBeNull();
+  expect(chosen.rows[0]).toEqual([0, -4.567]);
+  expect(read(thousands, { decimal: 'point' }).faults).toHaveLength(4);
+  expect(read('0 -4.567\n1 -3.456').raw.ambiguous).toBeNull();
+});
+
+test.each([
+  [
+    'a page of a paper',
+    'Scattering of slow neutrons\nby hydrogen. The cross section was measured.',
+  ],
+  ['a table of words', 'name;colour\niron;grey\ngold;yellow'],
+  ['mark-up', '<table><tr><td>r</td><td>V</td></tr></table>'],
+  ['an object', '{"r": [], "V": []}'],
+])('%s is no table, and said to be none', (_, text) => {
+  expect(cutTable(text).refused).toBe('No line of the text holds a number.');
+  expect(cutTable(text).lines).toEqual([]);
+});
+
+test('a text with numbers here and there gives no row, and a reason for each line', () => {
+  const { rows, faults } = read('On 3 May the beam\nwas 25 MeV wide\nand 4 m long');
+  expect(rows).toEqual([]);
+  expect(faults).toHaveLength(3);
 });
 
 test('a million rows and a file that is no text are refused in words', () => {

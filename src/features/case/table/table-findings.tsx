@@ -3,39 +3,100 @@ import { Notice } from '#src/components/notice.tsx';
 import { MAX_ORIGINAL, MAX_POINTS } from '#shared/contracts/terms.ts';
 import { unitSymbol } from '#shared/units/format.ts';
 import { digits } from '../model/words.ts';
+import type { LineFault } from './model/read-table.ts';
 import type { TableReading } from './use-table-reading.ts';
 
 const MOST_FAULTS = 6;
 const AHEAD = 4;
 const BEHIND = 2;
 
+function Lines({ faults }: { faults: readonly LineFault[] }) {
+  const more = faults.length - MOST_FAULTS;
+  return (
+    <ul>
+      {faults.slice(0, MOST_FAULTS).map(({ line, message }) => (
+        <li key={line}>
+          Line {line}: {message}
+        </li>
+      ))}
+      {more > 0 && <li>And {more} more.</li>}
+    </ul>
+  );
+}
+
+/** A tick that passes over the lines that are no row, and says which. */
+function LeaveOut({ reading }: { reading: TableReading }) {
+  const { read, leftOut, decide } = reading;
+  const count = read.leavable.length;
+  if (count === 0) return null;
+  return (
+    <label className="mt-1.5 flex items-baseline gap-2">
+      <input
+        type="checkbox"
+        className="size-4 shrink-0 translate-y-0.5 accent-barn"
+        checked={leftOut}
+        onChange={(event) => decide({ leftOut: event.target.checked })}
+      />
+      <span>
+        {count === 1 ? 'Leave this line out' : `Leave these ${count} lines out`}
+        <span className="block text-sm text-muted">
+          {reading.kept
+            ? 'The text is kept with the case as it is, every line of it.'
+            : 'What you pasted or chose stays as it is.'}
+        </span>
+      </span>
+    </label>
+  );
+}
+
 /** What is wrong, line by line, and the mend that is at hand. */
 function Faults({ reading }: { reading: TableReading }) {
-  const { read, refusal, decide } = reading;
-  if (refusal !== null) return <Notice tone="fault">{refusal}</Notice>;
-  if (read.faults.length === 0) return null;
-  const more = read.faults.length - MOST_FAULTS;
+  const { raw, read, refusal, leftOut, decide } = reading;
+  const out = leftOut ? read.leavable.length : 0;
+  const count = read.faults.length;
   return (
-    <Notice
-      tone="fault"
-      title={`${read.faults.length} ${read.faults.length === 1 ? 'line needs' : 'lines need'} mending.`}
-      actions={
-        read.unsorted && (
-          <Button size="small" onClick={() => decide({ sorted: true })}>
-            Sort the rows by r
-          </Button>
-        )
-      }
-    >
-      <ul>
-        {read.faults.slice(0, MOST_FAULTS).map(({ line, message }) => (
-          <li key={line}>
-            Line {line}: {message}
-          </li>
-        ))}
-        {more > 0 && <li>And {more} more.</li>}
-      </ul>
-    </Notice>
+    <>
+      {refusal !== null && <Notice tone="fault">{refusal}</Notice>}
+      {refusal === null && raw.ambiguous !== null && (
+        <Notice
+          tone="fault"
+          title={`“${raw.ambiguous}” may be ${raw.ambiguous.replace(',', '.')} or ${raw.ambiguous.replace(',', '')}.`}
+          actions={
+            <Button
+              size="small"
+              onClick={() => decide({ layout: { ...reading.layout, decimal: 'comma' } })}
+            >
+              The comma is a decimal sign
+            </Button>
+          }
+        >
+          Every number with a comma has three digits behind it. If it separates thousands, remove it
+          from the text.
+        </Notice>
+      )}
+      {refusal === null && count > 0 && (
+        <Notice
+          tone="fault"
+          title={`${count} ${count === 1 ? 'line needs' : 'lines need'} mending.`}
+          actions={
+            read.unsorted && (
+              <Button size="small" onClick={() => decide({ sorted: true })}>
+                Sort the rows by r
+              </Button>
+            )
+          }
+        >
+          <Lines faults={read.faults} />
+          {!leftOut && <LeaveOut reading={reading} />}
+        </Notice>
+      )}
+      {raw.refused === null && out > 0 && (
+        <Notice tone="attention" title={`${out} ${out === 1 ? 'line is' : 'lines are'} left out.`}>
+          <Lines faults={read.leavable} />
+          <LeaveOut reading={reading} />
+        </Notice>
+      )}
+    </>
   );
 }
 

@@ -19,18 +19,19 @@ interface Decisions {
   lengthUnit?: string;
   energyUnit?: string;
   sorted: boolean;
+  leftOut: boolean;
 }
 
-const UNDECIDED: Decisions = { layout: {}, columns: {}, sorted: false };
+const UNDECIDED: Decisions = { layout: {}, columns: {}, sorted: false, leftOut: false };
 const FEWEST_ROWS = 4;
 
-function refusalOf({ rows, faults }: ReadRows, { columns, refused }: RawTable): string | null {
+function refusalOf({ rows, faults }: ReadRows, { columns, lines, refused }: RawTable) {
   const count = rows.length;
   if (refused !== null) return refused;
   if (columns === 1)
     return 'There is one column only; a table needs r and V. Is the separator right?';
-  return faults.length === 0 && count > 0 && count < FEWEST_ROWS
-    ? `${count} rows are too few for a spline; at least ${FEWEST_ROWS} are needed.`
+  return faults.length === 0 && lines.length > 0 && count < FEWEST_ROWS
+    ? `${count} ${count === 1 ? 'row is' : 'rows are'} too few for a spline; at least ${FEWEST_ROWS} are needed.`
     : null;
 }
 
@@ -44,9 +45,10 @@ export function useTableReading(initial: Source, before: InteractionTerm) {
     r: Math.min(decided.columns.r ?? guessed.r, Math.max(0, raw.columns - 1)),
     V: Math.min(decided.columns.V ?? guessed.V, Math.max(0, raw.columns - 1)),
   };
+  const { sorted, leftOut } = decided;
   const read = useMemo(
-    () => readRows(raw, { r: columns.r, V: columns.V }, decided.sorted),
-    [raw, columns.r, columns.V, decided.sorted],
+    () => readRows(raw, { r: columns.r, V: columns.V }, { sorted, leftOut }),
+    [raw, columns.r, columns.V, sorted, leftOut],
   );
   const rows = useMemo(() => thinned(read.rows, MAX_POINTS), [read.rows]);
   const given = (key: string, fallback: string) => {
@@ -60,7 +62,8 @@ export function useTableReading(initial: Source, before: InteractionTerm) {
   const energyUnit =
     decided.energyUnit ?? unitIn(raw.header?.[columns.V], 'energy') ?? given('energyUnit', 'eV');
   const refusal = refusalOf(read, raw);
-  const sound = refusal === null && read.faults.length === 0 && rows.length >= FEWEST_ROWS;
+  const open = read.faults.length > 0 || raw.ambiguous !== null;
+  const sound = refusal === null && !open && rows.length >= FEWEST_ROWS;
   const kept = source.text.length <= MAX_ORIGINAL;
   return {
     source,
@@ -68,7 +71,8 @@ export function useTableReading(initial: Source, before: InteractionTerm) {
     columns,
     lengthUnit,
     energyUnit,
-    sorted: decided.sorted,
+    sorted,
+    leftOut,
     read,
     rows,
     refusal,

@@ -37,11 +37,17 @@ export function splitLine(line: string, separator: Separator): string[] {
   }
 }
 
-/** The number a field holds, or null: 1, .5, 1.5e-3, 1.5D-3, 0,5 where the comma is the decimal sign. */
+/** A field in plain characters. */
+export const plainField = (field: string): string => plainSigns(field).replace(/^"(.*)"$/, '$1');
+
+/**
+ * The number a field holds, or null: 1, .5, 1.5e-3, 1.5D-3, 0,5 where the comma is the decimal sign. The other sign is
+ * refused, never dropped or converted: 1.234 beside decimal commas may be 1234.
+ */
 export function numberIn(field: string, decimal: DecimalSign): number | null {
-  const text = plainSigns(field).replace(/^"(.*)"$/, '$1');
+  const text = plainField(field);
   if (!NUMBER_EITHER.test(text)) return null;
-  if (decimal === 'point' && text.includes(',')) return null;
+  if (text.includes(decimal === 'point' ? ',' : '.')) return null;
   const value = Number(text.replace(',', '.').replace(/[dD]/, 'e'));
   return Number.isFinite(value) ? value : null;
 }
@@ -72,4 +78,19 @@ export function guessLayout(lines: readonly string[]): Layout {
   const points = fields.some((field) => /\d\.\d|^\.\d/.test(field));
   const commas = fields.some((field) => /^[-+\u2212]?\d*,\d+/.test(field));
   return { separator, decimal: commas && !points ? 'comma' : 'point' };
+}
+
+/** 1,234 is one and a bit or more than a thousand; 0,234 and 1,2345 can only be decimals. */
+const EITHER_WAY = /^[-+]?[1-9]\d{0,2},\d{3}$/;
+
+/** A number with a comma, where every one of the text would stand for something else with separators of thousands. */
+export function ambiguousComma(fields: Iterable<string>): string | null {
+  let sample: string | null = null;
+  for (const field of fields) {
+    const text = plainField(field);
+    if (!text.includes(',')) continue;
+    if (!EITHER_WAY.test(text)) return null;
+    sample ??= text;
+  }
+  return sample;
 }

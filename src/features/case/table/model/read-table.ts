@@ -1,5 +1,5 @@
-import { guessLayout, numberIn, splitLine } from './layout.ts';
-import type { Layout } from './layout.ts';
+import { ambiguousComma, guessLayout, numberIn, plainField, splitLine } from './layout.ts';
+import type { DecimalSign, Layout } from './layout.ts';
 
 /** A pasted or uploaded text is read up to here: a text box that holds more freezes the page. */
 export const MOST_TEXT = 1_000_000;
@@ -20,6 +20,8 @@ export interface RawTable {
   lines: TableLine[];
   /** Lines that hold remarks: they begin with #, %, ! or //. */
   remarks: number;
+  /** A number whose comma is taken for a decimal sign by a guess that may be wrong a thousandfold. */
+  ambiguous: string | null;
   /** Why the text was not read at all. */
   refused: string | null;
 }
@@ -35,7 +37,8 @@ const REMARK = /^\s*(?:#|%|!|\/\/)\s*/;
 
 function refused(reason: string): RawTable {
   const layout: Layout = { separator: 'space', decimal: 'point' };
-  return { layout, header: null, columns: 0, lines: [], remarks: 0, refused: reason };
+  const nothing = { header: null, columns: 0, lines: [], remarks: 0, ambiguous: null };
+  return { layout, ...nothing, refused: reason };
 }
 
 /** Number of fields of a line that are numbers. */
@@ -89,59 +92,110 @@ export function cutTable(text: string, chosen: Partial<Layout> = {}): RawTable {
     columns: data.slice(0, 1000).reduce((most, { fields }) => Math.max(most, fields.length), 0),
     lines: data,
     remarks: filled.length - rows.length,
+    ambiguous:
+      chosen.decimal === undefined && layout.decimal === 'comma'
+        ? ambiguousComma(data.flatMap(({ fields }) => fields))
+        : null,
     refused: data.length === 0 && filled.length > 0 ? 'No line of the text holds a number.' : null,
   };
 }
 
-function fieldFault(line: TableLine, column: number, name: string): LineFault {
+const MARKS: Record<DecimalSign, string> = { point: '.', comma: ',' };
+
+function fieldWords(field: string, name: string, decimal: DecimalSign): string {
+  const shown = `“${field.slice(0, 24)}” for ${name}`;
+  const other: DecimalSign = decimal === 'comma' ? 'point' : 'comma';
+  if (numberIn(field, other) === null) return `${shown} is no number.`;
+  const text = plainField(field);
+  const asDecimal = text.replace(MARKS[other], MARKS[decimal]);
+  return `${shown} has a ${other} where the decimal sign is a ${decimal}: write ${asDecimal} or ${text.replace(MARKS[other], '')}, whichever it is.`;
+}
+
+function fieldFault(
+  line: TableLine,
+  column: number,
+  name: string,
+  decimal: DecimalSign,
+): LineFault {
   const field = line.fields[column];
   const message =
     field === undefined
       ? `has ${line.fields.length} column${line.fields.length === 1 ? '' : 's'}; ${name} is missing.`
-      : `“${field.slice(0, 24)}” for ${name} is no number.`;
+      : fieldWords(field, name, decimal);
   return { line: line.line, message };
+}
+
+interface Found {
+  row: Row;
+  line: number;
+}
+
+/** The rows of two columns in the order of the text, and the lines that are none. */
+function foundIn({ lines, layout }: RawTable, columns: { r: number; V: number }) {
+  const { decimal } = layout;
+  const found: Found[] = [];
+  const unread: LineFault[] = [];
+  for (const line of lines) {
+    const r = numberIn(line.fields[columns.r] ?? '', decimal);
+    const V = numberIn(line.fields[columns.V] ?? '', decimal);
+    if (r === null) unread.push(fieldFault(line, columns.r, 'r', decimal));
+    else if (V === null) unread.push(fieldFault(line, columns.V, 'V', decimal));
+    else if (r < 0) unread.push({ line: line.line, message: `r = ${r} is negative.` });
+    else found.push({ row: [r, V], line: line.line });
+  }
+  return { found, unread };
+}
+
+/** Rows whose r stands there already, and rows whose r falls back, in words. */
+function orderFaults(found: readonly Found[]) {
+  const twice: LineFault[] = [];
+  const fallen: LineFault[] = [];
+  found.forEach(({ row: [r], line }, i) => {
+    const before = found[i - 1]?.row[0];
+    if (before === undefined || r > before) return;
+    const how = r === before ? `r = ${r} stands there twice` : `r = ${r} comes after ${before}`;
+    const fault = { line, message: `${how}; r must rise from row to row.` };
+    (r === before ? twice : fallen).push(fault);
+  });
+  return { twice, fallen };
+}
+
+const byLine = (faults: readonly LineFault[]) => faults.toSorted((a, b) => a.line - b.line);
+
+export interface Mends {
+  /** The rows are put in the order of r. */
+  sorted: boolean;
+  /** Lines that are no row, and rows whose r stands there already, are passed over. */
+  leftOut: boolean;
 }
 
 export interface ReadRows {
   rows: Row[];
+  /** What still hinders. */
   faults: LineFault[];
+  /** Lines that are, or may be, left out. */
+  leavable: LineFault[];
   /** True where nothing but the order of the rows is wrong. */
   unsorted: boolean;
 }
 
-/** Rows whose r does not rise, in words. */
-function orderFaults(rows: readonly Row[], lines: readonly number[]): LineFault[] {
-  return rows.flatMap(([r], i) => {
-    const before = rows[i - 1]?.[0];
-    if (before === undefined || r > before) return [];
-    const how = r === before ? `r = ${r} stands there twice` : `r = ${r} comes after ${before}`;
-    return [{ line: lines[i] ?? 0, message: `${how}; r must rise from row to row.` }];
-  });
-}
-
-/** The rows of two columns, with a fault in words for every line that is none. */
+/** The rows of two columns, with a fault in words for every line that is none. Rows out of order are sorted, never left out. */
 export function readRows(
-  { lines, layout }: RawTable,
+  table: RawTable,
   columns: { r: number; V: number },
-  sorted: boolean,
+  { sorted, leftOut }: Mends,
 ): ReadRows {
-  const found: { row: Row; line: number }[] = [];
-  const faults: LineFault[] = [];
-  for (const line of lines) {
-    const r = numberIn(line.fields[columns.r] ?? '', layout.decimal);
-    const V = numberIn(line.fields[columns.V] ?? '', layout.decimal);
-    if (r === null) faults.push(fieldFault(line, columns.r, 'r'));
-    else if (V === null) faults.push(fieldFault(line, columns.V, 'V'));
-    else if (r < 0) faults.push({ line: line.line, message: `r = ${r} is negative.` });
-    else found.push({ row: [r, V], line: line.line });
-  }
+  const { found, unread } = foundIn(table, columns);
   if (sorted) found.sort((a, b) => a.row[0] - b.row[0]);
-  const rows = found.map(({ row }) => row);
-  const order = orderFaults(
-    rows,
-    found.map(({ line }) => line),
-  );
-  return { rows, faults: [...faults, ...order], unsorted: faults.length === 0 && order.length > 0 };
+  const { twice, fallen } = orderFaults(found);
+  const leavable = byLine([...unread, ...twice]);
+  const out = new Set(leftOut ? twice.map(({ line }) => line) : []);
+  return {
+    rows: found.filter(({ line }) => !out.has(line)).map(({ row }) => row),
+    faults: byLine(leftOut ? fallen : [...leavable, ...fallen]),
+    leavable,
+    unsorted: fallen.length > 0 && (leftOut || unread.length === 0),
+  };
 }
 
 /** Every n-th row and the last, so that no more than `most` are left. */
