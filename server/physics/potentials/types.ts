@@ -64,6 +64,10 @@ export interface Term {
   reach: number | null;
   /** Radii where s or its derivative jumps, angstrom, ascending. */
   breakpoints: number[];
+  /** Radii where only a higher derivative of s jumps, as at the rows of a table, angstrom, ascending. Absent means none. */
+  knots?: readonly number[];
+  /** V(r) stands before l·sigma of a projectile of spin 1/2. Absent means a central potential. */
+  spinOrbit?: boolean;
   /** q at which the slope of the transform jumps, 1/angstrom; integrals over angle are cut there. Absent means none. */
   kinks?: readonly number[];
   /** Why there is no first order (hard sphere); `closed` and `quadrature` are null then. */
