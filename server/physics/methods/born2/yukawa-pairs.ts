@@ -1,8 +1,8 @@
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import { Q_ALLOWANCE } from '#server/physics/potentials/transform-error.ts';
-import { screensOf } from '#server/physics/potentials/screening-sum.ts';
 import type { Term } from '#server/physics/potentials/types.ts';
 import type { Amplitude } from '../amplitude.ts';
+import { exponentialsOf } from '../exponentials.ts';
 
 /** One part c exp(-mu r)/r of U: c in 1/angstrom, mu in 1/angstrom. */
 export interface YukawaPart {
@@ -11,24 +11,10 @@ export interface YukawaPart {
   mu: number;
 }
 
-const SCREENED = ['moliere', 'krc', 'universalIon'] as const;
 /** Roundings in one pair. */
 const ROUNDINGS = 60;
 /** Bound of |d ln|I|/d ln q|. */
 const STEEPEST = 4;
-
-/** Weights and inverse lengths of s(r) = Σ weight exp(-mu r)/r; null for other forms. */
-function exponentialsOf(term: Term): { weight: number; mu: number }[] | null {
-  const { form, range } = term;
-  if (form === 'yukawa' && range !== null) return [{ weight: range, mu: 1 / range }];
-  if (form === 'screenedCoulomb' && range !== null) return [{ weight: 1, mu: 1 / range }];
-  const key = SCREENED.find((name) => name === form);
-  if (key === undefined || term.firstMoment === null) return null;
-  const screens = screensOf(key);
-  // ∫ r s dr = a Σ weight/rate gives the screening length back.
-  const a = term.firstMoment / screens.reduce((sum, { weight, rate }) => sum + weight / rate, 0);
-  return screens.map(({ weight, rate }) => ({ weight, mu: rate / a }));
-}
 
 /** The interaction as a sum of Yukawa potentials; null where it is none. */
 export function yukawaParts(terms: readonly Term[], twoMuOverHbar2: number): YukawaPart[] | null {

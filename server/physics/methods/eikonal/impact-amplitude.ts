@@ -1,0 +1,53 @@
+import { chebyshevInterpolant } from '#server/physics/numerics/chebyshev-panels.ts';
+import { hankelTransform } from '#server/physics/numerics/hankel-panels.ts';
+import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
+import { Q_ALLOWANCE } from '#server/physics/potentials/transform-error.ts';
+import type { Amplitude } from '../amplitude.ts';
+import type { ImpactPanels } from './impact-panels.ts';
+
+/** Roundings of the sums over panels, and the share of ∫ b |F| db to which they are interpolated in q. */
+const SUM_ROUNDING = 16 * UNIT_ROUNDOFF;
+const INTERPOLATION = 3e-15;
+
+/** Intervals of q that double from the inverse of the mean impact parameter on. */
+function edgesOf(k: number, { moments }: ImpactPanels): number[] {
+  const edges = [0];
+  const mean = moments[0] > 0 ? moments[1] / moments[0] : 0;
+  if (mean > 0) for (let q = 2 / mean; q < 2 * k; q *= 2) edges.push(q);
+  return [...edges, 2 * k];
+}
+
+export interface ImpactAmplitude {
+  at: (q: number, blur?: number) => Amplitude;
+  /** Largest error at any angle, angstrom. */
+  largestError: number;
+}
+
+/**
+ * Amplitude of a function of the impact parameter.
+ *
+ * Formula: -ik ∫ b J0(qb) F(b) db, interpolated in q.
+ *
+ * @param source F on panels
+ * @param k wave number, 1/angstrom
+ * @param ofF bound of ∫ b |error of F| db beside what the panels leave out
+ * @returns amplitude, angstrom, with a bound of its error, that of q (and `blur`, relative) included
+ */
+export function impactAmplitude(source: ImpactPanels, k: number, ofF: number): ImpactAmplitude {
+  const { panels, missed, moments } = source;
+  const [plain, first, third] = moments;
+  const transform = hankelTransform(panels);
+  const tolerance = INTERPOLATION * plain;
+  const interpolant = chebyshevInterpolant(transform, edgesOf(k, source), tolerance);
+  const fixed = k * (SUM_ROUNDING * plain + 2 * tolerance + missed + ofF);
+  // |x J1(x)| is at most x²/2 and 0.6 x.
+  const slope = (q: number) => k * Math.min(0.6 * q * first, (q * q * third) / 2);
+  return {
+    at: (q, blur = 0) => {
+      const { re, im } = interpolant.at(Math.min(q, 2 * k));
+      // -i (re + i im)
+      return { re: k * im, im: -k * re, error: fixed + (Q_ALLOWANCE + blur) * slope(q) };
+    },
+    largestError: fixed + Q_ALLOWANCE * slope(2 * k),
+  };
+}
