@@ -12,9 +12,7 @@ import {
   prepareClone,
   programEnvironment,
 } from './lib/prepare.mjs';
-import { livingPostmaster } from './lib/postgres/cluster.mjs';
-import { DATABASE, OWNER, RUNTIME, urlOf } from './lib/postgres/database.mjs';
-import { findPlace } from './lib/postgres/place.mjs';
+import { databaseInUse } from './lib/postgres/database-in-use.mjs';
 import { ensurePostgres, openPrivateDatabase } from './lib/postgres/private-database.mjs';
 import { endOf } from './lib/processes.mjs';
 import { Failure } from './lib/say.mjs';
@@ -23,27 +21,6 @@ import { readSettings } from './lib/settings.mjs';
 import { live } from './lib/shutdown.mjs';
 
 /** @typedef {import('./lib/settings.mjs').Settings} Settings */
-
-/**
- * The database of a Tallybarn that is running.
- * @param {Settings} settings
- */
-function databaseInUse(settings) {
-  const postmaster = livingPostmaster(findPlace(settings.dataDir).home);
-  if (postmaster === undefined) {
-    throw new Failure(
-      'Tallybarn is just starting or stopping on this DATA_DIR',
-      'try again in a moment',
-    );
-  }
-  const { secrets } = ensureSecrets(settings.secretsFile);
-  const { port } = postmaster;
-  const access = { port, database: DATABASE };
-  return {
-    runtimeUrl: urlOf({ ...access, user: RUNTIME, password: secrets.databaseRuntimePassword }),
-    ownerUrl: urlOf({ ...access, user: OWNER, password: secrets.databaseOwnerPassword }),
-  };
-}
 
 /**
  * @param {import('./lib/shutdown.mjs').Shutdown} shutdown

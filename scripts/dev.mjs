@@ -70,6 +70,7 @@ await live(async (shutdown) => {
     NODE_ENV: 'development',
   };
   keepRunning(shutdown, ['--watch', '--import', 'tsx', join(ROOT, 'server/main.ts')], env);
+  keepRunning(shutdown, ['--watch', '--import', 'tsx', join(ROOT, 'server/worker.ts')], env);
   keepRunning(shutdown, [join(ROOT, 'node_modules/vite/bin/vite.js')], {
     ...process.env,
     API_URL: `http://${hostInUrl(settings.host)}:${settings.port}`,

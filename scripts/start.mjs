@@ -17,6 +17,7 @@ import { ensureSecrets } from './lib/secrets.mjs';
 import { serve, stopLeftoverServer } from './lib/server-process.mjs';
 import { ROOT, hostInUrl, readSettings } from './lib/settings.mjs';
 import { live } from './lib/shutdown.mjs';
+import { keepWorker } from './lib/worker-process.mjs';
 
 /**
  * @typedef {import('./lib/shutdown.mjs').Shutdown} Shutdown
@@ -103,6 +104,7 @@ await live(async (shutdown) => {
   const program = ['--enable-source-maps', join(ROOT, 'dist/server/main.js')];
   // The demo is looked after while the server starts; the ready line waits for both.
   await Promise.all([seedDemo(shutdown, settings, urls), serve(shutdown, settings, program, env)]);
+  keepWorker(shutdown, settings, env);
   say(`Tallybarn is ready at http://${hostInUrl(settings.host)}:${settings.port}`);
   say('Ctrl-C stops it.');
   const reason = await shutdown.requested;

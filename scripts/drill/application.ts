@@ -1,7 +1,7 @@
 import { spawn } from 'node:child_process';
 import type { ChildProcess } from 'node:child_process';
 import { once } from 'node:events';
-import { readFileSync } from 'node:fs';
+import { existsSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import process from 'node:process';
 import { setTimeout as sleep } from 'node:timers/promises';
@@ -55,7 +55,7 @@ export async function stopApplication({ child }: Application): Promise<void> {
   await ended;
 }
 
-function killOutright(pid: number | undefined): boolean {
+export function killOutright(pid: number | undefined): boolean {
   if (pid === undefined) return false;
   try {
     return process.kill(pid, 'SIGKILL');
@@ -66,10 +66,21 @@ function killOutright(pid: number | undefined): boolean {
   }
 }
 
+/** The process a start noted in a file of its DATA_DIR; undefined while it is being started again. */
+function notedIn(dataDir: string, file: 'server.json' | 'worker.json'): number | undefined {
+  const path = join(dataDir, file);
+  if (!existsSync(path)) return undefined;
+  return (JSON.parse(readFileSync(path, 'utf8')) as { pid: number }).pid;
+}
+
 /** kill -9 of the process that answers requests. */
 export function killServer({ dataDir }: Place): boolean {
-  const { pid } = JSON.parse(readFileSync(join(dataDir, 'server.json'), 'utf8')) as { pid: number };
-  return killOutright(pid);
+  return killOutright(notedIn(dataDir, 'server.json'));
+}
+
+/** kill -9 of the worker beside the server. */
+export function killWorker({ dataDir }: Place): boolean {
+  return killOutright(notedIn(dataDir, 'worker.json'));
 }
 
 /** kill -9 of the postmaster; its children end when they notice. */

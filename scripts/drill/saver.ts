@@ -1,10 +1,9 @@
 import { setTimeout as sleep } from 'node:timers/promises';
 import { z } from 'zod';
-import { createdTokenSchema } from '#shared/contracts/auth.ts';
 import { caseSchema, versionDetailSchema } from '#shared/contracts/cases.ts';
 import type { CaseDocument, VersionDetail } from '#shared/contracts/cases.ts';
 import { listSchema } from '#shared/contracts/list.ts';
-import { DEMO_ACCOUNTS, DEMO_PASSWORD } from '#server/db/seeders/demo/scenario.ts';
+import { tokenOf } from './token.ts';
 
 const PATIENCE = 120_000;
 
@@ -45,20 +44,7 @@ export class Saver {
   ) {}
 
   static async signIn(url: string): Promise<Saver> {
-    const headers = { 'content-type': 'application/json', origin: url };
-    const email = DEMO_ACCOUNTS.find(({ role }) => role === 'experimentalist')?.email;
-    const signedIn = await fetch(`${url}/api/auth/sign-in`, {
-      method: 'POST',
-      headers,
-      body: JSON.stringify({ email, password: DEMO_PASSWORD }),
-    });
-    const cookie = signedIn.headers.getSetCookie().map((line) => line.split(';')[0]);
-    const made = await fetch(`${url}/api/tokens`, {
-      method: 'POST',
-      headers: { ...headers, cookie: cookie.join('; ') },
-      body: JSON.stringify({ name: 'Drill', scope: 'write', expiresInDays: 1 }),
-    });
-    const { secret } = createdTokenSchema.parse(await made.json());
+    const secret = await tokenOf(url, 'experimentalist');
     return new Saver(url, secret);
   }
 

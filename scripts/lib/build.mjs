@@ -32,6 +32,7 @@ export function serverEntries(root) {
   const names = existsSync(commands) ? readdirSync(commands).sort() : [];
   const wanted = [
     'server/main.ts',
+    'server/worker.ts',
     'server/compute/engine-worker.ts',
     ...names.filter((name) => name.endsWith('.ts')).map((name) => `server/commands/${name}`),
   ];
