@@ -16,6 +16,7 @@ const rooms = [
   { type: 'potentials', partialMatch: false, pattern: 'server/physics/potentials/**' },
   { type: 'methods', partialMatch: false, pattern: 'server/physics/methods/**' },
   { type: 'observables', partialMatch: false, pattern: 'server/physics/observables/**' },
+  { type: 'counting', partialMatch: false, pattern: 'server/physics/counting/**' },
   { type: 'physics', partialMatch: false, pattern: 'server/physics/*.ts' },
   { type: 'server', partialMatch: false, pattern: 'server/**' },
   { type: 'feature', partialMatch: false, pattern: 'src/features/*/**', capture: ['feature'] },
@@ -38,14 +39,28 @@ const allow = [
   ['methods', ['methods', 'kinematics', 'potentials', 'tables', ...physicsBase]],
   ['observables', ['observables', 'methods', 'kinematics', 'potentials', 'tables', ...physicsBase]],
   [
+    'counting',
+    ['counting', 'observables', 'methods', 'kinematics', 'potentials', 'tables', ...physicsBase],
+  ],
+  [
     'physics',
-    ['physics', 'observables', 'methods', 'kinematics', 'potentials', 'tables', ...physicsBase],
+    [
+      'physics',
+      'counting',
+      'observables',
+      'methods',
+      'kinematics',
+      'potentials',
+      'tables',
+      ...physicsBase,
+    ],
   ],
   [
     'server',
     [
       'server',
       'physics',
+      'counting',
       'observables',
       'methods',
       'kinematics',

@@ -5,12 +5,16 @@ import type { MaterialAids, MaterialAidsRequest } from '#shared/contracts/materi
 import { computeMaterialAids } from '#server/modules/material-aids/compute-material-aids.ts';
 import { drawForm } from '#server/modules/reference/draw-form.ts';
 import type { FormSheet } from '#server/modules/reference/draw-form.ts';
+import type { RunPlan, RunPlanRequest } from '#shared/contracts/run-plans.ts';
+import { computeRunPlan } from '#server/modules/run-plans/compute-run-plan.ts';
 
 /** What the engine can be asked, with what goes in and what comes out: plain JSON both ways. */
 export interface EngineKinds {
   estimate: { input: EstimateTask; output: Estimate };
   /** The same collision in a material. */
   materialAids: { input: MaterialAidsRequest; output: MaterialAids };
+  /** The same collision counted by detectors. */
+  runPlan: { input: RunPlanRequest; output: RunPlan };
   /** What the Reference shows of a form: V(r), its transform, remarks. */
   formSheet: { input: EstimateRequest; output: FormSheet };
 }
@@ -21,5 +25,6 @@ export const ENGINE: {
 } = {
   estimate: computeEstimate,
   materialAids: computeMaterialAids,
+  runPlan: computeRunPlan,
   formSheet: drawForm,
 };

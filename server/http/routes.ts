@@ -10,6 +10,7 @@ import { libraryRoutes } from '#server/modules/library/library.routes.ts';
 import { materialAidRoutes } from '#server/modules/material-aids/material-aids.routes.ts';
 import { referenceRoutes } from '#server/modules/reference/reference.routes.ts';
 import { scanRoutes } from '#server/modules/scans/scans.routes.ts';
+import { runPlanRoutes } from '#server/modules/run-plans/run-plans.routes.ts';
 import { searchRoutes } from '#server/modules/search/search.routes.ts';
 import { settingsRoutes } from '#server/modules/settings/settings.routes.ts';
 import { tokenRoutes } from '#server/modules/tokens/tokens.routes.ts';
@@ -27,6 +28,7 @@ export const ROUTES: readonly Route[] = [
   ...versionRoutes,
   ...estimateRoutes,
   ...materialAidRoutes,
+  ...runPlanRoutes,
   ...scanRoutes,
   ...jobRoutes,
   ...formRoutes,

@@ -56,6 +56,18 @@ export const RULES: Record<string, Rule> = {
     expect: ALLOWED_TO_ALL,
     prepare: () => ({ body: { estimate: yukawaDocument, material: { key: 'gold' } } }),
   },
+  computeRunPlan: {
+    access: 'estimate.compute',
+    expect: ALLOWED_TO_ALL,
+    prepare: () => ({
+      body: {
+        estimate: yukawaDocument,
+        beam: { particlesPerSecond: 1000 },
+        foil: { arealDensity: { value: 1e18, unit: '1/cm2' } },
+        detectors: [{ name: 'D1', angle: 30, solidAngle: 0.01 }],
+      },
+    }),
+  },
   listCases: { access: 'case.list', expect: RESEARCHERS_ONLY },
   createCase: { access: 'case.create', expect: RESEARCHERS_ONLY, prepare: () => ({ body }) },
   readCase: { access: 'case.read', expect: READ, prepare: caseOf },

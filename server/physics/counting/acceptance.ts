@@ -1,0 +1,154 @@
+import { cmToLab } from '#server/physics/kinematics/frames.ts';
+import { integrate } from '#server/physics/numerics/quadrature.ts';
+import { cmRanges } from '#server/physics/observables/between-angles.ts';
+import type { Cone } from './cone.ts';
+import { halfAzimuth, ringsOf, solidAngleOfCone } from './cone.ts';
+import type { Curve, Dcs } from './curve.ts';
+
+/**
+ * What a direction is worth, 0 to 1: the mean over the azimuths within `halfAzimuth` of the detector's plane at one polar angle of the lab.
+ */
+export type RingWeight = (thetaLab: number, halfAzimuth: number) => number;
+
+/** Relative change of the sum between two refinements that is small enough. */
+const AIM = 1e-8;
+const FIRST = 8;
+const MOST = 2048;
+/** A single ray: nothing is averaged over less. */
+const NARROW = 1e-9;
+
+/** A mean over an acceptance: plain with its error, and with every direction counted by its weight. */
+export interface AcceptanceMean extends Dcs {
+  weighted: number;
+}
+
+const SUMS = ['value', 'weighted', 'error'] as const;
+
+/** A cross section met a divergence inside the acceptance. */
+class Divergence extends Error {}
+
+function finite(dcs: Dcs | null): Dcs {
+  if (dcs === null) throw new Divergence();
+  return dcs;
+}
+
+/**
+ * ∫ g over [a, b] of a function that vanishes like a square root at the ends, by x = (a + b)/2 - (b - a)/2 cos t and the trapezoidal rule,
+ * whose points are used again when their number doubles.
+ */
+function overArc(g: (x: number) => AcceptanceMean, a: number, b: number): AcceptanceMean {
+  const half = (b - a) / 2;
+  const middle = a + half;
+  const sum: AcceptanceMean = { value: 0, weighted: 0, error: 0 };
+  const add = (i: number, n: number) => {
+    const t = (Math.PI * i) / n;
+    const weight = half * Math.sin(t);
+    const at = g(middle - half * Math.cos(t));
+    for (const key of SUMS) sum[key] += weight * at[key];
+  };
+  for (let i = 1; i < FIRST; i++) add(i, FIRST);
+  let [plain, weighted] = [sum.value / FIRST, sum.weighted / FIRST];
+  for (let n = 2 * FIRST; ; n *= 2) {
+    for (let i = 1; i < n; i += 2) add(i, n);
+    const change = Math.abs(sum.value / n - plain);
+    const other = Math.abs(sum.weighted / n - weighted);
+    [plain, weighted] = [sum.value / n, sum.weighted / n];
+    const isSteady = change <= AIM * plain && other <= AIM * weighted;
+    if (isSteady || n >= MOST) {
+      const step = Math.PI / n;
+      const error = step * sum.error + Math.PI * change;
+      return { value: step * sum.value, weighted: step * sum.weighted, error };
+    }
+  }
+}
+
+/** ∫ g over rings that lie in the cone whole. */
+function overRings(g: (x: number) => AcceptanceMean, a: number, b: number): AcceptanceMean {
+  const common = { relative: AIM, maxEvaluations: 20_000 };
+  const sum = integrate((x) => g(x).value, a, b, common);
+  const weighted = integrate((x) => g(x).weighted, a, b, common);
+  const carried = integrate((x) => g(x).error, a, b, { relative: 0.1, maxEvaluations: 2_000 });
+  return {
+    value: sum.value,
+    weighted: weighted.value,
+    error: sum.error + carried.value,
+  };
+}
+
+/** The whole acceptance with one weight for every direction, or a divergence. */
+function integralOver(curve: Curve, cone: Cone, weight: RingWeight | null): AcceptanceMean {
+  const { frame } = curve;
+  const ring = (isWhole: boolean) => (thetaCm: number) => {
+    const { thetaLab } = cmToLab(thetaCm, frame);
+    const azimuth = isWhole ? Math.PI : halfAzimuth(thetaLab, cone);
+    if (azimuth === 0) return { value: 0, weighted: 0, error: 0 };
+    const { value, error } = finite(curve.cm(thetaCm));
+    const share = weight === null ? 1 : weight(thetaLab, azimuth);
+    const size = 2 * azimuth * Math.sin(thetaCm);
+    return { value: size * value, weighted: size * value * share, error: size * error };
+  };
+  const { whole, cut } = ringsOf(cone);
+  const total: AcceptanceMean = { value: 0, weighted: 0, error: 0 };
+  const add = (part: AcceptanceMean) => {
+    for (const key of SUMS) total[key] += part[key];
+  };
+  for (const [low, high] of whole) {
+    if (curve.forwardDiverges && low === 0) throw new Divergence();
+    if (curve.backwardDiverges && high >= Math.PI) throw new Divergence();
+    for (const { from, to } of cmRanges(low, high, frame)) {
+      if (to > from) add(overRings(ring(true), from, to));
+    }
+  }
+  if (cut) {
+    for (const { from, to } of cmRanges(cut[0], cut[1], frame)) {
+      if (to > from) add(overArc(ring(false), from, to));
+    }
+  }
+  return total;
+}
+
+function alongTheRay(
+  curve: Curve,
+  theta: number,
+  weight: RingWeight | null,
+): AcceptanceMean | null {
+  const { dcs, isOutOfReach } = curve.lab(theta);
+  if (dcs === null) return isOutOfReach ? { value: 0, weighted: 0, error: 0 } : null;
+  return { ...dcs, weighted: dcs.value * (weight === null ? 1 : weight(theta, 0)) };
+}
+
+/**
+ * Mean of dσ/dΩ over a circular acceptance, both branches of a heavy projectile included.
+ *
+ * Formula: (1/Ω) ∫ dσ/dΩ_cm · 2ψ(θ_lab(θ)) · w sin θ dθ over the angles of the centre of mass that lead into the cone; ψ is half the azimuth
+ * inside it. In this variable the edge of a heavy projectile's cone is no singularity.
+ *
+ * @param curve of one energy
+ * @param cone acceptance in the lab
+ * @param weight of a direction, such as the share that leaves the target; null for 1
+ * @returns angstrom²/sr with an error: the change of the last refinement (1e-8 of the value is aimed at) and the errors of dσ/dΩ; zero where
+ *   no particle can go; null where the cross section diverges inside the acceptance
+ *
+ * Validity: a point-like spot on the target.
+ *
+ * Source: definition of the solid angle.
+ */
+export function acceptanceAverage(
+  curve: Curve,
+  cone: Cone,
+  weight: RingWeight | null = null,
+): AcceptanceMean | null {
+  if (cone.halfAngle < NARROW) return alongTheRay(curve, cone.theta, weight);
+  try {
+    const { value, weighted, error } = integralOver(curve, cone, weight);
+    const solidAngle = solidAngleOfCone(cone.halfAngle);
+    return {
+      value: value / solidAngle,
+      weighted: weighted / solidAngle,
+      error: error / solidAngle,
+    };
+  } catch (fault) {
+    if (fault instanceof Divergence) return null;
+    throw fault;
+  }
+}
