@@ -26,7 +26,7 @@ function unitChoices(dimension: 'length' | 'energy') {
 
 /** How the text is cut, which columns are r and V, and in which units. */
 export function TableControls({ reading }: { reading: TableReading }) {
-  const { raw, columns, layout, lengthUnit, energyUnit, decide } = reading;
+  const { raw, columns, layout, lengthUnit, energyUnit, decide, cut } = reading;
   const listed = Array.from({ length: Math.max(1, raw.columns) }, (_, i) => ({
     value: String(i),
     label: columnName(raw, i),
@@ -37,13 +37,13 @@ export function TableControls({ reading }: { reading: TableReading }) {
         label="Columns are separated by"
         value={layout.separator}
         choices={entries(SEPARATOR_NAMES)}
-        onChange={(separator) => decide({ layout: { ...layout, separator } })}
+        onChange={(separator) => cut({ separator })}
       />
       <Choice
         label="Decimal sign"
         value={layout.decimal}
         choices={entries(DECIMAL_NAMES)}
-        onChange={(decimal) => decide({ layout: { ...layout, decimal } })}
+        onChange={(decimal) => cut({ decimal })}
       />
       <Choice
         label="r stands in"

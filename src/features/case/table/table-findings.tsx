@@ -51,7 +51,7 @@ function LeaveOut({ reading }: { reading: TableReading }) {
 
 /** What is wrong, line by line, and the mend that is at hand. */
 function Faults({ reading }: { reading: TableReading }) {
-  const { raw, read, refusal, leftOut, decide } = reading;
+  const { raw, read, refusal, leftOut, decide, cut } = reading;
   const out = leftOut ? read.leavable.length : 0;
   const count = read.faults.length;
   return (
@@ -62,10 +62,7 @@ function Faults({ reading }: { reading: TableReading }) {
           tone="fault"
           title={`“${raw.ambiguous}” may be ${raw.ambiguous.replace(',', '.')} or ${raw.ambiguous.replace(',', '')}.`}
           actions={
-            <Button
-              size="small"
-              onClick={() => decide({ layout: { ...reading.layout, decimal: 'comma' } })}
-            >
+            <Button size="small" onClick={() => cut({ decimal: 'comma' })}>
               The comma is a decimal sign
             </Button>
           }

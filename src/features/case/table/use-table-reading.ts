@@ -85,6 +85,9 @@ export function useTableReading(initial: Source, before: InteractionTerm) {
       if (next.name !== source.name) setDecided(UNDECIDED);
     },
     decide: (next: Partial<Decisions>) => setDecided((now) => ({ ...now, ...next })),
+    /** Settles one thing about how the text is cut; the other goes on being guessed. */
+    cut: (next: Partial<Layout>) =>
+      setDecided((now) => ({ ...now, layout: { ...now.layout, ...next } })),
     layout: { ...raw.layout, ...decided.layout },
     /** The members of the term this table makes. */
     members: sound
