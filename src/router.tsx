@@ -31,6 +31,8 @@ function FirstPaint() {
 
 const casePage = page(() => import('#src/features/case/pages/case-page.tsx'));
 
+const interactionPage = page(() => import('#src/features/library/pages/interaction-page.tsx'));
+
 const rooms: RouteObject[] = [
   { index: true, lazy: page(() => import('#src/features/desk/pages/desk-page.tsx')) },
   { path: 'cases', lazy: page(() => import('#src/features/case-list/pages/cases-page.tsx')) },
@@ -73,8 +75,15 @@ const rooms: RouteObject[] = [
       },
     ],
   },
+  { path: 'library', lazy: page(() => import('#src/features/library/pages/library-page.tsx')) },
+  { path: 'library/interactions/:id', lazy: interactionPage },
+  { path: 'library/interactions/:id/versions/:n', lazy: interactionPage },
   { path: 'account', lazy: page(() => import('#src/features/account/pages/account-page.tsx')) },
   { path: 'people', lazy: page(() => import('#src/features/users/pages/people-page.tsx')) },
+  {
+    path: 'admin/settings',
+    lazy: page(() => import('#src/features/admin/pages/settings-page.tsx')),
+  },
   { path: '*', Component: NotFound },
 ];
 

@@ -1,4 +1,12 @@
-import { BookOpenText, CircleUserRound, LampDesk, Ruler, UsersRound } from 'lucide-react';
+import {
+  BookOpenText,
+  CircleUserRound,
+  LampDesk,
+  LibraryBig,
+  Ruler,
+  SlidersHorizontal,
+  UsersRound,
+} from 'lucide-react';
 import { NavLink } from 'react-router-dom';
 import type { Session } from '#shared/contracts/auth.ts';
 import { classNames } from '#src/lib/class-names.ts';
@@ -14,8 +22,10 @@ interface Room {
 
 const DESK: Room = { to: '/', label: 'Desk', Icon: LampDesk, end: true };
 const CASES: Room = { to: '/cases', label: 'Cases', Icon: BookOpenText };
+const LIBRARY: Room = { to: '/library', label: 'Library', Icon: LibraryBig };
 const REFERENCE: Room = { to: '/reference', label: 'Reference', Icon: Ruler };
 const PEOPLE: Room = { to: '/people', label: 'People', Icon: UsersRound };
+const SETTINGS: Room = { to: '/admin/settings', label: 'Settings', Icon: SlidersHorizontal };
 const ACCOUNT: Room = { to: '/account', label: 'Account', Icon: CircleUserRound };
 
 function RoomLink({ room, onWalk }: { room: Room; onWalk: (() => void) | undefined }) {
@@ -51,8 +61,12 @@ export function Rooms({
   brand?: boolean;
   onWalk?: () => void;
 }) {
-  const research = mayEver(session, 'case.list') ? [DESK, CASES, REFERENCE] : [REFERENCE];
-  const admin = mayEver(session, 'user.list') ? [PEOPLE] : [];
+  const open = [LIBRARY, REFERENCE];
+  const research = mayEver(session, 'case.list') ? [DESK, CASES, ...open] : open;
+  const admin = [
+    ...(mayEver(session, 'user.list') ? [PEOPLE] : []),
+    ...(mayEver(session, 'settings.write') ? [SETTINGS] : []),
+  ];
   return (
     <nav aria-label="Rooms" className="flex flex-1 flex-col gap-4">
       {brand && (

@@ -10,7 +10,7 @@ import { inWords } from '#src/lib/api.ts';
 import { campaignsQuery } from '../api.ts';
 import type { FilingChoice } from '../editing/use-saving.ts';
 import { DEFAULT_TITLE } from '../model/default-document.ts';
-import { TagsField, tagsOf, tagsProblem } from './tags-field.tsx';
+import { TagsField, tagsOf, tagsProblem } from '#src/components/tags-field.tsx';
 import { Unsound } from './open-texts.tsx';
 
 interface FileDialogProps {

@@ -7,7 +7,7 @@ import { Field, TextArea } from '#src/components/field.tsx';
 import { Notice } from '#src/components/notice.tsx';
 import type { FieldError } from '#shared/errors.ts';
 import { inWords } from '#src/lib/api.ts';
-import { TagsField, tagsOf, tagsProblem } from './tags-field.tsx';
+import { TagsField, tagsOf, tagsProblem } from '#src/components/tags-field.tsx';
 import { Unsound } from './open-texts.tsx';
 
 interface SaveDialogProps {

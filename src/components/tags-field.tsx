@@ -1,4 +1,4 @@
-import { Field, TextInput } from '#src/components/field.tsx';
+import { Field, TextInput } from './field.tsx';
 
 /** Tags as they are typed, separated by commas. */
 export function tagsOf(text: string): string[] {
@@ -10,7 +10,7 @@ export function tagsOf(text: string): string[] {
 }
 
 export function tagsProblem(tags: readonly string[]): string | undefined {
-  if (tags.length > 20) return 'A case may have at most 20 tags.';
+  if (tags.length > 20) return 'There may be at most 20 tags.';
   const long = tags.find((tag) => tag.length > 40);
   return long === undefined ? undefined : `\`${long.slice(0, 20)}…\` has more than 40 characters.`;
 }
