@@ -23,7 +23,7 @@ export interface RadialInteraction {
   breaks: number[];
   /** Largest range of its terms, angstrom. */
   size: number;
-  /** Beyond it only the Coulomb tail is left, or a power of r where `power`. */
+  /** Beyond it only the Coulomb tail is left, or a power of r where `power`, angstrom. */
   reach: number;
   /** c of the Coulomb tail c/r of U, 1/angstrom: 2 eta k. */
   charge: number;
@@ -50,7 +50,10 @@ function refusal(terms: readonly Term[]): string | null {
 
 /** Furthest radius at which what is left of U beside the Coulomb tail is more than rounding of that tail. */
 function reachOf(terms: readonly Term[], rest: (r: number) => number, charge: number): number {
-  const known = Math.max(0, ...terms.map(({ reach }) => reach ?? 0));
+  const known = Math.max(
+    0,
+    ...terms.filter(({ tail }) => tail !== 'power').map(({ reach }) => reach ?? 0),
+  );
   const open = terms.filter(({ reach, norm }) => reach === null && norm > 0);
   if (open.length === 0) return known;
   const scale = Math.max(

@@ -1,10 +1,13 @@
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import type { Amplitude, Condition, PartialWaves, Unavailable, Wave } from '../amplitude.ts';
+import type { Term } from '#server/physics/potentials/types.ts';
+import type { FirstBorn } from '../born1.ts';
+import { firstBorn } from '../born1.ts';
 import type { MethodInput } from '../method-input.ts';
 import { radialInteraction } from './interaction.ts';
 import { lowEnergy } from './low-energy.ts';
 import type { Scattered, Transition } from './scatter.ts';
-import { scatter } from './scatter.ts';
+import { scatter, weightOf } from './scatter.ts';
 import { waveSum } from './wave-sum.ts';
 
 export interface PartialWaveInput extends MethodInput {
@@ -26,38 +29,39 @@ function waveOf({ l, spin, re, im, eta, error }: Transition, { born }: Scattered
   };
 }
 
-const weightOf = ({ l, spin }: Transition): number =>
-  spin === 0 ? 2 * l + 1 : spin === 1 ? l + 1 : l;
-
 /** (2l+1)(T_l - first order)/k by l, and the sum of what is not known of them. */
 function coefficients({ waves, born, lMax, left }: Scattered, k: number) {
   const re = new Float64Array(lMax + 1);
   const im = new Float64Array(lMax + 1);
-  let error = left / k;
+  let square = 0;
   let size = 0;
   for (const wave of waves) {
     const weight = weightOf(wave) / k;
     const { l } = wave;
+    if (l > lMax) continue;
     re[l] = (re[l] ?? 0) + weight * (wave.re - (born?.re[l] ?? 0));
     im[l] = (im[l] ?? 0) + weight * (wave.im - (born?.im[l] ?? 0));
-    error += weight * (wave.error + 8 * UNIT_ROUNDOFF * Math.abs(born?.re[l] ?? 0));
+    const own = weight * (wave.error + 16 * UNIT_ROUNDOFF * Math.abs(born?.re[l] ?? 0));
+    square += own * own;
     size += weight * Math.hypot(wave.re, wave.im);
   }
-  return { re, im, error, size };
+  // Roundings of different waves do not know of each other.
+  return { re, im, error: left / k + 4 * Math.sqrt(square), size };
 }
 
-function absorptionOf({ waves, born }: Scattered, k: number, forward: Amplitude | null) {
+function absorptionOf({ waves, born, lMax }: Scattered, k: number, forward: Amplitude) {
   let sum = 0;
   let error = 0;
   for (const wave of waves) {
+    if (wave.l > lMax) continue;
     const weight = weightOf(wave);
     sum += weight * (wave.absorbed - 4 * (born?.im[wave.l] ?? 0));
     error += 4 * weight * wave.error;
   }
   const scale = Math.PI / (k * k);
   return {
-    value: scale * (sum + 4 * k * (forward?.im ?? 0)),
-    error: scale * (error + 4 * k * (forward?.error ?? 0)),
+    value: scale * (sum + 4 * k * forward.im),
+    error: scale * (error + 4 * k * forward.error),
   };
 }
 
@@ -84,6 +88,14 @@ function conditionsOf(scattered: Scattered, k: number, size: number): Condition[
   ];
 }
 
+/** First order of the terms that have one and are central: the rest dies out with l by itself. */
+function closureOf(terms: readonly Term[], twoMuOverHbar2: number): FirstBorn {
+  return firstBorn(
+    terms.filter(({ noBorn }) => noBorn === undefined),
+    twoMuOverHbar2,
+  );
+}
+
 /**
  * Exact scattering by a central potential, wave by wave.
  *
@@ -98,16 +110,16 @@ function conditionsOf(scattered: Scattered, k: number, size: number): Condition[
  * Source: H. Faxén and J. Holtsmark, Z. Phys. 45 (1927) 307; closure: textbook.
  */
 export function partialWaves(input: PartialWaveInput): PartialWaves | Unavailable {
-  const { k, born } = input;
-  const interaction = radialInteraction(input);
+  const { k, twoMuOverHbar2 } = input;
+  const born = closureOf(input.terms, twoMuOverHbar2);
+  const interaction = radialInteraction({ ...input, born });
   if ('unavailable' in interaction) return interaction;
-  const withBorn = input.terms.every(({ noBorn }) => noBorn === undefined);
-  const scattered = scatter(interaction, k, withBorn);
+  const scattered = scatter(interaction, k);
   if ('unavailable' in scattered) return scattered;
   const { re, im, error, size } = coefficients(scattered, k);
   const amplitude = (q: number, blur = 0): Amplitude => {
     const sum = waveSum(re, im, k, q);
-    const first = withBorn ? born.shortRange(q, blur) : { re: 0, im: 0, error: 0 };
+    const first = born.shortRange(q, blur);
     const rounding = UNIT_ROUNDOFF * (4 + Math.sqrt(re.length)) * sum.size;
     const slope = (Q_ALLOWANCE + blur) * Math.hypot(sum.slopeRe, sum.slopeIm);
     return {
@@ -120,10 +132,10 @@ export function partialWaves(input: PartialWaveInput): PartialWaves | Unavailabl
     amplitude,
     shortRange: amplitude,
     tail: { re: 0, im: 0 },
-    floor: Math.max(FLOOR * size, withBorn ? born.floor : 0),
+    floor: Math.max(FLOOR * size, born.floor),
     flip: null,
     absorption: interaction.absorbs
-      ? absorptionOf(scattered, k, withBorn ? born.shortRange(0) : null)
+      ? absorptionOf(scattered, k, born.shortRange(0))
       : { value: 0, error: 0 },
     conditions: conditionsOf(scattered, k, interaction.size),
     waves: scattered.waves.map((wave) => waveOf(wave, scattered)),

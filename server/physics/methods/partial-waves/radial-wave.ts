@@ -32,6 +32,8 @@ export interface Matched {
   betaIm: number;
   /** k ∫ |u|² dr over |alpha - i beta|²: what a relative error of the energy does to the phase. */
   delay: number;
+  /** What a relative error of u or u' at the end does to T. */
+  spread: number;
   /** Panels the wave was carried over. */
   panels: number;
 }
@@ -93,7 +95,7 @@ export class RadialSolver {
   }
 
   /** First panel of a wave; the count of panels where nothing is felt at all. Higher waves begin further out. */
-  private start(l: number, factor: number): number {
+  start(l: number, factor: number): number {
     const { count } = this.panels;
     const barrier = l * (l + 1);
     while (
@@ -107,13 +109,13 @@ export class RadialSolver {
     return this.first;
   }
 
-  /** Highest l for which some inner radius is open although the wave is kept out further out. */
-  pocketOrder(radius: number): number {
-    const { edges, count, size, allowed } = this.panels;
+  /** Highest l for which attraction opens a region inside its centrifugal barrier: resonances may lie up to it. */
+  pocketOrder(): number {
+    const { count, size, allowed } = this.panels;
     let most = 0;
     for (let p = 0; p < count; p++) {
-      if ((edges[p] ?? 0) > radius) break;
-      most = Math.max(most, allowed[p] ?? 0, 0.01 * (size[0]?.[p] ?? 0));
+      const open = allowed[p] ?? 0;
+      if ((size[0]?.[p] ?? 0) > 0.1 * open) most = Math.max(most, open);
     }
     return Math.sqrt(most);
   }
@@ -208,8 +210,19 @@ export class RadialSolver {
     const alphaIm = wave.slopeIm * G - wave.im * dG;
     const betaRe = wave.re * dF - wave.slopeRe * F;
     const betaIm = wave.im * dF - wave.slopeIm * F;
-    const outer = Math.hypot(alphaRe + betaIm, alphaIm - betaRe) ** 2;
-    return { alphaRe, alphaIm, betaRe, betaIm, delay: (k * norm) / outer, panels: count - from };
+    const outer = Math.hypot(alphaRe + betaIm, alphaIm - betaRe);
+    const [u, slope] = [Math.hypot(wave.re, wave.im), Math.hypot(wave.slopeRe, wave.slopeIm)];
+    const [f, df] = [Math.abs(F), Math.abs(dF)];
+    const mixed = Math.min(1, k * (edges[count] ?? 0)) * (u * f + slope * df);
+    return {
+      alphaRe,
+      alphaIm,
+      betaRe,
+      betaIm,
+      delay: (k * norm) / outer / outer,
+      spread: (u * df + slope * f + mixed) / outer,
+      panels: count - from,
+    };
   }
 
   /**
@@ -266,7 +279,7 @@ export class RadialSolver {
     const betaIm = added.im * dF - added.slopeIm * F;
     const alphaRe = (added.slopeRe + free.slopeRe) * G - (added.re + free.re) * dG;
     const alphaIm = added.slopeIm * G - added.im * dG;
-    return { alphaRe, alphaIm, betaRe, betaIm, delay: 0, panels: count - from };
+    return { alphaRe, alphaIm, betaRe, betaIm, delay: 0, spread: 1, panels: count - from };
   }
 
   private readonly empty = panelPowers();
@@ -295,7 +308,8 @@ export function transitionOf({ alphaRe, alphaIm, betaRe, betaIm }: Matched) {
   };
 }
 
-/** Bound of the rounding in the phase of a wave. */
-export function roundingOf({ delay, panels }: Matched, x: number): number {
-  return UNIT_ROUNDOFF * (16 + 2 * panels + x + 16 * delay);
+/** Bound of the rounding in T, relative to T where the wave was carried beside a free one. */
+export function roundingOf({ delay, spread, panels }: Matched, x: number, weak: boolean): number {
+  if (weak) return UNIT_ROUNDOFF * (64 + 8 * panels + 2 * x);
+  return UNIT_ROUNDOFF * ((16 + 2 * panels + x) * spread + 8 * delay);
 }

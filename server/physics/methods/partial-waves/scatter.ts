@@ -1,13 +1,10 @@
-import {
-  PanelError,
-  type RadialPanels,
-  radialPanels,
-} from '#server/physics/numerics/radial-panels.ts';
 import { riccatiBessel } from '#server/physics/numerics/riccati-bessel.ts';
 import type { Unavailable } from '../amplitude.ts';
-import type { BornWaves } from './born-waves.ts';
-import { bornWaves } from './born-waves.ts';
 import type { RadialInteraction } from './interaction.ts';
+import type { Panels } from './panels.ts';
+import { panelsOf } from './panels.ts';
+import type { WaveIntegrals } from './radial-integrals.ts';
+import { innerIntegrals, lastOrder, tailIntegrals } from './radial-integrals.ts';
 import type { Matched, Outer } from './radial-wave.ts';
 import { RadialSolver, roundingOf, transitionOf } from './radial-wave.ts';
 
@@ -27,143 +24,176 @@ export interface Transition {
 
 export interface Scattered {
   waves: Transition[];
-  born: BornWaves | null;
+  /** First-order phases by l; null where the sum is not closed with them. */
+  born: { re: Float64Array; im: Float64Array } | null;
   lMax: number;
   /** Bound of Σ (2l+1) |T_l - first order| beyond lMax. */
   left: number;
-  panels: number;
 }
 
-const MOST_PHASE = 2e4;
-const MOST_WAVES = 6000;
 const NEGLIGIBLE = 1e-16;
 /** Waves that must in turn be negligible. */
 const IN_TURN = 3;
-const WEAK = 0.3;
+const WEAK = 0.2;
 /** A phase known no better than this is no phase. */
-const UNRESOLVED = 1e-8;
+export const UNRESOLVED = 1e-8;
 
-/** min(∫ r|U| dr, ∫|U| dr/k): below one the wave is close to a free one. */
-function strengthOf({ field, shells }: RadialInteraction, panels: RadialPanels, k: number): number {
-  const out = new Float64Array(field.components);
-  let [slow, fast] = [0, 0];
-  for (let p = 0; p < panels.count; p++) {
-    const [from, to] = [panels.edges[p] ?? 0, panels.edges[p + 1] ?? 0];
-    for (let i = 0; i < 8; i++) {
-      const r = from + ((i + 0.5) / 8) * (to - from);
-      field.at(r, out);
-      const size = (((to - from) / 8) * Math.hypot(out[0] ?? 0, out[1] ?? 0));
-      slow += r * size;
-      fast += size / k;
-    }
-  }
-  for (const { radius, jump } of shells) {
-    slow += radius * Math.abs(jump);
-    fast += Math.abs(jump) / k;
-  }
-  return Math.min(slow, fast);
+export const weightOf = ({ l, spin }: Pick<Transition, 'l' | 'spin'>): number =>
+  spin === 0 ? 2 * l + 1 : spin === 1 ? l + 1 : l;
+
+export function spinsOf({ spinOrbit }: RadialInteraction, l: number): (-1 | 0 | 1)[] {
+  if (!spinOrbit) return [0];
+  return l === 0 ? [1] : [1, -1];
 }
 
-function panelsOf(interaction: RadialInteraction, k: number): RadialPanels | Unavailable {
-  const { field, core, shells, breaks, reach } = interaction;
-  const end = reach > 0 ? reach : 1 / k;
-  try {
-    return radialPanels({
-      field,
-      start: core,
-      end: core === end ? end * (1 + 1e-3) : end,
-      breaks: [...breaks, ...shells.map(({ radius }) => radius)],
-      wave: k,
-      tolerance: 1e-17,
-    });
-  } catch (error) {
-    if (!(error instanceof PanelError)) throw error;
-    const where = `${Number(error.at.toPrecision(3))} angstrom`;
-    return {
-      unavailable:
-        error.reason === 'notFinite'
-          ? `The potential is not finite at r = ${where}.`
-          : `The radial wave cannot be followed at r = ${where}: the potential is too strong, too steep or too far-reaching for this energy.`,
-    };
-  }
-}
+/** l·sigma */
+export const spinFactor = (l: number, spin: -1 | 0 | 1): number =>
+  spin === 0 ? 0 : spin === 1 ? l : -(l + 1);
 
-/**
- * All waves of an interaction without a Coulomb tail.
- *
- * @param withBorn whether first order exists, so that waves beyond the last may be left to it
- */
-export function scatter(
-  interaction: RadialInteraction,
-  k: number,
-  withBorn: boolean,
-): Scattered | Unavailable {
-  const panels = panelsOf(interaction, k);
-  if ('unavailable' in panels) return panels;
-  const end = panels.edges[panels.count] ?? 0;
-  const x = k * end;
-  if (!(x <= MOST_PHASE)) return tooFar(x);
-  const solver = new RadialSolver(interaction, panels, k);
-  const bound = Math.min(MOST_WAVES, Math.ceil(x + 40 + 12 * Math.cbrt(x)));
-  const F = new Float64Array(bound + 2);
-  const G = new Float64Array(bound + 2);
+/** Free functions at x for every l, with their slopes. */
+export function freeOuter(x: number, lMax: number): (l: number) => Outer | null {
+  const F = new Float64Array(lMax + 2);
+  const G = new Float64Array(lMax + 2);
   const top = riccatiBessel(x, F, G) - 1;
-  const outer = (l: number): Outer => {
+  return (l) => {
+    if (l > top) return null;
     const [f, g] = [F[l] ?? 0, G[l] ?? 0];
     const slope = (l + 1) / x;
     return { F: f, dF: slope * f - (F[l + 1] ?? 0), G: g, dG: slope * g - (G[l + 1] ?? 0) };
   };
-  const born = withBorn ? bornWaves(interaction, panels, k, bound) : null;
-  const weak = withBorn && !interaction.spinOrbit && strengthOf(interaction, panels, k) < WEAK;
-  const spins: (-1 | 0 | 1)[] = interaction.spinOrbit ? [1, -1] : [0];
+}
+
+/** What a weak tail beyond the match adds, first order in it. */
+function withTail(matched: Matched, tail: WaveIntegrals, l: number, factor: number): Matched {
+  const at = (list: Float64Array[], first: number) =>
+    (list[first]?.[l] ?? 0) + factor * (list[first + 2]?.[l] ?? 0);
+  const { alphaRe, alphaIm, betaRe, betaIm } = matched;
+  const [ffRe, ffIm] = [at(tail.FF, 0), at(tail.FF, 1)];
+  const [fgRe, fgIm] = [at(tail.FG, 0), at(tail.FG, 1)];
+  const [ggRe, ggIm] = [at(tail.GG, 0), at(tail.GG, 1)];
+  return {
+    ...matched,
+    alphaRe: alphaRe + (alphaRe * fgRe - alphaIm * fgIm) + (betaRe * ggRe - betaIm * ggIm),
+    alphaIm: alphaIm + (alphaRe * fgIm + alphaIm * fgRe) + (betaRe * ggIm + betaIm * ggRe),
+    betaRe: betaRe - (alphaRe * ffRe - alphaIm * ffIm) - (betaRe * fgRe - betaIm * fgIm),
+    betaIm: betaIm - (alphaRe * ffIm + alphaIm * ffRe) - (betaRe * fgIm + betaIm * fgRe),
+  };
+}
+
+/** First-order phases: inner and outer integrals, with the sign of a phase. */
+function bornOf(inner: Float64Array[], tail: WaveIntegrals, lMax: number) {
+  const row = (c: number) =>
+    Float64Array.from(
+      { length: lMax + 1 },
+      (_, l) => -((inner[c]?.[l] ?? 0) + (tail.FF[c]?.[l] ?? 0)),
+    );
+  return { re: row(0), im: row(1) };
+}
+
+/** Waves beyond the last that was followed, by first order. */
+function beyondFollowed(
+  { spinOrbit }: RadialInteraction,
+  tail: WaveIntegrals,
+  born: { re: Float64Array; im: Float64Array },
+  l: number,
+): Transition[] {
+  return spinsOf({ spinOrbit } as RadialInteraction, l).map((spin) => {
+    const factor = spinFactor(l, spin);
+    const re = (born.re[l] ?? 0) - factor * (tail.FF[2]?.[l] ?? 0);
+    const im = (born.im[l] ?? 0) - factor * (tail.FF[3]?.[l] ?? 0);
+    const size = Math.hypot(re, im);
+    return {
+      l,
+      spin,
+      re,
+      im,
+      eta: 1 - 2 * im,
+      absorbed: 4 * im,
+      error: size * (size + 1e-13) + 1e-19,
+    };
+  });
+}
+
+export function tooNarrow(l: number, error: number): Unavailable {
+  return {
+    unavailable: `The wave l = ${l} is within a resonance so narrow that its phase cannot be resolved: the last digit of the energy turns it by ${error.toExponential(1)} rad or more. Move the energy off the resonance.`,
+  };
+}
+
+/**
+ * All waves of an interaction that ends, or falls off exponentially.
+ *
+ * Formula: inner panels are followed, the rest of the interaction is taken to first order in it; waves that stay outside of the followed
+ *   panels are first order altogether.
+ *
+ * @param interaction without Coulomb tail and power of r
+ * @param k 1/angstrom
+ */
+export function scatter(interaction: RadialInteraction, k: number): Scattered | Unavailable {
+  const found = panelsOf(interaction, k, interaction.reach > 0 ? interaction.reach : 1 / k, false);
+  if ('unavailable' in found) return found;
+  const { all, inner } = found;
+  const x = k * (inner.edges[inner.count] ?? 0);
+  const bound = lastOrder(interaction, all, k);
+  const first = innerIntegrals(interaction, inner, inner.count, found.below, k, bound);
+  const tail = tailIntegrals(interaction, all, inner.count, k, bound);
+  const born = bornOf(first, tail, bound);
+  const outer = freeOuter(x, bound);
+  const solver = new RadialSolver(interaction, inner, k);
   const waves: Transition[] = [];
-  const pocket = solver.pocketOrder(end);
+  const pocket = solver.pocketOrder();
   let sum = 0;
   let quiet = 0;
   let left = 0;
   let lMax = 0;
-  for (let l = 0; l <= Math.min(bound, top); l++) {
-    let excess = 0;
-    let felt = false;
-    let noise = 0;
-    for (const spin of spins) {
-      if (spin === -1 && l === 0) continue;
-      const factor = spin === 0 ? 0 : spin === 1 ? l : -(l + 1);
-      const matched: Matched | null = weak
-        ? solver.matchWeak(l, outer(l))
-        : solver.match(l, factor, outer(l));
-      if (!matched) {
-        waves.push({ l, spin, re: 0, im: 0, eta: 1, absorbed: 0, error: 1e-18 });
-        continue;
-      }
-      felt = true;
-      const { re, im, eta, absorbed } = transitionOf(matched);
-      const size = Math.hypot(re, im);
-      const error = roundingOf(matched, x) * (weak ? size : 1) + panels.missed;
-      if (!(error < UNRESOLVED)) return tooNarrow(l, error);
-      waves.push({ l, spin, re, im, eta: interaction.absorbs ? eta : 1, absorbed, error });
-      const weight = spin === 0 ? 2 * l + 1 : spin === 1 ? l + 1 : l;
-      sum += weight * size;
-      noise += weight * error;
-      excess += weight * Math.hypot(re - (born?.re[l] ?? 0), im - (born?.im[l] ?? 0));
+  for (let l = 0; l <= bound && quiet < IN_TURN; l++) {
+    const edge = outer(l);
+    if (!edge || solver.start(l, spinFactor(l, 1)) >= inner.count) break;
+    const here = wavesOf({ interaction, found, solver, tail, x }, l, edge);
+    if ('unavailable' in here) return here;
+    waves.push(...here);
+    let [excess, noise] = [0, 0];
+    for (const wave of here) {
+      sum += weightOf(wave) * Math.hypot(wave.re, wave.im);
+      noise += weightOf(wave) * wave.error;
+      const [re, im] = [wave.re - (born.re[l] ?? 0), wave.im - (born.im[l] ?? 0)];
+      excess += weightOf(wave) * Math.hypot(re, im);
     }
-    lMax = l;
-    if (!felt) break;
-    quiet = excess <= Math.max(NEGLIGIBLE * sum, noise / 8) && l > pocket / 2 ? quiet + 1 : 0;
+    quiet = excess <= Math.max(NEGLIGIBLE * sum, noise / 64) && l > pocket ? quiet + 1 : 0;
     left = excess;
-    if (quiet === IN_TURN) break;
+    lMax = l;
   }
-  return { waves, born, lMax, left, panels: panels.count };
+  for (let l = lMax + 1; l <= bound; l++) waves.push(...beyondFollowed(interaction, tail, born, l));
+  return { waves, born, lMax, left };
 }
 
-function tooFar(x: number): Unavailable {
-  return {
-    unavailable: `The interaction reaches over ${x.toPrecision(3)} radians of the wave, more than partial waves are computed for (${MOST_PHASE}). Lower the energy or the range; born1 and eikonal are made for this case.`,
-  };
+interface Setting {
+  interaction: RadialInteraction;
+  found: Panels;
+  solver: RadialSolver;
+  tail: WaveIntegrals;
+  x: number;
 }
 
-function tooNarrow(l: number, error: number): Unavailable {
-  return {
-    unavailable: `The wave l = ${l} is within a resonance so narrow that its phase cannot be resolved: the last digit of the energy turns it by ${error.toExponential(1)} rad or more. Move the energy off the resonance.`,
-  };
+function wavesOf(
+  { interaction, found, solver, tail, x }: Setting,
+  l: number,
+  edge: Outer,
+): Transition[] | Unavailable {
+  const waves: Transition[] = [];
+  const weak =
+    !interaction.spinOrbit &&
+    interaction.core === 0 &&
+    (found.strength[solver.start(l, 0)] ?? 0) < WEAK;
+  for (const spin of spinsOf(interaction, l)) {
+    const factor = spinFactor(l, spin);
+    const matched = weak ? solver.matchWeak(l, edge) : solver.match(l, factor, edge);
+    if (!matched) continue;
+    const { re, im, eta, absorbed } = transitionOf(withTail(matched, tail, l, factor));
+    const size = Math.hypot(re, im);
+    const error = (roundingOf(matched, x, weak) + found.all.missed) * (weak ? size : 1) + 1e-19;
+    if (!(error < UNRESOLVED)) return tooNarrow(l, error);
+    waves.push({ l, spin, re, im, eta: interaction.absorbs ? eta : 1, absorbed, error });
+  }
+  return waves;
 }
