@@ -9,7 +9,10 @@ import type {
   Wave,
 } from './methods/amplitude.ts';
 import type { FirstBorn } from './methods/born1.ts';
+import { secondBorn } from './methods/born2/second-born.ts';
+import { eikonal } from './methods/eikonal/eikonal.ts';
 import type { MethodInput } from './methods/method-input.ts';
+import { partialWaves } from './methods/partial-waves/partial-waves.ts';
 import type { ConeSamples, Scales } from './observables/cone-samples.ts';
 import { sampleCone } from './observables/cone-samples.ts';
 import { crossSections } from './observables/cross-sections.ts';
@@ -39,14 +42,7 @@ type Way = (
   input: MethodInput & { projectileSpin: number | null },
 ) => MethodAmplitude | PartialWaves | Unavailable;
 
-const notYet = (name: string) => () => ({
-  unavailable: `${name} not part of this version; first order (born1) is.`,
-});
-const WAYS: Record<BeyondName, Way> = {
-  born2: notYet('The second Born amplitude is'),
-  eikonal: notYet('The eikonal amplitude is'),
-  partialWaves: notYet('Partial waves are'),
-};
+const WAYS: Record<BeyondName, Way> = { born2: secondBorn, eikonal, partialWaves };
 
 /** One amplitude whose square is |f|² + |g|². */
 function bothSpins(method: MethodAmplitude): (q: number) => Amplitude {
