@@ -6,10 +6,12 @@ import { AidsProvider } from '../aids/aids-provider.tsx';
 import { PotentialExport } from '../aids/potential-export.tsx';
 import { useEditing } from '../editing/editor-context.ts';
 import { METHOD_NAMES } from '../model/words.ts';
+import { Treatment } from '../validity/treatment.tsx';
 import { CriteriaTable } from './criteria-table.tsx';
 import { Distribution } from './distribution.tsx';
 import { FiguresStrip } from './figures-strip.tsx';
 import { KinematicsList } from './kinematics-list.tsx';
+import { MethodChoice } from './method-choice.tsx';
 import { PotentialSketch } from './potential-sketch.tsx';
 
 /** What to beware of stands out; what only rounds the picture off stands small. */
@@ -54,10 +56,12 @@ export function CrossSection({ estimate, fileName }: { estimate: Estimate; fileN
     <AidsProvider>
       <div className="flex flex-col gap-4">
         <FiguresStrip estimate={estimate} dimmed={stale} unit={areaUnit} onUnit={setAreaUnit} />
+        <Treatment estimate={estimate} />
         <section
           aria-label="Angular distribution"
           className="rounded border border-line bg-sheet px-4.5 py-4"
         >
+          <MethodChoice estimate={estimate} />
           <Distribution estimate={estimate} dimmed={stale} fileName={fileName} />
         </section>
         <AidsArea estimate={estimate} fileName={base} />

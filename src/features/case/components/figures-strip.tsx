@@ -4,8 +4,9 @@ import { AreaUnitMenu, Figure } from '#src/components/figure.tsx';
 import { Notice } from '#src/components/notice.tsx';
 import { classNames } from '#src/lib/class-names.ts';
 import { METHODS } from '#shared/contracts/estimates.ts';
-import type { Estimate, Integral, Method } from '#shared/contracts/estimates.ts';
+import type { Estimate, Integral } from '#shared/contracts/estimates.ts';
 import { composedFactor } from '#shared/units/composed.ts';
+import { formatNumber, unitSymbol } from '#shared/units/format.ts';
 import { FigureMeaning } from '../aids/figure-meaning.tsx';
 import { VERDICT_WORDS, decidingNumber, numericsText } from '../model/verdict.ts';
 import { METHOD_NAMES } from '../model/words.ts';
@@ -20,16 +21,52 @@ const LABELS: Record<Kind, string> = {
   viscosity: 'Viscosity σ',
 };
 
+type Finite = Exclude<Integral, { divergent: true }>;
+
+function inUnit({ value, unit: from, relativeError, absoluteError }: Finite, unit: string) {
+  const factor = composedFactor(from, unit);
+  return {
+    value: value * factor,
+    relativeError,
+    absoluteError: absoluteError === undefined ? undefined : absoluteError * factor,
+  };
+}
+
+interface OtherValue {
+  method: string;
+  integral: Integral;
+}
+
+/** The same figure by the other methods of the case, a line each. */
+function Others({ others, unit }: { others: readonly OtherValue[]; unit: string }) {
+  return others.map(({ method, integral }) => (
+    <span key={method} className="block text-xs text-muted">
+      {method}{' '}
+      {'divergent' in integral ? (
+        'divergent'
+      ) : (
+        <>
+          <span className="font-mono text-ink">
+            {formatNumber(inUnit(integral, unit).value, 4)}
+          </span>{' '}
+          {unitSymbol(unit)} · {numericsText(inUnit(integral, unit))}
+        </>
+      )}
+    </span>
+  ));
+}
+
 interface CellProps {
   label: string;
   meaning: ReactNode;
   method: string;
   integral: Integral;
+  others: readonly OtherValue[];
   unit: string;
   onUnit: (unit: string) => void;
 }
 
-function Cell({ label, meaning, method, integral, unit, onUnit }: CellProps) {
+function Cell({ label, meaning, method, integral, others, unit, onUnit }: CellProps) {
   if ('divergent' in integral) {
     return (
       <>
@@ -39,16 +76,12 @@ function Cell({ label, meaning, method, integral, unit, onUnit }: CellProps) {
         <dd>
           <span className="block text-lg font-semibold">divergent</span>
           <span className="block text-xs text-muted">{method} · reason below</span>
+          <Others others={others} unit={unit} />
         </dd>
       </>
     );
   }
-  const factor = composedFactor(integral.unit, unit);
-  const errors = {
-    relativeError: integral.relativeError,
-    absoluteError:
-      integral.absoluteError === undefined ? undefined : integral.absoluteError * factor,
-  };
+  const shown = inUnit(integral, unit);
   return (
     <>
       <dt className="flex items-center justify-between gap-1 text-sm text-muted">
@@ -58,15 +91,16 @@ function Cell({ label, meaning, method, integral, unit, onUnit }: CellProps) {
         <Figure
           size="large"
           label={`${label}, ${method}`}
-          value={integral.value * factor}
+          value={shown.value}
           unit={unit}
           unitMenu={
             <AreaUnitMenu unit={unit} onChange={onUnit} label={`Unit of ${label}, ${method}`} />
           }
         />
         <span className="block text-xs text-muted">
-          {method} · {numericsText(errors)}
+          {method} · {numericsText(shown)}
         </span>
+        <Others others={others} unit={unit} />
       </dd>
     </>
   );
@@ -88,14 +122,38 @@ function VerdictCell({ estimate }: { estimate: Estimate }) {
   );
 }
 
-function kindsOf(estimate: Estimate, method: Method): Kind[] {
-  const result = estimate.methods[method];
-  if (!result || 'unavailable' in result) return [];
-  const { absorption } = result;
-  const absorbs = 'divergent' in absorption || absorption.value !== 0;
-  return absorbs
+function absorbs(estimate: Estimate): boolean {
+  return METHODS.some((method) => {
+    const result = estimate.methods[method];
+    if (!result || 'unavailable' in result) return false;
+    return 'divergent' in result.absorption || result.absorption.value !== 0;
+  });
+}
+
+/** Each figure once, by the first of the methods asked for, with what the others make of it. */
+function figuresOf(estimate: Estimate) {
+  const computed = METHODS.flatMap((method) => {
+    const result = estimate.methods[method];
+    return !result || 'unavailable' in result ? [] : [{ method, result }];
+  });
+  const [first, ...rest] = computed;
+  if (!first) return [];
+  const kinds: Kind[] = absorbs(estimate)
     ? ['elastic', 'absorption', 'total', 'momentumTransfer', 'viscosity']
     : ['elastic', 'momentumTransfer', 'viscosity'];
+  return kinds.map((kind) => ({
+    key: kind,
+    label: LABELS[kind],
+    meaning: first.method === 'born1' && (
+      <FigureMeaning kind={kind} label={LABELS[kind]} estimate={estimate} />
+    ),
+    method: METHOD_NAMES[first.method],
+    integral: first.result[kind],
+    others: rest.map(({ method, result }) => ({
+      method: method === 'partialWaves' ? 'exact' : METHOD_NAMES[method],
+      integral: result[kind],
+    })),
+  }));
 }
 
 /** The last cell takes what its row has left: in rows of two, and in rows of three where there is room. */
@@ -115,19 +173,7 @@ interface FiguresStripProps {
 
 /** The figures that matter, each with its unit and with what limits it. */
 export function FiguresStrip({ estimate, dimmed, unit, onUnit }: FiguresStripProps) {
-  const shown = METHODS.flatMap((method) => {
-    const result = estimate.methods[method];
-    if (!result || 'unavailable' in result) return [];
-    return kindsOf(estimate, method).map((kind) => ({
-      key: `${method} ${kind}`,
-      label: LABELS[kind],
-      meaning: method === 'born1' && (
-        <FigureMeaning kind={kind} label={LABELS[kind]} estimate={estimate} />
-      ),
-      method: METHOD_NAMES[method],
-      integral: result[kind],
-    }));
-  });
+  const shown = figuresOf(estimate);
   const fourInOneRow = shown.length === 3;
   const divergent = shown.flatMap(({ label, integral }) =>
     'divergent' in integral ? [{ label, reason: integral.reason }] : [],

@@ -118,7 +118,7 @@ export function IntegralsTable({ estimate, fileName }: IntegralsTableProps) {
       }
     >
       <div
-        className="overflow-x-auto"
+        className="relative -mb-8 overflow-x-auto pb-9"
         tabIndex={0}
         role="region"
         aria-label="Table of integrated cross sections"
@@ -127,7 +127,7 @@ export function IntegralsTable({ estimate, fileName }: IntegralsTableProps) {
           <caption className="sr-only">Integrated cross sections of every method</caption>
           <thead>
             <tr className="text-sm text-muted">
-              <th scope="col" className="px-3 py-1.5 pl-0 font-normal">
+              <th scope="col" className="sticky left-0 bg-sheet px-3 py-1.5 pl-0 font-normal">
                 σ
               </th>
               {methods.map(({ method }) => (
@@ -140,7 +140,10 @@ export function IntegralsTable({ estimate, fileName }: IntegralsTableProps) {
           <tbody>
             {KINDS.map((kind) => (
               <tr key={kind} className="border-t border-line">
-                <th scope="row" className="px-3 py-1.5 pl-0 align-top font-normal">
+                <th
+                  scope="row"
+                  className="sticky left-0 bg-sheet px-3 py-1.5 pl-0 align-top font-normal"
+                >
                   {NAMES[kind]}
                 </th>
                 {methods.map((computed) => (

@@ -1,6 +1,7 @@
 import { Chip } from '#src/components/chip.tsx';
 import { formatNumber } from '#shared/units/format.ts';
 import type { Condition, Estimate } from '#shared/contracts/estimates.ts';
+import { brief } from '../model/verdict.ts';
 import { METHOD_NAMES } from '../model/words.ts';
 import { computedMethods, refusedMethods } from './model/methods.ts';
 import type { ComputedMethod } from './model/methods.ts';
@@ -55,8 +56,7 @@ function MethodTerms({ method, result }: ComputedMethod) {
       )}
       {opticalTheorem && (
         <p className="py-1">
-          optical theorem{' '}
-          <span className="font-mono">{formatNumber(opticalTheorem.residual, 2)}</span>
+          optical theorem <span className="font-mono">{brief(opticalTheorem.residual)}</span>
           <span className="block text-xs text-muted">
             (4π/k) Im f(0) less elastic, integrated over angle, and absorption: relative to the
             total

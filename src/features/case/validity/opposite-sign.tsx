@@ -4,6 +4,7 @@ import { Notice } from '#src/components/notice.tsx';
 import { Plot } from '#src/components/plot.tsx';
 import { classNames } from '#src/lib/class-names.ts';
 import { csvOf } from '#src/lib/csv.ts';
+import { composedFactor } from '#shared/units/composed.ts';
 import { formatComposed, formatNumber, unitSymbol } from '#shared/units/format.ts';
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { Estimate, Method } from '#shared/contracts/estimates.ts';
@@ -36,7 +37,7 @@ function Totals({ given, turned }: { given: Estimate; turned: Estimate }) {
     }));
   return (
     <div
-      className="overflow-x-auto"
+      className="relative overflow-x-auto"
       tabIndex={0}
       role="region"
       aria-label="Elastic totals of both signs"
@@ -45,7 +46,7 @@ function Totals({ given, turned }: { given: Estimate; turned: Estimate }) {
         <caption className="sr-only">Elastic cross section with either sign</caption>
         <thead>
           <tr>
-            <th scope="col" className={`${headCell} pl-0 text-left`}>
+            <th scope="col" className="py-1.5 pr-3 text-left font-semibold">
               elastic σ
             </th>
             <th scope="col" className={headCell}>
@@ -62,12 +63,18 @@ function Totals({ given, turned }: { given: Estimate; turned: Estimate }) {
         <tbody className="font-mono">
           {rows.map(({ method, a, b }) => (
             <tr key={method} className="border-t border-line">
-              <th scope="row" className={`${bodyCell} py-1 pl-0 text-left font-sans font-normal`}>
+              <th scope="row" className="py-1 pr-3 text-left font-sans font-normal">
                 {METHOD_NAMES[method]}
               </th>
               {[a, b].map((elastic, place) => (
                 <td key={place} className={`${bodyCell} py-1`}>
-                  {elastic === null ? 'divergent' : formatComposed(elastic.value, elastic.unit, 5)}
+                  {elastic === null
+                    ? 'divergent'
+                    : formatComposed(
+                        elastic.value * composedFactor(elastic.unit, areaUnit),
+                        areaUnit,
+                        5,
+                      )}
                 </td>
               ))}
               <td className={`${bodyCell} py-1`}>
@@ -79,7 +86,6 @@ function Totals({ given, turned }: { given: Estimate; turned: Estimate }) {
           ))}
         </tbody>
       </table>
-      <p className="sr-only">Shown in {unitSymbol(areaUnit)}</p>
     </div>
   );
 }

@@ -51,7 +51,7 @@ export const bodyCell = 'px-3 py-0.5 text-right whitespace-nowrap';
 export function TableBox({ label, children }: { label: string; children: ReactNode }) {
   return (
     <div
-      className="max-h-96 overflow-auto rounded border border-line"
+      className="relative max-h-96 overflow-auto rounded border border-line"
       tabIndex={0}
       role="region"
       aria-label={label}

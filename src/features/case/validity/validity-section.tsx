@@ -47,13 +47,28 @@ function Waves({ estimate, dimmed, fileName }: PartsProps) {
   const exact = computedOf(estimate, 'partialWaves');
   if (!exact) return null;
   const { phaseShifts = [], lMax, lowEnergy } = exact;
-  const rest = { waves: phaseShifts, dimmed, fileName };
   return (
     <>
-      <PhaseShifts {...rest} lMax={lMax} coulomb={hasCoulombTail(draft.document)} />
-      <UnitarityPlane {...rest} />
+      <PhaseShifts
+        waves={phaseShifts}
+        lMax={lMax}
+        coulomb={hasCoulombTail(draft.document)}
+        dimmed={dimmed}
+        fileName={fileName}
+      />
       {lowEnergy && <LowEnergy answer={lowEnergy} />}
     </>
+  );
+}
+
+/** The two planes of complex numbers, side by side where there is room. */
+function Planes(props: PartsProps) {
+  const waves = computedOf(props.estimate, 'partialWaves')?.phaseShifts ?? [];
+  return (
+    <div className="grid grid-cols-[minmax(0,1fr)] items-start gap-4 @3xl:grid-cols-[repeat(2,minmax(0,1fr))]">
+      <AmplitudePlane {...props} />
+      <UnitarityPlane waves={waves} dimmed={props.dimmed} fileName={props.fileName} />
+    </div>
   );
 }
 
@@ -62,7 +77,7 @@ function Parts(props: PartsProps) {
   return (
     <div
       aria-busy={dimmed || undefined}
-      className={classNames('flex flex-col gap-4', dimmed && 'stale')}
+      className={classNames('flex min-w-0 flex-col gap-4', dimmed && 'stale')}
     >
       <VerdictPanel estimate={estimate} />
       <Treatment estimate={estimate} />
@@ -71,7 +86,7 @@ function Parts(props: PartsProps) {
       <MethodConditions estimate={estimate} />
       <OppositeSign {...props} />
       <AnalysingPower {...props} />
-      <AmplitudePlane {...props} />
+      <Planes {...props} />
       <Waves {...props} />
       <Warnings estimate={estimate} />
     </div>

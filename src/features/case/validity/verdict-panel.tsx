@@ -72,6 +72,7 @@ function Headline({ estimate }: { estimate: Estimate }) {
           <Scale value={decision.size} limits={decision.limits} />
           sound below {decision.limitText(decision.limits.sound)} · usable below{' '}
           {decision.limitText(decision.limits.usable)}
+          <span className="block">thresholds of this lab</span>
         </p>
       )}
     </div>
