@@ -51,19 +51,55 @@ test('a saved document may be sent as it is; entered is kept out of the numbers'
   expect(await ask(saved)).toEqual(await ask({}));
 });
 
-test('methods of later versions answer in words, beside or without first order', async () => {
-  const all = await ask({ methods: ['born1', 'born2', 'eikonal', 'partialWaves'] });
-  expect(all.methods.born1).toHaveProperty('differential');
-  const alone = await ask({ methods: ['partialWaves'] });
-  expect(Object.keys(alone.methods)).toEqual(['partialWaves']);
-  for (const method of [all.methods.born2, all.methods.eikonal, alone.methods.partialWaves]) {
-    expect(method).toMatchObject({
-      unavailable: true,
-      reason: expect.stringMatching(/version/) as unknown,
+const ALL = ['born1', 'born2', 'eikonal', 'partialWaves'];
+const curveOf = (estimate: Estimate, method: keyof Estimate['methods']) => {
+  const found = estimate.methods[method];
+  if (!found || 'unavailable' in found) throw new Error(`${method} is unavailable`);
+  return found;
+};
+
+describe('methods beyond first order', () => {
+  test('stand beside it, each with the keys of the contract, and the exact one decides', async () => {
+    const all = await ask({ methods: ALL });
+    expect(Object.keys(all.methods)).toEqual(ALL);
+    const exact = curveOf(all, 'partialWaves');
+    expect(exact.phaseShifts?.[0]).toMatchObject({ l: 0, delta: expect.any(Number) as unknown });
+    // Beyond lMax first order stands, and is listed too.
+    expect(exact.phaseShifts?.length).toBeGreaterThan(exact.lMax ?? NaN);
+    expect(exact.opticalTheorem?.residual).toBeLessThan(1e-8);
+    const [first, total] = [curveOf(all, 'born1').elastic, exact.elastic];
+    if ('divergent' in first || 'divergent' in total) throw new Error('divergent');
+    const { validity } = all;
+    expect(validity.basis).toBe('exact');
+    expectRelative(validity.deviation ?? NaN, Math.abs(first.value / total.value - 1), 1e-9);
+    expect(validity.deviations).toMatchObject({
+      decides: 'elastic',
+      limits: { sound: 0.02, usable: 0.2 },
     });
-  }
-  expect(alone.goldenRule).toEqual(all.goldenRule);
-  expect(alone.validity.basis).toBe('criteria');
+    expect(validity.criteria.some(({ decides }) => decides)).toBe(false);
+  });
+
+  test('may be asked for alone: first order is judged all the same', async () => {
+    const [alone, all] = [await ask({ methods: ['partialWaves'] }), await ask({ methods: ALL })];
+    expect(Object.keys(alone.methods)).toEqual(['partialWaves']);
+    expect(alone.methods.partialWaves).toEqual(all.methods.partialWaves);
+    expect(alone.goldenRule).toEqual(all.goldenRule);
+    expect(alone.validity).toEqual(all.validity);
+  });
+
+  test('say in words what an interaction does not allow, beside the others', async () => {
+    const contact = { form: 'contact', b: Q(6.65, 'fm') };
+    const body = { projectile: { species: 'neutron' }, methods: ALL, ...terms(contact) };
+    const { methods, validity } = await ask(body);
+    expect(methods.born1).toHaveProperty('differential');
+    for (const name of ['born2', 'eikonal', 'partialWaves'] as const) {
+      expect(methods[name]).toMatchObject({
+        unavailable: true,
+        reason: expect.stringMatching(/first order/i) as unknown,
+      });
+    }
+    expect(validity.basis).toBe('criteria');
+  });
 });
 
 test('units of the answer follow the question', async () => {
