@@ -1,6 +1,8 @@
 import { Plus } from 'lucide-react';
 import { Button } from '#src/components/button.tsx';
 import { useEditing } from '../editing/editor-context.ts';
+import { CitedLine } from '../library/cited-line.tsx';
+import { LibraryDeeds } from '../library/library-deeds.tsx';
 import { addTerm, defaultTerm } from '../model/terms.ts';
 import { CorrectionField } from './correction-field.tsx';
 import { TermInputs } from './term-inputs.tsx';
@@ -13,6 +15,7 @@ export function InteractionInputs() {
   const next = forms.find(({ key }) => key === 'gaussian') ?? forms[0];
   return (
     <>
+      <CitedLine />
       {terms.map((term, index) => (
         <div
           key={index}
@@ -22,18 +25,20 @@ export function InteractionInputs() {
         </div>
       ))}
       <CorrectionField />
-      {!readOnly && next && (
-        <Button
-          size="small"
-          className="self-start"
-          disabled={terms.length >= MOST_TERMS}
-          onClick={() =>
-            editDocument('/interaction/terms', (document) => addTerm(document, defaultTerm(next)))
-          }
-        >
-          <Plus aria-hidden="true" className="size-4" /> Add a term
-        </Button>
-      )}
+      <div className="flex flex-wrap gap-2 empty:hidden">
+        {!readOnly && next && (
+          <Button
+            size="small"
+            disabled={terms.length >= MOST_TERMS}
+            onClick={() =>
+              editDocument('/interaction/terms', (document) => addTerm(document, defaultTerm(next)))
+            }
+          >
+            <Plus aria-hidden="true" className="size-4" /> Add a term
+          </Button>
+        )}
+        <LibraryDeeds />
+      </div>
     </>
   );
 }

@@ -10,6 +10,7 @@ import { EditingContext } from '../editing/editor-context.ts';
 import type { Editing } from '../editing/editor-context.ts';
 import { useDuplicate } from '../editing/use-duplicate.ts';
 import { draftOf } from '../editing/use-work.ts';
+import { CitationNotices } from '../library/citation-notices.tsx';
 import { momentText } from '../model/moments.ts';
 import { CaseBody } from './case-body.tsx';
 import { CaseHeader } from './case-header.tsx';
@@ -77,19 +78,22 @@ export function VersionView({ detail, etag, version }: VersionViewProps) {
       <CaseBody
         section={section}
         notices={
-          <Notice
-            tone="info"
-            title={`Version ${version.n}, as it was saved.`}
-            actions={
-              <ButtonLink size="small" to={newest}>
-                Open the newest
-              </ButtonLink>
-            }
-          >
-            By {version.author.name}, {momentText(version.createdAt)}, computed by{' '}
-            {version.engine.name} {version.engine.version}
-            {version.note ? `: “${version.note}”` : '.'} Its inputs and result do not change.
-          </Notice>
+          <>
+            <Notice
+              tone="info"
+              title={`Version ${version.n}, as it was saved.`}
+              actions={
+                <ButtonLink size="small" to={newest}>
+                  Open the newest
+                </ButtonLink>
+              }
+            >
+              By {version.author.name}, {momentText(version.createdAt)}, computed by{' '}
+              {version.engine.name} {version.engine.version}
+              {version.note ? `: “${version.note}”` : '.'} Its inputs and result do not change.
+            </Notice>
+            <CitationNotices />
+          </>
         }
       >
         <SectionContent

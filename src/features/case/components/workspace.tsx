@@ -14,6 +14,7 @@ import { WORD_MS, useShownProblems } from '../editing/shown-problems.ts';
 import { useShortcuts } from '../editing/use-editor.ts';
 import { useLiveEstimate } from '../editing/use-estimate.ts';
 import { contentOf, useWork } from '../editing/use-work.ts';
+import { CitationNotices } from '../library/citation-notices.tsx';
 import type { Content } from '../model/fields.ts';
 import { ownMass } from '../model/beam-context.ts';
 import { allProblems } from '../model/problems.ts';
@@ -120,6 +121,7 @@ export function Workspace({ subject, href, content, saved }: WorkspaceProps) {
         notices={
           <>
             <WorkNotices work={work} newest={saved?.detail.version ?? null} />
+            <CitationNotices />
             {forms.isError && (
               <Failure
                 what="The list of interaction forms"

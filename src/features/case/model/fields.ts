@@ -191,9 +191,28 @@ function interactionSpecs(contents: readonly Content[], forms: readonly FormInfo
   });
 }
 
+/** After the terms, for taking one of those leaves the citation out. */
+const CITATION: FieldSpec = {
+  key: '/interaction/citation',
+  label: 'From the library',
+  value: ({ document }) => document.interaction.citation,
+  text: ({ document: { interaction } }) => {
+    const { citation } = interaction;
+    return citation
+      ? `version ${citation.version} of interaction ${citation.id.slice(0, 8)}`
+      : 'no citation';
+  },
+  take: (into, from) => {
+    const { terms } = into.document.interaction;
+    const { citation } = from.document.interaction;
+    const interaction = citation ? { terms, citation } : { terms };
+    return { ...into, document: { ...into.document, interaction } };
+  },
+};
+
 /** Every field of these contents, in the order of the beam line. */
 export function fieldsOf(contents: readonly Content[], forms: readonly FormInfo[]): FieldSpec[] {
-  return [TITLE, TAGS, ...BEAM, ...interactionSpecs(contents, forms), ...TABLE];
+  return [TITLE, TAGS, ...BEAM, ...interactionSpecs(contents, forms), CITATION, ...TABLE];
 }
 
 /** Field by field, in words and units, what turns `before` into `after`. */

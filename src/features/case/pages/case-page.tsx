@@ -6,6 +6,7 @@ import { Failure } from '#src/components/failure.tsx';
 import { PageTitle } from '#src/components/page-title.tsx';
 import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
 import { ApiError } from '#src/lib/api.ts';
+import { caseWithHref, interactionVersionQuery } from '#src/lib/library.ts';
 import { referenceStartOf, startHref, startQuery } from '#src/lib/reference-start.ts';
 import type { ReferenceStart } from '#src/lib/reference-start.ts';
 import { STARTS } from '#src/lib/starts.ts';
@@ -13,6 +14,7 @@ import { caseQuery, versionQuery } from '../api.ts';
 import { VersionView } from '../components/version-view.tsx';
 import { Workspace } from '../components/workspace.tsx';
 import { contentOfCase } from '../editing/use-saving.ts';
+import { documentWith } from '../model/citation.ts';
 import { DEFAULT_DOCUMENT, DEFAULT_TITLE } from '../model/default-document.ts';
 import { isCaseLink, linkName, openLink } from '../model/permalink.ts';
 
@@ -90,6 +92,31 @@ function FromReference({ start }: { start: ReferenceStart }) {
   );
 }
 
+/** A new case with a version of the library in it, in the collision it was published with. */
+function FromLibrary({ id, n }: { id: string; n: number }) {
+  const { data, error, isError, refetch } = useQuery(interactionVersionQuery(id, n));
+  if (data) {
+    const subject = `case:new:library-${id}-${n}`;
+    const content = { title: data.name, tags: [], document: documentWith(data) };
+    return (
+      <Workspace
+        key={subject}
+        subject={subject}
+        href={caseWithHref(data)}
+        content={content}
+        saved={null}
+      />
+    );
+  }
+  if (!isError) return <Loading />;
+  return (
+    <>
+      <PageTitle title="New case" className="mb-4" />
+      <Failure what="The interaction of the library" error={error} onRetry={() => void refetch()} />
+    </>
+  );
+}
+
 /** A case that stands in the address itself: it is unfolded and checked before anything is shown of it. */
 function FromLink({ fragment }: { fragment: string }) {
   const opened = useQuery({
@@ -125,6 +152,10 @@ function NewCase() {
   const [parameters] = useSearchParams();
   const { hash } = useLocation();
   if (isCaseLink(hash)) return <FromLink key={hash} fragment={hash} />;
+  const interaction = parameters.get('interaction');
+  if (interaction !== null) {
+    return <FromLibrary id={interaction} n={Number(parameters.get('version') ?? '1')} />;
+  }
   const start = referenceStartOf(parameters);
   if (start) return <FromReference start={start} />;
   return <PlainNewCase parameters={parameters} />;
