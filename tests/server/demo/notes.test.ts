@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { ENGINE } from '#server/compute/engine-kinds.ts';
+import { DEMO_INTERACTIONS } from '#server/db/seeders/demo/library-demo.ts';
 import { DEMO_CASES } from '#server/db/seeders/demo/seed-demo.ts';
 import type { Estimate } from '#shared/contracts/estimates.ts';
 import { expectRelative } from '#tests/support/expect-relative.ts';
@@ -28,6 +29,12 @@ const pointAt = (estimate: Estimate, theta: number) => {
   if (!point) throw new Error(`no point at ${theta}`);
   return point;
 };
+/** The example of a version of the library's carbon atom, computed as a case would be. */
+function publishedCarbon(n: number): Estimate {
+  const { example, terms } = DEMO_INTERACTIONS[0]?.versions[n - 1] ?? {};
+  if (!example || !terms) throw new Error(`the carbon atom has no version ${n}`);
+  return ENGINE.estimate({ ...example, interaction: { terms }, methods: ['born1'] });
+}
 const dcs = (theta: number) => (estimate: Estimate) => pointAt(estimate, theta).dcs ?? NaN;
 const amplitude = (theta: number) => (estimate: Estimate) =>
   pointAt(estimate, theta).amplitude?.re ?? NaN;
@@ -55,6 +62,7 @@ const FORMULA = 'Electrons on helium: the static field as a formula';
 const TABLE = 'Electrons on helium: the static field as a table';
 const GAUSSIANS = 'Alphas on helium with a nuclear force in two Gaussians';
 const HULTHEN = 'Neutrons on protons in a Hulthén well';
+const LIBRARY = 'Electrons on carbon, as the library had it';
 
 /** A figure as a note prints it, and the value it stands for. */
 const FIGURES: [string, number, string, (estimate: Estimate) => number][] = [
@@ -80,6 +88,9 @@ const FIGURES: [string, number, string, (estimate: Estimate) => number][] = [
   [HULTHEN, 1, '0.98', elastic],
   [FORMULA, 1, '0.2709', elastic],
   [GAUSSIANS, 1, '14.9', dcs(90)],
+  [LIBRARY, 1, '0.0420', elastic],
+  [LIBRARY, 1, '0.0700', () => elastic(publishedCarbon(2))],
+  [LIBRARY, 1, '0.0642', () => elastic(estimateOf(CARBON, 2))],
 ];
 
 describe('the figures in the notes', () => {
@@ -106,6 +117,18 @@ describe('what the notes say of two curves', () => {
       theta,
       ratio: (value ?? NaN) / dcs(theta)(estimateOf(title, other)),
     }));
+
+  it('the library: one length against the tabulated atom, forward, at 10 degrees and beyond 25', () => {
+    const [first, second, table] = [publishedCarbon(1), publishedCarbon(2), estimateOf(CARBON, 2)];
+    expectRelative(amplitude(0)(second), amplitude(0)(table), 1e-3);
+    expectRelative(amplitude(0)(first) / amplitude(0)(table), 3 / 5, 0.01);
+    expectRelative(dcs(10)(second) / dcs(10)(table), 1.4, 0.02);
+    for (const version of [first, second]) {
+      for (const theta of [26, 90, 180]) {
+        expect(Math.abs(dcs(theta)(version) / dcs(theta)(table) - 1)).toBeLessThan(0.12);
+      }
+    }
+  });
 
   it('Molière and the tabulated atom part in the forward cone', () => {
     const [moliere, table] = [estimateOf(CARBON, 1), estimateOf(CARBON, 2)];

@@ -39,6 +39,8 @@ export async function removeDemo(em: EntityManager, now: Date): Promise<Removed>
     for (const account of accounts) await closeAccount(tx, account, now);
     const [row] = await tx.execute<{ cases: number }[]>('select remove_demo_cases() as cases');
     const cases = row?.cases ?? 0;
+    // After the cases: what a case that stays cites, stays too.
+    await tx.execute('select remove_demo_interactions()');
     await removeIdleCampaigns(tx);
     if (accounts.length > 0 || cases > 0) {
       recordTrail(tx, {

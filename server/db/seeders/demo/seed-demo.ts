@@ -11,6 +11,7 @@ import { ELECTRON_CASES } from './electron-cases.ts';
 import { FORMULA_CASES } from './formula-cases.ts';
 import { HELIUM_CASES } from './helium-cases.ts';
 import { ION_CASES } from './ion-cases.ts';
+import { LIBRARY_CASES, seedLibrary } from './library-demo.ts';
 import { LIGHT_ION_CASES } from './light-ion-cases.ts';
 import { NEUTRON_CASES } from './neutron-cases.ts';
 import { SAMPLE_CASES } from './sample-cases.ts';
@@ -32,6 +33,7 @@ export const DEMO_CASES: readonly DemoCase[] = [
   ...THEORY_CASES,
   ...HELIUM_CASES,
   ...FORMULA_CASES,
+  ...LIBRARY_CASES,
 ];
 
 export interface SeedContext {
@@ -108,6 +110,7 @@ export async function seedDemo(context: SeedContext): Promise<number> {
     const within = { ...context, em };
     const people = await seedPeople(within);
     const campaigns = await seedCampaigns(within, people);
+    await seedLibrary({ ...within, actor: people.theorist, now: context.clock() });
     for (const demo of DEMO_CASES) {
       await seedCase(within, demo, people, demo.campaign && campaigns[demo.campaign]);
     }
