@@ -15,9 +15,10 @@ import { MethodChoice } from './method-choice.tsx';
 import { PotentialSketch } from './potential-sketch.tsx';
 
 /** What to beware of stands out; what only rounds the picture off stands small. */
-export function Warnings({ estimate }: { estimate: Estimate }) {
-  const cautions = estimate.warnings.filter(({ level }) => level !== 'info');
-  const remarks = estimate.warnings.filter(({ level }) => level === 'info');
+export function Warnings({ estimate, except }: { estimate: Estimate; except?: string }) {
+  const warnings = estimate.warnings.filter(({ code }) => code !== except);
+  const cautions = warnings.filter(({ level }) => level !== 'info');
+  const remarks = warnings.filter(({ level }) => level === 'info');
   return (
     <>
       {cautions.map((warning) => (

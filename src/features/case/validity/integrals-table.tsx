@@ -62,10 +62,12 @@ function Cell({ kind, computed, reference, unit }: CellProps) {
         unit={unit}
         digits={5}
       />
-      <span className="block text-xs text-muted">
-        {numericsText(found)}
-        {off !== null && ` · ${signedPercent(off)} to ${referenceName(reference.method)}`}
-      </span>
+      <span className="block text-xs text-muted">{numericsText(found)}</span>
+      {off !== null && (
+        <span className="block text-xs text-muted">
+          {signedPercent(off)} to {referenceName(reference.method)}
+        </span>
+      )}
     </td>
   );
 }

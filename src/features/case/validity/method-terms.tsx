@@ -1,5 +1,5 @@
 import { Chip } from '#src/components/chip.tsx';
-import { formatNumber } from '#shared/units/format.ts';
+import { formatNumber, unitSymbol } from '#shared/units/format.ts';
 import type { Condition, Estimate } from '#shared/contracts/estimates.ts';
 import { brief } from '../model/verdict.ts';
 import { METHOD_NAMES } from '../model/words.ts';
@@ -7,22 +7,53 @@ import { computedMethods, refusedMethods } from './model/methods.ts';
 import type { ComputedMethod } from './model/methods.ts';
 import { Panel } from './panel.tsx';
 
-function bound({ most, least }: Condition): string {
-  if (most !== undefined) return `should stay below ${formatNumber(most, 2)}`;
-  return least === undefined ? 'reported only' : `should stay above ${formatNumber(least, 2)}`;
+/** What the engine calls the conditions, as people call them, with the unit of those that have one. */
+const NAMES: Readonly<Record<string, { name: string; unit?: string }>> = {
+  secondOrderSize: { name: 'second-order size' },
+  opticalTheorem: { name: 'optical theorem, second order' },
+  shortWaves: { name: 'short waves, kR' },
+  fastParticles: { name: 'fast particles' },
+  smallAngles: { name: 'small angles, up to', unit: 'rad' },
+  momentumTransfer: { name: 'largest momentum transfer', unit: '1/angstrom' },
+  eta: { name: 'Sommerfeld parameter' },
+  kR: { name: 'kR' },
+  lMax: { name: 'highest wave solved, l' },
+  waves: { name: 'radial equations solved' },
+};
+
+/** A count as it is, anything else to three digits. */
+function numberText(value: number): string {
+  const plain = Number.isInteger(value) && Math.abs(value) < 1e6;
+  return plain ? String(value) : formatNumber(value, 3);
+}
+
+function limitText(value: number): string {
+  const size = Math.abs(value);
+  return size >= 1e-3 && size < 1e6 ? String(Number(value.toPrecision(3))) : formatNumber(value, 1);
+}
+
+function bound({ most, least }: Condition, unit: string): string {
+  if (most !== undefined) return `should stay below ${limitText(most)}${unit}`;
+  return least === undefined ? 'reported only' : `should stay above ${limitText(least)}${unit}`;
 }
 
 function ConditionRow({ condition }: { condition: Condition }) {
   const { name, value, holds, meaning, most, least } = condition;
   const judged = most !== undefined || least !== undefined;
+  const known = NAMES[name];
+  const unit = known?.unit === undefined ? '' : `\u00a0${unitSymbol(known.unit)}`;
   return (
     <li className="flex flex-wrap items-start justify-between gap-x-5 gap-y-1 py-1">
       <div className="min-w-0 flex-1 basis-56">
-        {name} <span className="font-mono">{formatNumber(value, 3)}</span>
+        {known?.name ?? name}{' '}
+        <span className="font-mono">
+          {numberText(value)}
+          {unit}
+        </span>
         <span className="block text-xs text-muted">{meaning}</span>
       </div>
       <span className="flex flex-wrap items-center gap-x-3 text-xs text-muted">
-        {bound(condition)}
+        {bound(condition, unit)}
         {judged && (
           <Chip
             tone={holds ? 'sound' : 'fault'}

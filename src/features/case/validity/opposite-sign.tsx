@@ -167,6 +167,13 @@ function Comparison({ estimate, opposite, what, dimmed, fileName }: ComparisonPr
   );
 }
 
+function saysOf(charged: boolean, corrected: boolean): string {
+  if (!charged) {
+    return '|f₁|² does not know the sign: attraction and repulsion of one strength give the same curve in first order. Beyond it they part.';
+  }
+  return `In first order the charge of the projectile only sets the sign of its amplitude on a charge, and |f₁|² does not know it. Beyond first order particle and antiparticle part${corrected ? '; the correction that is applied here is the beginning of it' : ''}.`;
+}
+
 interface OppositeSignProps {
   estimate: Estimate;
   dimmed: boolean;
@@ -183,11 +190,7 @@ export function OppositeSign({ estimate, dimmed, fileName }: OppositeSignProps) 
   return (
     <Panel
       title={partner === null ? 'The sign of the potential' : `Against the ${partner}`}
-      says={
-        partner === null
-          ? '|f₁|² does not know the sign: attraction and repulsion of one strength give the same curve in first order. Beyond it they part.'
-          : 'In first order the charge of the projectile only sets the sign of its amplitude on a charge, and |f₁|² does not know it. Beyond first order particle and antiparticle part.'
-      }
+      says={saysOf(partner !== null, draft.document.corrections !== undefined)}
       actions={
         !('none' in opposite) && (
           <Button size="small" aria-expanded={open} onClick={() => setOpen(!open)}>

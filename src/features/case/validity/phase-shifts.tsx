@@ -9,6 +9,7 @@ import {
   breaksUnitarity,
   groupsOf,
   jText,
+  lastShown,
   phaseSeries,
   sizeSeries,
   transition,
@@ -147,16 +148,18 @@ interface PhaseShiftsProps {
 export function PhaseShifts({ waves, lMax, coulomb, dimmed, fileName }: PhaseShiftsProps) {
   const [place, setPlace] = useState(0);
   const [tableOpen, setTableOpen] = useState(false);
-  const series = useMemo(() => phaseSeries(waves), [waves]);
-  const sizes = useMemo(() => sizeSeries(waves), [waves]);
-  const lead = groupsOf(waves)[0]?.waves ?? [];
+  const last = lastShown(waves);
+  const drawn = useMemo(() => waves.filter(({ l }) => l <= last), [waves, last]);
+  const series = useMemo(() => phaseSeries(drawn), [drawn]);
+  const sizes = useMemo(() => sizeSeries(drawn), [drawn]);
+  const lead = groupsOf(drawn)[0]?.waves ?? [];
   const wave = lead[Math.min(place, lead.length - 1)];
   if (!wave) return null;
-  const last = lead.at(-1)?.l ?? 0;
+  const beyond = waves.at(-1)?.l ?? last;
   return (
     <Panel
       title="Phase shifts"
-      says={`${coulomb ? 'Relative to the Coulomb phase. ' : ''}δ between −π/2 and π/2${lMax === undefined ? '' : `; waves up to l = ${lMax} are integrated, those beyond closed with their first-order phases`}.`}
+      says={`${coulomb ? 'Relative to the Coulomb phase. ' : ''}δ between −π/2 and π/2${lMax === undefined ? '' : `; waves up to l = ${lMax} are integrated, those beyond closed with their first-order phases`}.${beyond > last ? ` Drawn up to l = ${last}; the table has all of them.` : ''}`}
     >
       <Plot
         label="Phase shift and size of S against l"

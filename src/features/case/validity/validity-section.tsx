@@ -13,6 +13,7 @@ import { LowEnergy } from './low-energy.tsx';
 import { MethodCurves } from './method-curves.tsx';
 import { MethodConditions } from './method-terms.tsx';
 import { computedOf } from './model/methods.ts';
+import { wavesOf } from './model/waves.ts';
 import { hasCoulombTail } from './model/treatment.ts';
 import { OppositeSign } from './opposite-sign.tsx';
 import { PhaseShifts } from './phase-shifts.tsx';
@@ -46,11 +47,11 @@ function Waves({ estimate, dimmed, fileName }: PartsProps) {
   const { draft } = useEditing();
   const exact = computedOf(estimate, 'partialWaves');
   if (!exact) return null;
-  const { phaseShifts = [], lMax, lowEnergy } = exact;
+  const { lMax, lowEnergy } = exact;
   return (
     <>
       <PhaseShifts
-        waves={phaseShifts}
+        waves={wavesOf(estimate)}
         lMax={lMax}
         coulomb={hasCoulombTail(draft.document)}
         dimmed={dimmed}
@@ -63,7 +64,7 @@ function Waves({ estimate, dimmed, fileName }: PartsProps) {
 
 /** The two planes of complex numbers, side by side where there is room. */
 function Planes(props: PartsProps) {
-  const waves = computedOf(props.estimate, 'partialWaves')?.phaseShifts ?? [];
+  const waves = wavesOf(props.estimate);
   return (
     <div className="grid grid-cols-[minmax(0,1fr)] items-start gap-4 @3xl:grid-cols-[repeat(2,minmax(0,1fr))]">
       <AmplitudePlane {...props} />
@@ -88,7 +89,8 @@ function Parts(props: PartsProps) {
       <AnalysingPower {...props} />
       <Planes {...props} />
       <Waves {...props} />
-      <Warnings estimate={estimate} />
+      {/* What first order cannot see has a part of its own above. */}
+      <Warnings estimate={estimate} except="signUnseen" />
     </div>
   );
 }

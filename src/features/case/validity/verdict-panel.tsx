@@ -60,7 +60,7 @@ function Headline({ estimate }: { estimate: Estimate }) {
           )}
         </p>
         <p className="mt-2 max-w-prose">
-          {VERDICT_MEANINGS[validity.verdict]}{' '}
+          {validity.reason === undefined && VERDICT_MEANINGS[validity.verdict]}{' '}
           {validity.verdict !== 'unassessed' && (
             <span className="text-muted">{BASES[validity.basis]}</span>
           )}{' '}

@@ -58,7 +58,7 @@ function reversed(term: InteractionTerm): InteractionTerm | null {
   return null;
 }
 
-const bare = (document: CaseDocument) => without(document, 'entered', 'corrections');
+const bare = (document: CaseDocument) => without(document, 'entered');
 
 /** Leptons on charges: the antiparticle feels the opposite charge, and whatever does not hang on charge stays as it is. */
 function antiparticleCase(document: CaseDocument, species: Species, partner: Species): Opposite {

@@ -1,10 +1,18 @@
 import type { PlotSeries } from '#src/components/plot-types.ts';
 import { fullDigits } from '#shared/units/format.ts';
-import type { PhaseShift } from '#shared/contracts/estimates.ts';
+import type { Estimate, PhaseShift } from '#shared/contracts/estimates.ts';
+import { without } from '../../model/without.ts';
+import { computedOf } from './methods.ts';
 
 export interface Complex {
   re: number;
   im: number;
+}
+
+/** The waves of the exact calculation; where the case has no first order, none of its phases either. */
+export function wavesOf(estimate: Estimate): PhaseShift[] {
+  const waves = computedOf(estimate, 'partialWaves')?.phaseShifts ?? [];
+  return computedOf(estimate, 'born1') ? waves : waves.map((wave) => without(wave, 'born'));
 }
 
 /** T_l = (S_l - 1)/2i of a wave with S_l = η exp(2iδ). */
@@ -24,6 +32,21 @@ export function jText(j: number): string {
 /** `l = 3`, with a spin-orbit term `l = 3, j = 7/2`. */
 export function waveName({ l, j }: PhaseShift): string {
   return `l = ${l}${j === undefined ? '' : `, j = ${jText(j)}`}`;
+}
+
+const SHOWN_SHARE = 1e-3;
+const SHOWN_LEAST = 4;
+
+/** The last l that a picture can tell from nothing: the many waves beyond it stand in the table. */
+export function lastShown(waves: readonly PhaseShift[]): number {
+  const size = ({ delta, eta, born = 0 }: PhaseShift) =>
+    Math.max(Math.abs(delta), Math.abs(born), Math.abs(1 - eta));
+  const largest = waves.reduce((most, wave) => Math.max(most, size(wave)), 0);
+  const last = waves.reduce(
+    (l, wave) => (size(wave) > SHOWN_SHARE * largest ? Math.max(l, wave.l) : l),
+    SHOWN_LEAST,
+  );
+  return Math.min(last, waves.at(-1)?.l ?? last);
 }
 
 interface Group {
