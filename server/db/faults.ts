@@ -3,8 +3,9 @@ import { UniqueConstraintViolationException } from '@mikro-orm/core';
 /** SQLSTATE classes and system errors that mean the server of the database is away or going away. */
 const AWAY =
   /^(08...|57P0[123]|53300|ECONNREFUSED|ECONNRESET|EPIPE|ENOTFOUND|EAI_AGAIN|ETIMEDOUT|EHOSTUNREACH)$/;
+/** The last one is what the query builder says of a transaction whose connection died under it. */
 const AWAY_WORDS =
-  /Connection terminated|Connection ended|Client has encountered a connection error|Timeout acquiring a connection|timeout expired/;
+  /Connection terminated|Connection ended|Client has encountered a connection error|Timeout acquiring a connection|timeout expired|Transaction query already complete/;
 
 /** True where a fault says that the database cannot be reached, not that a statement is wrong. */
 export function isDatabaseAway(fault: unknown): boolean {

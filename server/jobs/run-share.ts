@@ -4,6 +4,7 @@ import type { Logger } from 'pino';
 import { DomainError } from '#shared/errors.ts';
 import type { Compute } from '#server/compute/compute.ts';
 import { isDatabaseAway } from '#server/db/faults.ts';
+import { finiteJson } from '#server/http/finite-json.ts';
 import { VERSION } from '#server/version.ts';
 import type { JobKind, OpenJob, PartTools } from './job-kind.ts';
 import { JOB_KINDS } from './kinds.ts';
@@ -36,6 +37,19 @@ export interface ShareContext {
 /** Why work on a share ends before its end. */
 class LetGo extends Error {
   override readonly name = 'LetGo';
+}
+
+/** A fault of the work itself, not of what keeps it: another worker would meet it too. */
+class WorkFault extends Error {
+  override readonly name = 'WorkFault';
+}
+
+async function theWork<T>(work: () => Promise<T> | T): Promise<T> {
+  try {
+    return await work();
+  } catch (cause) {
+    throw new WorkFault('the work itself failed', { cause });
+  }
 }
 
 /** Tries again while the database is away; a worker that is to stop gives up. */
@@ -124,7 +138,11 @@ async function computeParts(
   const keeper = new Keeper(share, context);
   const underWay: Promise<Part>[] = [];
   const begin = ({ n, contentHash }: { n: number; contentHash: string | null }) => {
-    const part = job.part(n, tools).then((value) => ({ n, contentHash, engine: VERSION, value }));
+    const part = theWork(async () => {
+      const value = await job.part(n, tools);
+      finiteJson(value);
+      return { n, contentHash, engine: VERSION, value };
+    });
     // Looked at in its turn; meanwhile its failure is nobody's.
     part.catch(() => undefined);
     underWay.push(part);
@@ -146,12 +164,13 @@ async function computeParts(
 async function work(share: Share, context: ShareContext, tools: PartTools): Promise<void> {
   const kind: JobKind = JOB_KINDS[share.kind];
   if (share.first < share.end) {
-    const keeper = await computeParts(share, kind.open(share.input), context, tools);
+    const job = await theWork(() => kind.open(share.input));
+    const keeper = await computeParts(share, job, context, tools);
     await keeper.keep({ finished: true });
     return;
   }
   const parts = await persistently(() => partValues(context.em(), share.jobId), context);
-  const result = await kind.finish?.(share.input, parts, tools);
+  const result = await theWork(() => kind.finish?.(share.input, parts, tools));
   tools.signal.throwIfAborted();
   await new Keeper(share, context).keep({ finished: true, result });
 }
@@ -179,15 +198,18 @@ export async function runShare(share: Share, context: ShareContext): Promise<voi
   try {
     await work(share, context, { compute: context.compute, signal });
   } catch (fault) {
-    if (lost.aborted || fault instanceof LetGo) {
+    if (lost.aborted || fault instanceof LetGo || stopping.aborted) {
       log.info('the share was let go');
-    } else if (stopping.aborted) {
+      // Without effect where it is another worker's by now.
       await releaseShare(em(), share).catch((err: unknown) => {
         log.warn({ err }, 'the share could not be given back; another worker takes it in seconds');
       });
+    } else if (fault instanceof WorkFault) {
+      log.error({ err: fault.cause }, 'the job failed');
+      await persistently(() => failJob(em(), share, wordsOf(fault.cause)), context);
     } else {
-      log.error({ err: fault }, 'the job failed');
-      await persistently(() => failJob(em(), share, wordsOf(fault)), context);
+      // Not given back: it counts as a loss when it is taken again, so that this has an end.
+      log.error({ err: fault }, 'the share could not be kept');
     }
   } finally {
     end();

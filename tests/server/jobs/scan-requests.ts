@@ -4,6 +4,7 @@ import type { Scan } from '#shared/contracts/scans.ts';
 import type { Compute } from '#server/compute/compute.ts';
 import { runWorker } from '#server/jobs/worker.ts';
 import { createLogger } from '#server/http/logging.ts';
+import { query } from '#tests/support/test-database.ts';
 import type { Agent, TestApp } from '#tests/support/test-app.ts';
 import { yukawaDocument } from '../documents/sample-documents.ts';
 
@@ -16,6 +17,19 @@ export const energyScan = {
   axes: [{ path: '/energy', from: eV(10), to: eV(1000), count: 20, scale: 'log' }],
   output: 'total',
 } as const;
+
+/** A scan no other test asks for, so that none of its points is known. */
+let depth = -1;
+export function newScan(points: number): object {
+  depth -= 1;
+  const { estimate, axes } = energyScan;
+  const terms = [{ ...estimate.interaction.terms[0], V0: eV(depth) }];
+  return {
+    ...energyScan,
+    estimate: { ...estimate, interaction: { terms } },
+    axes: [{ ...axes[0], count: points }],
+  };
+}
 
 export async function startScan(agent: Agent, body: object = energyScan): Promise<string> {
   const answer = await agent.post('/api/scans').send(body).expect(202);
@@ -73,3 +87,8 @@ export function startWorker(
     },
   };
 }
+
+/** Numbers of the points that are kept of a scan, in their order. */
+export const partsOf = ({ database }: TestApp, id: string) =>
+  query(database.ownerUrl, 'select n from job_parts where job_id = $1 order by n', [id]);
+export const numbers = (count: number) => Array.from({ length: count }, (_, n) => ({ n }));
