@@ -30,7 +30,7 @@ test('by keyboard: every limit of a Yukawa potential holds, and a changed case i
   const table = page.getByRole('region', { name: 'Limits of the case' });
   await table.waitFor();
   const rows = await table.locator('tbody tr').allInnerTexts();
-  expect(rows).toHaveLength(5);
+  expect(rows).toHaveLength(6);
   for (const row of rows) expect(row).toContain('holds');
   // A quarter of dσ/dΩ at 60°: |f| = 2 mu |V0| a³/hbar² over 1 + k²a², with hbar²/2m = 3.80998 eV angstrom².
   const quarter = (10 / 3.8099821 / (1 + 5.12316722 ** 2)) ** 2 / 4;
@@ -71,6 +71,6 @@ test('a limit the server refuses is said in words, the others stand', async () =
   await table.waitFor();
   const rows = await table.locator('tbody tr').allInnerTexts();
   expect(rows[0]).toMatch(/Not shown\.\s+This would take too long\./);
-  expect(rows.filter((row) => row.includes('holds'))).toHaveLength(4);
+  expect(rows.filter((row) => row.includes('holds'))).toHaveLength(5);
   lines.expect(/422/);
 });

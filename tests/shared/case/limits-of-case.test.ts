@@ -39,23 +39,46 @@ const LEAD: Partial<CaseDocument> = {
 };
 const WELL = { form: 'woodsSaxon', V0: Q(-50, 'MeV'), W0: Q(-8, 'MeV'), R: Q(4.3, 'fm') };
 const FERMI = { form: 'extendedCharge', kind: 'fermi', radius: Q(6.6, 'fm') };
-const GENERAL = ['strength', 'isotropic', 'four pi', 'forward'];
+const SHORT = ['isotropic', 'four pi', 'forward'];
+const GENERAL = ['strength', ...SHORT];
+const ROUND = [...GENERAL, 'mean square radius'];
+const FAST_ION: Partial<CaseDocument> = {
+  projectile: { nuclide: 'Ar-40' },
+  target: { kind: 'nuclide', nuclide: 'Cu-63' },
+  energy: Q(20, 'keV'),
+};
+const ATOMS: Partial<CaseDocument> = { energy: Q(100, 'keV'), kinematics: 'relativistic' };
+const ROWS = Array.from({ length: 21 }, (_, i): [number, number] => [
+  i / 5,
+  -10 / Math.cosh(i / 5),
+]);
+const table = (tail: string) => ({
+  ...{ form: 'tabulated', lengthUnit: 'angstrom', energyUnit: 'eV', points: ROWS, tail },
+  original: { name: 'rows.csv', text: 'kept, never computed with' },
+});
+const formula = (text: string, parameters: Record<string, ReturnType<typeof Q> | number>) => ({
+  ...{ form: 'expression', formula: text, parameters },
+});
+const SLOW_NEUTRONS: Partial<CaseDocument> = {
+  projectile: { species: 'neutron' },
+  energy: Q(25, 'meV'),
+};
 const CASES: [string, CaseDocument, string[]][] = [
-  ['yukawa', withTerms([{ form: 'yukawa', V0, a }]), ['unscreened', ...GENERAL]],
-  ['hulthen', withTerms([{ form: 'hulthen', V0, a }]), ['unscreened', ...GENERAL]],
-  ['gaussian', withTerms([{ form: 'gaussian', V0, W0: Q(-2, 'eV'), a }]), GENERAL],
-  ['exponential', withTerms([{ form: 'exponential', V0, a }]), GENERAL],
-  ['squareWell', withTerms([{ form: 'squareWell', V0, R: a }]), GENERAL],
-  ['deltaShell', withTerms([{ form: 'deltaShell', g: Q(-3, 'eV angstrom'), R: a }]), GENERAL],
+  ['yukawa', withTerms([{ form: 'yukawa', V0, a }]), ['unscreened', ...ROUND]],
+  ['hulthen', withTerms([{ form: 'hulthen', V0, a }]), ['unscreened', ...ROUND]],
+  ['gaussian', withTerms([{ form: 'gaussian', V0, W0: Q(-2, 'eV'), a }]), ROUND],
+  ['exponential', withTerms([{ form: 'exponential', V0, a }]), ROUND],
+  ['squareWell', withTerms([{ form: 'squareWell', V0, R: a }]), ROUND],
+  ['deltaShell', withTerms([{ form: 'deltaShell', g: Q(-3, 'eV angstrom'), R: a }]), ROUND],
   [
     'woodsSaxon on a nuclide',
     withTerms([{ ...WELL, a: Q(0.6, 'fm') }], NUCLEAR),
-    ['sharp edge', ...GENERAL, 'heavy target'],
+    ['sharp edge', ...ROUND, 'heavy target'],
   ],
   [
     'screenedCoulomb, relativistic',
     withTerms([{ form: 'screenedCoulomb', chargeProduct: -29, a: Q(0.15, 'angstrom') }], COPPER),
-    ['unscreened', ...GENERAL, 'slow particle'],
+    ['unscreened', ...ROUND, 'slow particle'],
   ],
   [
     'coulomb of alpha particles',
@@ -87,13 +110,90 @@ const CASES: [string, CaseDocument, string[]][] = [
     ),
     [...GENERAL, 'heavy target', 'symmetric'],
   ],
-  ['a form with nothing to take to a limit', withTerms([{ form: 'moliere', Z: 6 }]), []],
+  [
+    'moliere, on the charge of the target',
+    withTerms([{ form: 'moliere' }], COPPER),
+    ['bare charges', 'exponentials', ...SHORT, 'mean square radius', 'slow particle'],
+  ],
+  [
+    'moliere with a charge of its own',
+    withTerms([{ form: 'moliere', Z: 6 }]),
+    ['bare charges', 'exponentials', ...SHORT, 'mean square radius'],
+  ],
+  [
+    'krc',
+    withTerms([{ form: 'krc', Z1: 18, Z2: 29 }], FAST_ION),
+    ['bare charges', 'exponentials', ...SHORT, 'mean square radius'],
+  ],
+  [
+    'universalIon',
+    withTerms([{ form: 'universalIon', Z1: 18, Z2: 29 }], FAST_ION),
+    ['bare charges', 'exponentials', ...SHORT, 'mean square radius'],
+  ],
+  ...['C', 'Cs', 'Au'].map((element): [string, CaseDocument, string[]] => [
+    `atomicElectron on ${element}, relativistic`,
+    withTerms([{ form: 'atomicElectron', element }], ATOMS),
+    ['bare nucleus', 'antiparticle', ...SHORT, 'mean square radius', 'slow particle'],
+  ]),
+  [
+    'atomicElectron of positrons',
+    withTerms([{ form: 'atomicElectron', element: 'Si' }], {
+      projectile: { species: 'positron' },
+      energy: Q(1, 'keV'),
+    }),
+    ['bare nucleus', 'antiparticle', ...SHORT, 'mean square radius'],
+  ],
+  ['a table', withTerms([table('zero')]), ['similar', ...ROUND]],
+  ['a table with an exponential tail', withTerms([table('exponential')]), ['similar', ...ROUND]],
+  ['a table with a Coulomb tail', withTerms([table('coulomb')]), ['similar', 'strength']],
+  [
+    'a formula that dies out',
+    withTerms([formula('V0*exp(-(r/a)^2)*(1 - r/a)', { V0, a })]),
+    ['similar', ...GENERAL],
+  ],
+  [
+    'a formula with an edge and composed units',
+    withTerms([
+      formula('r < R ? -c/(r + d) : -c*exp(-m*(r - R))/(R + d)*w', {
+        c: Q(12, 'eV angstrom'),
+        R: Q(1.5, 'angstrom'),
+        d: Q(20, 'pm'),
+        m: Q(1.8, '1/angstrom'),
+        w: 1,
+      }),
+    ]),
+    ['similar', ...GENERAL],
+  ],
+  [
+    'a formula that falls like a power of r has no range',
+    withTerms([formula('V0/(1 + (r/a)^2)^2', { V0, a })]),
+    ['similar', 'strength'],
+  ],
+  [
+    'contact by nuclide, on a nucleus that recoils',
+    withTerms([{ form: 'contact', nuclide: 'V-51' }], {
+      ...SLOW_NEUTRONS,
+      target: { kind: 'nuclide', nuclide: 'V-51' },
+    }),
+    ['bound', 'isotropic', 'four pi'],
+  ],
+  [
+    'contact by element, on a fixed centre',
+    withTerms([{ form: 'contact', element: 'Ni' }], SLOW_NEUTRONS),
+    ['isotropic', 'four pi'],
+  ],
+  [
+    'a form with nothing to take to a limit',
+    withTerms([{ form: 'hardSphere', R: a }], { methods: ['born1'] }),
+    [],
+  ],
 ];
 
 function shown({ expected, obtained, within }: Limit) {
   const wanted = readSide(computeEstimate(expected.body), expected);
   const found = readSide(computeEstimate(obtained.body), obtained);
   if (typeof wanted === 'string' || typeof found === 'string') return [wanted, found];
+  expect(found.unit).toBe(wanted.unit);
   return judgeSides(wanted, found, within);
 }
 

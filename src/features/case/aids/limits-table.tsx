@@ -18,8 +18,8 @@ const number = `${cell} text-right font-mono whitespace-nowrap`;
 function Value({ reading }: { reading: Reading }) {
   return (
     <span title={fullDigits(reading.value)}>
-      {formatNumber(reading.value, 8)}{' '}
-      <span className="font-sans text-muted">{unitSymbol(reading.unit)}</span>
+      {formatNumber(reading.value, 8)}
+      <span className="block font-sans text-xs text-muted">{unitSymbol(reading.unit)}</span>
     </span>
   );
 }

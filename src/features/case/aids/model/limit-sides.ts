@@ -1,4 +1,4 @@
-import type { Estimate, EstimateRequest } from '#shared/contracts/estimates.ts';
+import type { ComputedMethod, Estimate, EstimateRequest } from '#shared/contracts/estimates.ts';
 
 /** A limiting form of a case: two numbers the engine computes for changed inputs, which then have to agree. */
 export interface Limit {
@@ -16,8 +16,11 @@ export interface Limit {
 /** One number of one answer, times a factor. */
 export interface Side {
   body: EstimateRequest;
-  read: 'elastic' | { place: number };
+  /** `lossTo`: what dσ/dΩ at one place lacks of that at place 0, as a fraction of it. */
+  read: 'elastic' | { place: number } | { lossTo: number };
   factor: number;
+  /** The factor is a solid angle: what comes of dσ/dΩ is an area. */
+  overSphere?: true;
 }
 
 /** A number with the numerical error the engine states for it, both in the unit of the answer. */
@@ -44,7 +47,7 @@ function errorOf(
 }
 
 /** The number a side asks for, or why the answer has none. */
-export function readSide(answer: Estimate, { read, factor }: Side): Reading | string {
+export function readSide(answer: Estimate, { read, factor, overSphere }: Side): Reading | string {
   const born = answer.methods.born1;
   if (!born) return 'The answer holds no first Born result.';
   if ('unavailable' in born) return born.reason;
@@ -54,13 +57,25 @@ export function readSide(answer: Estimate, { read, factor }: Side): Reading | st
     const { value, unit } = elastic;
     return { value: factor * value, error: factor * errorOf(value, elastic), unit };
   }
-  const point = born.differential[read.place];
+  if ('place' in read) {
+    const point = readPoint(born, read.place);
+    if (typeof point === 'string') return point;
+    const { value, error } = point;
+    const unit = overSphere ? answer.units.area : `${answer.units.area}/sr`;
+    return { value: factor * value, error: factor * error, unit };
+  }
+  const [whole, part] = [readPoint(born, 0), readPoint(born, read.lossTo)];
+  if (typeof whole === 'string') return whole;
+  if (typeof part === 'string') return part;
+  const ratio = part.value / whole.value;
+  const error = (part.error + ratio * whole.error) / whole.value + Number.EPSILON;
+  return { value: factor * (1 - ratio), error: factor * error, unit: '1' };
+}
+
+function readPoint(born: ComputedMethod, place: number): { value: number; error: number } | string {
+  const point = born.differential[place];
   if (!point || point.dcs === null) return point?.reason ?? 'There is no value at this angle.';
-  return {
-    value: factor * point.dcs,
-    error: factor * errorOf(point.dcs, point),
-    unit: `${answer.units.area}/sr`,
-  };
+  return { value: point.dcs, error: errorOf(point.dcs, point) };
 }
 
 /**

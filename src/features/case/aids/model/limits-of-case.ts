@@ -2,9 +2,10 @@ import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { Estimate, EstimateRequest } from '#shared/contracts/estimates.ts';
 import { composedFactor } from '#shared/units/composed.ts';
 import { without } from '../../model/without.ts';
-import { isChargeless, rangeOf, scaled } from './limit-terms.ts';
+import { isChargeless, keepsSign, rangeOf, scaled } from './limit-terms.ts';
 import { limitsOfForm } from './limits-of-form.ts';
-import type { Start } from './limits-of-form.ts';
+import { reachOf } from './limit-reach.ts';
+import type { Start } from './limit-start.ts';
 import type { Limit } from './limit-sides.ts';
 
 const FORWARD = 0;
@@ -33,12 +34,45 @@ function halfStrength({ body }: Start): Limit[] {
   ];
 }
 
-/** With k·range = 1e-3 the amplitude varies by a few (k·range)² at most. */
-function slow({ body, k }: Start): Limit[] {
-  const ranges = body.interaction.terms.map(rangeOf);
+/** k times the longest range; null where a tail has none. */
+function reachedBy(start: Start): number | null {
+  const ranges = start.body.interaction.terms.map((term) => rangeOf(term, start));
   const finite = ranges.filter((range) => range !== null);
-  if (finite.length < ranges.length) return [];
-  const reach = k * Math.max(...finite);
+  return finite.length < ranges.length ? null : start.k * Math.max(...finite);
+}
+
+/** The mean square radius: 1 - q²⟨r²⟩/3 of the forward peak is left, and q is twice as large at 180° as at 60°. */
+function meanSquareRadius(start: Start): Limit[] {
+  const { body } = start;
+  const [term, ...more] = body.interaction.terms;
+  const reach = reachedBy(start);
+  if (!term || more.length > 0 || !keepsSign(term) || reach === null || !(reach > 0)) return [];
+  const kr = Math.min(reach, 3e-3);
+  const gentle: EstimateRequest = {
+    ...body,
+    angles: THREE,
+    identical: false,
+    kinematics: 'nonrelativistic',
+    energy: { ...body.energy, value: body.energy.value * (kr / reach) ** 2 },
+  };
+  return [
+    {
+      key: 'mean square radius',
+      limit: 'energy so low that k times the range is at most 3e-3, without relativity',
+      holds:
+        'what dσ/dΩ lacks of its forward value goes as q²: four times as much at 180° as at 60°',
+      expected: { body: gentle, read: { lossTo: 1 }, factor: 4 },
+      obtained: { body: gentle, read: { lossTo: 2 }, factor: 1 },
+      within: 50 * kr ** 2,
+    },
+  ];
+}
+
+/** With k·range = 1e-3 the amplitude varies by a few (k·range)² at most. */
+function slow(start: Start): Limit[] {
+  const { body } = start;
+  const reach = reachedBy(start);
+  if (reach === null) return [];
   const kr = Math.min(reach, 1e-3);
   const share = reach > 0 ? (kr / reach) ** 2 : 1;
   const gentle: EstimateRequest = {
@@ -63,7 +97,7 @@ function slow({ body, k }: Start): Limit[] {
       key: 'four pi',
       limit: 'the same low energy',
       holds: 'the elastic total is 4π times dσ/dΩ',
-      expected: { body: gentle, read: { place: FORWARD }, factor: 4 * Math.PI },
+      expected: { body: gentle, read: { place: FORWARD }, factor: 4 * Math.PI, overSphere: true },
       obtained: { body: gentle, read: 'elastic', factor: 1 },
       within,
     },
@@ -157,15 +191,31 @@ export function limitsOf(document: CaseDocument, estimate: Estimate): Limit[] {
     'corrections',
     'angles',
   );
-  const { k, beta } = estimate.kinematics;
+  const { k, beta, reducedMass } = estimate.kinematics;
+  const wavenumber = k.value * composedFactor(k.unit, '1/angstrom');
+  const gamma = 1 / Math.sqrt(1 - beta ** 2);
+  const relativistic = document.kinematics === 'relativistic';
+  // The text a table was read from is kept with the case; no limit needs it.
+  const terms = document.interaction.terms.map((term) => ({
+    ...without(term, 'original'),
+    form: term.form,
+  }));
   const start: Start = {
-    body: { ...rest, methods: ['born1'], frame: 'cm', angles: { unit: 'deg', values: [60] } },
-    k: k.value * composedFactor(k.unit, '1/angstrom'),
+    body: {
+      ...rest,
+      ...{ interaction: { terms }, methods: ['born1'], frame: 'cm' },
+      angles: { unit: 'deg', values: [60] },
+    },
+    k: wavenumber,
+    slowK: relativistic ? wavenumber * Math.sqrt(2 / (gamma + 1)) : wavenumber,
+    reducedMass: reducedMass.value * composedFactor(reducedMass.unit, 'eV'),
+    reach: reachOf(estimate),
   };
   return [
     ...limitsOfForm(start),
     ...halfStrength(start),
     ...slow(start),
+    ...meanSquareRadius(start),
     ...heavyTarget(start),
     ...gentleRelativity(start, beta),
     ...symmetric(start, estimate.identical),

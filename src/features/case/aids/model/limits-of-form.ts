@@ -3,25 +3,19 @@ import { isQuantity } from '#shared/contracts/terms.ts';
 import type { InteractionTerm } from '#shared/contracts/terms.ts';
 import { without } from '../../model/without.ts';
 import { angstroms, chargeProductOf, lengthOf } from './limit-terms.ts';
+import { AT_60, DISTINCT, SLOW, withTerms } from './limit-start.ts';
+import type { Start } from './limit-start.ts';
 import type { Limit } from './limit-sides.ts';
+import { atomLimits } from './limits-of-atom.ts';
+import { contactLimits } from './limits-of-contact.ts';
+import { profileLimits } from './limits-of-profile.ts';
+import { screenedLimits } from './limits-of-screening.ts';
 
-/** What a limiting form starts from: the case at 60° in the centre of mass, and its wavenumber there, 1/angstrom. */
-export interface Start {
-  body: EstimateRequest;
-  k: number;
-}
-
-const AT_60 = { place: 0 } as const;
 /** q in units of k at 60°. */
 const FAR = 1e5;
 
-function withTerm(body: EstimateRequest, term: InteractionTerm, change = {}): EstimateRequest {
-  return { ...body, interaction: { terms: [term] }, ...change };
-}
-
-/** Two clouds of charge in the same case; how identical particles interfere is another question. */
-const DISTINCT = { identical: false } as const;
-const SLOW = { identical: false, kinematics: 'nonrelativistic' } as const;
+const withTerm = (body: EstimateRequest, term: InteractionTerm, change = {}) =>
+  withTerms(body, [term], change);
 
 /** V0 a kept, the screening length far beyond 1/q: dσ/dΩ differs from Coulomb's by about 2/(q a)². */
 function unscreened({ body, k }: Start, term: InteractionTerm): Limit[] {
@@ -136,6 +130,13 @@ const OF_FORM: Readonly<Record<string, (start: Start, term: InteractionTerm) => 
   woodsSaxon: sharpEdge,
   extendedCharge: pointCharge,
   coulomb: rutherfordLaw,
+  moliere: screenedLimits,
+  krc: screenedLimits,
+  universalIon: screenedLimits,
+  atomicElectron: atomLimits,
+  tabulated: profileLimits,
+  expression: profileLimits,
+  contact: contactLimits,
 };
 
 /** Limits in which a form becomes another one; of a sum of terms none is known. */
