@@ -1,3 +1,4 @@
+import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import type { Term } from '#server/physics/potentials/types.ts';
 
 /** A delta function in r: U(r) = strength · delta(r - R), strength in 1/angstrom. */
@@ -13,6 +14,8 @@ export interface LocalPotential {
   re: (r: number) => number;
   /** Im U; null where every strength is real. */
   im: ((r: number) => number) | null;
+  /** What taking Coulomb tails away leaves in error of r U, 1/angstrom; 0 without tails. */
+  noise: number;
   /** Ascending from 0 to where U has died away, angstrom: jumps, and radii about which U may change. */
   edges: number[];
   /** Radii where U or its derivatives jump. */
@@ -29,6 +32,7 @@ interface Part {
 }
 
 const FADED = 1e-15;
+const TAIL_ROUNDING = 4 * UNIT_ROUNDOFF;
 /** Ranges beyond which what a charge distribution leaves of its tail is not looked for. */
 const MOST_RANGES = 1e4;
 
@@ -98,6 +102,11 @@ export function localPotential(terms: readonly Term[], twoMuOverHbar2: number): 
   return {
     re: sumOf(parts, ({ re }) => re),
     im: parts.some(({ im }) => im !== 0) ? sumOf(parts, ({ im }) => im) : null,
+    noise: active.reduce(
+      (sum, { strength: { re, im }, coulombTail }) =>
+        sum + twoMuOverHbar2 * Math.hypot(re, im) * Math.abs(coulombTail) * TAIL_ROUNDING,
+      0,
+    ),
     edges: reach > 0 ? [0, ...inner.filter((r, i) => r !== inner[i - 1]), reach] : [],
     jumps: jumps.sort((a, b) => a - b),
     shells,

@@ -10,6 +10,8 @@ export interface ResolveOptions {
   share?: number;
   /** Relative error of the values of f. */
   noise?: number;
+  /** Absolute error of the values of f at x, besides. */
+  absoluteNoise?: (x: number) => number;
   maxPanels?: number;
 }
 
@@ -49,9 +51,10 @@ interface Panel {
 }
 
 function look(fs: readonly RealFunction[], a: number, b: number, options: ResolveOptions): Panel {
-  const { weight = () => 1, noise = 4 * UNIT_ROUNDOFF } = options;
+  const { weight = () => 1, noise = 4 * UNIT_ROUNDOFF, absoluteNoise = () => 0 } = options;
   const half = (b - a) / 2;
   const middle = a + half;
+  const besides = Math.max(absoluteNoise(a + 0.1 * half), absoluteNoise(b));
   let size = 0;
   let missed = 0;
   let noisy = true;
@@ -66,7 +69,7 @@ function look(fs: readonly RealFunction[], a: number, b: number, options: Resolv
       tail += Math.abs(c);
     }
     // Sums of sixteen values carry their noise into every coefficient.
-    noisy &&= tail <= 24 * noise * largest;
+    noisy &&= tail <= 24 * (noise * largest + besides);
     size = Math.max(size, largest);
     missed = Math.max(missed, tail);
   }

@@ -19,10 +19,11 @@ const RULE = gaussRule(16);
  * @returns null where U cannot be followed
  */
 export function potentialEdges(potential: LocalPotential, k: number): number[] | null {
-  const { re, im, edges } = potential;
+  const { re, im, edges, noise } = potential;
   const weighted = [(r: number) => r * re(r), ...(im ? [(r: number) => r * im(r)] : [])];
   const found = resolvePanels(weighted, edges, {
     weight: (a, b) => Math.min(k * k * b, 1 / Math.max(a, 1 / k)),
+    absoluteNoise: () => noise,
   });
   return found.resolved ? found.edges : null;
 }

@@ -30,16 +30,15 @@ export interface ImpactAmplitude {
  *
  * @param source F on panels
  * @param k wave number, 1/angstrom
- * @param ofF bound of ∫ b |error of F| db beside what the panels leave out
  * @returns amplitude, angstrom, with a bound of its error, that of q (and `blur`, relative) included
  */
-export function impactAmplitude(source: ImpactPanels, k: number, ofF: number): ImpactAmplitude {
+export function impactAmplitude(source: ImpactPanels, k: number): ImpactAmplitude {
   const { panels, missed, moments } = source;
   const [plain, first, third] = moments;
   const transform = hankelTransform(panels);
   const tolerance = INTERPOLATION * plain;
   const interpolant = chebyshevInterpolant(transform, edgesOf(k, source), tolerance);
-  const fixed = k * (SUM_ROUNDING * plain + 2 * tolerance + missed + ofF);
+  const fixed = k * (SUM_ROUNDING * plain + 2 * tolerance + missed);
   // |x J1(x)| is at most x²/2 and 0.6 x.
   const slope = (q: number) => k * Math.min(0.6 * q * first, (q * q * third) / 2);
   return {

@@ -6,7 +6,7 @@ import type { Complex } from '#server/physics/potentials/types.ts';
 /** A function of the impact parameter on panels, and what its errors add up to. */
 export interface ImpactPanels {
   panels: HankelPanel[];
-  /** Bound of ∫ b |error of F| db from what panels and cut leave out. */
+  /** Bound of ∫ b |error of F| db: noise, and what panels and cut leave out. */
   missed: number;
   /** ∫ b |F| db, ∫ b² |F| db and ∫ b³ |F| db. */
   moments: [number, number, number];
@@ -44,13 +44,13 @@ function momentsOf(panel: HankelPanel): [number, number, number] {
  *
  * @param F finite for b > 0
  * @param edges ascending from 0 to where F has died away, angstrom
- * @param noise relative error of F
+ * @param noise error of F at b
  * @returns null where F turns too often to be followed
  */
 export function impactPanels(
   F: (b: number) => Complex,
   edges: readonly number[],
-  noise: number,
+  noise: (b: number) => number,
 ): ImpactPanels | null {
   // Both parts are asked at the same places.
   const known = new Map<number, Complex>();
@@ -61,7 +61,7 @@ export function impactPanels(
   };
   const found = resolvePanels([(b) => at(b).re, (b) => at(b).im], edges, {
     weight: (_a, b) => b,
-    noise,
+    absoluteNoise: noise,
     maxPanels: MOST_PANELS,
   });
   if (!found.resolved) return null;
@@ -88,10 +88,11 @@ export function impactPanels(
     beyond += part;
   }
   const panels = all.slice(0, count);
+  const ofNoise = panels.reduce((sum, panel) => sum + sumOver(panel, (b) => b * noise(b)), 0);
   const moment = (n: 0 | 1 | 2) => panels.reduce((sum, { parts }) => sum + parts[n], 0);
   return {
     panels,
-    missed: found.missed + beyond,
+    missed: found.missed + beyond + ofNoise,
     moments: [moment(0), moment(1), moment(2)],
   };
 }

@@ -6,7 +6,7 @@ import { exponentialsOf } from '../exponentials.ts';
 import { localPotential } from '../local-potential.ts';
 
 /** ∫ s(√(b² + z²)) dz over the whole line, angstrom, without the Coulomb tail of s. */
-export type LineIntegral = (b: number) => number;
+type LineIntegral = (b: number) => number;
 
 const RULE = gaussRule(16);
 
@@ -33,15 +33,24 @@ function closedLine(term: Term): LineIntegral | null {
   }
 }
 
-/** Points where the straight line at b meets radii, and doubling from b on, where r leaves b. */
+/**
+ * Points between which the straight line at b is summed: where it crosses radii, no two farther apart than b or the first of them, as
+ * r(z) = √(b² + z²) has its branch points at z = ±ib.
+ */
 function crossings(b: number, radii: readonly number[]): number[] {
-  const last = radii.at(-1) ?? 0;
-  if (!(last > b)) return [];
-  const end = Math.sqrt((last - b) * (last + b));
-  const points = radii.filter((r) => r > b).map((r) => Math.sqrt((r - b) * (r + b)));
-  for (let z = b; z < end; z *= 2) points.push(z);
-  points.sort((x, y) => x - y);
-  return [0, ...points];
+  const points = [0];
+  let at = 0;
+  for (const r of radii) {
+    if (!(r > b)) continue;
+    const next = Math.sqrt((r - b) * (r + b));
+    while (next > at + Math.max(b, at)) {
+      at += Math.max(b, at);
+      points.push(at);
+    }
+    at = next;
+    points.push(at);
+  }
+  return points;
 }
 
 function sumOn(f: (z: number) => number, from: number, to: number): number {
@@ -75,17 +84,50 @@ function numericalLine(
   };
 }
 
-/** A line integral, and the same on finer panels where it is no closed form. */
+/** A line integral with a bound of its error, angstrom. */
 export interface Line {
-  at: LineIntegral;
-  finer: LineIntegral | null;
+  at: (b: number) => { value: number; error: number };
+}
+
+/** Rounding of the closed forms, K0 and K1 among them, and of the sums. */
+const ROUNDING = 1e-14;
+/** Shares of ∫ |r s| dr that the panels may miss as polynomials; their sums are exact to twice the degree. */
+const SHARES = [1e-11, 1e-16];
+/** Places at which the sums are compared with those on halved panels, and what differs less than this is good. */
+const PLACES = 10;
+const SAFETY = 4;
+
+/** How far the sums of a panel and of its halves differ beyond noise, as a share, at some places within the reach. */
+function disagreement(
+  coarse: LineIntegral,
+  fine: LineIntegral,
+  noise: LineIntegral,
+  reach: number,
+): number {
+  let worst = 0;
+  for (let i = 0; i < PLACES; i++) {
+    const b = (reach * (0.97 * (i + 0.3)) ** 3) / PLACES ** 3;
+    const size = fine(b);
+    const difference = Math.abs(coarse(b) - size) - noise(b);
+    if (difference > 0) worst = Math.max(worst, difference / Math.abs(size));
+  }
+  return worst;
+}
+
+function withError(line: LineIntegral, noise: LineIntegral, relative: number): Line {
+  return {
+    at: (b) => {
+      const value = line(b);
+      return { value, error: (ROUNDING + relative) * Math.abs(value) + noise(b) };
+    },
+  };
 }
 
 /**
  * Line integral of the shape of one term.
  *
  * Formula: L(b) = ∫_{-∞}^{∞} s(√(b² + z²)) dz; closed for Gaussian, square well, exponential, polarization and sums of Yukawa shapes; else
- *   by sixteen-point sums between the radii within which r s(r) is a polynomial, and doubling steps from z = b on.
+ *   by sixteen-point sums between the radii within which r s(r) is a polynomial, the error from sums on halved panels at some places.
  *
  * @param term local, with a radial function; a Coulomb tail is taken away from it
  * @returns null where the shape cannot be followed
@@ -95,13 +137,29 @@ export interface Line {
  */
 export function lineOf(term: Term): Line | null {
   const closed = closedLine(term);
-  if (closed) return { at: closed, finer: null };
+  if (closed) return withError(closed, () => 0, 0);
   const unit = localPotential([{ ...term, strength: { re: 1, im: 0 } }], 1);
-  if (unit.edges.length === 0) return { at: () => 0, finer: null };
-  const found = resolvePanels([(r) => r * unit.re(r)], unit.edges);
-  if (!found.resolved) return null;
-  return {
-    at: numericalLine(unit.re, found.edges, 1),
-    finer: numericalLine(unit.re, found.edges, 2),
-  };
+  const reach = unit.edges.at(-1) ?? 0;
+  if (!(reach > 0))
+    return withError(
+      () => 0,
+      () => 0,
+      0,
+    );
+  let best: Line | null = null;
+  for (const share of SHARES) {
+    const found = resolvePanels([(r) => r * unit.re(r)], unit.edges, {
+      share,
+      absoluteNoise: () => unit.noise,
+    });
+    if (!found.resolved) break;
+    // ∫ dz/r over the line, for the noise of r s.
+    const noise = (b: number) => 2 * unit.noise * (1 + Math.log1p(reach / b));
+    const at = numericalLine(unit.re, found.edges, 1);
+    const finer = numericalLine(unit.re, found.edges, 2);
+    const relative = SAFETY * disagreement(at, finer, noise, reach);
+    best = withError(at, noise, relative);
+    if (relative <= ROUNDING) break;
+  }
+  return best;
 }

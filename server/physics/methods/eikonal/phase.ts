@@ -1,20 +1,11 @@
-import type { Term } from '#server/physics/potentials/types.ts';
-import type { Complex } from '#server/physics/potentials/types.ts';
+import type { Complex, Term } from '#server/physics/potentials/types.ts';
 import type { MethodInput } from '../method-input.ts';
 import { lineOf, type Line } from './line-integrals.ts';
 
-/** Eikonal phase of the interaction without its Coulomb tail. */
-export interface EikonalPhase {
-  /** chi(b), rad; the imaginary part is positive where particles are removed. */
-  at: (b: number) => Complex;
-  /** Relative error, seen on finer panels at some places, of the sum of the moduli of the terms. */
-  relativeError: (places: readonly number[]) => number;
+/** chi(b), rad, and a bound of its error; the imaginary part is positive where particles are removed. */
+export interface Phase extends Complex {
+  error: number;
 }
-
-/** Rounding of the closed line integrals, K0 and K1 among them. */
-const ROUNDING = 1e-14;
-/** Finer panels differ by less than what they leave. */
-const SAFETY = 4;
 
 interface Part {
   re: number;
@@ -23,19 +14,19 @@ interface Part {
 }
 
 /**
- * Eikonal phase of a sum of terms.
+ * Eikonal phase of a sum of terms without their Coulomb tails.
  *
  * Formula: chi(b) = -(1/2k) ∫ U(√(b² + z²)) dz = -(1/hbar v) ∫ V dz.
  *
  * @param terms local, none of them a shell
- * @returns null where one of them cannot be followed
+ * @returns phase, kept for every b at which it was asked; null where a term cannot be followed
  *
  * Source: R. J. Glauber, in Lectures in Theoretical Physics, vol. 1 (1959), 315.
  */
 export function eikonalPhase(
   terms: readonly Term[],
   { k, twoMuOverHbar2 }: Pick<MethodInput, 'k' | 'twoMuOverHbar2'>,
-): EikonalPhase | null {
+): ((b: number) => Phase) | null {
   const factor = -twoMuOverHbar2 / (2 * k);
   const parts: Part[] = [];
   for (const term of terms) {
@@ -45,34 +36,21 @@ export function eikonalPhase(
     if (line === null) return null;
     parts.push({ re: factor * term.strength.re, im: factor * term.strength.im, line });
   }
-  return {
-    at: (b) => {
-      let re = 0;
-      let im = 0;
-      for (const part of parts) {
-        const length = part.line.at(b);
-        re += part.re * length;
-        im += part.im * length;
-      }
-      return { re, im };
-    },
-    relativeError: (places) => ROUNDING + SAFETY * worstOf(parts, places),
+  const known = new Map<number, Phase>();
+  return (b) => {
+    const found = known.get(b) ?? phaseAt(parts, b);
+    known.set(b, found);
+    return found;
   };
 }
 
-function worstOf(parts: readonly Part[], places: readonly number[]): number {
-  const checked = parts.filter(({ line }) => line.finer !== null);
-  let worst = 0;
-  for (const b of checked.length > 0 ? places : []) {
-    let size = 0;
-    let difference = 0;
-    for (const { re, im, line } of parts) {
-      const strength = Math.hypot(re, im);
-      const length = line.at(b);
-      size += strength * Math.abs(length);
-      if (line.finer) difference += strength * Math.abs(line.finer(b) - length);
-    }
-    if (size > 0) worst = Math.max(worst, difference / size);
+function phaseAt(parts: readonly Part[], b: number): Phase {
+  const sum = { re: 0, im: 0, error: 0 };
+  for (const { re, im, line } of parts) {
+    const { value, error } = line.at(b);
+    sum.re += re * value;
+    sum.im += im * value;
+    sum.error += Math.hypot(re, im) * error;
   }
-  return worst;
+  return sum;
 }
