@@ -126,9 +126,13 @@ function tryPanel(
   let length = 1;
   let residual = 0;
   let known = true;
+  // One component may be the small difference of others: the largest value sets the rounding of all.
+  const largest = values.reduce(
+    (most, f) => f.reduce((m, one) => Math.max(m, Math.abs(one)), most),
+    0,
+  );
   for (let c = 0; c < field.components && finite; c++) {
     const f = values[c] ?? out;
-    const largest = f.reduce((most, one) => Math.max(most, Math.abs(one)), 0);
     const row = Float64Array.from(PROJECTION, (factors) =>
       factors.reduce((sum, factor, i) => sum + factor * (f[i] ?? 0), 0),
     );

@@ -251,13 +251,11 @@ function finishAdded(count: number, first: number, free: RadialWave, added: Radi
 /**
  * The same on a panel that begins at the origin.
  *
- * Formula: as `stepFromOrigin`, with A = -(width wave)² t², B and C the powers of t of t² width² times the field, from t^1 on.
- *
- * @param energy (width · wave)²
+ * Formula: as `stepFromOrigin`, with A, B and C the powers of t of t² width² times what they stand for, from t^1 on.
  */
 export function addedFromOrigin(
   l: number,
-  energy: number,
+  A: Float64Array,
   B: Float64Array,
   C: Float64Array | null,
   free: RadialWave,
@@ -269,27 +267,23 @@ export function addedFromOrigin(
   base[0] = 1;
   let count = 1;
   let quiet = 0;
+  let size = 0;
   while (count < TERMS && quiet < 6) {
-    const two = count - 2;
-    const sum = two >= 0 ? -energy * (base[two] ?? 0) : 0;
-    let sumRe = two >= 0 ? -energy * (re[two] ?? 0) : 0;
-    let sumIm = two >= 0 ? -energy * (im[two] ?? 0) : 0;
-    const last = Math.min(count, FIELD_STRIDE);
-    for (let m = 1; m <= last; m++) {
-      const b = B[m] ?? 0;
-      const c = C?.[m] ?? 0;
-      const whole = (re[count - m] ?? 0) + (base[count - m] ?? 0);
-      sumRe += b * whole - c * (im[count - m] ?? 0);
-      sumIm += b * (im[count - m] ?? 0) + c * whole;
+    let [sum, sumRe, sumIm] = [0, 0, 0];
+    for (let m = Math.min(count, FIELD_STRIDE + 1); m >= 1; m--) {
+      const [a, b, c] = [A[m] ?? 0, B[m] ?? 0, C?.[m] ?? 0];
+      const [f, x, y] = [base[count - m] ?? 0, re[count - m] ?? 0, im[count - m] ?? 0];
+      sum += a * f;
+      sumRe += a * x + b * (x + f) - c * y;
+      sumIm += a * y + b * y + c * (x + f);
     }
     const factor = 1 / (count * (count + 2 * l + 1));
     base[count] = sum * factor;
     re[count] = sumRe * factor;
     im[count] = sumIm * factor;
-    const added1 = Math.abs(sumRe) + Math.abs(sumIm);
-    const share =
-      Math.abs(re[1] ?? 0) + Math.abs(re[2] ?? 0) + Math.abs(im[1] ?? 0) + Math.abs(im[2] ?? 0);
-    const small = Math.abs(sum) * factor < NEGLIGIBLE && added1 * factor < NEGLIGIBLE * share;
+    const more = (Math.abs(sumRe) + Math.abs(sumIm)) * factor;
+    size = Math.max(size, more);
+    const small = Math.abs(sum) * factor < NEGLIGIBLE && more < NEGLIGIBLE * size;
     count += 1;
     quiet = small ? quiet + 1 : 0;
   }

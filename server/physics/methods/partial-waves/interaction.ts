@@ -8,10 +8,12 @@ export const CENTRAL_RE = 0;
 export const CENTRAL_IM = 1;
 export const SPIN_RE = 2;
 export const SPIN_IM = 3;
+/** The central real part without its Coulomb tail, where there is one. */
+export const SHORT = 4;
 
 /** What the radial equation of one energy needs to know; U = (2 mu/hbar²) V in 1/angstrom². */
 export interface RadialInteraction {
-  /** U(r) without shells, Coulomb tail included; 1, 2 or 4 components. */
+  /** U(r) without shells, Coulomb tail included; 1, 2, 4 or 5 components. */
   field: RadialField;
   absorbs: boolean;
   spinOrbit: boolean;
@@ -63,7 +65,7 @@ function reachOf(terms: readonly Term[], rest: (r: number) => number, charge: nu
   // Tails of charges end as Gaussians or exponentials, so nothing comes back once it has gone.
   let last = scale;
   for (let r = scale; r < 400 * scale; r *= 1.05) {
-    if (Math.abs(rest(r) * r) > 1e-15 * size) last = 1.05 * r;
+    if (Math.abs(rest(r) * r) > 4e-15 * size) last = 1.05 * r;
   }
   return Math.max(known, last);
 }
@@ -93,18 +95,25 @@ export function radialInteraction(input: MethodInput): RadialInteraction | Unava
   if (lost) return { unavailable: lost.noFunction ?? `The ${lost.form} form has no V(r).` };
   const absorbs = smooth.some(({ strength }) => strength.im !== 0);
   const spinOrbit = smooth.some((term) => term.spinOrbit === true);
-  const parts = smooth.map(({ strength, v, spinOrbit: spins }) => ({
+  const parts = smooth.map(({ strength, v, spinOrbit: spins, coulombTail, norm }) => ({
     re: twoMuOverHbar2 * strength.re,
     im: twoMuOverHbar2 * strength.im,
     v: v ?? (() => 0),
+    tail: coulombTail,
+    /** A bare point charge has nothing but its tail. */
+    bare: norm === 0 && coulombTail !== 0,
     first: spins === true ? SPIN_RE : CENTRAL_RE,
   }));
-  const components = spinOrbit ? 4 : absorbs ? 2 : 1;
+  const charged = charge !== 0;
+  const components = charged ? 5 : spinOrbit ? 4 : absorbs ? 2 : 1;
   const at = (r: number, out: Float64Array): void => {
     out.fill(0);
-    for (const { re, im, v, first } of parts) {
+    for (const { re, im, v, first, tail, bare } of parts) {
       const shape = v(r);
       out[first] = (out[first] ?? 0) + re * shape;
+      if (charged && first === CENTRAL_RE && !bare) {
+        out[SHORT] = (out[SHORT] ?? 0) + re * (tail === 0 ? shape : shape - tail / r);
+      }
       if (im !== 0) out[first + 1] = (out[first + 1] ?? 0) + im * shape;
     }
   };

@@ -29,6 +29,8 @@ const NOTHING: LowEnergy = {
 const RESONANT = 10;
 const RULE = gaussRule(16);
 const DOUBLINGS = 60;
+/** Ranges after which the square of a tail that falls off as a power has no part in the scattering length. */
+const FAR = 1e5;
 const TINY = 1e-140;
 
 /** The wave of l = 0 at zero energy at the end of its panels. */
@@ -223,7 +225,8 @@ export function lowEnergy(interaction: RadialInteraction): LowEnergy {
         'The potential falls off as 1/r: a scattering length in the usual sense does not exist.',
     };
   }
-  const { field, core, shells, breaks, reach } = interaction;
+  const { field, core, shells, breaks, power, size } = interaction;
+  const reach = power ? Math.max(interaction.reach, FAR * size) : interaction.reach;
   if (!(reach > 0)) return NOTHING;
   try {
     const panels = radialPanels({

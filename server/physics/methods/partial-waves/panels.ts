@@ -5,6 +5,7 @@ import {
 } from '#server/physics/numerics/radial-panels.ts';
 import type { Unavailable } from '../amplitude.ts';
 import type { RadialInteraction } from './interaction.ts';
+import { CENTRAL_RE } from './interaction.ts';
 
 /** The panels of one interaction at one energy. */
 export interface Panels {
@@ -32,12 +33,13 @@ function fieldPanels(
   return radialPanels({ field, start, end, breaks: edges, wave, tolerance: 1e-18 });
 }
 
-/** Bounds of what is felt from each edge outwards. */
+/** Bounds of what is felt from each edge outwards beside a Coulomb tail. */
 function strengthFrom(
-  { edges, count, size }: RadialPanels,
-  { shells }: RadialInteraction,
+  { edges, count, size: sizes }: RadialPanels,
+  { shells, charge }: RadialInteraction,
   k: number,
 ): Float64Array {
+  const size = charge === 0 ? sizes : sizes.filter((_, c) => c !== CENTRAL_RE);
   const from = new Float64Array(count + 1);
   let [slow, fast] = [0, 0];
   for (let p = count - 1; p >= 0; p--) {

@@ -14,7 +14,7 @@ import {
 } from '#server/physics/numerics/radial-steps.ts';
 import { riccatiRatio } from '#server/physics/numerics/riccati-bessel.ts';
 import type { RadialInteraction } from './interaction.ts';
-import { CENTRAL_IM, CENTRAL_RE, SPIN_IM, SPIN_RE } from './interaction.ts';
+import { CENTRAL_IM, CENTRAL_RE, SHORT, SPIN_IM, SPIN_RE } from './interaction.ts';
 
 /** Reference functions at the end of the panels: dimensionless, slopes by k r. */
 export interface Outer {
@@ -56,6 +56,7 @@ export class RadialSolver {
   private readonly total = panelPowers();
   private readonly second = panelPowers();
   private readonly shiftedRe = new Float64Array(FIELD_STRIDE + 2);
+  private readonly shiftedFree = new Float64Array(FIELD_STRIDE + 2);
   private readonly shiftedIm = new Float64Array(FIELD_STRIDE + 2);
   private readonly wave: RadialWave = { re: 0, im: 0, slopeRe: 0, slopeIm: 0 };
   private readonly free: RadialWave = { re: 0, im: 0, slopeRe: 0, slopeIm: 0 };
@@ -226,9 +227,10 @@ export class RadialSolver {
   }
 
   /**
-   * The same for a weak interaction: the free wave and what is added to it are carried side by side, so that beta keeps its digits.
+   * The same for a weak interaction: the free or Coulomb wave and what is added to it are carried side by side, so that beta keeps
+   * its digits.
    *
-   * Formula: u = F~ + y, y'' = [l(l+1)/r² - k²] y + U (F~ + y), F~ the free regular wave.
+   * Formula: u = F~ + y, y'' = [l(l+1)/r² + 2 eta k/r - k²] y + U (F~ + y), F~ the regular wave without U.
    */
   matchWeak(l: number, outer: Outer): Matched | null {
     const { edges, count } = this.panels;
@@ -236,21 +238,27 @@ export class RadialSolver {
     if (from >= count) return null;
     const { k, wave: added, free, total, second } = this;
     const { absorbs } = this.interaction;
-    const third = this.empty;
+    const third = this.third;
+    const charged = this.interaction.charge !== 0;
+    const felt = charged ? SHORT : CENTRAL_RE;
+    third.length = 0;
     const barrier = l * (l + 1);
     added.re = added.im = added.slopeRe = added.slopeIm = 0;
     let p = from;
     if (p > 0) this.begin(p, l, 0, free);
     else {
       const width = edges[1] ?? 0;
-      fieldPowers(this.panels, 0, CENTRAL_RE, 1, 0, 0, total);
+      fieldPowers(this.panels, 0, felt, 1, 0, 0, total);
       this.shift(total, this.shiftedRe);
       if (absorbs) {
         fieldPowers(this.panels, 0, CENTRAL_IM, 1, 0, 0, second);
         this.shift(second, this.shiftedIm);
       }
+      if (charged) fieldPowers(this.panels, 0, CENTRAL_RE, 1, SHORT, -1, third);
+      this.shift(third, this.shiftedFree);
+      this.shiftedFree[2] = (this.shiftedFree[2] ?? 0) - (k * width) ** 2;
       const imaginary = absorbs ? this.shiftedIm : null;
-      addedFromOrigin(l, (k * width) ** 2, this.shiftedRe, imaginary, free, added);
+      addedFromOrigin(l, this.shiftedFree, this.shiftedRe, imaginary, free, added);
       p = 1;
     }
     for (; p <= count; p++) {
@@ -268,8 +276,9 @@ export class RadialSolver {
       if (p === count) break;
       this.rescale(free, added);
       third.length = 0;
+      if (charged) fieldPowers(this.panels, p, CENTRAL_RE, 1, SHORT, -1, third);
       addBarrier(this.panels, p, barrier, k, third);
-      fieldPowers(this.panels, p, CENTRAL_RE, 1, 0, 0, total);
+      fieldPowers(this.panels, p, felt, 1, 0, 0, total);
       if (absorbs) fieldPowers(this.panels, p, CENTRAL_IM, 1, 0, 0, second);
       else second.length = 0;
       stepAdded(third, total, second, free, added);
@@ -282,7 +291,7 @@ export class RadialSolver {
     return { alphaRe, alphaIm, betaRe, betaIm, delay: 0, spread: 1, panels: count - from };
   }
 
-  private readonly empty = panelPowers();
+  private readonly third = panelPowers();
 
   private rescale(free: RadialWave, added: RadialWave): void {
     const size = Math.abs(free.re);

@@ -31,9 +31,9 @@ export interface Scattered {
   left: number;
 }
 
-const NEGLIGIBLE = 1e-16;
+export const NEGLIGIBLE = 1e-16;
 /** Waves that must in turn be negligible. */
-const IN_TURN = 3;
+export const IN_TURN = 3;
 const WEAK = 0.2;
 /** A phase known no better than this is no phase. */
 export const UNRESOLVED = 1e-8;
@@ -49,6 +49,15 @@ export function spinsOf({ spinOrbit }: RadialInteraction, l: number): (-1 | 0 | 
 /** l·sigma */
 export const spinFactor = (l: number, spin: -1 | 0 | 1): number =>
   spin === 0 ? 0 : spin === 1 ? l : -(l + 1);
+
+/** Whether a wave that begins at an edge stays close to a free one. */
+export function isWeak(
+  { spinOrbit, core }: RadialInteraction,
+  { strength }: Panels,
+  edge: number,
+): boolean {
+  return !spinOrbit && core === 0 && (strength[edge] ?? 0) < WEAK;
+}
 
 /** Free functions at x for every l, with their slopes. */
 export function freeOuter(x: number, lMax: number): (l: number) => Outer | null {
@@ -181,10 +190,7 @@ function wavesOf(
   edge: Outer,
 ): Transition[] | Unavailable {
   const waves: Transition[] = [];
-  const weak =
-    !interaction.spinOrbit &&
-    interaction.core === 0 &&
-    (found.strength[solver.start(l, 0)] ?? 0) < WEAK;
+  const weak = isWeak(interaction, found, solver.start(l, 0));
   for (const spin of spinsOf(interaction, l)) {
     const factor = spinFactor(l, spin);
     const matched = weak ? solver.matchWeak(l, edge) : solver.match(l, factor, edge);
