@@ -248,7 +248,9 @@ export function silence({ averages, rates }: PlannedDetector): string {
   if (averages.averaged === null) {
     return 'the cross section diverges inside its acceptance; move it away from the beam or add the screening of the electrons.';
   }
-  if (rates.signal > 0) return 'its dead time leaves no counts.';
+  if (rates.signal > 0) {
+    return 'next to nothing of what is scattered leaves the target and is recorded.';
+  }
   return averages.point.reason ?? 'no particle is scattered there.';
 }
 

@@ -21,7 +21,7 @@ const NORMAL_3: readonly Node[] = [
 const ROOT_10 = Math.sqrt(10);
 const normal5 = (sign: 1 | -1): Node[] => {
   const x = Math.sqrt(5 + sign * ROOT_10);
-  const weight = 3 / (10 * (7 + 2 * sign * ROOT_10));
+  const weight = 3 / (20 * (7 + 2 * sign * ROOT_10));
   return [
     { x, weight },
     { x: -x, weight },

@@ -41,7 +41,7 @@ const spreadOf = (rate: number, recorded: number): number =>
  *
  * @param rates before dead time
  * @param precision relative standard uncertainty p of the net signal, above 0
- * @returns s; null where there is no signal, or none of it is recorded
+ * @returns s; null where there is no signal, none of it is recorded, or no double holds the time
  *
  * Validity: counting statistics only, N large enough for its square root.
  *
@@ -56,7 +56,7 @@ export function timesForPrecision(rates: CountedRates, precision: number): Times
   const sample = spreadOf(signal + background, gross);
   const empty = share === 0 ? 0 : spreadOf(background, blank) / share;
   const time = (sample + empty) / (signal * precision) ** 2;
-  return { signal: time, blank: share * time };
+  return time < Infinity ? { signal: time, blank: share * time } : null;
 }
 
 /** Relative standard uncertainty of the net signal after these times. */

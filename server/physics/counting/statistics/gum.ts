@@ -60,7 +60,7 @@ export function correlationMatrix(
   inputs: readonly GumInput[],
   correlations: readonly Correlation[],
 ): number[][] {
-  const matrix = inputs.map((_, i) => inputs.map((__, j) => (i === j ? 1 : 0)));
+  const matrix = inputs.map((_, i) => inputs.map((__, j): number => (i === j ? 1 : 0)));
   for (const { between, coefficient } of correlations) {
     const [i = -1, j = -1] = between.map((name) => inputs.findIndex((one) => one.name === name));
     if (i < 0 || j < 0 || i === j) {
