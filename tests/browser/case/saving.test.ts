@@ -84,9 +84,13 @@ test('an older version is shown as it was, and restored as a new one', async () 
   await retype(page, energyOf(page), '1 keV');
   await saveNote(page, 'ten times');
   await page.getByText(/version 2, saved/).waitFor();
+  const computedNow = page.getByText(/figures of version 1 are those tallybarn \S+ gave/);
+  expect(await computedNow.count()).toBe(0);
 
   await goTo(`/cases/${id}/versions/1`);
   await page.getByText('Version 1, as it was saved.').waitFor();
+  // The aids are not part of what was saved, and say so.
+  expect(await computedNow.textContent()).toMatch(/computed now from its inputs/);
   expect(await energyOf(page).inputValue()).toBe('100 eV');
   expect(await energyOf(page).isDisabled()).toBe(true);
   await page.getByRole('button', { name: 'Restore as new version' }).click();
