@@ -1,4 +1,5 @@
 import { ArrowRight } from 'lucide-react';
+import { classNames } from '#src/lib/class-names.ts';
 
 /** One thing that differs between two states of something, in words and units. */
 export interface Difference {
@@ -8,6 +9,9 @@ export interface Difference {
   after: string;
 }
 
+/** Sentences read better plain, and each on lines of its own. */
+const isLong = (text: string): boolean => text.length > 80;
+
 /** Field by field, in words and units: what it was, what it is. */
 export function DifferenceTable({ differences }: { differences: readonly Difference[] }) {
   return (
@@ -16,9 +20,19 @@ export function DifferenceTable({ differences }: { differences: readonly Differe
         <div key={key} className="grid gap-x-4 py-1.5 sm:grid-cols-[13rem_1fr]">
           <dt className="text-sm text-muted">{label}</dt>
           <dd className="min-w-0">
-            <span className="text-muted line-through decoration-1">{before}</span>{' '}
-            <ArrowRight aria-label="becomes" className="mx-1 inline size-4 text-muted" />{' '}
-            <span className="font-semibold">{after}</span>
+            <span
+              className={classNames(
+                'text-muted line-through decoration-1',
+                isLong(before) && 'mb-1 block max-w-prose',
+              )}
+            >
+              {before}
+            </span>{' '}
+            <ArrowRight
+              aria-label="becomes"
+              className={classNames('inline size-4 text-muted', isLong(before) ? 'mr-1' : 'mx-1')}
+            />{' '}
+            <span className={isLong(after) ? 'max-w-prose' : 'font-semibold'}>{after}</span>
           </dd>
         </div>
       ))}

@@ -11,7 +11,7 @@ import { interactionDifferences } from '#src/lib/interaction-words.ts';
 import { interactionHref } from '#src/lib/library.ts';
 import { say } from '#src/lib/toasts.ts';
 import { useEditing } from '../editing/editor-context.ts';
-import { takeInteraction } from '../model/citation.ts';
+import { outsideValidity, takeInteraction } from '../model/citation.ts';
 import { useCited } from './use-cited.ts';
 
 interface NewerProps {
@@ -89,7 +89,20 @@ function Newer({ cited, newest }: NewerProps) {
   );
 }
 
-/** What became of the interaction since the case took it: a newer version, or its retirement. */
+function Outside({ cited }: { cited: InteractionVersion }) {
+  const { draft } = useEditing();
+  const words = outsideValidity(draft.document, cited.validity);
+  if (words.length === 0) return null;
+  return (
+    <Notice tone="attention" title={`This beam is not one “${cited.name}” was published for.`}>
+      {words.map((line) => (
+        <p key={line}>{line}</p>
+      ))}
+    </Notice>
+  );
+}
+
+/** What became of the interaction since the case took it, and whether the beam still is one it was published for. */
 export function CitationNotices() {
   const found = useCited();
   if (!found?.newest) return null;
@@ -105,6 +118,7 @@ export function CitationNotices() {
       {!retired && cited && cited.version.n < newest.newestVersion && (
         <Newer cited={cited} newest={newest} />
       )}
+      {cited && <Outside cited={cited} />}
     </>
   );
 }

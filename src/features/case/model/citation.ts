@@ -1,7 +1,10 @@
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { Citation } from '#shared/contracts/estimates.ts';
-import type { Example, InteractionVersion } from '#shared/contracts/library.ts';
+import type { Example, InteractionVersion, ValidityRange } from '#shared/contracts/library.ts';
+import { toInternal } from '#shared/units/quantity.ts';
+import { energyRangeText, speciesText } from '#src/lib/interaction-words.ts';
 import { same } from '#src/lib/same.ts';
+import { projectileText, quantityText } from '#src/lib/term-words.ts';
 import { DEFAULT_DOCUMENT } from './default-document.ts';
 import type { Draft } from './editor.ts';
 import { isAtOrBelow, withoutEntered } from './entered.ts';
@@ -47,6 +50,28 @@ export function documentWith(taken: InteractionVersion): CaseDocument {
     goldenRule: { theta: 60 },
     ...(units && { units }),
   };
+}
+
+/** Where the beam of a case lies outside what a version says it is meant for, in words; empty where it does not. */
+export function outsideValidity(
+  { projectile, energy }: Pick<CaseDocument, 'projectile' | 'energy'>,
+  validity: ValidityRange,
+): string[] {
+  const { species } = validity;
+  const { from, to } = validity.energy ?? {};
+  const meant: readonly string[] = species ?? [];
+  const own = 'species' in projectile ? projectile.species : projectile.nuclide;
+  const at = toInternal(energy, 'energy');
+  const low = from !== undefined && at < toInternal(from, 'energy');
+  const high = to !== undefined && at > toInternal(to, 'energy');
+  return [
+    ...(species !== undefined && !meant.includes(own)
+      ? [`It is meant for ${speciesText(validity)}; this beam is ${projectileText(projectile)}.`]
+      : []),
+    ...(low || high
+      ? [`It is meant for ${energyRangeText(validity)}; this beam has ${quantityText(energy)}.`]
+      : []),
+  ];
 }
 
 /** The collision of a case, to be kept with what is published from it. */
