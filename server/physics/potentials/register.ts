@@ -12,6 +12,7 @@ import { krc } from './krc.ts';
 import { moliere } from './moliere.ts';
 import { polarization } from './polarization.ts';
 import { screenedCoulomb } from './screened-coulomb.ts';
+import { spinOrbit } from './spin-orbit.ts';
 import { squareWell } from './square-well.ts';
 import { tabulated } from './tabulated.ts';
 import type { Form } from './types.ts';
@@ -40,6 +41,7 @@ export const FORMS: readonly Form[] = [
   expression,
   contactByName,
   hardSphere,
+  spinOrbit,
 ];
 
 const byKey = new Map(FORMS.map((form) => [form.key, form]));

@@ -56,6 +56,7 @@ function termOf(r: readonly number[], V: readonly number[], tail: TableTail): Te
     tail: coulomb !== 0 ? 'coulomb' : exponential ? 'exponential' : 'compact',
     reach: coulomb !== 0 ? null : exponential ? exponentialTailPanels(exponential).reach : R,
     breakpoints: start > 0 ? [start, R] : [R],
+    knots: table.pieces.map((piece) => piece.start).filter((x) => x > 0),
     interpolationDoubt: (q) => Math.abs(closed(q).value - lines(q).value),
   };
 }

@@ -25,6 +25,7 @@ describe('register of forms', () => {
       'expression',
       'contact',
       'hardSphere',
+      'spinOrbit',
     ]);
     for (const form of FORMS) expect(formByKey(form.key)).toBe(form);
     expect(formByKey('toString')).toBeUndefined();

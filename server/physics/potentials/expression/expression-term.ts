@@ -225,5 +225,6 @@ export function expressionTerm(
       compiled,
       radii.branches.filter((r) => r <= end),
     ),
+    knots: radii.branches.filter((r) => r > 0 && r <= end),
   };
 }
