@@ -5,6 +5,7 @@ import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { Estimate } from '#shared/contracts/estimates.ts';
 import { computeEstimate } from '#server/modules/estimates/compute-estimate.ts';
 import { presentForm } from '#server/modules/forms/present-forms.ts';
+import { electronScatteringFactor } from '#server/physics/tables/electron-scattering.ts';
 import { FORMS } from '#server/physics/potentials/register.ts';
 import { latexOf } from '#src/features/case/aids/model/latex.ts';
 import type { Meaning } from '#src/features/case/aids/model/meaning-amplitude.ts';
@@ -100,6 +101,39 @@ describe('what a figure is', () => {
       'Source',
     ]);
     expect(meaning.facts[0]?.text).toContain('b per target particle');
+  });
+
+  test('of electrons on atoms says what tables of bare Gaussians lack, as the engine has it', () => {
+    const at100keV = { kinematics: 'relativistic', energy: Q(100, 'keV') };
+    const figuresOf = (terms: object[]) => {
+      const from = document({ ...at100keV, interaction: { terms } });
+      const born = computeEstimate(from).methods.born1;
+      if (!born || 'unavailable' in born) throw new Error('no figures');
+      const { elastic, momentumTransfer } = born;
+      if ('divergent' in elastic || 'divergent' in momentumTransfer) throw new Error('divergent');
+      return [elastic.value, momentumTransfer.value] as const;
+    };
+    const added = ['C', 'Al', 'Cu', 'Au'].map((element) => {
+      const { a, b } = electronScatteringFactor(element);
+      const bells = a.map((height, i) => {
+        const width = Math.sqrt(b[i] ?? NaN) / (2 * Math.PI);
+        const depth = (-3.80998212 * 4 * height) / (Math.sqrt(Math.PI) * width ** 3);
+        return { form: 'gaussian', V0: Q(depth, 'eV'), a: Q(width, 'angstrom') };
+      });
+      const [whole, bare] = [figuresOf([{ form: 'atomicElectron', element }]), figuresOf(bells)];
+      return [100 * (whole[0] / bare[0] - 1), whole[1] / bare[1]] as const;
+    });
+    expect(added.map(([share]) => share.toFixed(1))).toEqual(['0.8', '1.3', '2.4', '3.2']);
+    expect(added.map(([, times]) => times.toFixed(1))).toEqual(['2.3', '2.6', '2.8', '3.1']);
+
+    const terms = [{ form: 'atomicElectron', element: 'C' }];
+    const from = document({ ...at100keV, interaction: { terms } });
+    const given = { estimate: computeEstimate(from), document: from, forms };
+    const said = (kind: 'elastic' | 'momentumTransfer' | 'absorption') =>
+      meaningOfFigure(kind, given)?.facts.find(({ name }) => name === 'Against tables')?.text;
+    expect(said('elastic')).toContain('0.8 % for C, 1.3 % for Al, 2.4 % for Cu and 3.2 % for Au');
+    expect(said('momentumTransfer')).toContain('doubles to triples');
+    expect(said('absorption')).toBeUndefined();
   });
 
   test('that diverges says why in place of an error', () => {
