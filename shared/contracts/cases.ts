@@ -1,14 +1,15 @@
 import { z } from 'zod';
 import { engineSchema, estimateBodySchema, estimateSchema } from './estimates.ts';
 import { pageQuerySchema } from './list.ts';
+import { runPlanBodySchema, runPlanSchema } from './run-plans.ts';
 import { requiredTextSchema, textSchema } from './text.ts';
 
 export const CURRENT_FORMAT = 1;
 
-/** The saved document: the body of an estimate plus `format`. A `runPlan` is refused until run plans exist. */
+/** The saved document: the body of an estimate plus `format`, and with a run the body of its plan. */
 export const caseDocumentSchema = estimateBodySchema.extend({
   format: z.literal(CURRENT_FORMAT).optional(),
-  runPlan: z.never('Run plans cannot be saved in this version; leave runPlan out.').optional(),
+  runPlan: runPlanBodySchema.optional(),
 });
 export type CaseDocument = z.infer<typeof caseDocumentSchema>;
 
@@ -93,7 +94,7 @@ export const versionDetailSchema = z
     n: z.int(),
     title: z.string(),
     document: caseDocumentSchema,
-    result: z.object({ estimate: estimateSchema }),
+    result: z.object({ estimate: estimateSchema, runPlan: runPlanSchema.optional() }),
     engine: engineSchema,
     hash: z.string(),
     author,

@@ -1,8 +1,10 @@
 import { defineEntity } from '@mikro-orm/core';
 import type { InferEntity } from '@mikro-orm/core';
-import type { Status } from '#shared/contracts/cases.ts';
+import type { Status, VersionDetail } from '#shared/contracts/cases.ts';
 import type { Estimate } from '#shared/contracts/estimates.ts';
 import type { StoredDocument } from '#server/documents/upcast.ts';
+
+type VersionResult = VersionDetail['result'];
 
 /** One saved state of a case: document, result as shown, engine, and the hash over these three. Append-only. */
 export const CaseVersion = defineEntity({
@@ -16,7 +18,7 @@ export const CaseVersion = defineEntity({
     tags: p.array().columnType('text[]').$type<string[]>(),
     format: p.integer(),
     document: p.json<StoredDocument>().columnType('jsonb'),
-    result: p.json<{ estimate: Estimate }>().columnType('jsonb'),
+    result: p.json<VersionResult>().columnType('jsonb'),
     engine: p.json<Estimate['engine']>().columnType('jsonb'),
     hash: p.text(),
     authorId: p.uuid(),

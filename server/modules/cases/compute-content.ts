@@ -2,16 +2,18 @@ import { CURRENT_FORMAT } from '#shared/contracts/cases.ts';
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { EntityManager } from '@mikro-orm/postgresql';
 import type { Estimate } from '#shared/contracts/estimates.ts';
-import { DomainError } from '#shared/errors.ts';
+import type { RunPlan } from '#shared/contracts/run-plans.ts';
 import type { Compute } from '#server/compute/compute.ts';
 import { canonicalHash } from '#server/documents/canonical-hash.ts';
 import { estimate } from '#server/modules/estimates/estimate.ts';
 import { withSlot } from '#server/modules/estimates/in-flight.ts';
+import type { Place } from './document-faults.ts';
+import { ofEstimate, ofRunPlan, withinDocument } from './document-faults.ts';
 
 /** What a version keeps for ever, and the hash over it. */
 export interface VersionContent {
   document: CaseDocument & { format: number };
-  result: { estimate: Estimate };
+  result: { estimate: Estimate; runPlan?: RunPlan };
   engine: Estimate['engine'];
   hash: string;
 }
@@ -24,28 +26,33 @@ export interface ComputeContext {
   signal?: AbortSignal;
 }
 
-/** A fault of the document, told by its place in what was sent: the document is a member there. */
-export function withinDocument(fault: unknown): unknown {
-  if (!(fault instanceof DomainError) || fault.code !== 'invalidInput') return fault;
-  const given = fault.details.errors ?? [{ path: '', message: fault.message }];
-  const errors = given.map(({ path, message }) => ({ path: `/document${path}`, message }));
-  const [first, ...rest] = errors;
-  const more = rest.length > 0 ? ` (and ${rest.length} more)` : '';
-  const message = first ? `${first.path}: ${first.message}${more}` : fault.message;
-  return new DomainError(fault.code, message, { ...fault.details, errors });
+/** One computation of the person, its faults told by their place in the document. */
+async function counted<T>(
+  { actor }: ComputeContext,
+  place: Place,
+  work: () => Promise<T>,
+): Promise<T> {
+  return withSlot(actor.id, work).catch((fault: unknown) => {
+    throw withinDocument(fault, place);
+  });
 }
 
-/** Computes a document by the one way an estimate is computed, warnings included, and seals what came out. */
+/** Computes a document by the one way an estimate and a run plan are computed, warnings included, and seals what came out. */
 export async function computeContent(
   sent: CaseDocument,
   context: ComputeContext,
 ): Promise<VersionContent> {
   const document = { ...sent, format: CURRENT_FORMAT } as const;
-  const work = () => estimate(document, context);
-  const answer = await withSlot(context.actor.id, work).catch((fault: unknown) => {
-    throw withinDocument(fault);
-  });
-  const result = { estimate: answer };
+  const { runPlan: planned, ...body } = document;
+  const answer = await counted(context, ofEstimate, () => estimate(body, context));
+  const result: VersionContent['result'] = { estimate: answer };
+  if (planned) {
+    const { compute, signal } = context;
+    const request = { ...planned, estimate: body };
+    result.runPlan = await counted(context, ofRunPlan, () =>
+      compute('runPlan', request, signal ? { signal } : {}),
+    );
+  }
   const { engine } = answer;
   return { document, result, engine, hash: canonicalHash({ document, result, engine }) };
 }

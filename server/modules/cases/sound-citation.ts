@@ -1,7 +1,7 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import { requireCitation } from '#server/modules/library/require-citation.ts';
-import { withinDocument } from './compute-content.ts';
+import { withinDocument } from './document-faults.ts';
 
 /** A version that says where its interaction is from must have it from there. */
 export async function requireSoundCitation(

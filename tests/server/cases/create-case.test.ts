@@ -130,7 +130,7 @@ describe('POST /api/cases', () => {
   });
 
   it.each([
-    ['a run plan', { runPlan: { method: 'born1' } }, '/document/runPlan'],
+    ['a run plan without a beam', { runPlan: { detectors: [] } }, '/document/runPlan/beam'],
     ['a format of the future', { format: 2 }, '/document/format'],
     ['an unknown key', { potentials: [] }, '/document/potentials'],
     ['a wrong unit', { energy: { value: 1, unit: 'angstrom' } }, '/document/energy/unit'],

@@ -1,4 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { canonicalHash } from '#server/documents/canonical-hash.ts';
+import { versionDetailSchema } from '#shared/contracts/cases.ts';
 import type { Case, CaseDetail, VersionDetail } from '#shared/contracts/cases.ts';
 import { createTestApp } from '#tests/support/test-app.ts';
 import type { Agent, TestApp } from '#tests/support/test-app.ts';
@@ -110,11 +112,38 @@ describe('POST /api/cases/:id/versions', () => {
     }).expect(422);
     const { errors } = refused.body as { errors: { path: string }[] };
     expect(errors.map(({ path }) => path)).toEqual(['/document/angles/values/1']);
-    const plan = { document: { ...atEnergy(100), runPlan: {} } };
-    expect((await save(agent, filed.id, etag, plan).expect(422)).body).toMatchObject({
-      errors: [{ path: '/document/runPlan' }],
-    });
     await save(agent, filed.id, etag).expect(201);
+  });
+
+  it('keeps a run plan with the answer to it, and points below /document/runPlan at what is wrong with one', async () => {
+    const { filed, etag } = await fileCase(agent);
+    const beam = { particlesPerSecond: 1e9 };
+    const foil = { arealDensity: { value: 1e15, unit: '1/cm2' } };
+    const detector = { name: 'D1', angle: 30, solidAngle: 1e-3 };
+    const planned = (changes: object) => ({
+      document: { ...atEnergy(100), runPlan: { beam, foil, detectors: [detector], ...changes } },
+    });
+    const faults = async (changes: object) =>
+      (await save(agent, filed.id, etag, planned(changes)).expect(422)).body as {
+        errors: { path: string }[];
+      };
+    const wide = [{ ...detector, solidAngle: 13 }];
+    expect((await faults({ detectors: wide })).errors).toMatchObject([
+      { path: '/document/runPlan/detectors/0/solidAngle' },
+    ]);
+    const electric = { current: { value: 1, unit: 'nA' } };
+    expect((await faults({ beam: electric })).errors).toMatchObject([
+      { path: expect.stringMatching(/^\/document\/runPlan\/beam/) as unknown },
+    ]);
+    await save(agent, filed.id, etag, planned({})).expect(201);
+    const answer = await agent.get(`/api/cases/${filed.id}/versions/2`).expect(200);
+    const version = versionDetailSchema.parse(answer.body);
+    expect(version.document.runPlan).toEqual({ beam, foil, detectors: [detector] });
+    expect(version.result.runPlan?.detectors[0]).toMatchObject({ name: 'D1', solidAngle: 1e-3 });
+    const alone = { ...planned({}).document.runPlan, estimate: atEnergy(100) };
+    const direct = await agent.post('/api/run-plans').send(alone).expect(200);
+    expect(version.result.runPlan).toEqual(direct.body);
+    expect(version.hash).toBe(canonicalHash(version));
   });
 
   it('tells the trail who saved what over what', async () => {
