@@ -1,51 +1,14 @@
-import { closestApproach, nuclearReach } from './counting/closest-approach.ts';
-import { BEYOND_TOUCHING } from './counting/closest-approach.ts';
-import { exitCosine } from './counting/slab.ts';
 import { spoken } from './counting/verdict.ts';
-import { labToCm } from './kinematics/frames.ts';
+import { detectorWarnings } from './plan-detector-warnings.ts';
+import { caution, degrees, info, ofDetectors, percent, targetPath } from './plan-words.ts';
+import type { RunPlanResult } from './run-plan.ts';
 import { nuclide } from './tables/nuclides.ts';
-import type { PlannedDetector, RunPlanResult } from './run-plan.ts';
 import type { Warning } from './warning.ts';
 
-const DEGREE = Math.PI / 180;
 const SINGLE = 0.1;
-const DEAD = 0.1;
 /** Highland's angle against a third of the acceptance, or a fifth of the scattering angle. */
 const OF_ACCEPTANCE = 3;
 const OF_ANGLE = 5;
-
-const percent = (fraction: number) => `${Number((100 * fraction).toPrecision(2))} %`;
-const degrees = (radians: number) => `${Number((radians / DEGREE).toPrecision(3))} degrees`;
-const caution = (code: string, message: string, path?: string): Warning => ({
-  code,
-  level: 'caution',
-  message,
-  ...(path !== undefined && { path }),
-});
-const info = (code: string, message: string, path?: string): Warning => ({
-  code,
-  level: 'info',
-  message,
-  ...(path !== undefined && { path }),
-});
-const listed = (names: readonly string[]): string =>
-  names.length > 4
-    ? `${names.slice(0, 3).join(', ')} and ${names.length - 3} more`
-    : names.join(', ');
-const targetPath = ({ plan }: RunPlanResult) => (plan.target.kind === 'gas' ? '/gas' : '/foil');
-
-/** One warning for all detectors it concerns. */
-function ofDetectors(
-  { detectors }: RunPlanResult,
-  concerns: (one: PlannedDetector) => boolean,
-  warn: (names: string, first: PlannedDetector, path: string) => Warning,
-): Warning[] {
-  const found = detectors.filter(concerns);
-  const [first] = found;
-  if (!first) return [];
-  const names = listed(found.map(({ detector }) => detector.name));
-  return [warn(names, first, `/detectors/${detectors.indexOf(first)}`)];
-}
 
 function collisions(result: RunPlanResult): Warning[] {
   const { collisions: n, collisionsBeyond: beyond } = result;
@@ -139,95 +102,6 @@ function energyLossChanges(result: RunPlanResult): Warning[] {
   );
 }
 
-function grazing(result: RunPlanResult): Warning[] {
-  const { target } = result.plan;
-  if (target.kind === 'gas') return [];
-  return ofDetectors(
-    result,
-    ({ detector: { cone, side } }) =>
-      Math.abs(exitCosine(cone.theta, 0, side * target.tilt)) < Math.sin(DEGREE),
-    (names, _, path) =>
-      caution(
-        'inPlaneOfFoil',
-        `${names} stands in the plane of the foil, within a degree: what reaches it has crossed the foil along its whole width. Tilt the foil by 30 to 45 degrees.`,
-        `${path}/angle`,
-      ),
-  );
-}
-
-function deadTimes(result: RunPlanResult): Warning[] {
-  const { dutyFactor } = result.plan.beam;
-  return [
-    ...ofDetectors(
-      result,
-      ({ deadTimeFraction }) => deadTimeFraction > DEAD,
-      (names, first, path) =>
-        caution(
-          'deadTime',
-          `${names} misses ${percent(first.deadTimeFraction)} of the events by its dead time: the correction rests on the model of the counter. Lower the current or the solid angle until less than a tenth is lost.`,
-          `${path}/deadTime`,
-        ),
-    ),
-    ...ofDetectors(
-      result,
-      ({ rates: { signal, background, deadTime } }) =>
-        deadTime.model === 'paralysable' && ((signal + background) / dutyFactor) * deadTime.tau > 1,
-      (names, _, path) =>
-        caution(
-          'paralysed',
-          `${names} is past the largest rate it can record: with more beam it counts less, and one recorded rate belongs to two true ones.`,
-          `${path}/deadTime`,
-        ),
-    ),
-    ...ofDetectors(
-      result,
-      ({ deadTimeFraction, detector }) =>
-        dutyFactor < 1 && detector.deadTime.tau > 0 && deadTimeFraction > 0.01,
-      (names) =>
-        caution(
-          'pulsedBeam',
-          `The rates of ${names} while the beam is on are ${Number((1 / dutyFactor).toPrecision(3))} times their means, and dead time acts on those. If a pulse is shorter than the dead time, at most one event of it is counted and no formula for a steady beam holds.`,
-          '/beam/dutyFactor',
-        ),
-    ),
-  ];
-}
-
-/** Mass number of what the projectile meets: that of the target of the estimate, or of the scatterer. */
-function massNumberOf({ plan }: RunPlanResult): number | null {
-  const { target } = plan.problem;
-  if (target.massNumber !== null) return target.massNumber;
-  const atom = plan.target.atoms.find(
-    ({ name, symbol }) => name === plan.target.scatterer || symbol === plan.target.scatterer,
-  );
-  return atom ? Math.round(atom.molarMass) : null;
-}
-
-function nuclearForces(result: RunPlanResult): Warning[] {
-  const { problem } = result.plan;
-  const { projectile, target, collision } = problem;
-  const product = projectile.charge * target.charge;
-  const a1 = projectile.massNumber;
-  const a2 = massNumberOf(result);
-  if (!(product > 0) || a1 === null || a2 === null) return [];
-  const reach = nuclearReach(a1, a2);
-  const nearest = ({ detector }: PlannedDetector) => {
-    const ways = labToCm(detector.cone.theta, collision.frame);
-    const furthest = Math.max(0, ...ways.map(({ thetaCm }) => thetaCm));
-    return furthest > 0 ? closestApproach(product, collision.energyCm, furthest) : Infinity;
-  };
-  return ofDetectors(
-    result,
-    (one) => nearest(one) < reach,
-    (names, first, path) =>
-      caution(
-        'nuclearForces',
-        `Seen at ${names} the nuclei come as near as ${(nearest(first) * 1e5).toPrecision(3)} fm, within ${(reach * 1e5).toPrecision(3)} fm where nuclear forces begin (radii and ${BEYOND_TOUCHING} fm): the scattering is no longer that of two charges alone.`,
-        `${path}/angle`,
-      ),
-  );
-}
-
 function otherElements(result: RunPlanResult): Warning[] {
   const { target, contributions } = result.plan;
   const own = target.scatterer.split('-')[0] ?? '';
@@ -274,21 +148,6 @@ function whoseNuclei(result: RunPlanResult): Warning[] {
   ];
 }
 
-function silent(result: RunPlanResult): Warning[] {
-  return ofDetectors(
-    result,
-    ({ averages }) => averages.averaged === null || averages.averaged.value === 0,
-    (names, { averages }, path) =>
-      caution(
-        averages.averaged === null ? 'divergesInAcceptance' : 'outOfReach',
-        averages.averaged === null
-          ? `The cross section diverges inside the acceptance of ${names}: there is no rate. Move the detector away from the beam, or add the screening of the electrons.`
-          : `${names} sees no scattered particle. ${averages.point.reason ?? ''}`.trim(),
-        `${path}/angle`,
-      ),
-  );
-}
-
 function hopeless({ totalTime, plan }: RunPlanResult): Warning[] {
   const year = 365.25 * 86_400;
   if (totalTime === null || totalTime <= year) return [];
@@ -312,12 +171,9 @@ export function planWarnings(result: RunPlanResult): Warning[] {
     ...collisions(result),
     ...matter(result),
     ...energyLossChanges(result),
-    ...grazing(result),
-    ...deadTimes(result),
-    ...nuclearForces(result),
+    ...detectorWarnings(result),
     ...otherElements(result),
     ...whoseNuclei(result),
-    ...silent(result),
     ...hopeless(result),
     PLANNING_ONLY,
   ];

@@ -5,7 +5,7 @@ import { HIGHLAND_RANGE, highlandAngle } from './counting/highland.ts';
 import { kinematicFactor, labToCm } from './kinematics/frames.ts';
 import { twoBody } from './kinematics/two-body.ts';
 import type { Particle, Problem } from './problem.ts';
-import type { Plan } from './run-plan.ts';
+import type { Plan } from './plan.ts';
 
 /** What one passage through the target does to the beam. */
 export interface TargetChecks {

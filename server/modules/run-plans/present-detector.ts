@@ -9,8 +9,9 @@ import { characteristicLimits } from '#server/physics/counting/statistics/iso119
 import { currieLimits } from '#server/physics/counting/statistics/currie.ts';
 import type { Blank } from '#server/physics/counting/statistics/currie.ts';
 import { recordedOf } from '#server/physics/counting/times.ts';
-import type { PlannedDetector as Planned, RunPlanResult } from '#server/physics/run-plan.ts';
-import { silence } from '#server/physics/run-plan.ts';
+import type { PlannedDetector as Planned } from '#server/physics/planned-detector.ts';
+import { silence } from '#server/physics/planned-detector.ts';
+import type { RunPlanResult } from '#server/physics/run-plan.ts';
 
 const PER_CM2 = 1e16;
 const DEGREE = Math.PI / 180;

@@ -6,7 +6,7 @@ import {
   halfAngleOfDisc,
   solidAngleOfCone,
 } from '#server/physics/counting/cone.ts';
-import type { PlanDetector } from '#server/physics/run-plan.ts';
+import type { PlanDetector } from '#server/physics/plan.ts';
 
 const DEGREE = Math.PI / 180;
 

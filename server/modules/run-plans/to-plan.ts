@@ -5,12 +5,7 @@ import { Faults } from '#server/modules/estimates/faults.ts';
 import { toProblem } from '#server/modules/estimates/to-problem.ts';
 import { particlesOfCurrent } from '#server/physics/counting/beam.ts';
 import type { Particle, Problem } from '#server/physics/problem.ts';
-import type {
-  Plan,
-  PlanContribution,
-  PlannedCollision,
-  PlanTarget,
-} from '#server/physics/run-plan.ts';
+import type { Plan, PlanContribution, PlannedCollision, PlanTarget } from '#server/physics/plan.ts';
 import { toDetectors } from './to-detectors.ts';
 import { toTargetOfRun } from './to-target.ts';
 

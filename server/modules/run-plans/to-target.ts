@@ -4,7 +4,7 @@ import { isArealMassUnit } from '#shared/units/vocabulary.ts';
 import type { Faults } from '#server/modules/estimates/faults.ts';
 import { AVOGADRO } from '#server/physics/constants/codata2022.ts';
 import type { Particle } from '#server/physics/problem.ts';
-import type { PlanTarget, TargetAtom } from '#server/physics/run-plan.ts';
+import type { PlanTarget, TargetAtom } from '#server/physics/plan.ts';
 import type { Formula } from '#server/physics/tables/formula.ts';
 import { parseFormula } from '#server/physics/tables/formula.ts';
 import { gasUnitsPerVolume, unitsPerVolume } from '#server/physics/tables/materials.ts';

@@ -20,9 +20,11 @@ export interface Averages {
 const ENERGY_STEP = 1e-3;
 const ANGLE_STEP = (0.05 * Math.PI) / 180;
 
-/** What the next order of an average leaves out, judged by the size of its correction. */
-const leftOut = (whole: number, plain: number): number =>
-  plain === 0 ? 0 : ((whole - plain) / plain) ** 2 * plain;
+/** What the next order of an average leaves out, judged by the size of its correction, and never more than that. */
+function leftOut(whole: number, plain: number): number {
+  const correction = Math.abs(whole - plain);
+  return plain === 0 ? correction : Math.min(1, correction / plain) * correction;
+}
 
 /**
  * dσ/dΩ as a detector sees it: averaged over its acceptance, the energies of the beam and the depth of the target, and what is lost on the way.
