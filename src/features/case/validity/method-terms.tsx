@@ -32,6 +32,11 @@ function limitText(value: number): string {
   return size >= 1e-3 && size < 1e6 ? String(Number(value.toPrecision(3))) : formatNumber(value, 1);
 }
 
+/** A residual that is a rounding needs one digit, one that says something has three. */
+function residualText(value: number): string {
+  return value < 1e-3 ? brief(value) : formatNumber(value, 3);
+}
+
 function bound({ most, least }: Condition, unit: string): string {
   if (most !== undefined) return `should stay below ${limitText(most)}${unit}`;
   return least === undefined ? 'reported only' : `should stay above ${limitText(least)}${unit}`;
@@ -87,7 +92,7 @@ function MethodTerms({ method, result }: ComputedMethod) {
       )}
       {opticalTheorem && (
         <p className="py-1">
-          optical theorem <span className="font-mono">{brief(opticalTheorem.residual)}</span>
+          optical theorem <span className="font-mono">{residualText(opticalTheorem.residual)}</span>
           <span className="block text-xs text-muted">
             (4π/k) Im f(0) less elastic, integrated over angle, and absorption: relative to the
             total

@@ -65,6 +65,7 @@ function Waves({ estimate, dimmed, fileName }: PartsProps) {
 /** The two planes of complex numbers, side by side where there is room. */
 function Planes(props: PartsProps) {
   const waves = wavesOf(props.estimate);
+  if (waves.length === 0) return <AmplitudePlane {...props} />;
   return (
     <div className="grid grid-cols-[minmax(0,1fr)] items-start gap-4 @3xl:grid-cols-[repeat(2,minmax(0,1fr))]">
       <AmplitudePlane {...props} />

@@ -3,34 +3,39 @@ import { fullDigits } from '#shared/units/format.ts';
 import type { Curve } from '../../model/curves.ts';
 import { quotient, ratioAxis } from './overlay.ts';
 
-/** The exact curve of a case and of its opposite, with their ratio below. */
+/** The curves of a case and of its opposite by one method, with their ratio below. */
 export interface BothSigns {
-  /** Whether there is an exact curve of both. */
-  exact: boolean;
+  /** As the method is called in the tables. */
+  name: string;
   series: PlotSeries[];
-  panel: PlotPanel | null;
+  panel: PlotPanel;
 }
 
-const EXACT = 'partialWaves';
+/** Methods that know the sign, the best first. */
+const KNOWING = ['partialWaves', 'eikonal', 'born2'];
 
 function pairs({ points }: Curve): [number, number | null][] {
   return points.map(({ theta, dcs }) => [theta, dcs]);
 }
 
-export function signSeries(given: readonly Curve[], turned: readonly Curve[]): BothSigns {
-  const a = given.find(({ key }) => key === EXACT);
-  const b = turned.find(({ key }) => key === EXACT);
-  if (!a || !b) return { exact: false, series: [], panel: null };
+/** By the best method there is for both; null where none of them knows the sign. */
+export function signSeries(given: readonly Curve[], turned: readonly Curve[]): BothSigns | null {
+  const key = KNOWING.find((one) =>
+    [given, turned].every((curves) => curves.some((curve) => curve.key === one)),
+  );
+  const a = given.find((curve) => curve.key === key);
+  const b = turned.find((curve) => curve.key === key);
+  if (!a || !b) return null;
   const ratios = a.points.map(({ theta, dcs }, place): [number, number | null] => [
     theta,
     quotient(b.points[place]?.dcs, dcs),
   ]);
   const values = ratios.flatMap(([, value]) => (value === null ? [] : [value]));
   return {
-    exact: true,
+    name: a.name,
     series: [
-      { key: 'given', name: 'exact, as given', style: 1, points: pairs(a) },
-      { key: 'turned', name: 'exact, opposite sign', style: 4, points: pairs(b) },
+      { key: 'given', name: 'as given', style: a.style, points: pairs(a) },
+      { key: 'turned', name: 'opposite sign', style: 4, points: pairs(b) },
     ],
     panel: {
       ...ratioAxis(values, 'opposite / given'),
@@ -41,11 +46,11 @@ export function signSeries(given: readonly Curve[], turned: readonly Curve[]): B
 }
 
 export function signRatio({ panel }: BothSigns, place: number): number | null {
-  return panel?.series[0]?.points[place]?.[1] ?? null;
+  return panel.series[0]?.points[place]?.[1] ?? null;
 }
 
 export function signRows(
-  { series, panel }: BothSigns,
+  { name, series, panel }: BothSigns,
   dcsUnit: string,
   angle: string,
   frame: string,
@@ -54,13 +59,13 @@ export function signRows(
   const number = (value: number | null | undefined) =>
     typeof value === 'number' ? fullDigits(value) : '';
   return [
-    ['theta', 'dcs exact as given', 'dcs exact opposite sign', 'opposite over given'],
+    ['theta', `dcs ${name}, as given`, `dcs ${name}, opposite sign`, 'opposite over given'],
     [`${angle} (${frame})`, `${dcsUnit} (${frame})`, `${dcsUnit} (${frame})`, '1'],
     ...(given?.points ?? []).map(([theta, dcs], place) => [
       fullDigits(theta),
       number(dcs),
       number(turned?.points[place]?.[1]),
-      number(panel?.series[0]?.points[place]?.[1]),
+      number(panel.series[0]?.points[place]?.[1]),
     ]),
   ];
 }

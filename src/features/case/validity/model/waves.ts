@@ -141,7 +141,7 @@ export const UNITARITY_CIRCLE: PlotSeries['points'] = Array.from({ length: ROUND
   return [Math.sin(angle) / 2, (1 - Math.cos(angle)) / 2];
 });
 
-const DEGREES = 180 / Math.PI;
+export const DEGREES = 180 / Math.PI;
 
 /** Every wave with all digits: names, units, rows. */
 export function waveRows(waves: readonly PhaseShift[]): string[][] {
