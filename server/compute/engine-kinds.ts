@@ -5,6 +5,8 @@ import type { MaterialAids, MaterialAidsRequest } from '#shared/contracts/materi
 import { computeMaterialAids } from '#server/modules/material-aids/compute-material-aids.ts';
 import { drawForm } from '#server/modules/reference/draw-form.ts';
 import type { FormSheet } from '#server/modules/reference/draw-form.ts';
+import { computeScanPoint } from '#server/modules/scans/compute-scan-point.ts';
+import type { ScanPart, ScanPointTask } from '#server/modules/scans/compute-scan-point.ts';
 import type { RunPlan, RunPlanRequest } from '#shared/contracts/run-plans.ts';
 import { computeRunPlan } from '#server/modules/run-plans/compute-run-plan.ts';
 
@@ -15,6 +17,8 @@ export interface EngineKinds {
   materialAids: { input: MaterialAidsRequest; output: MaterialAids };
   /** The same collision counted by detectors. */
   runPlan: { input: RunPlanRequest; output: RunPlan };
+  /** One point of a scan of the same collision. */
+  scanPoint: { input: ScanPointTask; output: ScanPart };
   /** What the Reference shows of a form: V(r), its transform, remarks. */
   formSheet: { input: EstimateRequest; output: FormSheet };
 }
@@ -26,5 +30,6 @@ export const ENGINE: {
   estimate: computeEstimate,
   materialAids: computeMaterialAids,
   runPlan: computeRunPlan,
+  scanPoint: computeScanPoint,
   formSheet: drawForm,
 };

@@ -15,15 +15,20 @@ export function textAnswer(type: string, text: string, fileName?: string): Other
   });
 }
 
-/** Whether a client that takes JSON by default asks for this type before it. */
+/** Whether a client asks for this type rather than JSON, which it gets where it names neither; of equals the one named first. */
 export function prefers(accept: string | string[] | undefined, type: string): boolean {
-  const weights = new Map<string, number>();
-  for (const item of [accept ?? ''].flat().join(',').toLowerCase().split(',')) {
-    const [name = '', ...rest] = item.split(';').map((piece) => piece.trim());
-    const q = rest.find((piece) => piece.startsWith('q='))?.slice(2);
-    if (name !== '') weights.set(name, q === undefined ? 1 : Number(q) || 0);
-  }
-  const weightOf = (name: string) =>
-    weights.get(name) ?? weights.get(name.replace(/\/.*/, '/*')) ?? weights.get('*/*') ?? 0;
-  return weights.has(type) && weightOf(type) > 0 && weightOf(type) >= weightOf('application/json');
+  const named = [accept ?? '']
+    .flat()
+    .join(',')
+    .toLowerCase()
+    .split(',')
+    .map((item) => item.split(';').map((piece) => piece.trim()));
+  const weightOf = (name: string): { weight: number; place: number } => {
+    const place = named.findIndex(([first]) => first === name);
+    const q = named[place]?.find((piece) => piece.startsWith('q='))?.slice(2);
+    return { weight: place < 0 ? 0 : q === undefined ? 1 : Number(q) || 0, place };
+  };
+  const [wanted, json] = [weightOf(type), weightOf('application/json')];
+  if (wanted.weight === 0) return false;
+  return json.weight === wanted.weight ? wanted.place < json.place : wanted.weight > json.weight;
 }

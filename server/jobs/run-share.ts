@@ -1,43 +1,19 @@
-import { setTimeout as sleep } from 'node:timers/promises';
-import type { EntityManager } from '@mikro-orm/postgresql';
-import type { Logger } from 'pino';
 import { DomainError } from '#shared/errors.ts';
-import type { Compute } from '#server/compute/compute.ts';
 import { isDatabaseAway } from '#server/db/faults.ts';
 import { finiteJson } from '#server/http/finite-json.ts';
 import { VERSION } from '#server/version.ts';
+import { Keeper, LetGo, persistently } from './keeper.ts';
+import type { ShareContext } from './keeper.ts';
 import type { JobKind, OpenJob, PartTools } from './job-kind.ts';
 import { JOB_KINDS } from './kinds.ts';
-import {
-  failJob,
-  findParts,
-  keepParts,
-  keepShare,
-  keptParts,
-  partValues,
-  releaseShare,
-} from './shares.ts';
+import { failJob, findParts, keepShare, keptParts, partValues, releaseShare } from './shares.ts';
 import type { Part, Share } from './shares.ts';
 
 const HEARTBEAT_MILLISECONDS = 700;
-const KEEP_EVERY_MILLISECONDS = 400;
 /** Two parts are with the thread at once, so that it never waits for the way to and fro. */
 const AHEAD = 2;
 /** Workers lost on one share before its job is given up: it would end every worker in turn. */
 const MOST_LOSSES = 5;
-
-export interface ShareContext {
-  em: () => EntityManager;
-  compute: Compute;
-  logger: Logger;
-  /** Aborts when the worker is to stop. */
-  stopping: AbortSignal;
-}
-
-/** Why work on a share ends before its end. */
-class LetGo extends Error {
-  override readonly name = 'LetGo';
-}
 
 /** A fault of the work itself, not of what keeps it: another worker would meet it too. */
 class WorkFault extends Error {
@@ -49,19 +25,6 @@ async function theWork<T>(work: () => Promise<T> | T): Promise<T> {
     return await work();
   } catch (cause) {
     throw new WorkFault('the work itself failed', { cause });
-  }
-}
-
-/** Tries again while the database is away; a worker that is to stop gives up. */
-async function persistently<T>(work: () => Promise<T>, { stopping, logger }: ShareContext) {
-  for (let tries = 0; ; tries += 1) {
-    try {
-      return await work();
-    } catch (fault) {
-      if (!isDatabaseAway(fault) || stopping.aborted) throw fault;
-      if (tries === 0) logger.warn({ err: fault }, 'the database is away; waiting for it');
-      await sleep(500);
-    }
   }
 }
 
@@ -83,32 +46,6 @@ function watchShare(share: Share, { em, logger }: ShareContext) {
   };
   const timer = setInterval(() => void beat(), HEARTBEAT_MILLISECONDS);
   return { lost: lost.signal, end: () => clearInterval(timer) };
-}
-
-/** Collects parts and keeps them every so often: not each by itself, and never many unkept. */
-class Keeper {
-  private waiting: Part[] = [];
-  private keptAt = Date.now();
-
-  constructor(
-    private readonly share: Share,
-    private readonly context: ShareContext,
-  ) {}
-
-  async add(part: Part): Promise<void> {
-    this.waiting.push(part);
-    if (Date.now() - this.keptAt >= KEEP_EVERY_MILLISECONDS) await this.keep();
-  }
-
-  async keep(end?: { finished: true; result?: unknown }): Promise<void> {
-    const { share, context, waiting } = this;
-    if (waiting.length === 0 && !end) return;
-    // Written twice after a lost answer, a part is still there once: its number is its key.
-    const kept = await persistently(() => keepParts(context.em(), share, waiting, end), context);
-    if (!kept) throw new LetGo('the share is another worker’s, or its job no longer runs');
-    this.waiting = [];
-    this.keptAt = Date.now();
-  }
 }
 
 /** Parts of the share that are to be computed still, after those that were computed before under the same content. */

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { METHODS, FRAMES, estimateRequestSchema } from './estimates.ts';
+import { METHODS, FRAMES, VERDICTS, estimateRequestSchema } from './estimates.ts';
 import { jobProgressSchema } from './jobs.ts';
 
 /** Points of one scan, and numbers of its result, at most. */
@@ -45,7 +45,9 @@ export const scanAxisSchema = z.union(
 );
 export type ScanAxis = z.infer<typeof scanAxisSchema>;
 
-export const SCAN_OUTPUTS = ['total', 'dcs'] as const;
+/** `verdict` is the word of the verdict on first order, as an estimate by this method finds it. */
+export const SCAN_OUTPUTS = ['total', 'dcs', 'verdict'] as const;
+export type ScanOutput = (typeof SCAN_OUTPUTS)[number];
 
 export const scanRequestSchema = z
   .strictObject({
@@ -82,7 +84,7 @@ const axisValues = z.object({
   unit: z.string().nullable(),
   values: z.array(z.number()),
 });
-const value = z.number().nullable();
+const value = z.union([z.number(), z.enum(VERDICTS)]).nullable();
 const row = z.union([z.array(value), z.array(z.array(value))]);
 
 export const scanResultSchema = z
@@ -90,14 +92,14 @@ export const scanResultSchema = z
     id: z.string(),
     method: z.enum(METHODS),
     output: z.enum(SCAN_OUTPUTS),
-    /** Of the values: `angstrom2`, `angstrom2/sr`. */
-    unit: z.string(),
+    /** Of the values: `angstrom2`, `angstrom2/sr`; null for verdicts. */
+    unit: z.string().nullable(),
     axes: z.array(axisValues),
     /** With dcs: the innermost list of `values` runs over them. */
     angles: z
       .object({ unit: z.string(), frame: z.enum(FRAMES), values: z.array(z.number()) })
       .optional(),
-    /** A number a point, nested by axis in their order; null where there is none. */
+    /** A number (or a verdict) a point, nested by axis in their order; null where there is none. */
     values: z.union([z.array(value), z.array(row)]),
     /** Why points have no value: each reason, how many points it concerns, and the first of them, counted in order from 0. */
     empty: z.array(z.object({ reason: z.string(), points: z.int(), first: z.int() })),

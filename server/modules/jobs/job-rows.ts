@@ -80,14 +80,24 @@ function reached(actor: Pick<Actor, 'id' | 'role'>): { sql: string; params: stri
   }
 }
 
+export interface JobListQuery {
+  page: number;
+  pageSize: number;
+  active: boolean;
+  kind: string | undefined;
+}
+
 /** Jobs the actor may read, newest first. */
 export async function listJobs(
   em: EntityManager,
   actor: Pick<Actor, 'id' | 'role'>,
-  { page, pageSize, active }: { page: number; pageSize: number; active: boolean },
+  { page, pageSize, active, kind }: JobListQuery,
 ): Promise<{ rows: JobRow[]; total: number }> {
-  const { sql, params } = reached(actor);
-  const where = active ? `${sql} and j.state in ('queued', 'running')` : sql;
+  const conditions = [reached(actor)];
+  if (active) conditions.push({ sql: `j.state in ('queued', 'running')`, params: [] });
+  if (kind !== undefined) conditions.push({ sql: 'j.kind = ?', params: [kind] });
+  const where = conditions.map(({ sql }) => sql).join(' and ');
+  const params = conditions.flatMap((condition) => condition.params);
   const [counted] = await em.execute<{ total: number }[]>(
     `select count(*)::integer as total from jobs j where ${where}`,
     params,

@@ -8,7 +8,10 @@ import { cancelJob, resumeJob } from './stop-and-resume.ts';
 import { streamProgress } from './stream-progress.ts';
 
 const params = z.object({ id: z.uuid() });
-const query = pageQuerySchema.extend({ active: z.enum(['true', 'false']).default('false') });
+const query = pageQuerySchema.extend({
+  active: z.enum(['true', 'false']).default('false'),
+  kind: z.string().max(40).optional(),
+});
 const tag = 'Jobs';
 
 export const jobRoutes = [
@@ -21,8 +24,9 @@ export const jobRoutes = [
     access: 'job.list',
     query,
     response: listSchema(jobSchema),
-    async handler({ em, actor, query: { page, pageSize, active } }) {
-      const found = await listJobs(em, actor, { page, pageSize, active: active === 'true' });
+    async handler({ em, actor, query: { page, pageSize, active, kind } }) {
+      const asked = { page, pageSize, active: active === 'true', kind };
+      const found = await listJobs(em, actor, asked);
       return { items: found.rows.map(presentJob), page, pageSize, total: found.total };
     },
   }),

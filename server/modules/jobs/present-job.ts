@@ -1,15 +1,23 @@
 import type { Job, JobProgress } from '#shared/contracts/jobs.ts';
 import type { JobRow } from './job-rows.ts';
 
-/** By the mean pace so far; a pace that nobody keeps up is none. */
-function secondsLeft({ state, done, total, seconds, workers }: JobRow): number | null {
-  if (state !== 'running' || done === 0 || seconds === null || workers === 0) return null;
-  return Math.round(((seconds / done) * (total - done) + Number.EPSILON) * 10) / 10;
+/** Parts done within so many seconds. */
+export interface Pace {
+  done: number;
+  seconds: number;
 }
 
-export function presentProgress(row: JobRow): JobProgress {
+/** A pace that nobody keeps up is none. */
+function secondsLeft({ state, done, total, workers }: JobRow, pace: Pace): number | null {
+  if (state !== 'running' || workers === 0 || !(pace.done > 0 && pace.seconds > 0)) return null;
+  return Math.round((pace.seconds / pace.done) * (total - done) * 10) / 10;
+}
+
+/** Time left by the pace someone has seen, or by the mean one since the start. */
+export function presentProgress(row: JobRow, seen?: Pace): JobProgress {
   const { id, state, done, total, error, workers } = row;
-  return { id, state, done, total, secondsLeft: secondsLeft(row), workers, error };
+  const pace = seen ?? { done, seconds: row.seconds ?? 0 };
+  return { id, state, done, total, secondsLeft: secondsLeft(row, pace), workers, error };
 }
 
 /** The only way a job leaves the server. */

@@ -6,9 +6,24 @@ import { eventStream } from '#server/http/event-stream.ts';
 import { OtherAnswer } from '#server/http/other-answer.ts';
 import { jobRow } from './job-rows.ts';
 import { presentProgress } from './present-job.ts';
+import type { Pace } from './present-job.ts';
 
 const LOOK_MILLISECONDS = 500;
 const LAST = 'ended';
+/** The pace is that of the last so many milliseconds, once a fifth of them is seen. */
+const WINDOW = 15_000;
+
+/** Watches the count of parts; the pace of late, which a pause long ago does not spoil. */
+function paceWatch() {
+  let seen: { at: number; done: number }[] = [];
+  return (done: number): Pace | undefined => {
+    const at = Date.now();
+    seen = [...seen.filter((one) => at - one.at <= WINDOW), { at, done }];
+    const first = seen[0];
+    if (!first || at - first.at < WINDOW / 5 || done <= first.done) return undefined;
+    return { done: done - first.done, seconds: (at - first.at) / 1000 };
+  };
+}
 
 /**
  * Events `progress` from the state now to the end of the job, whatever came before: a stream taken up again begins with the truth.
@@ -22,13 +37,14 @@ export function streamProgress(
   if (lastEventId === LAST) return new OtherAnswer((res) => void res.status(204).end());
   return eventStream(async (send, signal) => {
     let before = '';
+    const paceOf = paceWatch();
     while (!signal.aborted) {
       const row = await jobRow(em, id).catch((fault: unknown) => {
         if (isDatabaseAway(fault)) return undefined;
         throw fault;
       });
       if (row) {
-        const data = presentProgress(row);
+        const data = presentProgress(row, paceOf(row.done));
         const ended = isEnded(row.state);
         const now = JSON.stringify(data);
         if (now !== before) {

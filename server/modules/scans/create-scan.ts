@@ -1,11 +1,16 @@
 import type { ScanRequest } from '#shared/contracts/scans.ts';
 import type { VerbContext } from '#server/http/context.ts';
 import { createJob } from '#server/jobs/create-job.ts';
+import { currentSettings } from '#server/modules/settings/current-settings.ts';
 import { requireCampaign } from '#server/modules/campaigns/require-campaign.ts';
 import { Grid } from './grid.ts';
 import { namesOf } from './pointer.ts';
 
-const WHAT = { total: 'Total cross section', dcs: 'Angular distribution' } as const;
+const WHAT = {
+  total: 'Total cross section',
+  dcs: 'Angular distribution',
+  verdict: 'Verdict',
+} as const;
 
 function titleOf(request: ScanRequest, grid: Grid): string {
   if (request.title !== undefined) return request.title;
@@ -19,10 +24,7 @@ export async function createScan(context: VerbContext, request: ScanRequest): Pr
   const grid = new Grid(request);
   const campaignId = request.campaignId ?? null;
   if (campaignId !== null) await requireCampaign(em, actor, campaignId);
-  return createJob(context, {
-    kind: 'scan',
-    title: titleOf(request, grid),
-    campaignId,
-    input: request,
-  });
+  const { verdict: thresholds } = await currentSettings({ em });
+  const input = { ...request, ...(request.output === 'verdict' && { thresholds }) };
+  return createJob(context, { kind: 'scan', title: titleOf(request, grid), campaignId, input });
 }

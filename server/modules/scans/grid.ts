@@ -7,7 +7,7 @@ import { readAxis } from './axes.ts';
 import type { Axis } from './axes.ts';
 import { withValueAt } from './pointer.ts';
 
-/** Where every total is computed: an integral knows no angle. */
+/** Where totals and verdicts are computed: they know no angle. */
 const ANY_ANGLE = { unit: 'deg', values: [90] };
 
 /** A value that stands twice on an axis is computed once: parts run over the distinct values, the first axis slowest. */
@@ -93,6 +93,6 @@ function bareEstimate({ estimate, method, output }: ScanRequest): EstimateReques
     ...(identical !== undefined && { identical }),
     ...(corrections && { corrections }),
     ...(units && { units }),
-    ...(output === 'total' ? { angles: ANY_ANGLE } : angles && { angles }),
+    ...(output === 'dcs' ? angles && { angles } : { angles: ANY_ANGLE }),
   };
 }

@@ -11,8 +11,10 @@ function columnNames(axes: ScanResult['axes']): string[] {
   return new Set(short).size === short.length ? short : axes.map(({ path }) => path);
 }
 
-function flat(values: ScanResult['values']): (number | null)[] {
-  const all: (number | null)[] = [];
+type Value = number | string | null;
+
+function flat(values: ScanResult['values']): Value[] {
+  const all: Value[] = [];
   for (const item of values) {
     if (Array.isArray(item)) for (const one of flat(item)) all.push(one);
     else all.push(item);
@@ -24,7 +26,9 @@ function flat(values: ScanResult['values']): (number | null)[] {
 export function resultCsv({ axes, angles, values, output, unit }: ScanResult): string {
   const names = columnNames(axes).map((name, i) => `${name} (${axes[i]?.unit ?? '1'})`);
   const theta = angles ? [`theta (${angles.unit})`] : [];
-  const header = [...names, ...theta, `${output} (${unit})`].map(cell).join(',');
+  const header = [...names, ...theta, unit === null ? output : `${output} (${unit})`]
+    .map(cell)
+    .join(',');
   const grid = [...axes.map((axis) => axis.values), ...(angles ? [angles.values] : [])];
   const lines = flat(values).map((value, at) => {
     let rest = at;

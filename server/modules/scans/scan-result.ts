@@ -2,12 +2,12 @@ import type { EntityManager } from '@mikro-orm/postgresql';
 import { z } from 'zod';
 import { DEFAULT_UNITS } from '#shared/contracts/estimates.ts';
 import type { ScanResult } from '#shared/contracts/scans.ts';
-import { scanRequestSchema } from '#shared/contracts/scans.ts';
 import { DomainError } from '#shared/errors.ts';
 import { Job } from '#server/jobs/job.entity.ts';
+import { scanPartSchema } from './compute-scan-point.ts';
+import type { ScanPart } from './compute-scan-point.ts';
 import { Grid } from './grid.ts';
-import { scanPartSchema } from './scan-kind.ts';
-import type { ScanPart } from './scan-kind.ts';
+import { storedScanSchema } from './scan-kind.ts';
 
 type Value = ScanPart['value'];
 
@@ -48,7 +48,7 @@ export async function scanResult(em: EntityManager, id: string): Promise<ScanRes
       { extra: { state: job.state, done: job.done, total: job.total } },
     );
   }
-  const request = scanRequestSchema.parse(job.input);
+  const request = storedScanSchema.parse(job.input);
   const { estimate, method, output } = request;
   const grid = new Grid(request);
   const { parts, engines } = await loadParts(em, id);
@@ -60,11 +60,12 @@ export async function scanResult(em: EntityManager, id: string): Promise<ScanRes
     return found;
   });
   const area = estimate.units?.area ?? DEFAULT_UNITS.area;
+  const unit = { total: area, dcs: `${area}/sr`, verdict: null }[output];
   return {
     id,
     method,
     output,
-    unit: output === 'dcs' ? `${area}/sr` : area,
+    unit,
     axes: grid.axes,
     ...(output === 'dcs' && {
       angles: { unit: angleUnit, frame: estimate.frame ?? 'cm', values: angles },

@@ -8,6 +8,7 @@ import {
 import type { Scan } from '#shared/contracts/scans.ts';
 import { prefers, textAnswer } from '#server/http/other-answer.ts';
 import { defineRoute } from '#server/http/route.ts';
+import { withSlot } from '#server/modules/estimates/in-flight.ts';
 import { jobRow, loadJob } from '#server/modules/jobs/job-rows.ts';
 import type { JobRow } from '#server/modules/jobs/job-rows.ts';
 import { presentProgress } from '#server/modules/jobs/present-job.ts';
@@ -39,7 +40,7 @@ export const scanRoutes = [
     status: 202,
     refusals: ['tooManyRequests', 'tooMuchWork'],
     async handler({ em, actor, now, body, compute, signal }) {
-      await checkScan(body, { compute, signal });
+      await withSlot(actor.id, () => checkScan(body, { compute, signal }));
       return { id: await createScan({ em, actor, now }, body) };
     },
   }),

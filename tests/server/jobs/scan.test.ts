@@ -133,6 +133,48 @@ describe('what a scan answers', () => {
   });
 });
 
+test.each(['born1', 'partialWaves'] as const)(
+  'a point is what an estimate by %s gives there: curve of the lab, total, verdict',
+  async (method) => {
+    const collision = {
+      ...yukawaDocument,
+      projectile: { species: 'alpha' },
+      target: { kind: 'nuclide', nuclide: 'He-4' },
+      energy: { value: 1, unit: 'MeV' },
+      kinematics: 'relativistic',
+      interaction: {
+        terms: [{ form: 'gaussian', V0: { value: -2, unit: 'MeV' }, a: { value: 2, unit: 'fm' } }],
+      },
+      frame: 'lab',
+      angles: { unit: 'deg', values: [10, 40, 80] },
+      goldenRule: { theta: 60 },
+      units: { length: 'fm', area: 'millibarn', energy: 'MeV' },
+      methods: [method],
+    };
+    const answer = await agent.post('/api/estimates').send(collision).expect(200);
+    const { methods, validity } = estimateSchema.parse(answer.body);
+    const single = methods[method];
+    if (!single || 'unavailable' in single || !('value' in single.total)) throw new Error('None.');
+    const axes = [{ path: '/energy', values: [collision.energy] }];
+    const scan = { estimate: collision, method, axes };
+    const total = await resultOf({ ...scan, output: 'total' });
+    expect(total.result).toMatchObject({ unit: 'millibarn', values: [single.total.value] });
+    const dcs = await resultOf({ ...scan, output: 'dcs' });
+    expect(dcs.result.values).toEqual([single.differential.map((point) => point.dcs)]);
+    const verdict = await resultOf({ ...scan, output: 'verdict' });
+    expect(verdict.result).toMatchObject({ unit: null, values: [validity.verdict] });
+    expect(verdict.csv.text).toBe(`energy (MeV),verdict\n1,${validity.verdict}\n`);
+  },
+);
+
+test('a method that allows no point of a scan is refused at once', async () => {
+  const terms = [{ form: 'hardSphere', R: { value: 1, unit: 'angstrom' } }];
+  const estimate = { ...yukawaDocument, interaction: { terms } };
+  const answer = await agent.post('/api/scans').send({ ...energyScan, estimate });
+  expect(answer.status).toBe(422);
+  expect(answer.body).toMatchObject({ errors: [{ path: '/method' }] });
+});
+
 test('identical points are computed once: within a scan, and in the next one', async () => {
   let computed = 0;
   worker = startWorker(
