@@ -95,7 +95,10 @@ export function localPotential(terms: readonly Term[], twoMuOverHbar2: number): 
     .map((term) => ({ R: term.range ?? NaN, ...scaled(term) }));
   const reach = Math.max(0, ...active.map(reachOf));
   const ranges = active.flatMap(({ range }) => (range !== null && range > 0 ? [range] : []));
-  const jumps = [...active.flatMap(({ breakpoints }) => breakpoints), ...shells.map(({ R }) => R)];
+  const jumps = [
+    ...active.flatMap(({ breakpoints, knots = [] }) => [...breakpoints, ...knots]),
+    ...shells.map(({ R }) => R),
+  ];
   const inner = [...jumps, ...active.map(reachOf), ...doubling(ranges, reach)]
     .filter((r) => r > 0 && r < reach)
     .sort((a, b) => a - b);

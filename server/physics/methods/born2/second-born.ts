@@ -8,6 +8,9 @@ import { closedSecondAmplitude, numericalSecondAmplitude } from './second-amplit
 /** Above it the series in the potential is not seen to converge. */
 const LARGEST_RATIO = 0.1;
 const LARGEST_RESIDUAL = 1e-8;
+/** Calls of the first-order amplitude for the check of conservation; each costs more where a table or a formula is transformed. */
+const MOST_CALLS = { closed: 20_000, slow: 2_000 };
+const SLOW = ['tabulated', 'expression'];
 /** An amplitude that is not known to this of its forward value is none. */
 const WORST = 1e-9;
 
@@ -40,8 +43,10 @@ function firstOrderElastic({ terms, born, k }: MethodInput) {
   };
   return integrate(weighted, 0, 2 * k, {
     breakpoints,
-    relative: LARGEST_RESIDUAL / 100,
-    maxEvaluations: 20_000,
+    relative: LARGEST_RESIDUAL / 10,
+    maxEvaluations: terms.some(({ form }) => SLOW.includes(form))
+      ? MOST_CALLS.slow
+      : MOST_CALLS.closed,
   });
 }
 
