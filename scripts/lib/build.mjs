@@ -34,6 +34,7 @@ export function serverEntries(root) {
     'server/main.ts',
     'server/worker.ts',
     'server/compute/engine-worker.ts',
+    'server/compute/hash-worker.ts',
     ...names.filter((name) => name.endsWith('.ts')).map((name) => `server/commands/${name}`),
   ];
   return wanted.filter((path) => existsSync(join(root, path)));

@@ -4,7 +4,7 @@ import { DomainError } from '#shared/errors.ts';
 import type { EngineKind, EngineKinds } from './engine-kinds.ts';
 import { outputOf } from './message.ts';
 import type { Reply, Task } from './message.ts';
-import { engineWorkerFile } from './worker-file.ts';
+import { workerFileOf } from './worker-file.ts';
 import type { WorkerFile } from './worker-file.ts';
 
 export interface ComputeOptions {
@@ -44,7 +44,7 @@ const GRACE = 500;
  * Past its deadline a thread is ended and the caller gets DomainError('tooMuchWork'); a thread that died is replaced.
  */
 export function createCompute(pool: PoolOptions = {}): ComputePool {
-  const { filename, execArgv } = pool.worker ?? engineWorkerFile();
+  const { filename, execArgv } = pool.worker ?? workerFileOf('engine-worker');
   const capacity = pool.capacity ?? DEFAULT_CAPACITY;
   const threads = new Piscina({
     filename,

@@ -26,15 +26,13 @@ export function workerFile(path: string): WorkerFile {
   return { filename: path, execArgv: [...execArgv, '--import', loader] };
 }
 
-/** The engine's own worker: beside this file as .ts, or in the bundle, whose shared chunks lie in folders of their own. */
-export function engineWorkerFile(): WorkerFile {
+/** A worker of this folder: beside this file as .ts, or in the bundle, whose shared chunks lie in folders of their own. */
+export function workerFileOf(name: 'engine-worker' | 'hash-worker'): WorkerFile {
   const here = fileURLToPath(import.meta.url);
-  if (here.endsWith('.ts')) return workerFile(join(dirname(here), 'engine-worker.ts'));
+  if (here.endsWith('.ts')) return workerFile(join(dirname(here), `${name}.ts`));
   for (let folder = dirname(here); folder !== dirname(folder); folder = dirname(folder)) {
-    const candidate = join(folder, 'compute', 'engine-worker.js');
+    const candidate = join(folder, 'compute', `${name}.js`);
     if (existsSync(candidate)) return workerFile(candidate);
   }
-  throw new Error(
-    `compute/engine-worker.js is not in the bundle around ${here}: build the server.`,
-  );
+  throw new Error(`compute/${name}.js is not in the bundle around ${here}: build the server.`);
 }

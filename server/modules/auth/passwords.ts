@@ -1,4 +1,4 @@
-import { compare, hash } from 'bcryptjs';
+import { bcryptHash, bcryptMatches } from '#server/compute/hashing.ts';
 import { DomainError } from '#shared/errors.ts';
 
 /** bcrypt reads no further; a longer password would be cut silently, so it never matches. */
@@ -33,13 +33,13 @@ export async function inTurn<T>(work: () => Promise<T>): Promise<T> {
 }
 
 export function hashPassword(password: string, cost: number): Promise<string> {
-  return hash(password, cost);
+  return bcryptHash(password, cost);
 }
 
 const dummies = new Map<number, Promise<string>>();
 
 function dummyHash(cost: number): Promise<string> {
-  const known = dummies.get(cost) ?? hash('nobody has this password', cost);
+  const known = dummies.get(cost) ?? bcryptHash('nobody has this password', cost);
   dummies.set(cost, known);
   return known;
 }
@@ -51,6 +51,6 @@ export async function passwordMatches(
   cost: number,
 ): Promise<boolean> {
   const fits = new TextEncoder().encode(password).length <= MAX_BYTES;
-  const matches = await compare(password, passwordHash ?? (await dummyHash(cost)));
+  const matches = await bcryptMatches(password, passwordHash ?? (await dummyHash(cost)));
   return matches && fits && passwordHash !== undefined;
 }
