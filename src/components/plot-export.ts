@@ -34,7 +34,7 @@ function exported(picture: PlotPicture) {
     ? { left: 78, right: 26, top: 44, bottom: 60 }
     : { left: 78, right: 24, top: 44, bottom: 58 };
   return {
-    ...plotOption({ ...picture, cursor: null, band: null }, light, margins),
+    ...plotOption({ ...picture, cursor: null, band: null, faded: false }, light, margins),
     backgroundColor: light.sheet,
     legend: {
       data: shown.map(({ name }) => name),
