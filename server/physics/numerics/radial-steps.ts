@@ -203,6 +203,8 @@ export function stepAdded(
   im[0] = added.im;
   im[1] = added.slopeIm;
   let size = Math.abs(free.re) + Math.abs(free.slopeRe);
+  let addedSize =
+    Math.abs(added.re) + Math.abs(added.slopeRe) + Math.abs(added.im) + Math.abs(added.slopeIm);
   let count = 2;
   let quiet = 0;
   while (count < TERMS && quiet < 4) {
@@ -230,8 +232,11 @@ export function stepAdded(
     im[count] = sumIm * factor;
     count += 1;
     const weight = Math.abs(sum) * factor * count;
+    const more = (Math.abs(sumRe) + Math.abs(sumIm)) * factor * count;
     if (weight > size) size = weight;
-    quiet = weight < NEGLIGIBLE * size ? quiet + 1 : 0;
+    if (more > addedSize) addedSize = more;
+    const small = weight < NEGLIGIBLE * size && more <= NEGLIGIBLE * addedSize;
+    quiet = small ? quiet + 1 : 0;
   }
   finishAdded(count, 0, free, added);
 }

@@ -33,6 +33,18 @@ export interface RadialInteraction {
   power: boolean;
 }
 
+/** Powers beyond are taken for exponentials. */
+const STEEPEST_POWER = 20;
+
+/** Whether a term falls off as a power of r; a formula says so by its values alone. */
+function fallsAsPower({ tail, form, reach, v }: Term): boolean {
+  if (tail === 'power') return true;
+  if (form !== 'expression' || tail !== 'exponential' || reach === null || v === null) return false;
+  const fall = (r: number) => Math.log2(v(r) / v(2 * r));
+  const [near, far] = [fall(reach / 64), fall(reach / 8)];
+  return far < STEEPEST_POWER && Math.abs(far - near) < 0.02 * far;
+}
+
 const isActive = ({ strength }: Term): boolean => strength.re !== 0 || strength.im !== 0;
 
 function refusal(terms: readonly Term[]): string | null {
@@ -54,7 +66,7 @@ function refusal(terms: readonly Term[]): string | null {
 function reachOf(terms: readonly Term[], rest: (r: number) => number, charge: number): number {
   const known = Math.max(
     0,
-    ...terms.filter(({ tail }) => tail !== 'power').map(({ reach }) => reach ?? 0),
+    ...terms.filter((term) => !fallsAsPower(term)).map(({ reach }) => reach ?? 0),
   );
   const open = terms.filter(({ reach, norm }) => reach === null && norm > 0);
   if (open.length === 0) return known;
@@ -136,6 +148,6 @@ export function radialInteraction(input: MethodInput): RadialInteraction | Unava
     size: Math.max(0, ...terms.map(({ range }) => range ?? 0)),
     reach: Math.max(core, reachOf(terms, rest, charge)),
     charge,
-    power: terms.some(({ tail }) => tail === 'power'),
+    power: terms.some(fallsAsPower),
   };
 }

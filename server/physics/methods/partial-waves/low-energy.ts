@@ -30,7 +30,7 @@ const RESONANT = 10;
 const RULE = gaussRule(16);
 const DOUBLINGS = 60;
 /** Ranges after which the square of a tail that falls off as a power has no part in the scattering length. */
-const FAR = 1e5;
+const FAR = 1e4;
 const TINY = 1e-140;
 
 /** The wave of l = 0 at zero energy at the end of its panels. */
@@ -156,6 +156,13 @@ const NEARLY = (a: number, R: number): string =>
     a > 0 ? 'the last bound state is barely bound' : 'one more bound state is barely missed'
   }, and cross sections at low energy depend on the last digits of the strength.`;
 
+function noRange(fall: number): string {
+  const tail = `The potential falls off as r^-${Number(fall.toPrecision(2))}`;
+  return fall < 5.5
+    ? `${tail}: an effective range does not exist.`
+    : `${tail}: the effective range hangs on the whole of its tail and is not computed.`;
+}
+
 /** Radius that counts as the size of the interaction: where most of it lies. */
 function sizeOf(interaction: RadialInteraction, R: number): number {
   return interaction.size > 0 ? Math.min(interaction.size, R) : R;
@@ -191,13 +198,9 @@ function evaluated(interaction: RadialInteraction, zero: ZeroWave): LowEnergy {
       ? []
       : ['Bound state at zero energy to all digits: the scattering length is infinite.']),
     ...(known && Math.abs(a) > RESONANT * size ? [NEARLY(a, size)] : []),
-    ...(fall < 5.5
-      ? [
-          `The potential falls off as r^-${Number(fall.toPrecision(2))}: an effective range does not exist.`,
-        ]
-      : []),
+    ...(fall < Infinity ? [noRange(fall)] : []),
   ];
-  const hasRange = fall >= 5.5 && Number.isFinite(range) && rangeError < Math.abs(range) + R;
+  const hasRange = fall === Infinity && Number.isFinite(range) && rangeError < Math.abs(range) + R;
   return {
     scatteringLength: known ? { value: a, error } : null,
     effectiveRange: hasRange ? { value: range, error: rangeError } : null,

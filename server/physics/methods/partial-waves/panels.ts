@@ -23,14 +23,49 @@ const LEFT = 4e-9;
 /** Radians of the wave over which it is followed at most. */
 const MOST_PHASE = 2e4;
 
+/** What the fit of U may miss, in phase, of a strong and of a weak interaction. */
+const MISSED = 1e-18;
+const SAMPLES = 240;
+const DECADES = 8;
+
+/** min(1, ∫ r|U| dr, ∫ |U| dr/k) to a factor of two or so. */
+function roughStrength(
+  { field, shells, charge }: RadialInteraction,
+  end: number,
+  k: number,
+): number {
+  const out = new Float64Array(field.components);
+  const step = (DECADES * Math.LN10) / SAMPLES;
+  let [slow, fast] = [0, 0];
+  for (let i = 0; i < SAMPLES; i++) {
+    const r = end * Math.exp(-step * (i + 0.5));
+    field.at(r, out);
+    // A Coulomb tail is no part of what is weak.
+    const size = out.reduce(
+      (sum, one, c) => sum + (charge !== 0 && c === 0 ? 0 : Math.abs(one)),
+      0,
+    );
+    if (!Number.isFinite(size)) continue;
+    slow += step * r * r * size;
+    fast += (step * r * size) / k;
+  }
+  for (const { radius, jump } of shells) {
+    slow += radius * Math.abs(jump);
+    fast += Math.abs(jump) / k;
+  }
+  return Math.min(1, slow, fast);
+}
+
 function fieldPanels(
-  { field, shells, breaks }: RadialInteraction,
+  interaction: RadialInteraction,
   start: number,
   end: number,
   wave: number,
 ): RadialPanels {
+  const { field, shells, breaks } = interaction;
   const edges = [...breaks, ...shells.map(({ radius }) => radius)];
-  return radialPanels({ field, start, end, breaks: edges, wave, tolerance: 1e-18 });
+  const tolerance = MISSED * roughStrength(interaction, end, wave);
+  return radialPanels({ field, start, end, breaks: edges, wave, tolerance });
 }
 
 /** Bounds of what is felt from each edge outwards beside a Coulomb tail. */

@@ -7,6 +7,7 @@ import type { Outer } from './radial-wave.ts';
 import { RadialSolver, roundingOf, transitionOf } from './radial-wave.ts';
 import type { Scattered, Transition } from './scatter.ts';
 import {
+  FORGOTTEN,
   IN_TURN,
   isWeak,
   NEGLIGIBLE,
@@ -92,8 +93,9 @@ export function scatterCharged(
       if (!matched) continue;
       const { re, im, eta: size, absorbed } = transitionOf(matched);
       const functions = 4 * (outerError[l] ?? 0) * matched.spread;
-      const relative = roundingOf(matched, rho, weak) + functions + found.all.missed;
-      const error = relative * (weak ? Math.hypot(re, im) : 1) + 1e-19;
+      const relative = roundingOf(matched, rho, weak) + functions;
+      const least = found.all.missed + FORGOTTEN * Math.min(1, found.strength[0] ?? 0);
+      const error = relative * (weak ? Math.hypot(re, im) : 1) + least;
       if (!(error < UNRESOLVED)) return tooNarrow(l, error);
       const wave = { l, spin, re, im, eta: interaction.absorbs ? size : 1, absorbed, error };
       waves.push(wave);

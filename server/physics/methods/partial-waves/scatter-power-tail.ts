@@ -147,8 +147,8 @@ export function scatterPowerTail(
         edge && (weak ? solver.matchWeak(l, edge) : solver.match(l, spinFactor(l, spin), edge));
       if (!matched) continue;
       const T = transitionOf(matched);
-      const relative = roundingOf(matched, x, weak) + found.all.missed;
-      const error = relative * (weak ? Math.hypot(T.re, T.im) : 1);
+      const rounding = roundingOf(matched, x, weak) * (weak ? Math.hypot(T.re, T.im) : 1);
+      const error = rounding + found.all.missed;
       if (!(error < UNRESOLVED)) return tooNarrow(l, error);
       const [tRe, tIm] = [(T.re - T.im) * (T.re + T.im), 2 * T.re * T.im];
       const moved = turned(T, B.re, B.im);

@@ -35,6 +35,8 @@ export const NEGLIGIBLE = 1e-16;
 /** Waves that must in turn be negligible. */
 export const IN_TURN = 3;
 const WEAK = 0.2;
+/** What is lost of a wave that begins behind its barrier. */
+export const FORGOTTEN = 1e-19;
 /** A phase known no better than this is no phase. */
 export const UNRESOLVED = 1e-8;
 
@@ -118,7 +120,7 @@ function beyondFollowed(
       im,
       eta: 1 - 2 * im,
       absorbed: 4 * im,
-      error: size * (size + 1e-13) + 1e-19,
+      error: size * (size + 1e-13) + FORGOTTEN * size,
     };
   });
 }
@@ -197,7 +199,8 @@ function wavesOf(
     if (!matched) continue;
     const { re, im, eta, absorbed } = transitionOf(withTail(matched, tail, l, factor));
     const size = Math.hypot(re, im);
-    const error = (roundingOf(matched, x, weak) + found.all.missed) * (weak ? size : 1) + 1e-19;
+    const least = found.all.missed + FORGOTTEN * Math.min(1, found.strength[0] ?? 0);
+    const error = roundingOf(matched, x, weak) * (weak ? size : 1) + least;
     if (!(error < UNRESOLVED)) return tooNarrow(l, error);
     waves.push({ l, spin, re, im, eta: interaction.absorbs ? eta : 1, absorbed, error });
   }
