@@ -229,7 +229,7 @@ export function radialPanels(request: RadialPanelRequest): RadialPanels {
       width *=
         trial.phase > PHASE ? Math.max(0.2, Math.min(0.9, (0.95 * PHASE) / trial.phase)) : 0.6;
       if (!(width > 8 * UNIT_ROUNDOFF * at && width > 1e-290)) {
-        throw new PanelError(trial.finite ? 'tooMany' : 'notFinite', at);
+        throw new PanelError(trial.finite || at === 0 ? 'tooMany' : 'notFinite', at);
       }
       continue;
     }
