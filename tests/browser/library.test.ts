@@ -1,9 +1,10 @@
 import { afterAll, afterEach, beforeAll, expect, test } from 'vitest';
 import type { Page } from 'playwright-core';
+import type { InteractionDetail } from '#shared/contracts/library.ts';
 import type { Account } from '#server/modules/users/account.entity.ts';
 import { expectAccessible, expectSoundInEveryView } from '#tests/browser/support/accessibility.ts';
 import { openStage, type Stage } from '#tests/browser/support/stage.ts';
-import { addVersion, citing, publish } from '../server/library/library-requests.ts';
+import { addVersion, citing, publish, yukawaTerms } from '../server/library/library-requests.ts';
 import { saveCase } from './support/case-factory.ts';
 import { settled } from './case/case-steps.ts';
 
@@ -140,6 +141,31 @@ test('a theorist corrects the text, retires an interaction and takes it back', a
   await dialogOf(page).getByLabel('Reason').fill('Somebody does.');
   await dialogOf(page).getByRole('button', { name: 'Take back' }).click();
   await page.getByRole('link', { name: 'Use in a case' }).waitFor();
+});
+
+test('two theorists publish at once: the second is shown what the first changed, and goes on', async () => {
+  const first = await stage.app.signedIn(theorist);
+  const { published, etag } = await publish(first, { name: 'Contested well' });
+  const { page, goTo, console } = await stage.visitor('theorist');
+  console.expect(/412 \(Precondition Failed\).*\/api\/interactions\//);
+  await goTo(`/library/interactions/${published.id}`);
+  await page.getByRole('button', { name: 'Correct the text' }).click();
+  await fillPublication(page, { Source: 'Lab note 10' });
+  await addVersion(first, published, etag).expect(201);
+  await dialogOf(page).getByRole('button', { name: 'Publish version 2' }).click();
+  await dialogOf(page)
+    .getByText(/published version 2 after you began/)
+    .waitFor();
+  await dialogOf(page).getByText('−12 eV').waitFor();
+  expect(await dialogOf(page).getByLabel('Source', { exact: true }).inputValue()).toBe(
+    'Lab note 10',
+  );
+  await dialogOf(page).getByRole('button', { name: 'Go on to version 3' }).click();
+  await dialogOf(page).getByRole('button', { name: 'Publish version 3' }).click();
+  await page.getByText('version 3 of 3').waitFor();
+  const { terms, source } = (await first.get(`/api/interactions/${published.id}`))
+    .body as InteractionDetail;
+  expect({ terms, source }).toEqual({ terms: yukawaTerms(-12), source: 'Lab note 10' });
 });
 
 test('who may not publish sees no such button; the search of the top bar finds interactions', async () => {

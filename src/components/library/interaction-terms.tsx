@@ -1,4 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
+import { Link } from 'react-router-dom';
 import type { InteractionContent } from '#shared/contracts/library.ts';
 import { formsQuery } from '#src/lib/forms.ts';
 import { formLabel, termEntries, termValueText } from '#src/lib/term-words.ts';
@@ -15,7 +16,12 @@ export function InteractionTerms({ terms }: Pick<InteractionContent, 'terms'>) {
           <li key={index} className="min-w-0">
             <p className="font-semibold">
               {terms.length > 1 && `Term ${index + 1}: `}
-              {formLabel(term.form, forms)}
+              <Link
+                to={`/reference/forms/${term.form}`}
+                className="rounded underline decoration-line underline-offset-4 hover:decoration-barn"
+              >
+                {formLabel(term.form, forms)}
+              </Link>
             </p>
             {form && <Formula display tex={form.formula} />}
             <dl className="mt-1 grid grid-cols-[auto_1fr] gap-x-4 gap-y-0.5">

@@ -1,12 +1,21 @@
 import { useState, type FormEvent, type ReactNode } from 'react';
-import { useMutation, useQueryClient } from '@tanstack/react-query';
+import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import type { InteractionContent, InteractionDetail } from '#shared/contracts/library.ts';
 import { ApiError, inWords } from '#src/lib/api.ts';
+import { formsQuery } from '#src/lib/forms.ts';
 import { faultsFrom, focusFirstFault, type Faults } from '#src/lib/form-faults.ts';
-import { addInteractionVersion, forgetLibrary, publishInteraction } from '#src/lib/library.ts';
+import { interactionDifferences } from '#src/lib/interaction-words.ts';
+import {
+  addInteractionVersion,
+  forgetLibrary,
+  interactionQuery,
+  interactionVersionQuery,
+  publishInteraction,
+} from '#src/lib/library.ts';
 import { useOneKey } from '#src/lib/one-key.ts';
 import { say } from '#src/lib/toasts.ts';
 import { Button } from '../button.tsx';
+import { DifferenceTable } from '../difference-table.tsx';
 import { Dialog } from '../dialog.tsx';
 import { Notice } from '../notice.tsx';
 import { PublishFields } from './publish-fields.tsx';
@@ -44,6 +53,34 @@ function elsewhere(error: unknown, refused: Faults): string | null {
   return lost.length === 0 ? null : lost.map(([, message]) => message).join(' ');
 }
 
+const isStale = (error: unknown): boolean =>
+  error instanceof ApiError && error.code === 'staleVersion';
+
+/** Somebody published a version meanwhile: what it changed, and the way on with what was typed. */
+function Overtaken({ of, onGoOn }: { of: VersionOf; onGoOn: (of: VersionOf) => void }) {
+  const forms = useQuery(formsQuery).data ?? [];
+  const before = useQuery(interactionVersionQuery(of.id, of.newest)).data;
+  const now = useQuery({ ...interactionQuery(of.id), refetchOnMount: 'always' }).data;
+  const newest = now?.data.newestVersion ?? of.newest;
+  if (!now || !before || newest === of.newest) return null;
+  const found = interactionDifferences(before, now.data, forms);
+  return (
+    <Notice
+      live
+      tone="attention"
+      title={`${now.data.version.author.name} published version ${newest} after you began.`}
+      actions={
+        <Button size="small" onClick={() => onGoOn({ id: of.id, newest, etag: now.etag ?? '' })}>
+          Go on to version {newest + 1}
+        </Button>
+      }
+    >
+      Nothing was published; what you typed is kept. This is what version {newest} changed:
+      <DifferenceTable differences={found} />
+    </Notice>
+  );
+}
+
 function usePublishing({ of, onDone }: Pick<PublishDialogProps, 'of' | 'onDone'>) {
   const client = useQueryClient();
   const keyFor = useOneKey();
@@ -64,9 +101,12 @@ function usePublishing({ of, onDone }: Pick<PublishDialogProps, 'of' | 'onDone'>
 
 /** Publishing to the library: a new interaction, or a further version of one. */
 export function PublishDialog(props: PublishDialogProps) {
-  const { of, texts, onTexts, content, children, onClose } = props;
+  const { texts, onTexts, content, children, onClose, onDone } = props;
   const [tried, setTried] = useState(false);
-  const publishing = usePublishing(props);
+  const [later, setLater] = useState<VersionOf | null>(null);
+  const of = later !== null && later.id === props.of?.id ? later : props.of;
+  const publishing = usePublishing({ of, onDone });
+  const stale = isStale(publishing.error);
   const publication = publicationOf(texts, content);
   const refused = faultsFrom(publishing.error);
   const faults = { ...refused, ...(tried && publication.faults) };
@@ -99,7 +139,16 @@ export function PublishDialog(props: PublishDialogProps) {
       <form id="publish" noValidate className="flex flex-col gap-3.5" onSubmit={submit}>
         {children}
         <PublishFields texts={texts} onChange={onTexts} faults={faults} />
-        {failure !== null && (
+        {stale && of !== null && (
+          <Overtaken
+            of={of}
+            onGoOn={(next) => {
+              setLater(next);
+              publishing.reset();
+            }}
+          />
+        )}
+        {failure !== null && !stale && (
           <Notice live tone="fault" title="Nothing was published. What you typed is kept.">
             {failure}
           </Notice>

@@ -40,14 +40,20 @@ export async function removeDemo(em: EntityManager, now: Date): Promise<Removed>
     const [row] = await tx.execute<{ cases: number }[]>('select remove_demo_cases() as cases');
     const cases = row?.cases ?? 0;
     // After the cases: what a case that stays cites, stays too.
-    await tx.execute('select remove_demo_interactions()');
+    const [taken] = await tx.execute<{ interactions: number }[]>(
+      'select remove_demo_interactions() as interactions',
+    );
     await removeIdleCampaigns(tx);
     if (accounts.length > 0 || cases > 0) {
       recordTrail(tx, {
         actor: { name: 'demo:remove' },
         action: 'demo.remove',
         subject: { type: 'demo', id: 'lowmoor' },
-        after: { accounts: accounts.map(({ id }) => id), cases },
+        after: {
+          accounts: accounts.map(({ id }) => id),
+          cases,
+          interactions: taken?.interactions ?? 0,
+        },
         now,
       });
     }

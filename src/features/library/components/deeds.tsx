@@ -21,10 +21,11 @@ function Correct({ newest, etag }: Omit<DeedsProps, 'shown'>) {
   const [texts, setTexts] = useState(() => textsOf(newest));
   const [open, setOpen] = useState(true);
   if (!open) return null;
-  const { id, newestVersion, terms, example } = seen.newest;
+  // The tag is that of what was read; the terms are those of today, so that going on after somebody else takes theirs along.
+  const { id, newestVersion, terms, example } = newest;
   return (
     <PublishDialog
-      of={{ id, newest: newestVersion, etag: seen.etag }}
+      of={{ id, newest: seen.newest.newestVersion, etag: seen.etag }}
       texts={texts}
       onTexts={setTexts}
       content={{ terms, example }}
