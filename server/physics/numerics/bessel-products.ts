@@ -14,8 +14,8 @@ export function besselProductsFor(lMax: number): BesselProducts {
 }
 
 /** Beyond an order where x j_l is so small nothing is left of the waves. */
-const NOTHING_LEFT = 1e-160;
-const LARGEST_FALL = 375;
+const NOTHING_LEFT = 1e-50;
+const LARGEST_FALL = 125;
 
 /** Orders above `top` at which j_{l+1}/j_l may be set to anything: what is wrong about it has died out at `top`. */
 const headStart = (x: number): number => 14 + Math.ceil(8 * Math.cbrt(x));

@@ -1,3 +1,4 @@
+import type { Complex, Term } from '#server/physics/potentials/types.ts';
 import { localPotential } from '../local-potential.ts';
 import type { Amplitude, Unavailable } from '../amplitude.ts';
 import type { MethodInput } from '../method-input.ts';
@@ -17,9 +18,9 @@ export interface SecondAmplitude {
 
 /** Widths of the panels times k: the waves turn through twice as much, and sixteen points follow either to rounding. */
 const COARSE = 5;
-const FINE = 3;
+const FINE = 3.5;
 /** Points times waves: about a second. */
-const MOST_PRODUCTS = 4e7;
+const MOST_PRODUCTS = 7e7;
 
 /** Sums of Yukawa potentials, in closed form; null for anything else. */
 export function closedSecondAmplitude({
@@ -37,6 +38,25 @@ export function closedSecondAmplitude({
   };
 }
 
+/** The phase that all complex strengths share up to sign; null where all are real, or they differ. */
+function commonPhase(terms: readonly Term[]): Complex | null {
+  const [first, ...others] = terms
+    .map(({ strength }) => strength)
+    .filter(({ re, im }) => re !== 0 || im !== 0);
+  if (!first) return null;
+  const size = Math.hypot(first.re, first.im);
+  const shared = others.every(({ re, im }) => re * first.im === im * first.re);
+  const real = first.im === 0 && others.every(({ im }) => im === 0);
+  return shared && !real ? { re: first.re / size, im: first.im / size } : null;
+}
+
+const turnedBack =
+  (phase: Complex) =>
+  (term: Term): Term => {
+    const { re, im } = term.strength;
+    return { ...term, strength: { re: re * phase.re + im * phase.im, im: 0 } };
+  };
+
 /**
  * Second-order amplitude by partial waves, on two meshes of different widths: their difference, wave by wave, is the error of the
  * radial integrals.
@@ -46,7 +66,8 @@ export function numericalSecondAmplitude({
   k,
   twoMuOverHbar2,
 }: MethodInput): SecondAmplitude | Unavailable {
-  const potential = localPotential(terms, twoMuOverHbar2);
+  const phase = commonPhase(terms);
+  const potential = localPotential(phase ? terms.map(turnedBack(phase)) : terms, twoMuOverHbar2);
   const edges = potential.edges.length === 0 ? [] : potentialEdges(potential, k);
   if (edges === null) {
     return {
@@ -60,7 +81,7 @@ export function numericalSecondAmplitude({
   if (!coarse || !fine) return nothing();
   const lMax = highestWave(coarse, k);
   if (!((coarse.length + fine.length) * 16 * lMax <= MOST_PRODUCTS)) return tooLong();
-  const [rough, waves] = [coarse, fine].map((mesh) => secondOrderWaves(mesh, k, lMax));
+  const [rough, waves] = [coarse, fine].map((mesh) => secondOrderWaves(mesh, k, lMax, phase));
   if (!rough || !waves) return nothing();
   const error = waves.rounding.map(
     (rounding, l) =>

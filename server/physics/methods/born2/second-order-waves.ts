@@ -5,6 +5,7 @@ import {
 } from '#server/physics/numerics/bessel-products.ts';
 import { gaussRule } from '#server/physics/numerics/gauss-rule.ts';
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
+import type { Complex } from '#server/physics/potentials/types.ts';
 import type { MeshPanel } from './radial-mesh.ts';
 
 /** Partial waves of first and second order for l = 0 … lMax; S_l = 1 + 2i (T1_l + T2_l + …). */
@@ -58,55 +59,105 @@ interface Sums {
   innerNoise: Float64Array;
 }
 
+/** What every wave of one panel needs, read once. */
+interface Loaded {
+  count: number;
+  re: Float64Array;
+  im: Float64Array | null;
+  upTo: Float64Array;
+  squares: Float64Array[];
+  mixed: Float64Array[];
+  /** w U x² j_l² at the points. */
+  vRe: Float64Array;
+  vIm: Float64Array;
+}
+
+/** Σ_ij a_i (A + Σ_j C_ij v_j) over the points of a panel, for real U; and Σ |a_i|. */
+function realDouble({ count, re, upTo, mixed, vRe }: Loaded, l: number, inner: number) {
+  let double = 0;
+  let size = 0;
+  for (let i = 0; i < count; i++) {
+    let sum = inner;
+    const row = i * count;
+    for (let j = 0; j < count; j++) sum += (upTo[row + j] ?? 0) * (vRe[j] ?? 0);
+    const a = (re[i] ?? 0) * (mixed[i]?.[l] ?? 0);
+    double += a * sum;
+    size += Math.abs(a);
+  }
+  return { re: double, im: 0, size };
+}
+
+/** The same for complex U. */
+function complexDouble(
+  { count, re, im, upTo, mixed, vRe, vIm }: Loaded,
+  l: number,
+  innerRe: number,
+  innerIm: number,
+) {
+  const double = { re: 0, im: 0, size: 0 };
+  for (let i = 0; i < count; i++) {
+    let x = innerRe;
+    let y = innerIm;
+    const row = i * count;
+    for (let j = 0; j < count; j++) {
+      const share = upTo[row + j] ?? 0;
+      x += share * (vRe[j] ?? 0);
+      y += share * (vIm[j] ?? 0);
+    }
+    const wave = mixed[i]?.[l] ?? 0;
+    const a = (re[i] ?? 0) * wave;
+    const b = (im?.[i] ?? 0) * wave;
+    double.re += a * x - b * y;
+    double.im += a * y + b * x;
+    double.size += Math.abs(a) + Math.abs(b);
+  }
+  return double;
+}
+
 /** Adds one panel to the sums of all waves that reach it. */
 function addPanel(panel: MeshPanel, products: readonly BesselProducts[], k: number, sums: Sums) {
   const { r, re, im } = panel;
   const count = r.length;
-  const upTo = count === 1 ? ON_A_SHELL : UP_TO;
-  const reach = products.slice(0, count).reduce((most, { length }) => Math.max(most, length), 0);
-  const noise = (40 + 4 * k * (r[count - 1] ?? 0)) * UNIT_ROUNDOFF;
+  const used = products.slice(0, count);
   const vRe = new Float64Array(count);
   const vIm = new Float64Array(count);
+  const loaded: Loaded = {
+    count,
+    re,
+    im,
+    upTo: count === 1 ? ON_A_SHELL : UP_TO,
+    squares: used.map(({ square }) => square),
+    mixed: used.map(({ mixed }) => mixed),
+    vRe,
+    vIm,
+  };
+  const reach = used.reduce((most, { length }) => Math.max(most, length), 0);
+  const noise = (40 + 4 * k * (r[count - 1] ?? 0)) * UNIT_ROUNDOFF;
   for (let l = 0; l < reach; l++) {
     let pRe = 0;
     let pIm = 0;
     let pSize = 0;
     for (let j = 0; j < count; j++) {
-      const wave = products[j]?.square[l] ?? 0;
+      const wave = loaded.squares[j]?.[l] ?? 0;
       const a = (re[j] ?? 0) * wave;
-      const b = im ? (im[j] ?? 0) * wave : 0;
       vRe[j] = a;
-      vIm[j] = b;
       pRe += a;
+      pSize += Math.abs(a);
+      if (im === null) continue;
+      const b = (im[j] ?? 0) * wave;
+      vIm[j] = b;
       pIm += b;
-      pSize += Math.abs(a) + Math.abs(b);
+      pSize += Math.abs(b);
     }
-    const [aRe, aIm] = [sums.innerRe[l] ?? 0, sums.innerIm[l] ?? 0];
-    let dRe = 0;
-    let dIm = 0;
-    let mSize = 0;
-    for (let i = 0; i < count; i++) {
-      let sRe = aRe;
-      let sIm = aIm;
-      const row = i * count;
-      for (let j = 0; j < count; j++) sRe += (upTo[row + j] ?? 0) * (vRe[j] ?? 0);
-      const wave = products[i]?.mixed[l] ?? 0;
-      const a = (re[i] ?? 0) * wave;
-      dRe += a * sRe;
-      mSize += Math.abs(a);
-      if (!im) continue;
-      for (let j = 0; j < count; j++) sIm += (upTo[row + j] ?? 0) * (vIm[j] ?? 0);
-      const b = (im[i] ?? 0) * wave;
-      dRe -= b * sIm;
-      dIm += a * sIm + b * sRe;
-      mSize += Math.abs(b);
-    }
+    const aRe = sums.innerRe[l] ?? 0;
+    const aIm = sums.innerIm[l] ?? 0;
+    const double = im === null ? realDouble(loaded, l, aRe) : complexDouble(loaded, l, aRe, aIm);
     const size = (sums.innerSize[l] ?? 0) + pSize;
-    sums.noise[l] = (sums.noise[l] ?? 0) + mSize * (noise * size + (sums.innerNoise[l] ?? 0));
+    sums.noise[l] = (sums.noise[l] ?? 0) + double.size * (noise * size + (sums.innerNoise[l] ?? 0));
     sums.innerNoise[l] = (sums.innerNoise[l] ?? 0) + noise * pSize;
     sums.innerSize[l] = size;
-    sums.doubleRe[l] = (sums.doubleRe[l] ?? 0) + dRe;
-    sums.doubleIm[l] = (sums.doubleIm[l] ?? 0) + dIm;
+    sums.doubleRe[l] = (sums.doubleRe[l] ?? 0) + double.re;
+    sums.doubleIm[l] = (sums.doubleIm[l] ?? 0) + double.im;
     sums.innerRe[l] = aRe + pRe;
     sums.innerIm[l] = aIm + pIm;
   }
@@ -131,6 +182,7 @@ function fill(into: BesselProducts, x: number, lMax: number): void {
  * @param panels of U, in order of r
  * @param k wave number, 1/angstrom, > 0
  * @param lMax highest l
+ * @param phase number of modulus one by which U is to be multiplied, where all strengths share it
  * @returns waves with a bound of their rounding; what the panels leave out is seen by cutting them finer
  *
  * Validity: U smooth on each panel, panels not wider than some 5/k.
@@ -141,6 +193,7 @@ export function secondOrderWaves(
   panels: readonly MeshPanel[],
   k: number,
   lMax: number,
+  phase: Complex | null = null,
 ): SecondOrderWaves {
   const zeros = () => new Float64Array(lMax + 1);
   const sums: Sums = {
@@ -160,11 +213,23 @@ export function secondOrderWaves(
     });
     addPanel(panel, products, k, sums);
   }
-  return fromSums(sums, k);
+  return fromSums(sums, k, phase);
 }
 
-function fromSums(sums: Sums, k: number): SecondOrderWaves {
-  const { innerRe, innerIm, doubleRe, doubleIm, noise, innerNoise } = sums;
+/** The sums of real U, turned into those of U times a number of modulus one. */
+function turned({ innerRe, doubleRe }: Sums, { re, im }: Complex) {
+  const square = { re: (re - im) * (re + im), im: 2 * re * im };
+  return {
+    innerRe: innerRe.map((value) => re * value),
+    innerIm: innerRe.map((value) => im * value),
+    doubleRe: doubleRe.map((value) => square.re * value),
+    doubleIm: doubleRe.map((value) => square.im * value),
+  };
+}
+
+function fromSums(sums: Sums, k: number, phase: Complex | null): SecondOrderWaves {
+  const { noise, innerNoise } = sums;
+  const { innerRe, innerIm, doubleRe, doubleIm } = phase === null ? sums : turned(sums, phase);
   const twice = 2 / k / k;
   const firstRe = innerRe.map((value) => -value / k);
   const firstIm = innerIm.map((value) => -value / k);
