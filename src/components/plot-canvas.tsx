@@ -11,6 +11,7 @@ import * as echarts from 'echarts/core';
 import { CanvasRenderer, SVGRenderer } from 'echarts/renderers';
 import EChartsReact from 'echarts-for-react/esm/core';
 import { usePalette } from '#src/lib/theme.ts';
+import { fonts } from '#src/styles/tokens.ts';
 import { plotOption } from './plot-option.ts';
 import type { PlotPicture } from './plot-types.ts';
 
@@ -64,6 +65,17 @@ export default function PlotCanvas({ picture, onPoint, onWindow, onBand }: PlotC
     const observer = new ResizeObserver(() => chart.current?.getEchartsInstance().resize());
     observer.observe(element);
     return () => observer.disconnect();
+  }, []);
+
+  // A canvas asks for a face it has not got yet, but is not drawn anew when it comes.
+  useEffect(() => {
+    let gone = false;
+    void document.fonts.load(`12px ${fonts.sans}`, '0⁻⁴₀').then(() => {
+      if (!gone) chart.current?.getEchartsInstance().resize();
+    });
+    return () => {
+      gone = true;
+    };
   }, []);
 
   useEffect(() => {

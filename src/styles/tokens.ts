@@ -63,10 +63,10 @@ export const series: ReadonlyArray<{ role: ColourRole; dash: readonly number[] }
 ];
 
 export const fonts = {
-  sans: '"Source Sans 3 Variable", system-ui, sans-serif',
-  display: '"Fraunces Variable", Georgia, serif',
-  // Superscripts of their own (styles/fonts.css); Source Sans stands in for the few other signs Plex Mono lacks.
-  mono: '"Tallybarn Superscripts", "IBM Plex Mono", "Source Sans 3 Variable", ui-monospace, monospace',
+  // Superscripts and subscripts of their own (styles/fonts.css); Source Sans stands in for the few other signs Plex Mono lacks.
+  sans: '"Source Sans 3 Variable", "Tallybarn Scripts", system-ui, sans-serif',
+  display: '"Fraunces Variable", "Tallybarn Scripts", Georgia, serif',
+  mono: '"Tallybarn Superscripts", "IBM Plex Mono", "Tallybarn Scripts", "Source Sans 3 Variable", ui-monospace, monospace',
 } as const;
 
 export const radius = '6px';
