@@ -42,7 +42,7 @@ export interface RadialPanels {
 
 export const FIELD_STRIDE = 18;
 export const POWER_STRIDE = 64;
-const MOST_PANELS = 20_000;
+const MOST_PANELS = 12_000;
 /** Phase of the local wave on one panel. */
 const PHASE = 2.2;
 /** Width over distance from the origin. */

@@ -26,15 +26,22 @@ export function riccatiRatio(l: number, x: number): number {
  *
  * @param x argument, > 0, no unit
  * @param F, G arrays of one length, filled from order 0 on
- * @returns the highest order filled: the last of the arrays, or the last with |G| below 1e140
+ * @param largest where the irregular function is cut off
+ * @returns the highest order filled: the last of the arrays, or the last with |G| below `largest`
  * @throws RangeError outside the domain
  *
  * Validity: relative error of the envelope below about 1e-14 for x to 1e3; the rounding of x itself is not in it.
  *
  * Source: DLMF 10.51.1, 10.50.1; W. Gautschi, SIAM Review 9 (1967) 24.
  */
-export function riccatiBessel(x: number, F: Float64Array, G: Float64Array): number {
+export function riccatiBessel(
+  x: number,
+  F: Float64Array,
+  G: Float64Array,
+  largest = LARGEST,
+): number {
   if (!(x > 0 && x < Infinity)) throw new RangeError(`F_l is asked at ${x}; it needs x > 0`);
+  const inverse = 1 / x;
   const [sine, cosine] = [Math.sin(x), Math.cos(x)];
   const last = Math.min(F.length, G.length) - 1;
   G[0] = cosine;
@@ -42,10 +49,10 @@ export function riccatiBessel(x: number, F: Float64Array, G: Float64Array): numb
   let lower = cosine;
   let value = cosine / x + sine;
   let top = 0;
-  while (top < last && Math.abs(value) < LARGEST) {
+  while (top < last && Math.abs(value) < largest) {
     top += 1;
     G[top] = value;
-    const next = ((2 * top + 1) / x) * value - lower;
+    const next = (2 * top + 1) * inverse * value - lower;
     lower = value;
     value = next;
   }

@@ -47,13 +47,14 @@ function fallsAsPower({ tail, form, reach, v }: Term): boolean {
 
 const isActive = ({ strength }: Term): boolean => strength.re !== 0 || strength.im !== 0;
 
-function refusal(terms: readonly Term[]): string | null {
-  for (const { form, strength, spinOrbit } of terms) {
+function refusal(terms: readonly Term[], k: number): string | null {
+  for (const { form, strength, spinOrbit, kinks = [] } of terms) {
     if (form === 'contact') {
       return 'A contact interaction is first order by definition: its length already is the exact one at zero energy, and higher orders of a delta function in three dimensions do not exist. Use born1.';
     }
-    if (form === 'atomicElectron') {
-      return 'atomicElectron is known by its scattering factor, fitted piece by piece in q; the fits give no potential near the nucleus to the accuracy of phase shifts. Use moliere or screenedCoulomb for partial waves.';
+    const joint = Math.min(...kinks);
+    if (form === 'atomicElectron' && 2 * k > joint) {
+      return `atomicElectron is known by its scattering factor: a sum of Gaussians, which is a potential, up to q = ${joint.toPrecision(4)} per angstrom, and another formula beyond, which is none. This energy reaches q = ${(2 * k).toPrecision(4)}; use moliere or screenedCoulomb for partial waves, or lower the energy.`;
     }
     if (strength.im > 0 && spinOrbit !== true) {
       return 'The imaginary part of the potential is positive: it would create particles. Absorption has W0 < 0.';
@@ -91,7 +92,7 @@ function reachOf(terms: readonly Term[], rest: (r: number) => number, charge: nu
 export function radialInteraction(input: MethodInput): RadialInteraction | Unavailable {
   const { twoMuOverHbar2, born } = input;
   const terms = input.terms.filter(isActive);
-  const reason = refusal(terms);
+  const reason = refusal(terms, input.k);
   if (reason !== null) return { unavailable: reason };
   if (born.tail.im !== 0) {
     return {

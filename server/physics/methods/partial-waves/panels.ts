@@ -21,7 +21,7 @@ export interface Panels {
 /** What is left of the interaction beyond the followed panels may be this strong: its square is lost in rounding. */
 const LEFT = 4e-9;
 /** Radians of the wave over which it is followed at most. */
-const MOST_PHASE = 2e4;
+const MOST_PHASE = 8000;
 
 /** What the fit of U may miss, in phase, of a strong and of a weak interaction. */
 const MISSED = 1e-18;

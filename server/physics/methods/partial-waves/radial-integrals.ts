@@ -16,6 +16,8 @@ const RULE = gaussRule(16);
 const FINE = { powers: 12, panels: 2 };
 /** Where U is so small that eight digits of it are enough. */
 const COARSE = { powers: 24, panels: 4 };
+/** Where the irregular function is so large, the square of the regular one is below 1e-26. */
+const UNFELT = 1e13;
 /** Integrals below this do not count. */
 const NEGLIGIBLE = 1e-19;
 
@@ -105,7 +107,7 @@ function accumulate(
   const out = new Float64Array(field.components);
   for (const [r, weight] of nodes) {
     field.at(r, out);
-    const top = riccatiBessel(k * r, F, G);
+    const top = riccatiBessel(k * r, F, G, UNFELT);
     for (let c = 0; c < FF.length; c++) {
       const w = (weight * (out[c] ?? 0)) / k;
       if (w === 0) continue;

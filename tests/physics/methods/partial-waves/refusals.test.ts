@@ -16,9 +16,10 @@ describe('what partial waves cannot do is said', () => {
     expect(reasonOf([well, contact], 1)).toMatch(/contact/);
   });
 
-  test('a scattering factor is no potential', () => {
+  test('a scattering factor is a potential as far as it is one sum of Gaussians', () => {
     const carbon = build('atomicElectron', { element: 'C' }, CONTEXT);
-    expect(reasonOf([carbon], 5)).toMatch(/scattering factor.*moliere/);
+    expect(reasonOf([carbon], 13)).toMatch(/scattering factor.*q = 25\.13.*moliere/);
+    expect(reasonOf([carbon], 5)).toBe('available');
   });
 
   test('a term that creates particles', () => {
