@@ -113,15 +113,26 @@ describe('spin-orbit term', () => {
     expectRelative(((4 * Math.PI) / K) * (found.amplitude(0)?.im ?? NaN), total, 1e-10);
   });
 
-  test('the sign of the analysing power: M = f + i g sigma·n', () => {
-    // Of a beam polarised along n = k_in × k_out the two spin states scatter with f + i g and f - i g.
-    const { f, g } = at(found, 0.9);
-    const up = (f.re - g.im) ** 2 + (f.im + g.re) ** 2;
-    const down = (f.re + g.im) ** 2 + (f.im - g.re) ** 2;
-    const formula =
-      (2 * (f.im * g.re - f.re * g.im)) / (f.re ** 2 + f.im ** 2 + g.re ** 2 + g.im ** 2);
-    expectRelative((up - down) / (up + down), formula, 1e-12);
-    expect(Math.abs(formula)).toBeGreaterThan(0.01);
+  test('amplitudes and the sign of the analysing power by Clebsch-Gordan coefficients', () => {
+    for (const theta of [0.4, 0.9, 2.2]) {
+      const { f, g } = at(found, theta);
+      const bySpin = coupled(found, theta);
+      expectRelative(bySpin.kept.re, f.re, 1e-9);
+      expectRelative(bySpin.kept.im, f.im, 1e-9);
+      // Polarised along y = k_in × k_out: states (1, ±i)/√2, so that the flip adds to or takes from what is kept.
+      const { kept, raised } = bySpin;
+      const [up, down] = [1, -1].map((sign) => {
+        // <(1, i)| M |(1, i)>/2 = kept + i raised for the upper sign; the other component follows by symmetry.
+        const re = kept.re - sign * raised.im;
+        const im = kept.im + sign * raised.re;
+        return re * re + im * im;
+      });
+      const asymmetry = ((up ?? NaN) - (down ?? NaN)) / ((up ?? NaN) + (down ?? NaN));
+      const formula =
+        (2 * (f.im * g.re - f.re * g.im)) / (f.re ** 2 + f.im ** 2 + g.re ** 2 + g.im ** 2);
+      expectRelative(asymmetry, formula, 1e-8);
+      expect(Math.abs(formula)).toBeGreaterThan(1e-3);
+    }
   });
 });
 
@@ -131,4 +142,33 @@ function fejer(n: number, i: number): number {
   let sum = 1;
   for (let j = 1; j <= n / 2; j++) sum -= (2 * Math.cos(2 * j * theta)) / (4 * j * j - 1);
   return (2 / n) * sum;
+}
+
+/**
+ * f_{++} and f_{+-} (from spin down to up) in the plane of x and z, beam along z: (4 pi/k) Σ T <l 0 ½ m|j m> <l m-m' ½ m'|j m>
+ * sqrt((2l+1)/4 pi) Y_{l,m-m'}(theta, 0), with the phases of Condon and Shortley.
+ */
+function coupled({ waves }: PartialWaves, theta: number) {
+  const kept = { re: 0, im: 0 };
+  const raised = { re: 0, im: 0 };
+  for (const { l, j, delta, eta } of waves) {
+    const [p, d] = legendre(l, Math.cos(theta));
+    const [tRe, tIm] = [(eta * Math.sin(2 * delta)) / 2, (1 - eta * Math.cos(2 * delta)) / 2];
+    const isUp = (j ?? 0) > l;
+    const n = 2 * l + 1;
+    // <l 0 ½ ½|j ½>², and <l 0 ½ -½|j -½> <l -1 ½ ½|j -½>
+    const straight = (isUp ? l + 1 : l) / n;
+    const turned = (isUp ? 1 : -1) * (Math.sqrt(l * (l + 1)) / n);
+    const root = Math.sqrt(n / (4 * Math.PI));
+    const [Y0, Yminus] = [
+      root * p,
+      l === 0 ? 0 : (root * Math.sin(theta) * d) / Math.sqrt(l * (l + 1)),
+    ];
+    const factor = ((4 * Math.PI) / K) * root;
+    kept.re += factor * straight * Y0 * tRe;
+    kept.im += factor * straight * Y0 * tIm;
+    raised.re += factor * turned * Yminus * tRe;
+    raised.im += factor * turned * Yminus * tIm;
+  }
+  return { kept, raised };
 }
