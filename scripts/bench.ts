@@ -2,7 +2,9 @@
 import { benchEstimates } from './bench/estimates.ts';
 import { benchFirstBorn } from './bench/first-born.ts';
 import { benchForms } from './bench/forms.ts';
+import { benchPartialWaves } from './bench/partial-waves.ts';
 
 benchFirstBorn();
 benchForms();
+benchPartialWaves();
 await benchEstimates();
