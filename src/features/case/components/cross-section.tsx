@@ -13,28 +13,11 @@ import { FiguresStrip } from './figures-strip.tsx';
 import { KinematicsList } from './kinematics-list.tsx';
 import { MethodChoice } from './method-choice.tsx';
 import { PotentialSketch } from './potential-sketch.tsx';
+import { WarningList } from './warning-list.tsx';
 
 /** What to beware of stands out; what only rounds the picture off stands small. */
 export function Warnings({ estimate, except }: { estimate: Estimate; except?: string }) {
-  const warnings = estimate.warnings.filter(({ code }) => code !== except);
-  const cautions = warnings.filter(({ level }) => level !== 'info');
-  const remarks = warnings.filter(({ level }) => level === 'info');
-  return (
-    <>
-      {cautions.map((warning) => (
-        <Notice key={`${warning.code} ${warning.message}`} tone="attention">
-          {warning.message}
-        </Notice>
-      ))}
-      {remarks.length > 0 && (
-        <ul className="flex flex-col gap-1 px-1 text-sm text-muted">
-          {remarks.map((remark) => (
-            <li key={`${remark.code} ${remark.message}`}>{remark.message}</li>
-          ))}
-        </ul>
-      )}
-    </>
-  );
+  return <WarningList warnings={estimate.warnings.filter(({ code }) => code !== except)} />;
 }
 
 function UnavailableMethods({ estimate }: { estimate: Estimate }) {

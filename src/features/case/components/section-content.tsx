@@ -8,6 +8,7 @@ import { GoldenRuleSheet } from './golden-rule.tsx';
 import { InputList } from './input-list.tsx';
 import { Record } from './record.tsx';
 import type { Section } from './section-tabs.tsx';
+import { RunPlanSection } from '../run-plan/run-plan-section.tsx';
 import { ValiditySection } from '../validity/validity-section.tsx';
 import { NothingFiled } from './withdraw.tsx';
 
@@ -37,6 +38,9 @@ export function SectionContent({ section, saved, failure, onRetry }: SectionCont
   const { estimate, problems } = useEditing();
   if (section === 'record') {
     return saved ? <Record detail={saved.detail} etag={saved.etag} /> : <NothingFiled />;
+  }
+  if (section === 'run-plan') {
+    return <RunPlanSection fileName={fileNameOf(saved).replace(/-dcs$/, '')} />;
   }
   if (section === 'validity') {
     return (

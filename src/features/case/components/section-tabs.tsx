@@ -1,13 +1,14 @@
 import { Link, useLocation, useSearchParams } from 'react-router-dom';
 import { classNames } from '#src/lib/class-names.ts';
 
-export const SECTIONS = ['cross-section', 'golden-rule', 'validity', 'record'] as const;
+export const SECTIONS = ['cross-section', 'golden-rule', 'validity', 'run-plan', 'record'] as const;
 export type Section = (typeof SECTIONS)[number];
 
 const NAMES: Record<Section, string> = {
   'cross-section': 'Cross section',
   'golden-rule': 'Golden rule',
   validity: 'Validity',
+  'run-plan': 'Run plan',
   record: 'Record',
 };
 

@@ -90,6 +90,22 @@ function unitsText({ units }: CaseDocument): string {
   return [length, area, energy].map(unitSymbol).join(', ');
 }
 
+/** A plan in a line; two plans that read alike are told apart by a mark. */
+function runPlanText({ runPlan }: CaseDocument): string {
+  if (!runPlan) return 'none';
+  const { beam, foil, gas, detectors } = runPlan;
+  const rate = beam.particlesPerSecond;
+  const particles = typeof rate === 'number' ? `${digits(rate)} /s` : rate && quantityText(rate);
+  const target = foil?.thickness ?? foil?.arealDensity ?? gas?.pressure;
+  const parts = [
+    beam.current ? quantityText(beam.current) : particles,
+    target && quantityText(target),
+    `${detectors.length} ${detectors.length === 1 ? 'detector' : 'detectors'}`,
+    `mark ${fingerprint(JSON.stringify(runPlan))}`,
+  ];
+  return parts.filter((part) => part !== undefined).join(', ');
+}
+
 const TITLE: FieldSpec = {
   key: 'title',
   label: 'Title',
@@ -120,6 +136,7 @@ const TABLE: FieldSpec[] = [
   member('frame', 'Frame', ({ frame }) => FRAME_NAMES[frame ?? 'cm']),
   member('goldenRule', 'Golden rule', goldenRuleText),
   member('units', 'Units of the answer', unitsText),
+  member('runPlan', 'Run plan', runPlanText),
 ];
 
 function takeParameter(into: Content, from: Content, index: number, key: string): Content {

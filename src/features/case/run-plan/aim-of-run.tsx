@@ -1,0 +1,95 @@
+import type { RunPlanBody } from '#shared/contracts/run-plans.ts';
+import type { UncertainInput } from '#shared/contracts/run-plans.ts';
+import { UNCERTAIN_INPUTS } from '#shared/contracts/run-plans.ts';
+import type { Method } from '#shared/contracts/estimates.ts';
+import { METHODS } from '#shared/contracts/estimates.ts';
+import { ChoiceField } from '../components/choice-field.tsx';
+import { NumberField, QuantityField } from '../components/typed-fields.tsx';
+import { useEditing } from '../editing/editor-context.ts';
+import { METHOD_NAMES } from '../model/words.ts';
+import { putIn, withPlan } from './model/plan.ts';
+
+export const INPUT_NAMES: Record<UncertainInput, string> = {
+  current: 'current',
+  thickness: 'thickness',
+  density: 'density',
+  efficiency: 'efficiency',
+  solidAngle: 'solid angle',
+  background: 'background',
+  energy: 'energy',
+  angle: 'angle',
+};
+
+/** What the run is to reach, and by which cross section. */
+export function AimOfRun({ plan }: { plan: RunPlanBody }) {
+  const { editDocument } = useEditing();
+  const { aim } = plan;
+  return (
+    <div className="grid grid-cols-2 gap-3">
+      <ChoiceField<Method>
+        pointer="/runPlan/method"
+        label="Cross section by"
+        value={plan.method ?? 'born1'}
+        choices={METHODS.map((value) => ({ value, label: METHOD_NAMES[value] }))}
+        onChange={(method) =>
+          editDocument('/runPlan/method', (document) =>
+            withPlan(document, (before) => ({ ...before, method })),
+          )
+        }
+      />
+      <NumberField
+        optional
+        pointer="/runPlan/aim/relativePrecision"
+        label="Precision of the counts"
+        value={aim?.relativePrecision}
+        rules={{ minimum: 0, exclusiveMinimum: true, maximum: 0.999, what: 'The precision' }}
+        put={putIn('aim', 'relativePrecision')}
+        hint="Relative, at every detector: 0.02 is 2 %."
+      />
+      <QuantityField
+        optional
+        pointer="/runPlan/aim/beamTime"
+        label="Beam time there is"
+        name="the beam time"
+        dimension="time"
+        value={aim?.beamTime}
+        fallbackUnit="h"
+        rules={{ minimum: 0, exclusiveMinimum: true, what: 'The beam time', unit: 's' }}
+        put={putIn('aim', 'beamTime')}
+        hint="Sample and blank together."
+      />
+    </div>
+  );
+}
+
+/** Relative standard uncertainties of the inputs. */
+export function UncertaintiesOfRun({ plan }: { plan: RunPlanBody }) {
+  return (
+    <details className="rounded border border-line px-3 py-2">
+      <summary className="cursor-pointer text-sm font-semibold">
+        Uncertainties of the inputs
+        <span className="ml-2 font-normal text-muted">
+          {Object.keys(plan.uncertainties ?? {}).length} stated
+        </span>
+      </summary>
+      <div className="mt-3 grid grid-cols-2 gap-3 @lg:grid-cols-4">
+        {UNCERTAIN_INPUTS.map((input) => (
+          <NumberField
+            key={input}
+            optional
+            pointer={`/runPlan/uncertainties/${input}`}
+            label={input === 'angle' ? 'angle (absolute)' : `${INPUT_NAMES[input]} (relative)`}
+            {...(input === 'angle' && { suffix: '°' })}
+            value={plan.uncertainties?.[input]}
+            rules={{
+              minimum: 0,
+              maximum: input === 'angle' ? 10 : 1,
+              what: `The uncertainty of the ${INPUT_NAMES[input]}`,
+            }}
+            put={putIn('uncertainties', input)}
+          />
+        ))}
+      </div>
+    </details>
+  );
+}
