@@ -68,4 +68,6 @@ export interface Plan extends PlannedCollision {
   contributions: readonly PlanContribution[];
   aim: { precision: number; beamTime: number | null };
   uncertainties: GivenUncertainties;
+  /** Index of the detector the others are divided by; null without one. */
+  monitor: number | null;
 }

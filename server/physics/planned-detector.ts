@@ -37,7 +37,11 @@ export interface Shared {
   collisions: number;
 }
 
-function slabFor({ plan, collisions }: Shared, { side }: PlanDetector): Slab {
+/** What the particles of a detector cross, tilted towards its side. */
+export function slabFor(
+  { plan, collisions }: Pick<Shared, 'plan' | 'collisions'>,
+  { side }: PlanDetector,
+): Slab {
   const { kind, tilt } = plan.target;
   return { kind, collisions: collisions * Math.cos(tilt), tilt: side * tilt };
 }
@@ -67,6 +71,7 @@ function budgetOf(
   d: PlanDetector,
 ) {
   const { plan, curveAt, nodes } = shared;
+  if (Object.keys(plan.uncertainties).length === 0) return { lines: [], combined: 0 };
   const { energy } = plan.problem;
   const slab = slabFor(shared, d);
   const loses = nodes.some(({ depth }) => depth !== null);
@@ -76,7 +81,7 @@ function budgetOf(
       : 0;
   const mean = nodes.reduce((sum, node) => sum + node.weight * node.energy, 0);
   const byThickness =
-    1 + attenuationSlope(slab, d.cone.theta) + (byEnergy * (mean - energy)) / energy;
+    1 + attenuationSlope(curveAt(energy), d.cone, slab) + (byEnergy * (mean - energy)) / energy;
   const { signal, background } = planned.rates;
   return uncertaintyLines(plan.uncertainties, {
     current: 1,

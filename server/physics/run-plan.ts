@@ -7,7 +7,7 @@ import type { CollisionCurve } from './collision-curve.ts';
 import { collisionCurve, removalOf } from './collision-curve.ts';
 import type { Plan, PlanDetector, PlannedCollision } from './plan.ts';
 import type { PlannedDetector } from './planned-detector.ts';
-import { planDetector, silence } from './planned-detector.ts';
+import { planDetector, silence, slabFor } from './planned-detector.ts';
 import type { TargetChecks } from './target-checks.ts';
 import { targetChecks } from './target-checks.ts';
 
@@ -35,7 +35,8 @@ const once = (curveAt: (energy: number) => CollisionCurve) => {
     return curve;
   };
 };
-const curvesOf = ({ problemAt, method }: PlannedCollision) =>
+/** Cross sections of a collision by energy, each made once. */
+export const curvesOf = ({ problemAt, method }: PlannedCollision) =>
   once((energy) => collisionCurve(problemAt(energy), method));
 
 /** The angle beyond which a collision counts where their number diverges, rad. */
@@ -55,6 +56,15 @@ function totalsOf(detectors: readonly PlannedDetector[]) {
     totalTimeInTurn: known.reduce((sum, { signal, blank }) => sum + signal + blank, 0),
   };
 }
+
+/** Mean energy lost before the collision, eV. */
+export function meanLossOf({ checks }: Pick<RunPlanResult, 'checks'>): number {
+  return 'lossTo' in checks.loss ? checks.loss.lossTo(1) / 2 : 0;
+}
+
+/** What the particles of one detector cross. */
+export const slabOf = ({ plan, collisions }: RunPlanResult, detector: PlanDetector) =>
+  slabFor({ plan, collisions }, detector);
 
 /**
  * A run: rates of every detector from the cross section of an estimate, times for the aim, and whether it can be done.

@@ -132,6 +132,17 @@ export const uncertaintiesSchema = z.strictObject({
     .max(10, 'The uncertainty of the angle is at most 10 degrees.')
     .optional(),
 });
+export type UncertaintiesSent = z.infer<typeof uncertaintiesSchema>;
+
+export const INPUT_DISTRIBUTIONS = ['normal', 'rectangular', 'triangular', 'arcsine'] as const;
+/** How an uncertainty is known; whatever the distribution, its value is the standard uncertainty, not a half-width. */
+const kindOfUncertainty = z.strictObject({
+  type: z.enum(['A', 'B']).optional(),
+  distribution: z.enum(INPUT_DISTRIBUTIONS).optional(),
+  freedom: plain('Degrees of freedom').gt(0, 'Degrees of freedom are above zero.').optional(),
+});
+export const uncertaintyKindsSchema = z.partialRecord(z.enum(UNCERTAIN_INPUTS), kindOfUncertainty);
+export type UncertaintyKindsSent = z.infer<typeof uncertaintyKindsSchema>;
 
 export const contributionSchema = z.strictObject({ scatterer: atom, estimate: inFlight, method });
 
@@ -158,6 +169,10 @@ export const runPlanBodySchema = z.strictObject({
     })
     .optional(),
   uncertainties: uncertaintiesSchema.optional(),
+  /** Type, distribution and degrees of freedom of what is uncertain; type B, normal and known without end where left out. */
+  uncertaintyKinds: uncertaintyKindsSchema.optional(),
+  /** A detector whose counts the others are divided by: current, thickness and density then cancel. */
+  monitor: name.optional(),
 });
 export type RunPlanBody = z.infer<typeof runPlanBodySchema>;
 
@@ -180,6 +195,12 @@ const budgetLineSchema = z.object({
   sensitivity: z.number(),
   /** Relative standard uncertainty of the result from this input alone. */
   contribution: z.number(),
+  type: z.enum(['A', 'B']),
+  distribution: z.enum(INPUT_DISTRIBUTIONS),
+  /** Degrees of freedom; null where the uncertainty itself is known. */
+  freedom: z.number().nullable(),
+  /** Whether all detectors share it: fully correlated between them. */
+  shared: z.boolean(),
 });
 export type BudgetLine = z.infer<typeof budgetLineSchema>;
 
@@ -234,6 +255,15 @@ export const plannedDetectorSchema = z.object({
   combined: z.number(),
   /** With the statistical part of the aim. */
   combinedWithCounting: z.number(),
+  /** The same times the coverage factor of 95 %; degrees of freedom null where they are without end. */
+  expanded: z.object({
+    coverage: z.number(),
+    freedom: z.number().nullable(),
+    coverageFactor: z.number(),
+    relative: z.number(),
+  }),
+  /** Of the ratio to the monitor, inputs alone; only with a monitor. */
+  combinedOfRatio: z.number().optional(),
   /** Past it the inputs outweigh the statistics of counting: more beam is useless. */
   usefulTime: z.union([quantity, unavailable]),
   /** Relative change of the signal rate per degree that the detector stands further out. */

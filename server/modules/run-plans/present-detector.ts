@@ -9,11 +9,16 @@ import { characteristicLimits } from '#server/physics/counting/statistics/iso119
 import { currieLimits } from '#server/physics/counting/statistics/currie.ts';
 import type { Blank } from '#server/physics/counting/statistics/currie.ts';
 import { recordedOf } from '#server/physics/counting/times.ts';
+import {
+  expandedUncertainty,
+  ratioUncertainty,
+} from '#server/physics/counting/uncertainty-lines.ts';
 import type { PlannedDetector as Planned } from '#server/physics/planned-detector.ts';
 import { silence } from '#server/physics/planned-detector.ts';
 import type { RunPlanResult } from '#server/physics/run-plan.ts';
 
 const PER_CM2 = 1e16;
+const COVERAGE = 0.95;
 const DEGREE = Math.PI / 180;
 const because = (reason: string) => ({ unavailable: true as const, reason });
 const perSecond = (value: number): Quantity => ({ value: finite(value), unit: '1/s' });
@@ -153,6 +158,25 @@ function sameAngleOf(
   }));
 }
 
+function expandedOf({ lines }: Planned, precision: number): PlannedDetector['expanded'] {
+  const { freedom, coverageFactor, expanded } = expandedUncertainty(lines, precision, COVERAGE);
+  return {
+    coverage: COVERAGE,
+    freedom: freedom < Infinity ? freedom : null,
+    coverageFactor,
+    relative: finite(expanded),
+  };
+}
+
+function ofRatio(
+  planned: Planned,
+  { plan, detectors }: RunPlanResult,
+): Pick<PlannedDetector, 'combinedOfRatio'> {
+  const monitor = plan.monitor === null ? undefined : detectors[plan.monitor];
+  if (!monitor || monitor === planned) return {};
+  return { combinedOfRatio: ratioUncertainty(planned.lines, monitor.lines) };
+}
+
 /** One detector of a plan in its units. */
 export function presentDetector(
   planned: Planned,
@@ -193,9 +217,12 @@ export function presentDetector(
     uncertaintyBudget: planned.lines.map((line) => ({
       ...line,
       sensitivity: finite(line.sensitivity),
+      freedom: line.freedom < Infinity ? line.freedom : null,
     })),
     combined: finite(combined),
     combinedWithCounting: finite(Math.hypot(combined, precision)),
+    expanded: expandedOf(planned, precision),
+    ...ofRatio(planned, result),
     usefulTime: usefulTimeOf(planned, precision),
     angleSensitivity: planned.angleSlope === null ? null : finite(planned.angleSlope * DEGREE),
     sameAngle: sameAngleOf(planned, result, units),

@@ -5,8 +5,15 @@ import { Faults } from '#server/modules/estimates/faults.ts';
 import { toProblem } from '#server/modules/estimates/to-problem.ts';
 import { particlesOfCurrent } from '#server/physics/counting/beam.ts';
 import type { Particle, Problem } from '#server/physics/problem.ts';
-import type { Plan, PlanContribution, PlannedCollision, PlanTarget } from '#server/physics/plan.ts';
+import type {
+  Plan,
+  PlanContribution,
+  PlannedCollision,
+  PlanTarget,
+  PlanDetector,
+} from '#server/physics/plan.ts';
 import { toDetectors } from './to-detectors.ts';
+import { toUncertainties } from './to-uncertainties.ts';
 import { toTargetOfRun } from './to-target.ts';
 
 export const DEFAULT_PRECISION = 0.01;
@@ -128,6 +135,19 @@ function toContributions(
   });
 }
 
+/** The index of the monitor; null without one. */
+function toMonitor(
+  { monitor, detectors }: RunPlanRequest,
+  planned: readonly PlanDetector[],
+  faults: Faults,
+): number | null {
+  if (monitor === undefined) return null;
+  const found = planned.findIndex(({ name }) => name === monitor);
+  if (found >= 0 || planned.length < detectors.length) return found;
+  faults.add('/monitor', `No detector is named ${monitor}: a monitor is one of the detectors.`);
+  return null;
+}
+
 /**
  * The run a request asks for: units end here.
  * Throws DomainError('invalidInput') with all faults found, each with its JSON Pointer.
@@ -142,6 +162,8 @@ export function toPlan(request: RunPlanRequest): Plan {
   const detectors = toDetectors(request.detectors, faults);
   const contributions =
     problem && target ? toContributions(request, problem.energy, target, faults) : [];
+  const monitor = toMonitor(request, detectors, faults);
+  const uncertainties = toUncertainties(request, faults);
   faults.throwIfAny();
   if (!collision || !problem || !target) throw new Error('A fault was not recorded.');
   const { relativePrecision, beamTime } = request.aim ?? {};
@@ -155,6 +177,7 @@ export function toPlan(request: RunPlanRequest): Plan {
       precision: relativePrecision ?? DEFAULT_PRECISION,
       beamTime: beamTime ? toInternal(beamTime, 'time') : null,
     },
-    uncertainties: request.uncertainties ?? {},
+    uncertainties,
+    monitor,
   };
 }

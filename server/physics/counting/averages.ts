@@ -3,7 +3,7 @@ import type { Cone } from './cone.ts';
 import type { Curve, CurveAt, Dcs, LabDcs } from './curve.ts';
 import type { EnergyNode } from './energies.ts';
 import type { Slab } from './slab.ts';
-import { meanTransmission, exitCosine, slabWeight } from './slab.ts';
+import { slabWeight } from './slab.ts';
 
 export interface Averages {
   /** At the central angle and energy. */
@@ -97,11 +97,16 @@ export function energySlope(curveAt: CurveAt, energy: number, cone: Cone): numbe
   return here && relativeSlope(mean, 1, ENERGY_STEP, here.value);
 }
 
-/** d ln T/d ln t of the share that leaves the target along the central ray. */
-export function attenuationSlope(slab: Slab, theta: number): number {
-  const cosine = exitCosine(theta, 0, slab.tilt);
-  const at = (ratio: number) =>
-    meanTransmission({ ...slab, collisions: slab.collisions * ratio }, cosine);
+/** Share of what is scattered into a cone that leaves the target, with `times` the collisions planned. */
+export function transmittedShare(curve: Curve, cone: Cone, slab: Slab, times: number): number {
+  const weight = slabWeight({ ...slab, collisions: slab.collisions * times }, null);
+  const mean = acceptanceAverage(curve, cone, weight);
+  return mean && mean.value > 0 ? mean.weighted / mean.value : 1;
+}
+
+/** d ln T/d ln t of that share. */
+export function attenuationSlope(curve: Curve, cone: Cone, slab: Slab): number {
+  const at = (times: number) => transmittedShare(curve, cone, slab, times);
   const here = at(1);
   return here > 0 ? (at(1 + ENERGY_STEP) - at(1 - ENERGY_STEP)) / (2 * ENERGY_STEP * here) : 0;
 }

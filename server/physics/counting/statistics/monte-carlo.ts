@@ -67,7 +67,10 @@ function gammaVariate(random: Generator, shape: number): number {
 }
 
 /** A draw of mean 0 and, but for Student's, standard deviation 1. */
-function standardDraw(random: Generator, { distribution, freedom }: DistributedInput): number {
+export function standardDraw(
+  random: Generator,
+  { distribution, freedom }: Pick<DistributedInput, 'distribution' | 'freedom'>,
+): number {
   switch (distribution) {
     case 'normal':
       return random.normal();
