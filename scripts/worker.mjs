@@ -13,7 +13,6 @@ import { live } from './lib/shutdown.mjs';
 await live(async (shutdown) => {
   checkNode();
   const settings = readSettings(process.env);
-  await prepareClone(shutdown);
   const urls =
     settings.ownDatabase ??
     databaseInUse(
@@ -23,6 +22,7 @@ await live(async (shutdown) => {
         'run `npm start` first; or set DATABASE_URL to the database of one that runs elsewhere',
       ),
     );
+  await prepareClone(shutdown);
   const child = launch(
     process.execPath,
     ['--enable-source-maps', join(ROOT, 'dist/server/worker.js')],

@@ -20,6 +20,8 @@ export interface ScanReport {
   /** Points the result lacks, and points of it that a single estimate contradicts. */
   missing: number;
   wrong: number;
+  /** How often the start said that it starts the worker again. */
+  restarts: number;
   seconds: number;
 }
 
@@ -50,6 +52,7 @@ export async function drillScan(
       method: scanner.method,
       blows,
       missing: plan.points - numbers.length,
+      restarts: application.output().split('The worker ended unexpectedly').length - 1,
       wrong: (await scanner.wrongPoints(result, depth, 25)).length,
       seconds,
     };

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { METHODS, FRAMES, VERDICTS, estimateRequestSchema } from './estimates.ts';
 import { jobProgressSchema } from './jobs.ts';
+import { requiredTextSchema } from './text.ts';
 
 /** Points of one scan, and numbers of its result, at most. */
 export const MAX_SCAN_POINTS = 100_000;
@@ -59,7 +60,7 @@ export const scanRequestSchema = z
       .max(2, 'A scan may have at most two axes.'),
     output: z.enum(SCAN_OUTPUTS),
     /** In words, for the list of jobs; made of the axes where it is left out. */
-    title: z.string().trim().min(1).max(200).optional(),
+    title: requiredTextSchema(200, 'The title').optional(),
     /** Its members may read the scan. */
     campaignId: z.uuid('campaignId is the identifier of a campaign.').nullable().optional(),
   })

@@ -1,4 +1,5 @@
 // @ts-check
+import { existsSync } from 'node:fs';
 import { Failure } from '../say.mjs';
 import { ensureSecrets } from '../secrets.mjs';
 import { livingPostmaster } from './cluster.mjs';
@@ -11,7 +12,9 @@ import { findPlace } from './place.mjs';
  * @param {Failure} [otherwise] said when none runs there
  */
 export function databaseInUse(settings, otherwise) {
-  const postmaster = livingPostmaster(findPlace(settings.dataDir).home);
+  const postmaster = existsSync(settings.dataDir)
+    ? livingPostmaster(findPlace(settings.dataDir).home)
+    : undefined;
   if (postmaster === undefined) {
     throw (
       otherwise ??

@@ -83,7 +83,12 @@ export class Jobs extends Migration {
   /** pg-boss in a schema of its own, with its one queue. The runtime role works in it and cannot change what it is. */
   private queue(): void {
     this.addSql(`do $$ begin
-  if to_regnamespace('pgboss') is null then create schema pgboss; end if;
+  if to_regnamespace('pgboss') is not null then return; end if;
+  if not has_database_privilege(current_database(), 'create') then
+    raise exception 'the owner role may not make the schema pgboss: as a superuser run: create schema pgboss authorization %', current_user
+      using errcode = 'insufficient_privilege';
+  end if;
+  create schema pgboss;
 end $$`);
     this.addSql(PG_BOSS_SCHEMA_24);
     this.addSql(`select pgboss.create_queue('jobs', '{"policy": "standard", "retryLimit": 0}')`);

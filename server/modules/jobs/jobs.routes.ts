@@ -55,8 +55,9 @@ export const jobRoutes = [
     params,
     response: jobProgressSchema,
     otherTypes: ['text/event-stream'],
-    handler: ({ em, resource, headers }) =>
-      streamProgress(em, resource.id, headers['last-event-id']),
+    refusals: ['tooManyRequests'],
+    handler: ({ em, actor, resource, headers }) =>
+      streamProgress({ em, actor }, resource.id, headers['last-event-id']),
   }),
   defineRoute({
     method: 'post',

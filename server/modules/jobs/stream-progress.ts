@@ -30,12 +30,12 @@ function paceWatch() {
  * A client that heard the end is told (204) not to come again.
  */
 export function streamProgress(
-  em: EntityManager,
+  { em, actor }: { em: EntityManager; actor: { id: string } },
   id: string,
   lastEventId: string | string[] | undefined,
 ): OtherAnswer {
   if (lastEventId === LAST) return new OtherAnswer((res) => void res.status(204).end());
-  return eventStream(async (send, signal) => {
+  return eventStream(actor.id, async (send, signal) => {
     let before = '';
     const paceOf = paceWatch();
     while (!signal.aborted) {

@@ -1,4 +1,6 @@
 import type { EstimateRequest } from '#shared/contracts/estimates.ts';
+import { isOriginal } from '#shared/contracts/terms.ts';
+import type { InteractionTerm } from '#shared/contracts/terms.ts';
 import { MAX_SCAN_POINTS, MAX_SCAN_VALUES } from '#shared/contracts/scans.ts';
 import type { ScanRequest } from '#shared/contracts/scans.ts';
 import { DomainError } from '#shared/errors.ts';
@@ -78,6 +80,15 @@ export class Grid {
   }
 }
 
+/** A term without the text its table was read from, which may be long and is never computed with. */
+function withoutOriginal(term: InteractionTerm): InteractionTerm {
+  const { form, ...rest } = term;
+  return {
+    ...Object.fromEntries(Object.entries(rest).filter(([, value]) => !isOriginal(value))),
+    form,
+  };
+}
+
 /** Without what changes no cross section, so that equal points have equal content. */
 function bareEstimate({ estimate, method, output }: ScanRequest): EstimateRequest {
   const { projectile, target, energy, kinematics, interaction } = estimate;
@@ -86,7 +97,7 @@ function bareEstimate({ estimate, method, output }: ScanRequest): EstimateReques
     projectile,
     target,
     energy,
-    interaction: { terms: interaction.terms },
+    interaction: { terms: interaction.terms.map(withoutOriginal) },
     methods: [method],
     ...(kinematics && { kinematics }),
     ...(frame && { frame }),

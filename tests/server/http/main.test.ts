@@ -8,8 +8,11 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { afterAll, afterEach, beforeAll, expect, test } from 'vitest';
+import { openOrm } from '#server/db/orm.ts';
+import { makeToken } from '#tests/support/factories.ts';
 import { createTestDatabase } from '#tests/support/test-database.ts';
 import type { TestDatabase } from '#tests/support/test-database.ts';
+import { makeJob } from '../jobs/make-job.ts';
 
 const MAIN = fileURLToPath(new URL('../../../server/main.ts', import.meta.url));
 let database: TestDatabase;
@@ -77,6 +80,21 @@ test('SIGTERM stops it in order: requests under way finish, then status 0', asyn
   expect((await signIn).status).toBe(401);
   expect(await ended).toBe(0);
   expect(output()).toContain('SIGTERM');
+}, 90_000);
+
+test('SIGTERM ends streams of events as the stream itself would, and waits for none', async () => {
+  const orm = await openOrm({ databaseUrl: database.runtimeUrl, poolSize: 1 });
+  const { secret, account } = await makeToken(orm.em.fork());
+  const job = await makeJob(orm.em.fork(), { ownerId: account.id, state: 'queued' });
+  await orm.close(true);
+  const { child, ended, port } = start({});
+  const url = `http://127.0.0.1:${await port()}/api/jobs/${job.id}/events`;
+  const answer = await fetch(url, { headers: { Authorization: `Bearer ${secret}` } });
+  expect(answer.status).toBe(200);
+  child.kill('SIGTERM');
+  // A connection that was cut would reject here.
+  expect(await answer.text()).toContain('event: progress');
+  expect(await ended).toBe(0);
 }, 90_000);
 
 test('it ends when its standard input does, as whoever started it is gone then', async () => {

@@ -98,6 +98,19 @@ test('a stream tells the state now, the progress, and the end, and then ends its
   expect(rest.map(({ progress }) => [progress.state, progress.done])).toEqual([['done', 30]]);
 });
 
+test('a person who watches too many is told to close one', async () => {
+  const { account, secret: own } = await makeToken(app.em());
+  const job = await makeJob(app.em(), { ownerId: account.id, state: 'queued' });
+  const headers = { authorization: `Bearer ${own}` };
+  const answers = [];
+  for (let i = 0; i < 17; i += 1) answers.push(await open(job.id, headers));
+  expect(answers.map(({ statusCode }) => statusCode)).toEqual([
+    ...Array.from({ length: 16 }, () => 200),
+    429,
+  ]);
+  for (const answer of answers) answer.destroy();
+});
+
 test('a server that stops ends its streams', async () => {
   const { account } = await makeToken(app.em());
   const waiting = await makeJob(app.em(), { ownerId: account.id, state: 'queued' });
