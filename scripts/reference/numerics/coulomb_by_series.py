@@ -48,3 +48,23 @@ def coulomb_values(l, eta, rho):
         df, dg = slope * f - root * above, slope * g - root * g_above
         assert abs(df * g - f * dg - 1) < mpf(10) ** -25, (l, eta, rho)
     return f, df, g, dg
+
+
+def coulomb_rows(lmax, eta, rho):
+    """The same for l = 0 … lmax, F downwards and G upwards by recurrence in 60 digits more than are needed."""
+    eta, rho = mpf(eta), mpf(rho)
+    with mp.workdps(80 + int(1.4 * abs(eta) + 0.9 * rho)):
+        root = [None] + [sqrt(1 + (eta / l) ** 2) for l in range(1, lmax + 3)]
+        slope = [None] + [l / rho + eta / l for l in range(1, lmax + 3)]
+        f = {l: regular(l, eta, rho) for l in (lmax, lmax + 1)}
+        for l in range(lmax, 0, -1):
+            f[l - 1] = ((slope[l] + slope[l + 1]) * f[l] - root[l + 1] * f[l + 1]) / root[l]
+        g = {l: irregular(l, eta, rho) for l in (0, 1)}
+        for l in range(1, lmax + 1):
+            g[l + 1] = ((slope[l] + slope[l + 1]) * g[l] - root[l] * g[l - 1]) / root[l + 1]
+        rows = []
+        for l in range(lmax + 1):
+            df, dg = slope[l + 1] * f[l] - root[l + 1] * f[l + 1], slope[l + 1] * g[l] - root[l + 1] * g[l + 1]
+            assert abs(df * g[l] - f[l] * dg - 1) < mpf(10) ** -25, (l, eta, rho)
+            rows.append((f[l], df, g[l], dg))
+    return rows
