@@ -49,18 +49,19 @@ const PHASE = 2.2;
 const STEEPNESS = 0.45;
 const GROWTH = 1.6;
 const PLATEAU = 4 * UNIT_ROUNDOFF;
+/** Coefficients at the end that tell what a fit misses. */
+const LAST = 3;
 
 const NODES = Float64Array.from(
   { length: FIELD_STRIDE },
   (_, i) => (1 + Math.cos(((2 * i + 1) * Math.PI) / (2 * FIELD_STRIDE))) / 2,
 );
 /** 2/N cos(n(2i + 1) pi/2N), row by row in n. */
-const PROJECTION = Array.from({ length: FIELD_STRIDE }, (_, n) =>
-  Float64Array.from(NODES, (_node, i) => {
-    const turns = (n * (2 * i + 1)) % (4 * FIELD_STRIDE);
-    return ((n === 0 ? 1 : 2) / FIELD_STRIDE) * Math.cos((turns * Math.PI) / (2 * FIELD_STRIDE));
-  }),
-);
+const PROJECTION = Float64Array.from({ length: FIELD_STRIDE * FIELD_STRIDE }, (_, place) => {
+  const [n, i] = [Math.floor(place / FIELD_STRIDE), place % FIELD_STRIDE];
+  const turns = (n * (2 * i + 1)) % (4 * FIELD_STRIDE);
+  return ((n === 0 ? 1 : 2) / FIELD_STRIDE) * Math.cos((turns * Math.PI) / (2 * FIELD_STRIDE));
+});
 /** Powers of t in T_n(2t - 1): whole numbers, all of which a double holds. */
 const SHIFTED = powersOfShifted();
 function powersOfShifted(): Float64Array[] {
@@ -122,30 +123,35 @@ function tryPanel(
     phase += Math.sqrt(size) / FIELD_STRIDE;
     allowed = Math.max(allowed, x * x * (wave * wave - (out[0] ?? 0)));
   }
-  const chebyshev: Float64Array[] = [];
   let length = 1;
   let residual = 0;
   let known = true;
   // One component may be the small difference of others: the largest value sets the rounding of all.
-  const largest = values.reduce(
-    (most, f) => f.reduce((m, one) => Math.max(m, Math.abs(one)), most),
-    0,
-  );
-  for (let c = 0; c < field.components && finite; c++) {
-    const f = values[c] ?? out;
-    const row = Float64Array.from(PROJECTION, (factors) =>
-      factors.reduce((sum, factor, i) => sum + factor * (f[i] ?? 0), 0),
-    );
+  let largest = 0;
+  for (const f of values) for (const one of f) largest = Math.max(largest, Math.abs(one));
+  const chebyshev = finite ? values.map(coefficientsOf) : [];
+  for (const row of chebyshev) {
     let n = FIELD_STRIDE;
     while (n > 1 && Math.abs(row[n - 1] ?? 0) <= (UNIT_ROUNDOFF / 2) * largest) n -= 1;
     length = Math.max(length, n);
-    const tail = [1, 2, 3].reduce((sum, i) => sum + Math.abs(row[FIELD_STRIDE - i] ?? 0), 0);
-    const scale = from === 0 ? 1 / width : 1;
-    residual = Math.max(residual, tail * scale);
+    let tail = 0;
+    for (let i = 1; i <= LAST; i++) tail += Math.abs(row[FIELD_STRIDE - i] ?? 0);
+    residual = Math.max(residual, from === 0 ? tail / width : tail);
     if (tail > PLATEAU * largest) known = false;
-    chebyshev.push(row);
   }
   return { chebyshev, length, residual, known, finite, phase: phase * width, allowed, size: sizes };
+}
+
+function coefficientsOf(f: Float64Array): Float64Array {
+  const row = new Float64Array(FIELD_STRIDE);
+  for (let n = 0; n < FIELD_STRIDE; n++) {
+    let sum = 0;
+    for (let i = 0; i < FIELD_STRIDE; i++) {
+      sum += (PROJECTION[n * FIELD_STRIDE + i] ?? 0) * (f[i] ?? 0);
+    }
+    row[n] = sum;
+  }
+  return row;
 }
 
 /** Powers of t from Chebyshev coefficients, times a factor, into a row of the result. */

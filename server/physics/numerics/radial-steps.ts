@@ -241,6 +241,55 @@ export function stepAdded(
   finishAdded(count, 0, free, added);
 }
 
+/** `stepAdded` with a real field. */
+export function stepAddedReal(
+  A: PanelPowers,
+  B: PanelPowers,
+  free: RadialWave,
+  added: RadialWave,
+): void {
+  const [a, b] = [A.powers, B.powers];
+  base[0] = free.re;
+  base[1] = free.slopeRe;
+  re[0] = added.re;
+  re[1] = added.slopeRe;
+  let size = Math.abs(free.re) + Math.abs(free.slopeRe);
+  let addedSize = Math.abs(added.re) + Math.abs(added.slopeRe);
+  let count = 2;
+  let quiet = 0;
+  while (count < TERMS && quiet < 4) {
+    const n = count - 2;
+    let sum = 0;
+    let more = 0;
+    const lastA = n < A.length ? n : A.length - 1;
+    for (let m = 0; m <= lastA; m++) {
+      const w = a[m] ?? 0;
+      sum += w * (base[n - m] ?? 0);
+      more += w * (re[n - m] ?? 0);
+    }
+    const lastB = n < B.length ? n : B.length - 1;
+    for (let m = 0; m <= lastB; m++) {
+      more += (b[m] ?? 0) * ((re[n - m] ?? 0) + (base[n - m] ?? 0));
+    }
+    const factor = INVERSE[n] ?? 0;
+    base[count] = sum * factor;
+    re[count] = more * factor;
+    count += 1;
+    const weight = Math.abs(sum) * factor * count;
+    const extra = Math.abs(more) * factor * count;
+    if (weight > size) size = weight;
+    if (extra > addedSize) addedSize = extra;
+    const small = weight < NEGLIGIBLE * size && extra <= NEGLIGIBLE * addedSize;
+    quiet = small ? quiet + 1 : 0;
+  }
+  addUp(base, count, 0);
+  free.re = sums.value;
+  free.slopeRe = sums.slope;
+  addUp(re, count, 0);
+  added.re = sums.value;
+  added.slopeRe = sums.slope;
+}
+
 function finishAdded(count: number, first: number, free: RadialWave, added: RadialWave): void {
   addUp(base, count, first);
   free.re = sums.value;

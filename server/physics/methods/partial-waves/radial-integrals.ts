@@ -13,9 +13,9 @@ export interface WaveIntegrals {
 
 const RULE = gaussRule(16);
 /** Powers of U that one rule of 16 points may meet on panels taken together: the square of the wave needs the rest. */
-const FINE = { powers: 12, panels: 2 };
+const FINE = { powers: 30, panels: 3 };
 /** Where U is so small that eight digits of it are enough. */
-const COARSE = { powers: 24, panels: 4 };
+const COARSE = { powers: 60, panels: 6 };
 /** Where the irregular function is so large, the square of the regular one is below 1e-26. */
 const UNFELT = 1e13;
 /** Integrals below this do not count. */
@@ -130,7 +130,7 @@ const rows = (count: number, length: number): Float64Array[] =>
 /**
  * First-order integrals within the panels that are followed, F² only.
  *
- * Formula: (1/k) ∫ U F_l(kr)² dr, 16 points on every two panels or one, and shells; minus it is the first-order phase.
+ * Formula: (1/k) ∫ U F_l(kr)² dr, 16 points on up to three panels, and shells; minus it is the first-order phase.
  *
  * @param inner panels followed, from the front
  * @param below panels of what lies inside a hard core, which first order does not know

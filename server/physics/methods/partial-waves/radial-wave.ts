@@ -8,6 +8,7 @@ import {
   fieldPowers,
   panelPowers,
   stepAdded,
+  stepAddedReal,
   stepComplex,
   stepFromOrigin,
   stepReal,
@@ -38,8 +39,8 @@ export interface Matched {
   panels: number;
 }
 
-/** Twice the exponent by which a wave must grow from where it is begun: exp(-44) is below 1e-19. */
-const FORGOTTEN = 22;
+/** Half the exponent by which what is forgotten must die out: exp(-40) is below 1e-17. */
+const FORGOTTEN = 20;
 const HUGE = 1e150;
 
 /** Exponent of what a free wave of order l gains from x to its turning point. */
@@ -279,9 +280,10 @@ export class RadialSolver {
       if (charged) fieldPowers(this.panels, p, CENTRAL_RE, 1, SHORT, -1, third);
       addBarrier(this.panels, p, barrier, k, third);
       fieldPowers(this.panels, p, felt, 1, 0, 0, total);
-      if (absorbs) fieldPowers(this.panels, p, CENTRAL_IM, 1, 0, 0, second);
-      else second.length = 0;
-      stepAdded(third, total, second, free, added);
+      if (absorbs) {
+        fieldPowers(this.panels, p, CENTRAL_IM, 1, 0, 0, second);
+        stepAdded(third, total, second, free, added);
+      } else stepAddedReal(third, total, free, added);
     }
     const { F, dF, G, dG } = outer;
     const betaRe = added.re * dF - added.slopeRe * F;

@@ -87,13 +87,14 @@ function secondOrder(
 const OWN_ERROR = 2e-15;
 
 function waveOf(
+  { absorbs }: RadialInteraction,
   l: number,
   spin: -1 | 0 | 1,
   T: { re: number; im: number },
   error: number,
 ): Transition {
-  const absorbed = 4 * (T.im - T.re * T.re - T.im * T.im);
-  const eta = Math.hypot(1 - 2 * T.im, 2 * T.re);
+  const absorbed = absorbs ? 4 * (T.im - T.re * T.re - T.im * T.im) : 0;
+  const eta = absorbs ? Math.hypot(1 - 2 * T.im, 2 * T.re) : 1;
   return {
     l,
     spin,
@@ -154,7 +155,7 @@ export function scatterPowerTail(
       const moved = turned(T, B.re, B.im);
       moved.re -= T.re * iIm + tRe * iRe - tIm * iIm;
       moved.im -= T.im * iIm + tRe * iIm + tIm * iRe;
-      waves.push(waveOf(l, spin, moved, error + 1e-17 * forward));
+      waves.push(waveOf(interaction, l, spin, moved, error + 1e-17 * forward));
     }
   }
   const second = secondOrder(interaction, k, last, waves.at(-1), phases.re[last] ?? 0);
@@ -164,7 +165,7 @@ export function scatterPowerTail(
     beyond += (2 * l + 1) * Math.abs(more);
     for (const spin of spinsOf(interaction, l)) {
       const T = turned({ re: 0, im: 0 }, (phases.re[l] ?? 0) + more, phases.im[l] ?? 0);
-      waves.push(waveOf(l, spin, T, 1e-18 * forward));
+      waves.push(waveOf(interaction, l, spin, T, 1e-18 * forward));
     }
   }
   const size = waves.reduce((sum, wave) => sum + weightOf(wave) * Math.hypot(wave.re, wave.im), 0);

@@ -36,7 +36,7 @@ export const NEGLIGIBLE = 1e-16;
 export const IN_TURN = 3;
 const WEAK = 0.2;
 /** What is lost of a wave that begins behind its barrier. */
-export const FORGOTTEN = 1e-19;
+export const FORGOTTEN = 1e-17;
 /** A phase known no better than this is no phase. */
 export const UNRESOLVED = 1e-8;
 
