@@ -3,18 +3,29 @@ interface ComplexNumber {
   im: number;
 }
 
-interface Panel {
-  a: number;
-  b: number;
-  re: Float64Array;
-  im: Float64Array;
+/** A value of the interpolant, and what its last coefficients leave open. */
+export interface Interpolated extends ComplexNumber {
+  error: number;
 }
 
 /** An interpolant that is computed where it is asked. */
 export interface ChebyshevInterpolant {
-  at: (x: number) => ComplexNumber;
+  at: (x: number) => Interpolated;
   /** Calls of the function so far. */
   evaluations: () => number;
+}
+
+interface Fit {
+  re: Float64Array;
+  im: Float64Array;
+  /** Sum of the last coefficients. */
+  tail: number;
+}
+interface Panel {
+  a: number;
+  b: number;
+  fit: Fit | null;
+  halves: [Panel, Panel] | null;
 }
 
 const ORDER = 24;
@@ -29,7 +40,6 @@ const PROJECTION = Array.from({ length: ORDER }, (_, n) =>
 );
 /** Coefficients at the end whose size says what is missing. */
 const LAST = 3;
-const DEEPEST = 24;
 
 const project = (values: Float64Array): Float64Array =>
   Float64Array.from(PROJECTION, (row) =>
@@ -53,12 +63,28 @@ function clenshaw(c: Float64Array, t: number): number {
   return (c[0] ?? 0) + t * value - above;
 }
 
+function fitOn(f: (x: number) => ComplexNumber, a: number, b: number): Fit {
+  const half = (b - a) / 2;
+  const values = Array.from(NODES, (t) => f(a + half + half * t));
+  const re = project(Float64Array.from(values, (value) => value.re));
+  const im = project(Float64Array.from(values, (value) => value.im));
+  return { re, im, tail: tailOf(re) + tailOf(im) };
+}
+
+function halvesOf(panel: Panel): [Panel, Panel] {
+  const middle = panel.a + (panel.b - panel.a) / 2;
+  return (panel.halves ??= [
+    { a: panel.a, b: middle, fit: null, halves: null },
+    { a: middle, b: panel.b, fit: null, halves: null },
+  ]);
+}
+
 /** Index of the panel that holds x. */
-function find(ends: readonly number[], x: number): number {
-  let [low, high] = [0, ends.length - 1];
+function find(panels: readonly Panel[], x: number): number {
+  let [low, high] = [0, panels.length - 1];
   while (low < high) {
     const middle = (low + high) >> 1;
-    if (x <= (ends[middle] ?? Infinity)) high = middle;
+    if (x <= (panels[middle]?.b ?? Infinity)) high = middle;
     else low = middle + 1;
   }
   return low;
@@ -67,53 +93,47 @@ function find(ends: readonly number[], x: number): number {
 /**
  * Interpolant of a costly smooth complex function, piece by piece, each computed when it is first asked.
  *
- * Formula: Chebyshev sums of degree 23 on panels that are bisected until their last three coefficients are below the tolerance.
+ * Formula: Chebyshev sums of degree 23 on panels that are bisected about the point asked until their last three coefficients are below
+ *   the tolerance; the function itself once too many calls have been spent on panels.
  *
  * @param f finite on every interval between edges
- * @param edges ascending, the first and the last the ends of the domain; intervals are computed one by one
- * @param tolerance absolute, of either part; not below the noise of f
- * @returns interpolant, within about twice the tolerance of f
+ * @param edges ascending, the first and the last the ends of the domain
+ * @param tolerance absolute, for arguments up to x; not below the noise of f
+ * @param mostCalls calls of f to be spent on panels
  *
  * Source: textbook; L. N. Trefethen, Approximation Theory and Approximation Practice (2013).
  */
 export function chebyshevInterpolant(
   f: (x: number) => ComplexNumber,
   edges: readonly number[],
-  tolerance: number,
+  tolerance: (x: number) => number,
+  mostCalls = 20_000,
 ): ChebyshevInterpolant {
   let evaluations = 0;
-  const fit = (a: number, b: number, depth: number): Panel[] => {
-    const half = (b - a) / 2;
-    const values = Array.from(NODES, (t) => f(a + half + half * t));
-    evaluations += ORDER;
-    const re = project(Float64Array.from(values, (value) => value.re));
-    const im = project(Float64Array.from(values, (value) => value.im));
-    if (depth === 0 || (tailOf(re) <= tolerance && tailOf(im) <= tolerance)) {
-      return [{ a, b, re, im }];
-    }
-    const middle = a + half;
-    return [...fit(a, middle, depth - 1), ...fit(middle, b, depth - 1)];
-  };
-  const pieces = edges.slice(1).map((b, i) => ({
-    a: edges[i] ?? b,
-    b,
-    found: null as { panels: Panel[]; ends: number[] } | null,
-  }));
-  const ends = pieces.map(({ b }) => b);
+  const pieces = edges
+    .slice(1)
+    .map((b, i): Panel => ({ a: edges[i] ?? b, b, fit: null, halves: null }));
   return {
     evaluations: () => evaluations,
     at: (x) => {
-      const piece = pieces[find(ends, x)];
-      if (!piece) return f(x);
-      if (piece.found === null) {
-        const panels = fit(piece.a, piece.b, DEEPEST);
-        piece.found = { panels, ends: panels.map(({ b }) => b) };
+      let panel = pieces[find(pieces, x)];
+      while (panel) {
+        const { a, b } = panel;
+        if (panel.fit === null) {
+          if (evaluations >= mostCalls) break;
+          panel.fit = fitOn(f, a, b);
+          evaluations += ORDER;
+        }
+        const { re, im, tail } = panel.fit;
+        const half = (b - a) / 2;
+        if (tail <= tolerance(b)) {
+          const t = (x - a - half) / half;
+          return { re: clenshaw(re, t), im: clenshaw(im, t), error: 2 * tail };
+        }
+        panel = halvesOf(panel)[x <= a + half ? 0 : 1];
       }
-      const panel = piece.found.panels[find(piece.found.ends, x)];
-      if (!panel) return f(x);
-      const half = (panel.b - panel.a) / 2;
-      const t = (x - panel.a - half) / half;
-      return { re: clenshaw(panel.re, t), im: clenshaw(panel.im, t) };
+      evaluations += 1;
+      return { ...f(x), error: 0 };
     },
   };
 }

@@ -35,18 +35,18 @@ export interface ImpactAmplitude {
 export function impactAmplitude(source: ImpactPanels, k: number): ImpactAmplitude {
   const { panels, missed, moments } = source;
   const [plain, first, third] = moments;
-  const transform = hankelTransform(panels);
-  const tolerance = INTERPOLATION * plain;
-  const interpolant = chebyshevInterpolant(transform, edgesOf(k, source), tolerance);
-  const fixed = k * (SUM_ROUNDING * plain + 2 * tolerance + missed);
   // |x J1(x)| is at most x²/2 and 0.6 x.
-  const slope = (q: number) => k * Math.min(0.6 * q * first, (q * q * third) / 2);
+  const slope = (q: number) => Math.min(0.6 * q * first, (q * q * third) / 2);
+  const tolerance = (q: number) => INTERPOLATION * plain + (Q_ALLOWANCE / 2) * slope(q);
+  const interpolant = chebyshevInterpolant(hankelTransform(panels), edgesOf(k, source), tolerance);
+  const fixed = SUM_ROUNDING * plain + missed;
   return {
     at: (q, blur = 0) => {
-      const { re, im } = interpolant.at(Math.min(q, 2 * k));
+      const { re, im, error } = interpolant.at(Math.min(q, 2 * k));
+      const ofQ = (Q_ALLOWANCE + blur) * slope(q);
       // -i (re + i im)
-      return { re: k * im, im: -k * re, error: fixed + (Q_ALLOWANCE + blur) * slope(q) };
+      return { re: k * im, im: -k * re, error: k * (fixed + error + ofQ) };
     },
-    largestError: fixed + Q_ALLOWANCE * slope(2 * k),
+    largestError: k * (fixed + 2 * tolerance(2 * k) + Q_ALLOWANCE * slope(2 * k)),
   };
 }
