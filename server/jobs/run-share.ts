@@ -28,15 +28,18 @@ async function theWork<T>(work: () => Promise<T> | T): Promise<T> {
   }
 }
 
-/** Gives signs of life for a share; `lost` aborts when it is another's, or its job no longer runs. */
+/** Gives signs of life for a share; `lost` aborts when it is another's, or its job no longer runs. A wanted one is handed back between parts. */
 function watchShare(share: Share, { em, logger }: ShareContext) {
   const lost = new AbortController();
   let beating = false;
+  let wanted = false;
   const beat = async () => {
     if (beating) return;
     beating = true;
     try {
-      if (!(await keepShare(em(), share))) lost.abort();
+      const state = await keepShare(em(), share);
+      wanted = state === 'wanted';
+      if (state === 'lost') lost.abort();
     } catch (fault) {
       // Whether the share is still ours shows when the database is back.
       if (!isDatabaseAway(fault)) logger.error({ err: fault }, 'no sign of life could be given');
@@ -45,7 +48,7 @@ function watchShare(share: Share, { em, logger }: ShareContext) {
     }
   };
   const timer = setInterval(() => void beat(), HEARTBEAT_MILLISECONDS);
-  return { lost: lost.signal, end: () => clearInterval(timer) };
+  return { lost: lost.signal, isWanted: () => wanted, end: () => clearInterval(timer) };
 }
 
 /** Parts of the share that are to be computed still, after those that were computed before under the same content. */
@@ -71,6 +74,7 @@ async function computeParts(
   job: OpenJob,
   context: ShareContext,
   tools: PartTools,
+  isWanted: () => boolean,
 ): Promise<Keeper> {
   const keeper = new Keeper(share, context);
   const underWay: Promise<Part>[] = [];
@@ -91,18 +95,28 @@ async function computeParts(
   };
   for (const missing of await missingParts(share, job, context, keeper)) {
     tools.signal.throwIfAborted();
+    if (isWanted()) break;
     begin(missing);
     if (underWay.length >= AHEAD) await collect();
   }
   while (underWay.length > 0) await collect();
+  if (isWanted()) {
+    await keeper.keep();
+    throw new LetGo('another job has its turn');
+  }
   return keeper;
 }
 
-async function work(share: Share, context: ShareContext, tools: PartTools): Promise<void> {
+async function work(
+  share: Share,
+  context: ShareContext,
+  tools: PartTools,
+  isWanted: () => boolean,
+): Promise<void> {
   const kind: JobKind = JOB_KINDS[share.kind];
   if (share.first < share.end) {
     const job = await theWork(() => kind.open(share.input));
-    const keeper = await computeParts(share, job, context, tools);
+    const keeper = await computeParts(share, job, context, tools, isWanted);
     await keeper.keep({ finished: true });
     return;
   }
@@ -118,8 +132,8 @@ function wordsOf(fault: unknown): string {
 }
 
 /**
- * Computes one share to its end. Left in the middle, by a stop or because it was lost, what was computed is kept and the rest is
- * free for others; a fault of the work itself ends the job.
+ * Computes one share to its end. Left in the middle, by a stop, for another job's turn or because it was lost, what was computed
+ * is kept and the rest is free for others; a fault of the work itself ends the job.
  */
 export async function runShare(share: Share, context: ShareContext): Promise<void> {
   const { em, logger, stopping } = context;
@@ -130,10 +144,10 @@ export async function runShare(share: Share, context: ShareContext): Promise<voi
     log.error(words);
     return;
   }
-  const { lost, end } = watchShare(share, context);
+  const { lost, isWanted, end } = watchShare(share, context);
   const signal = AbortSignal.any([lost, stopping]);
   try {
-    await work(share, context, { compute: context.compute, signal });
+    await work(share, context, { compute: context.compute, signal }, isWanted);
   } catch (fault) {
     if (lost.aborted || fault instanceof LetGo || stopping.aborted) {
       log.info('the share was let go');

@@ -63,14 +63,29 @@ export async function claimShare(em: EntityManager, workerId: string): Promise<S
   return row && { ...row, workerId };
 }
 
-/** A sign of life; false when the share is no longer this worker's, or its job no longer runs. */
-export async function keepShare(em: EntityManager, share: Share): Promise<boolean> {
-  const kept = await em.execute<unknown[]>(
+/** A share of another job that is free and whose turn comes before that of the job at hand. */
+const SOMEONE_WAITS = `exists (
+  select 1 from jobs o join job_shares f on f.job_id = o.id
+  where o.state in ('queued', 'running') and o.id <> j.id
+    and (o.served_at is null or o.served_at < j.served_at)
+    and f.finished_at is null and f.worker_id is null and f.first_part < f.end_part)`;
+
+/**
+ * A sign of life. Answers `lost` when the share is no longer this worker's or its job no longer runs, and `wanted` when another job
+ * waits for a turn.
+ */
+export async function keepShare(
+  em: EntityManager,
+  share: Share,
+): Promise<'kept' | 'wanted' | 'lost'> {
+  const [kept] = await em.execute<{ wanted: boolean }[]>(
     `update job_shares s set heartbeat_at = clock_timestamp() from jobs j
-     where ${HELD} and j.id = s.job_id and j.state = 'running' returning 1 as kept`,
+     where ${HELD} and j.id = s.job_id and j.state = 'running'
+     returning ${SOMEONE_WAITS} as wanted`,
     holder(share),
   );
-  return kept.length > 0;
+  if (!kept) return 'lost';
+  return kept.wanted ? 'wanted' : 'kept';
 }
 
 /** Gives an unfinished share back, for another worker to take at once. */

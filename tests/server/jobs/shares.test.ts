@@ -86,11 +86,21 @@ describe('taking shares', () => {
     ]);
   });
 
+  test('a share is wanted when a job waits that had no turn since, and by no other', async () => {
+    await order(2);
+    const share = await claim(ANNA);
+    expect(await keepShare(app.em(), share)).toBe('kept');
+    await order(2);
+    expect(await keepShare(app.em(), share)).toBe('wanted');
+    await claim(BERT);
+    expect(await keepShare(app.em(), share)).toBe('kept');
+  });
+
   test('a silent worker’s share goes to the next one at once; a heartbeat keeps it', async () => {
     const id = await order(1);
     const share = await claim(ANNA);
     expect(await claimShare(app.em(), BERT)).toBeUndefined();
-    expect(await keepShare(app.em(), share)).toBe(true);
+    expect(await keepShare(app.em(), share)).toBe('kept');
     await silence(id);
     const again = await claim(BERT);
     expect(again).toMatchObject({ jobId: id, n: 0, attempt: share.attempt + 1, losses: 1 });
@@ -129,12 +139,12 @@ describe('the fence', () => {
     const late = await claim(ANNA);
     await silence(id);
     const share = await claim(BERT);
-    expect(await keepShare(app.em(), late)).toBe(false);
+    expect(await keepShare(app.em(), late)).toBe('lost');
     expect(await keepParts(app.em(), late, [part(0, 'late')], { finished: true })).toBe(false);
     await failJob(app.em(), late, 'Late.');
     await releaseShare(app.em(), late);
     expect(await stateOf(id)).toMatchObject({ state: 'running', done: 0, error: null });
-    expect(await keepShare(app.em(), share)).toBe(true);
+    expect(await keepShare(app.em(), share)).toBe('kept');
     expect(await keepParts(app.em(), share, [part(0, 'right')], { finished: true })).toBe(true);
     expect(await partValues(app.em(), id)).toEqual(['right']);
     expect(await stateOf(id)).toMatchObject({ state: 'done', done: 1 });
@@ -173,7 +183,7 @@ describe('the fence', () => {
     const id = await order(2);
     const share = await claim();
     await sql(`update jobs set state = 'cancelled' where id = $1`, [id]);
-    expect(await keepShare(app.em(), share)).toBe(false);
+    expect(await keepShare(app.em(), share)).toBe('lost');
     expect(await finish(share)).toBe(false);
     expect(await claimShare(app.em(), BERT)).toBeUndefined();
     expect(await stateOf(id)).toMatchObject({ state: 'cancelled', done: 0 });

@@ -133,6 +133,22 @@ test('what is a bug ends the job in words, and the worker goes on', async () => 
   expect(await waitFor(agent, id, isDone)).toMatchObject({ done: 5, error: null });
 });
 
+test('a long share is handed back between parts when another job waits', async () => {
+  const long = await startScan(agent, newScan(640));
+  work(
+    app,
+    watchedCompute(() => sleep(500)),
+  );
+  await waitFor(agent, long, ({ status }) => status === 'running');
+  const short = await startScan(agent, newScan(1));
+  await waitFor(agent, short, isDone);
+  // Its share has ten parts; the short job did not wait for all of them, and those that were computed are kept.
+  const { done } = await readScan(agent, long);
+  expect(done).toBeGreaterThan(0);
+  expect(done).toBeLessThan(10);
+  await agent.post(`/api/jobs/${long}/cancel`).expect(200);
+});
+
 test('a share that ends one worker after the other ends its job before it ends them all', async () => {
   const id = await startScan(agent, newScan(1));
   await query(app.database.ownerUrl, 'update job_shares set losses = 5 where job_id = $1', [id]);
