@@ -13,6 +13,7 @@ import {
   sizeOf,
 } from './model/amplitudes.ts';
 import type { AmplitudeCurve, AmplitudePoint } from './model/amplitudes.ts';
+import { computedMethods, computedOf } from './model/methods.ts';
 import type { Complex } from './model/waves.ts';
 import { Item, Items, Panel, TableBox, bodyCell, headCell } from './panel.tsx';
 
@@ -109,6 +110,24 @@ function AmplitudeTable({ curves, units }: { curves: readonly AmplitudeCurve[]; 
   );
 }
 
+/** What is drawn, and what to look for in it. */
+function saysOf(estimate: Estimate): string {
+  const flips = computedMethods(estimate).some(({ result }) =>
+    result.differential.some(({ analysingPower }) => typeof analysingPower === 'number'),
+  );
+  return [
+    'f(θ) along the angle, centre of mass',
+    ...(estimate.identical ? [', before the exchanged one is added'] : []),
+    ...(flips ? [', without the part that flips the spin'] : []),
+    '.',
+    ...(computedOf(estimate, 'born1')
+      ? [
+          ' First Born of a real potential never leaves the real axis; what the others have beside it is second order and more.',
+        ]
+      : []),
+  ].join('');
+}
+
 interface AmplitudePlaneProps {
   estimate: Estimate;
   dimmed: boolean;
@@ -134,10 +153,7 @@ export function AmplitudePlane({ estimate, dimmed, fileName }: AmplitudePlanePro
   const rows = () => amplitudeRows(curves, units);
   const name = `${fileName}-amplitude`;
   return (
-    <Panel
-      title="The amplitude in its plane"
-      says={`f(θ) along the angle, centre of mass${estimate.identical ? ', before the exchanged one is added' : ''}. First Born of a real potential never leaves the real axis; what the others have beside it is second order and more.`}
-    >
+    <Panel title="The amplitude in its plane" says={saysOf(estimate)}>
       <Plot
         label="Complex scattering amplitude along the angle"
         series={series}

@@ -44,16 +44,7 @@ function Cell({ kind, computed, reference, unit }: CellProps) {
   const integral = computed.result[kind];
   const found = inUnit(integral, unit);
   const off = computed.method === reference.method ? null : offBy(integral, reference.result[kind]);
-  if (!found) {
-    return (
-      <td className="max-w-56 px-3 py-1.5 align-top">
-        <span className="font-semibold">divergent</span>
-        {'divergent' in integral && (
-          <span className="block text-xs text-muted">{integral.reason}</span>
-        )}
-      </td>
-    );
-  }
+  if (!found) return <td className="px-3 py-1.5 align-top font-semibold">divergent</td>;
   return (
     <td className="px-3 py-1.5 align-top whitespace-nowrap">
       <Figure
@@ -70,6 +61,20 @@ function Cell({ kind, computed, reference, unit }: CellProps) {
       )}
     </td>
   );
+}
+
+/** Why integrals diverge, each reason once with the integrals it is that of. */
+function divergences(methods: readonly ComputedMethod[]): { reason: string; kinds: string[] }[] {
+  const kindsOf = new Map<string, Set<string>>();
+  for (const { result } of methods) {
+    for (const kind of KINDS) {
+      const integral = result[kind];
+      if (!('divergent' in integral)) continue;
+      const kinds = kindsOf.get(integral.reason) ?? new Set();
+      kindsOf.set(integral.reason, kinds.add(NAMES[kind].toLowerCase()));
+    }
+  }
+  return [...kindsOf].map(([reason, kinds]) => ({ reason, kinds: [...kinds] }));
 }
 
 /** Names, units, then one row an integral: value and bound of its error of every method. */
@@ -162,6 +167,11 @@ export function IntegralsTable({ estimate, fileName }: IntegralsTableProps) {
           </tbody>
         </table>
       </div>
+      {divergences(methods).map(({ reason, kinds }) => (
+        <p key={reason} className="mt-1 max-w-prose text-sm text-muted">
+          <span className="font-semibold text-ink">Divergent, {kinds.join(' and ')}:</span> {reason}
+        </p>
+      ))}
     </Panel>
   );
 }

@@ -16,6 +16,7 @@ import { computedOf } from './model/methods.ts';
 import { wavesOf } from './model/waves.ts';
 import { hasCoulombTail } from './model/treatment.ts';
 import { OppositeSign } from './opposite-sign.tsx';
+import { Panel } from './panel.tsx';
 import { PhaseShifts } from './phase-shifts.tsx';
 import { Treatment } from './treatment.tsx';
 import { UnitarityPlane } from './unitarity-plane.tsx';
@@ -48,10 +49,19 @@ function Waves({ estimate, dimmed, fileName }: PartsProps) {
   const exact = computedOf(estimate, 'partialWaves');
   if (!exact) return null;
   const { lMax, lowEnergy } = exact;
+  const waves = wavesOf(estimate);
   return (
     <>
+      {waves.length === 0 && (
+        <Panel title="Phase shifts">
+          <p className="text-sm">
+            The exact amplitude of two point charges is a closed form: beyond the Coulomb phase no
+            wave has a phase shift of its own.
+          </p>
+        </Panel>
+      )}
       <PhaseShifts
-        waves={wavesOf(estimate)}
+        waves={waves}
         lMax={lMax}
         coulomb={hasCoulombTail(draft.document)}
         dimmed={dimmed}

@@ -14,6 +14,8 @@ interface Decision {
   limitText: (limit: number) => string;
 }
 
+const WEIGHTED = 'of dσ/dΩ, weighted by solid angle, for the totals diverge';
+
 /** The number the verdict rests on. */
 function decisionOf(estimate: Estimate): Decision | null {
   const { validity } = estimate;
@@ -21,7 +23,7 @@ function decisionOf(estimate: Estimate): Decision | null {
   if (figure && validity.deviations && validity.deviation !== undefined) {
     return {
       text: figure.text,
-      what: figure.detail,
+      what: figure.key === 'weighted' ? WEIGHTED : figure.detail,
       size: validity.deviation,
       limits: validity.deviations.limits,
       limitText: (limit) => `${String(Number((100 * limit).toPrecision(6)))}\u00a0%`,
@@ -50,7 +52,7 @@ function Headline({ estimate }: { estimate: Estimate }) {
   return (
     <div className="flex flex-wrap items-center justify-between gap-x-8 gap-y-3">
       <div className="min-w-0 flex-1 basis-72">
-        <p className="flex flex-wrap items-center gap-x-3 gap-y-1">
+        <p aria-live="polite" className="flex flex-wrap items-center gap-x-3 gap-y-1">
           <Grade verdict={validity.verdict} large />
           {decision && (
             <>

@@ -9,10 +9,11 @@ export interface Complex {
   im: number;
 }
 
-/** The waves of the exact calculation; where the case has no first order, none of its phases either. */
+/** The waves of the exact calculation; a wall has no first order, and the zeros that stand for it are no phases. */
 export function wavesOf(estimate: Estimate): PhaseShift[] {
   const waves = computedOf(estimate, 'partialWaves')?.phaseShifts ?? [];
-  return computedOf(estimate, 'born1') ? waves : waves.map((wave) => without(wave, 'born'));
+  const none = computedOf(estimate, 'born1') === null && waves.every(({ born = 0 }) => born === 0);
+  return none ? waves.map((wave) => without(wave, 'born')) : waves;
 }
 
 /** T_l = (S_l - 1)/2i of a wave with S_l = η exp(2iδ). */
