@@ -63,6 +63,31 @@ const TABLE = 'Electrons on helium: the static field as a table';
 const GAUSSIANS = 'Alphas on helium with a nuclear force in two Gaussians';
 const HULTHEN = 'Neutrons on protons in a Hulthén well';
 const LIBRARY = 'Electrons on carbon, as the library had it';
+const ALPHAS = 'Alphas on helium: an interference first order has wrong';
+const SPHERE = 'Fast neutrons on a hard sphere: the shadow';
+const WELL = 'Slow neutrons on a well near its first bound state';
+const LEAD = '100 MeV neutrons on lead: straight paths with absorption';
+const POLARISED = 'Protons polarised by Ca-40';
+
+function methodOf({ methods }: Estimate, name: 'eikonal' | 'partialWaves') {
+  const found = methods[name];
+  if (!found || 'unavailable' in found) throw new Error(`${name} is not there`);
+  return found;
+}
+const exactDcs = (theta: number) => (estimate: Estimate) =>
+  methodOf(estimate, 'partialWaves').differential.find((point) => point.theta === theta)?.dcs ??
+  NaN;
+const elasticBy = (name: 'eikonal' | 'partialWaves') => (estimate: Estimate) => {
+  const found = methodOf(estimate, name).elastic;
+  return 'divergent' in found ? Infinity : found.value;
+};
+const exactElastic = elasticBy('partialWaves');
+const length = (estimate: Estimate) =>
+  methodOf(estimate, 'partialWaves').lowEnergy?.scatteringLength?.value ?? NaN;
+const strongest = (estimate: Estimate) =>
+  methodOf(estimate, 'partialWaves').differential.reduce((best, point) =>
+    (point.analysingPower ?? 0) > (best.analysingPower ?? 0) ? point : best,
+  );
 
 /** A figure as a note prints it, and the value it stands for. */
 const FIGURES: [string, number, string, (estimate: Estimate) => number][] = [
@@ -91,6 +116,22 @@ const FIGURES: [string, number, string, (estimate: Estimate) => number][] = [
   [LIBRARY, 1, '0.0420', elastic],
   [LIBRARY, 1, '0.0700', () => elastic(publishedCarbon(2))],
   [LIBRARY, 1, '0.0642', () => elastic(estimateOf(CARBON, 2))],
+  [ALPHAS, 1, '0.4920', exactDcs(60)],
+  [ALPHAS, 1, '0.5898', dcs(60)],
+  [ALPHAS, 1, '0.3318', exactDcs(90)],
+  [SPHERE, 1, '2.67', (estimate) => (exactElastic(estimate) * 100) / (Math.PI * 25)],
+  [WELL, 1, '4.8', (estimate) => exactElastic(estimate) / elastic(estimate)],
+  [WELL, 2, '-71.9', length],
+  [WELL, 2, '36', (estimate) => length(estimate) / -2],
+  [LEAD, 1, '6.7', (estimate) => elastic(estimate) / exactElastic(estimate)],
+  [
+    LEAD,
+    1,
+    '5',
+    (estimate) => 100 - (100 * elasticBy('eikonal')(estimate)) / exactElastic(estimate),
+  ],
+  [POLARISED, 1, '38.5', (estimate) => strongest(estimate).theta],
+  [POLARISED, 1, '1', (estimate) => strongest(estimate).analysingPower ?? NaN],
 ];
 
 describe('the figures in the notes', () => {

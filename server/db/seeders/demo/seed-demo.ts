@@ -11,6 +11,7 @@ import { ELECTRON_CASES } from './electron-cases.ts';
 import { FORMULA_CASES } from './formula-cases.ts';
 import { HELIUM_CASES } from './helium-cases.ts';
 import { ION_CASES } from './ion-cases.ts';
+import { EXACT_CASES } from './exact-cases.ts';
 import { LIBRARY_CASES, seedLibrary } from './library-demo.ts';
 import { LIGHT_ION_CASES } from './light-ion-cases.ts';
 import { NEUTRON_CASES } from './neutron-cases.ts';
@@ -34,6 +35,7 @@ export const DEMO_CASES: readonly DemoCase[] = [
   ...HELIUM_CASES,
   ...FORMULA_CASES,
   ...LIBRARY_CASES,
+  ...EXACT_CASES,
 ];
 
 export interface SeedContext {
