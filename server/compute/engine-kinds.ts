@@ -9,6 +9,11 @@ import { computeScanPoint } from '#server/modules/scans/compute-scan-point.ts';
 import type { ScanPart, ScanPointTask } from '#server/modules/scans/compute-scan-point.ts';
 import type { RunPlan, RunPlanRequest } from '#shared/contracts/run-plans.ts';
 import { computeRunPlan } from '#server/modules/run-plans/compute-run-plan.ts';
+import { computeRunPlanTrials } from '#server/modules/run-plans/compute-run-plan-trials.ts';
+import type {
+  RunPlanTrialsTask,
+  TrialsPart,
+} from '#server/modules/run-plans/compute-run-plan-trials.ts';
 
 /** What the engine can be asked, with what goes in and what comes out: plain JSON both ways. */
 export interface EngineKinds {
@@ -17,6 +22,8 @@ export interface EngineKinds {
   materialAids: { input: MaterialAidsRequest; output: MaterialAids };
   /** The same collision counted by detectors. */
   runPlan: { input: RunPlanRequest; output: RunPlan };
+  /** A part of a Monte Carlo run of it. */
+  runPlanTrials: { input: RunPlanTrialsTask; output: TrialsPart };
   /** One point of a scan of the same collision. */
   scanPoint: { input: ScanPointTask; output: ScanPart };
   /** What the Reference shows of a form: V(r), its transform, remarks. */
@@ -30,6 +37,7 @@ export const ENGINE: {
   estimate: computeEstimate,
   materialAids: computeMaterialAids,
   runPlan: computeRunPlan,
+  runPlanTrials: computeRunPlanTrials,
   scanPoint: computeScanPoint,
   formSheet: drawForm,
 };
