@@ -20,8 +20,9 @@ export interface Panels {
 
 /** What is left of the interaction beyond the followed panels may be this strong: its square is lost in rounding. */
 const LEFT = 4e-9;
-/** Radians of the wave over which it is followed at most. */
+/** Radians of the wave over which it is followed at most, and panels times waves. */
 const MOST_PHASE = 8000;
+const MOST_STEPS = 5e6;
 
 /** What the fit of U may miss, in phase, of a strong and of a weak interaction. */
 const MISSED = 1e-18;
@@ -101,7 +102,7 @@ function lastShell({ edges, count }: RadialPanels, { shells }: RadialInteraction
 }
 
 function followed(panels: RadialPanels, strength: Float64Array, least: number): RadialPanels {
-  const allowed = LEFT * Math.min(1, strength[0] ?? 0);
+  const allowed = LEFT * Math.sqrt(Math.min(1, strength[0] ?? 0));
   let count = Math.max(1, least);
   while (count < panels.count && (strength[count] ?? 0) > allowed) count += 1;
   return { ...panels, count };
@@ -137,6 +138,14 @@ export function panelsOf(
 function tooFar(phase: number): Unavailable {
   return {
     unavailable: `The interaction reaches over ${phase.toPrecision(3)} radians of the wave; partial waves are computed up to ${MOST_PHASE}. Lower the energy or the range; born1 and eikonal are made for this case.`,
+  };
+}
+
+/** Why so many waves over so many panels are too much work; null where they are not. */
+export function tooMany({ inner }: Panels, waves: number): Unavailable | null {
+  if (inner.count * waves <= MOST_STEPS) return null;
+  return {
+    unavailable: `Some ${waves} waves over ${inner.count} panels are too much work for partial waves. Lower the energy or the range; born1 and eikonal are made for this case.`,
   };
 }
 

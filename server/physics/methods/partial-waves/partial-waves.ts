@@ -11,6 +11,7 @@ import {
   flipCoefficients,
   isCharged,
 } from './assemble.ts';
+import type { Coefficients } from './assemble.ts';
 import type { RadialInteraction } from './interaction.ts';
 import { radialInteraction } from './interaction.ts';
 import { lowEnergy } from './low-energy.ts';
@@ -24,8 +25,9 @@ export interface PartialWaveInput extends MethodInput {
   projectileSpin: number | null;
 }
 
-/** Below this share of Σ (2l+1)|T_l|/k an amplitude is lost. */
+/** Below this share of Σ (2l+1)|T_l|/k an amplitude is lost; where its error is larger, below that, to the second share. */
 const FLOOR = 1e-11;
+const HIGHEST_FLOOR = 1e-8;
 const NO_AMPLITUDE: Amplitude = { re: 0, im: 0, error: 0 };
 /** |S| may exceed one by its error, or a wave creates particles. */
 const CREATES = 1e-9;
@@ -83,6 +85,10 @@ function closureOf(terms: readonly Term[], twoMuOverHbar2: number): FirstBorn {
     terms.filter(({ noBorn }) => noBorn === undefined),
     twoMuOverHbar2,
   );
+}
+
+function floorOf({ size, error }: Coefficients, born: FirstBorn): number {
+  return Math.max(FLOOR * size, Math.min(2 * error, HIGHEST_FLOOR * size), born.floor);
 }
 
 function spinRefusal({ spinOrbit }: RadialInteraction, spin: number | null): Unavailable | null {
@@ -154,7 +160,7 @@ export function partialWaves(input: PartialWaveInput): PartialWaves | Unavailabl
     amplitude,
     shortRange,
     tail: { re: interaction.charge, im: 0 },
-    floor: Math.max(FLOOR * direct.size, born.floor),
+    floor: floorOf(direct, born),
     flip: turned && ((q) => flipAmplitude(turned, k, q)),
     absorption: interaction.absorbs
       ? absorptionOf(scattered, k, closing(0, 0))

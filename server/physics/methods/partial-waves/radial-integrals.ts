@@ -24,16 +24,19 @@ const NEGLIGIBLE = 1e-19;
 /** Edges of panels, taken together where the field is smooth. */
 function cutsOf(
   { edges, fieldLength }: RadialPanels,
+  { breaks }: RadialInteraction,
   from: number,
   to: number,
   most: typeof FINE,
 ): number[] {
+  const jumps = new Set(breaks);
   const cuts = [edges[from] ?? 0];
   let powers = 0;
   let joined = 0;
   for (let p = from; p < to; p++) {
     const more = fieldLength[p] ?? 0;
-    if (joined > 0 && (joined === most.panels || powers + more > most.powers || p === 1)) {
+    const full = joined === most.panels || powers + more > most.powers || p === 1;
+    if (joined > 0 && (full || jumps.has(edges[p] ?? 0))) {
       cuts.push(edges[p] ?? 0);
       powers = joined = 0;
     }
@@ -148,8 +151,8 @@ export function innerIntegrals(
 ): Float64Array[] {
   const central = Math.min(2, interaction.field.components);
   const sums: WaveIntegrals = { FF: rows(central, lMax + 1), FG: [], GG: [] };
-  const parts = [nodesOf(cutsOf(panels, 0, inner, FINE))];
-  if (below) parts.push(nodesOf(cutsOf(below, 0, below.count, FINE)));
+  const parts = [nodesOf(cutsOf(panels, interaction, 0, inner, FINE))];
+  if (below) parts.push(nodesOf(cutsOf(below, interaction, 0, below.count, FINE)));
   for (const nodes of parts) accumulate(interaction, nodes, k, lMax, sums, false);
   const [F, G] = rows(2, lMax + 1);
   for (const { radius, jump } of interaction.shells) {
@@ -176,7 +179,7 @@ export function tailIntegrals(
     FG: rows(components, lMax + 1),
     GG: rows(components, lMax + 1),
   };
-  const nodes = nodesOf(cutsOf(panels, inner, panels.count, COARSE));
+  const nodes = nodesOf(cutsOf(panels, interaction, inner, panels.count, COARSE));
   accumulate(interaction, nodes, k, lMax, sums, true);
   return sums;
 }

@@ -15,6 +15,7 @@ import {
 } from '#server/physics/numerics/radial-steps.ts';
 import { riccatiRatio } from '#server/physics/numerics/riccati-bessel.ts';
 import type { RadialInteraction } from './interaction.ts';
+import type { Panels } from './panels.ts';
 import { CENTRAL_IM, CENTRAL_RE, SHORT, SPIN_IM, SPIN_RE } from './interaction.ts';
 
 /** Reference functions at the end of the panels: dimensionless, slopes by k r. */
@@ -37,6 +38,8 @@ export interface Matched {
   spread: number;
   /** Panels the wave was carried over. */
   panels: number;
+  /** Whether it was begun behind its barrier. */
+  begun: boolean;
 }
 
 /** Half the exponent by which what is forgotten must die out: exp(-40) is below 1e-17. */
@@ -224,6 +227,7 @@ export class RadialSolver {
       delay: (k * norm) / outer / outer,
       spread: (u * df + slope * f + mixed) / outer,
       panels: count - from,
+      begun: from > 0,
     };
   }
 
@@ -233,9 +237,9 @@ export class RadialSolver {
    *
    * Formula: u = F~ + y, y'' = [l(l+1)/r² + 2 eta k/r - k²] y + U (F~ + y), F~ the regular wave without U.
    */
-  matchWeak(l: number, outer: Outer): Matched | null {
+  matchWeak(l: number, factor: number, outer: Outer): Matched | null {
     const { edges, count } = this.panels;
-    const from = this.start(l, 0);
+    const from = this.start(l, factor);
     if (from >= count) return null;
     const { k, wave: added, free, total, second } = this;
     const { absorbs } = this.interaction;
@@ -246,13 +250,13 @@ export class RadialSolver {
     const barrier = l * (l + 1);
     added.re = added.im = added.slopeRe = added.slopeIm = 0;
     let p = from;
-    if (p > 0) this.begin(p, l, 0, free);
+    if (p > 0) this.begin(p, l, factor, free);
     else {
       const width = edges[1] ?? 0;
-      fieldPowers(this.panels, 0, felt, 1, 0, 0, total);
+      fieldPowers(this.panels, 0, felt, 1, SPIN_RE, factor, total);
       this.shift(total, this.shiftedRe);
       if (absorbs) {
-        fieldPowers(this.panels, 0, CENTRAL_IM, 1, 0, 0, second);
+        fieldPowers(this.panels, 0, CENTRAL_IM, 1, SPIN_IM, factor, second);
         this.shift(second, this.shiftedIm);
       }
       if (charged) fieldPowers(this.panels, 0, CENTRAL_RE, 1, SHORT, -1, third);
@@ -279,9 +283,9 @@ export class RadialSolver {
       third.length = 0;
       if (charged) fieldPowers(this.panels, p, CENTRAL_RE, 1, SHORT, -1, third);
       addBarrier(this.panels, p, barrier, k, third);
-      fieldPowers(this.panels, p, felt, 1, 0, 0, total);
+      fieldPowers(this.panels, p, felt, 1, SPIN_RE, factor, total);
       if (absorbs) {
-        fieldPowers(this.panels, p, CENTRAL_IM, 1, 0, 0, second);
+        fieldPowers(this.panels, p, CENTRAL_IM, 1, SPIN_IM, factor, second);
         stepAdded(third, total, second, free, added);
       } else stepAddedReal(third, total, free, added);
     }
@@ -290,7 +294,16 @@ export class RadialSolver {
     const betaIm = added.im * dF - added.slopeIm * F;
     const alphaRe = (added.slopeRe + free.slopeRe) * G - (added.re + free.re) * dG;
     const alphaIm = added.slopeIm * G - added.im * dG;
-    return { alphaRe, alphaIm, betaRe, betaIm, delay: 0, spread: 1, panels: count - from };
+    return {
+      alphaRe,
+      alphaIm,
+      betaRe,
+      betaIm,
+      delay: 0,
+      spread: 1,
+      panels: count - from,
+      begun: from > 0,
+    };
   }
 
   private readonly third = panelPowers();
@@ -319,8 +332,27 @@ export function transitionOf({ alphaRe, alphaIm, betaRe, betaIm }: Matched) {
   };
 }
 
-/** Bound of the rounding in T, relative to T where the wave was carried beside a free one. */
-export function roundingOf({ delay, spread, panels }: Matched, x: number, weak: boolean): number {
-  if (weak) return UNIT_ROUNDOFF * (64 + 8 * panels + 2 * x);
-  return UNIT_ROUNDOFF * ((16 + 2 * panels + x) * spread + 8 * delay);
+/** What is lost of a wave that begins behind its barrier. */
+const LOST = 1e-17;
+
+/**
+ * Bound of the error of T.
+ *
+ * @param x k times the radius of the match
+ * @param weak whether the wave was carried beside a free one: its rounding is then relative to T
+ * @param size |T|
+ * @param panels with what their fit of U misses, and the strength of the interaction
+ */
+export function errorOf(
+  { delay, spread, panels, begun }: Matched,
+  x: number,
+  weak: boolean,
+  size: number,
+  { all, strength }: Pick<Panels, 'all' | 'strength'>,
+): number {
+  const rounding = weak
+    ? (64 + 8 * panels + 2 * x) * size
+    : (16 + 2 * panels + x) * spread + 8 * delay;
+  const forgotten = begun ? LOST * Math.min(1, strength[0] ?? 0) : 0;
+  return UNIT_ROUNDOFF * rounding + forgotten + all.missed * Math.min(1, x);
 }

@@ -2,12 +2,11 @@ import { coulombWaves } from '#server/physics/numerics/coulomb-functions.ts';
 import { coulombPhases } from '#server/physics/numerics/coulomb-phase.ts';
 import type { Unavailable } from '../amplitude.ts';
 import type { RadialInteraction } from './interaction.ts';
-import { panelsOf } from './panels.ts';
+import { panelsOf, tooMany } from './panels.ts';
 import type { Outer } from './radial-wave.ts';
-import { RadialSolver, roundingOf, transitionOf } from './radial-wave.ts';
+import { RadialSolver, errorOf, transitionOf } from './radial-wave.ts';
 import type { Scattered, Transition } from './scatter.ts';
 import {
-  FORGOTTEN,
   IN_TURN,
   isWeak,
   NEGLIGIBLE,
@@ -76,6 +75,8 @@ export function scatterCharged(
   const { inner } = found;
   const rho = k * (inner.edges[inner.count] ?? 0);
   const bound = Math.ceil(rho + 2 * Math.abs(eta) + 40 + 12 * Math.cbrt(rho));
+  const refused = tooMany(found, bound);
+  if (refused) return refused;
   const solver = new RadialSolver(interaction, inner, k);
   const { outer, error: outerError } = coulombOuter(eta, rho, bound);
   const { sigma, error: sigmaError } = coulombPhases(bound, eta);
@@ -87,17 +88,17 @@ export function scatterCharged(
     if (!edge || solver.start(l, spinFactor(l, 1)) >= inner.count) break;
     left = 0;
     let noise = 0;
-    const weak = isWeak(interaction, found, solver.start(l, 0));
+    const weak = isWeak(interaction, found, solver.start(l, spinFactor(l, 1)), l);
     for (const spin of spinsOf(interaction, l)) {
-      const matched = weak ? solver.matchWeak(l, edge) : solver.match(l, spinFactor(l, spin), edge);
+      const factor = spinFactor(l, spin);
+      const matched = weak ? solver.matchWeak(l, factor, edge) : solver.match(l, factor, edge);
       if (!matched) continue;
-      const { re, im, eta: size, absorbed } = transitionOf(matched);
-      const functions = 4 * (outerError[l] ?? 0) * matched.spread;
-      const relative = roundingOf(matched, rho, weak) + functions;
-      const least = found.all.missed + FORGOTTEN * Math.min(1, found.strength[0] ?? 0);
-      const error = relative * (weak ? Math.hypot(re, im) : 1) + least;
+      const { re, im, eta: kept, absorbed } = transitionOf(matched);
+      const size = Math.hypot(re, im);
+      const functions = 4 * (outerError[l] ?? 0) * (weak ? size : matched.spread);
+      const error = errorOf(matched, rho, weak, size, found) + functions;
       if (!(error < UNRESOLVED)) return tooNarrow(l, error);
-      const wave = { l, spin, re, im, eta: interaction.absorbs ? size : 1, absorbed, error };
+      const wave = { l, spin, re, im, eta: interaction.absorbs ? kept : 1, absorbed, error };
       waves.push(wave);
       left += weightOf(wave) * Math.hypot(re, im);
       noise += weightOf(wave) * error;

@@ -2,10 +2,10 @@ import type { Unavailable } from '../amplitude.ts';
 import type { FirstBorn } from '../born1.ts';
 import { projectedBorn } from './born-projection.ts';
 import type { RadialInteraction } from './interaction.ts';
-import { panelsOf } from './panels.ts';
+import { panelsOf, tooMany } from './panels.ts';
 import { tailOfSquare } from './power-tail.ts';
 import { innerIntegrals } from './radial-integrals.ts';
-import { RadialSolver, roundingOf, transitionOf } from './radial-wave.ts';
+import { RadialSolver, errorOf, transitionOf } from './radial-wave.ts';
 import type { Scattered, Transition } from './scatter.ts';
 import {
   freeOuter,
@@ -127,6 +127,8 @@ export function scatterPowerTail(
   const { inner, below } = found;
   const x = k * R;
   const last = Math.floor(x / 2 - 1);
+  const refused = tooMany(found, last);
+  if (refused) return refused;
   const forward = Math.abs(k * born.shortRange(0).re);
   const lMax = lastWave(interaction, k, last, forward);
   const phases = projectedBorn(born, k, lMax);
@@ -137,19 +139,19 @@ export function scatterPowerTail(
   const waves: Transition[] = [];
   for (let l = 0; l <= last; l++) {
     const edge = outer(l);
-    const weak = isWeak(interaction, found, solver.start(l, 0));
+    const weak = isWeak(interaction, found, solver.start(l, spinFactor(l, 1)), l);
     const B = {
       re: (phases.re[l] ?? 0) + (within[0]?.[l] ?? 0),
       im: (phases.im[l] ?? 0) + (within[1]?.[l] ?? 0),
     };
     const [iRe, iIm] = [(square.re[l] ?? 0) / k, (square.im[l] ?? 0) / k];
     for (const spin of spinsOf(interaction, l)) {
+      const factor = spinFactor(l, spin);
       const matched =
-        edge && (weak ? solver.matchWeak(l, edge) : solver.match(l, spinFactor(l, spin), edge));
+        edge && (weak ? solver.matchWeak(l, factor, edge) : solver.match(l, factor, edge));
       if (!matched) continue;
       const T = transitionOf(matched);
-      const rounding = roundingOf(matched, x, weak) * (weak ? Math.hypot(T.re, T.im) : 1);
-      const error = rounding + found.all.missed;
+      const error = errorOf(matched, x, weak, Math.hypot(T.re, T.im), found);
       if (!(error < UNRESOLVED)) return tooNarrow(l, error);
       const [tRe, tIm] = [(T.re - T.im) * (T.re + T.im), 2 * T.re * T.im];
       const moved = turned(T, B.re, B.im);

@@ -2,11 +2,11 @@ import { riccatiBessel } from '#server/physics/numerics/riccati-bessel.ts';
 import type { Unavailable } from '../amplitude.ts';
 import type { RadialInteraction } from './interaction.ts';
 import type { Panels } from './panels.ts';
-import { panelsOf } from './panels.ts';
+import { panelsOf, tooMany } from './panels.ts';
 import type { WaveIntegrals } from './radial-integrals.ts';
 import { innerIntegrals, lastOrder, tailIntegrals } from './radial-integrals.ts';
 import type { Matched, Outer } from './radial-wave.ts';
-import { RadialSolver, roundingOf, transitionOf } from './radial-wave.ts';
+import { RadialSolver, errorOf, transitionOf } from './radial-wave.ts';
 
 /** T_l = (S_l - 1)/2i of one wave. */
 export interface Transition {
@@ -35,8 +35,6 @@ export const NEGLIGIBLE = 1e-16;
 /** Waves that must in turn be negligible. */
 export const IN_TURN = 3;
 const WEAK = 0.2;
-/** What is lost of a wave that begins behind its barrier. */
-export const FORGOTTEN = 1e-17;
 /** A phase known no better than this is no phase. */
 export const UNRESOLVED = 1e-8;
 
@@ -57,8 +55,9 @@ export function isWeak(
   { spinOrbit, core }: RadialInteraction,
   { strength }: Panels,
   edge: number,
+  l: number,
 ): boolean {
-  return !spinOrbit && core === 0 && (strength[edge] ?? 0) < WEAK;
+  return core === 0 && (strength[edge] ?? 0) * (spinOrbit ? l + 1 : 1) < WEAK;
 }
 
 /** Free functions at x for every l, with their slopes. */
@@ -120,7 +119,7 @@ function beyondFollowed(
       im,
       eta: 1 - 2 * im,
       absorbed: 4 * im,
-      error: size * (size + 1e-13) + FORGOTTEN * size,
+      error: size * (size + 1e-13),
     };
   });
 }
@@ -146,6 +145,8 @@ export function scatter(interaction: RadialInteraction, k: number): Scattered | 
   const { all, inner } = found;
   const x = k * (inner.edges[inner.count] ?? 0);
   const bound = lastOrder(interaction, all, k);
+  const refused = tooMany(found, bound);
+  if (refused) return refused;
   const first = innerIntegrals(interaction, inner, inner.count, found.below, k, bound);
   const tail = tailIntegrals(interaction, all, inner.count, k, bound);
   const born = bornOf(first, tail, bound);
@@ -155,7 +156,7 @@ export function scatter(interaction: RadialInteraction, k: number): Scattered | 
   const pocket = solver.pocketOrder();
   let sum = 0;
   let quiet = 0;
-  let left = 0;
+  let lastExcess = 0;
   let lMax = 0;
   for (let l = 0; l <= bound && quiet < IN_TURN; l++) {
     const edge = outer(l);
@@ -171,11 +172,33 @@ export function scatter(interaction: RadialInteraction, k: number): Scattered | 
       excess += weightOf(wave) * Math.hypot(re, im);
     }
     quiet = excess <= Math.max(NEGLIGIBLE * sum, noise / 64) && l > pocket ? quiet + 1 : 0;
-    left = excess;
+    lastExcess = excess;
     lMax = l;
   }
   for (let l = lMax + 1; l <= bound; l++) waves.push(...beyondFollowed(interaction, tail, born, l));
+  const left = leftBeyond(born, lMax, bound, quiet === IN_TURN ? lastExcess : null);
   return { waves, born, lMax, left };
+}
+
+/**
+ * What waves beyond the last may have beyond first order: their phases squared, in the proportion of the last one; where the rest
+ * feels nothing at all, no more than their first order.
+ */
+function leftBeyond(
+  { re, im }: { re: Float64Array; im: Float64Array },
+  lMax: number,
+  bound: number,
+  excess: number | null,
+): number {
+  const size = (l: number) => Math.hypot(re[l] ?? 0, im[l] ?? 0);
+  let [sum, squares] = [0, 0];
+  for (let l = lMax + 1; l <= bound; l++) {
+    sum += (2 * l + 1) * size(l);
+    squares += (2 * l + 1) * size(l) ** 2;
+  }
+  if (excess === null) return sum;
+  const last = (2 * lMax + 1) * size(lMax) ** 2;
+  return last > 0 ? Math.min(sum + excess, (excess * squares) / last) : excess;
 }
 
 interface Setting {
@@ -192,15 +215,13 @@ function wavesOf(
   edge: Outer,
 ): Transition[] | Unavailable {
   const waves: Transition[] = [];
-  const weak = isWeak(interaction, found, solver.start(l, 0));
+  const weak = isWeak(interaction, found, solver.start(l, spinFactor(l, 1)), l);
   for (const spin of spinsOf(interaction, l)) {
     const factor = spinFactor(l, spin);
-    const matched = weak ? solver.matchWeak(l, edge) : solver.match(l, factor, edge);
+    const matched = weak ? solver.matchWeak(l, factor, edge) : solver.match(l, factor, edge);
     if (!matched) continue;
     const { re, im, eta, absorbed } = transitionOf(withTail(matched, tail, l, factor));
-    const size = Math.hypot(re, im);
-    const least = found.all.missed + FORGOTTEN * Math.min(1, found.strength[0] ?? 0);
-    const error = roundingOf(matched, x, weak) * (weak ? size : 1) + least;
+    const error = errorOf(matched, x, weak, Math.hypot(re, im), found);
     if (!(error < UNRESOLVED)) return tooNarrow(l, error);
     waves.push({ l, spin, re, im, eta: interaction.absorbs ? eta : 1, absorbed, error });
   }
