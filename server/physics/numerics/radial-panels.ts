@@ -44,11 +44,14 @@ export const FIELD_STRIDE = 18;
 export const POWER_STRIDE = 64;
 const MOST_PANELS = 12_000;
 /** Phase of the local wave on one panel. */
-const PHASE = 2.2;
+const PHASE = 3;
 /** Width over distance from the origin. */
 const STEEPNESS = 0.45;
 const GROWTH = 1.6;
-const PLATEAU = 4 * UNIT_ROUNDOFF;
+/** Values carry roundings of their own, those of an exponent among them: below this a narrower panel gains nothing. */
+const PLATEAU = 16 * UNIT_ROUNDOFF;
+/** Coefficients below this are rounding. */
+const LOST = 2 * UNIT_ROUNDOFF;
 /** Coefficients at the end that tell what a fit misses. */
 const LAST = 3;
 
@@ -132,7 +135,7 @@ function tryPanel(
   const chebyshev = finite ? values.map(coefficientsOf) : [];
   for (const row of chebyshev) {
     let n = FIELD_STRIDE;
-    while (n > 1 && Math.abs(row[n - 1] ?? 0) <= (UNIT_ROUNDOFF / 2) * largest) n -= 1;
+    while (n > 1 && Math.abs(row[n - 1] ?? 0) <= LOST * largest) n -= 1;
     length = Math.max(length, n);
     let tail = 0;
     for (let i = 1; i <= LAST; i++) tail += Math.abs(row[FIELD_STRIDE - i] ?? 0);
@@ -189,10 +192,10 @@ export class PanelError extends Error {
 }
 
 /**
- * Cuts a radius into panels on which a field is a polynomial to rounding and a wave turns through little more than two radians.
+ * Cuts a radius into panels on which a field is a polynomial to rounding and a wave turns through three radians.
  *
  * Formula: 18 Chebyshev points a panel, coefficients of T_n turned into powers of t; a panel is halved while its last coefficients count,
- * while ∫ sqrt|W - k²| dx exceeds 2.2, and is never wider than 0.45 of its distance from the origin.
+ * while ∫ sqrt|W - k²| dx exceeds 3, and is never wider than 0.45 of its distance from the origin.
  *
  * @param request the field W, where it jumps, and how well it must be met
  * @returns panels from start to end

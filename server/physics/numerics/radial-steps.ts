@@ -11,7 +11,9 @@ export interface RadialWave {
 
 const TERMS = POWER_STRIDE;
 /** Terms below this share of the sum end a series. */
-const NEGLIGIBLE = 2 ** -60;
+const NEGLIGIBLE = 2 ** -56;
+/** So many of them in turn: one or two may vanish by symmetry. */
+const QUIET = 3;
 const INVERSE = Float64Array.from({ length: TERMS }, (_, n) => 1 / ((n + 1) * (n + 2)));
 const re = new Float64Array(TERMS);
 const im = new Float64Array(TERMS);
@@ -48,7 +50,7 @@ export function stepReal(W: Float64Array, length: number, wave: RadialWave): num
   let size = Math.abs(wave.re) + Math.abs(wave.slopeRe);
   let count = 2;
   let quiet = 0;
-  while (count < TERMS && quiet < 4) {
+  while (count < TERMS && quiet < QUIET) {
     const n = count - 2;
     const last = n < length ? n : length - 1;
     let sum = 0;
@@ -98,7 +100,7 @@ export function stepComplex(
     Math.abs(wave.re) + Math.abs(wave.slopeRe) + Math.abs(wave.im) + Math.abs(wave.slopeIm);
   let count = 2;
   let quiet = 0;
-  while (count < TERMS && quiet < 4) {
+  while (count < TERMS && quiet < QUIET) {
     const n = count - 2;
     let sumRe = 0;
     let sumIm = 0;
@@ -152,7 +154,7 @@ export function stepFromOrigin(
   let size = 1;
   let count = 1;
   let quiet = 0;
-  while (count < TERMS && quiet < 4) {
+  while (count < TERMS && quiet < QUIET) {
     let sumRe = 0;
     let sumIm = 0;
     const last = Math.min(count, FIELD_STRIDE + 1);
@@ -207,7 +209,7 @@ export function stepAdded(
     Math.abs(added.re) + Math.abs(added.slopeRe) + Math.abs(added.im) + Math.abs(added.slopeIm);
   let count = 2;
   let quiet = 0;
-  while (count < TERMS && quiet < 4) {
+  while (count < TERMS && quiet < QUIET) {
     const n = count - 2;
     let [sum, sumRe, sumIm] = [0, 0, 0];
     for (let m = Math.min(n, A.length - 1); m >= 0; m--) {
@@ -257,7 +259,7 @@ export function stepAddedReal(
   let addedSize = Math.abs(added.re) + Math.abs(added.slopeRe);
   let count = 2;
   let quiet = 0;
-  while (count < TERMS && quiet < 4) {
+  while (count < TERMS && quiet < QUIET) {
     const n = count - 2;
     let sum = 0;
     let more = 0;

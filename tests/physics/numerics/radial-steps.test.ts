@@ -131,7 +131,7 @@ describe('panels', () => {
     expect(panels.edges[panels.count]).toBe(3);
     for (let p = 0; p < panels.count; p++) {
       const width = (panels.edges[p + 1] ?? NaN) - (panels.edges[p] ?? NaN);
-      expect(4 * width).toBeLessThanOrEqual(2.3);
+      expect(4 * width).toBeLessThanOrEqual(3.1);
     }
   });
 
