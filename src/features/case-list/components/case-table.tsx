@@ -118,10 +118,7 @@ export function CaseTable({
   return (
     <div
       aria-busy={dimmed}
-      className={classNames(
-        'rounded border border-line bg-sheet transition-opacity',
-        dimmed && 'opacity-60',
-      )}
+      className={classNames('rounded border border-line bg-sheet', dimmed && 'stale')}
     >
       <table className="w-full border-collapse text-left">
         <caption className="sr-only">Cases, one a row, with their beam line</caption>

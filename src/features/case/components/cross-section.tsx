@@ -1,4 +1,5 @@
 import { Notice } from '#src/components/notice.tsx';
+import { classNames } from '#src/lib/class-names.ts';
 import { METHODS } from '#shared/contracts/estimates.ts';
 import type { Estimate } from '#shared/contracts/estimates.ts';
 import { AidsArea } from '../aids/aids-area.tsx';
@@ -50,7 +51,12 @@ export function CrossSection({ estimate, fileName }: { estimate: Estimate; fileN
         </section>
         <AidsArea estimate={estimate} fileName={base} />
         <UnavailableMethods estimate={estimate} />
-        <div className="grid gap-4 @3xl:grid-cols-[20rem_minmax(0,1fr)]">
+        <div
+          className={classNames(
+            'grid gap-4 @3xl:grid-cols-[20rem_minmax(0,1fr)]',
+            stale && 'stale',
+          )}
+        >
           <section
             aria-label="Potential and wavelength"
             className="rounded border border-line bg-sheet px-4.5 py-4"

@@ -79,8 +79,8 @@ export function InteractionList({
       aria-label="Interactions"
       aria-busy={dimmed}
       className={classNames(
-        'divide-y divide-line rounded border border-line bg-sheet transition-opacity',
-        dimmed && 'opacity-60',
+        'divide-y divide-line rounded border border-line bg-sheet',
+        dimmed && 'stale',
       )}
     >
       {items.map((item) => (

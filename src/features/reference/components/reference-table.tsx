@@ -117,8 +117,8 @@ export function ReferenceTable<T>(props: ReferenceTableProps<T>) {
       tabIndex={0}
       aria-busy={dimmed}
       className={classNames(
-        'relative overflow-x-auto rounded border border-line bg-sheet transition-opacity',
-        dimmed && 'opacity-60',
+        'relative overflow-x-auto rounded border border-line bg-sheet',
+        dimmed && 'stale',
       )}
     >
       <table className="w-full border-collapse">

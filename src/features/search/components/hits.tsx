@@ -41,7 +41,7 @@ export function Hits({ id, search, onOpen }: { id: string; search: Search; onOpe
         // It scrolls by itself, as the arrow keys walk.
         className={classNames(
           'flex max-h-[min(34rem,60svh)] flex-col gap-2 overflow-y-auto',
-          state === 'searching' && 'opacity-60',
+          state === 'searching' && 'stale',
         )}
       >
         {groups.map(({ kind, title, places }) => (
