@@ -1,7 +1,7 @@
 import { Button } from '#src/components/button.tsx';
 import { Notice } from '#src/components/notice.tsx';
 import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
-import type { CaseDetail } from '#shared/contracts/cases.ts';
+import type { CaseDetail, VersionDetail } from '#shared/contracts/cases.ts';
 import { useEditing } from '../editing/editor-context.ts';
 import { CrossSection } from './cross-section.tsx';
 import { GoldenRuleSheet } from './golden-rule.tsx';
@@ -15,6 +15,8 @@ import { NothingFiled } from './withdraw.tsx';
 interface SectionContentProps {
   section: Section;
   saved: { detail: CaseDetail; etag: string } | null;
+  /** A version that is looked at as it was saved. */
+  version?: VersionDetail;
   failure: string | null;
   onRetry: () => void;
 }
@@ -34,13 +36,22 @@ function fileNameOf(saved: SectionContentProps['saved']): string {
   return saved ? `case-${saved.detail.number}-dcs` : 'new-case-dcs';
 }
 
-export function SectionContent({ section, saved, failure, onRetry }: SectionContentProps) {
+export function SectionContent(props: SectionContentProps) {
+  const { section, saved, version, failure, onRetry } = props;
   const { estimate, problems } = useEditing();
   if (section === 'record') {
     return saved ? <Record detail={saved.detail} etag={saved.etag} /> : <NothingFiled />;
   }
   if (section === 'run-plan') {
-    return <RunPlanSection fileName={fileNameOf(saved).replace(/-dcs$/, '')} />;
+    return (
+      <>
+        <InputList />
+        <RunPlanSection
+          fileName={fileNameOf(saved).replace(/-dcs$/, '')}
+          saved={version?.result.runPlan}
+        />
+      </>
+    );
   }
   if (section === 'validity') {
     return (

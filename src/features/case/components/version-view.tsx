@@ -99,6 +99,7 @@ export function VersionView({ detail, etag, version }: VersionViewProps) {
         <SectionContent
           section={section}
           saved={{ detail, etag }}
+          version={version}
           failure={null}
           onRetry={nothing}
         />

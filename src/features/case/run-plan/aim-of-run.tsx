@@ -25,7 +25,7 @@ export function AimOfRun({ plan }: { plan: RunPlanBody }) {
   const { editDocument } = useEditing();
   const { aim } = plan;
   return (
-    <div className="grid grid-cols-2 gap-3">
+    <div className="grid items-start gap-3 @xs:grid-cols-2 @2xl:grid-cols-3">
       <ChoiceField<Method>
         pointer="/runPlan/method"
         label="Cross section by"
@@ -72,7 +72,7 @@ export function UncertaintiesOfRun({ plan }: { plan: RunPlanBody }) {
           {Object.keys(plan.uncertainties ?? {}).length} stated
         </span>
       </summary>
-      <div className="mt-3 grid grid-cols-2 gap-3 @lg:grid-cols-4">
+      <div className="mt-3 grid items-start gap-3 @xs:grid-cols-2 @xl:grid-cols-4">
         {UNCERTAIN_INPUTS.map((input) => (
           <NumberField
             key={input}

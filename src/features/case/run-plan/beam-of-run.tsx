@@ -2,8 +2,13 @@ import { Segmented } from '#src/components/segmented.tsx';
 import type { BeamSent } from '#shared/contracts/run-plans.ts';
 import { NumberField, QuantityField } from '../components/typed-fields.tsx';
 import { useEditing } from '../editing/editor-context.ts';
-import { takeValue } from '../model/typing.ts';
-import { putIn, withPlan } from './model/plan.ts';
+import { chargeNumberOf } from '../aids/model/charge-numbers.ts';
+import type { Draft } from '../model/editor.ts';
+import { without } from '../model/without.ts';
+import { putIn, startBeam, withPlan } from './model/plan.ts';
+import { withoutTexts } from './model/texts.ts';
+
+type Kind = 'current' | 'particles';
 
 function Particles({ beam }: { beam: BeamSent }) {
   const { particlesPerSecond: rate } = beam;
@@ -11,7 +16,7 @@ function Particles({ beam }: { beam: BeamSent }) {
     <NumberField
       pointer="/runPlan/beam/particlesPerSecond"
       label="Particles on target"
-      suffix="/s"
+      suffix="s⁻¹"
       value={typeof rate === 'number' ? rate : rate?.value}
       rules={{ minimum: 0, exclusiveMinimum: true, what: 'The beam rate' }}
       put={putIn('beam', 'particlesPerSecond')}
@@ -22,7 +27,7 @@ function Particles({ beam }: { beam: BeamSent }) {
 
 function Current({ beam }: { beam: BeamSent }) {
   return (
-    <div className="grid grid-cols-2 gap-3">
+    <div className="grid items-start gap-3 @xs:grid-cols-2">
       <QuantityField
         pointer="/runPlan/beam/current"
         label="Electric current"
@@ -45,40 +50,47 @@ function Current({ beam }: { beam: BeamSent }) {
   );
 }
 
+/** Another kind of beam; what both kinds have is kept. */
+function withBeam(draft: Draft, kind: Kind): Draft {
+  const clean = withoutTexts(draft, /^\/runPlan\/beam\/(current|chargeState|particlesPerSecond)$/);
+  const document = withPlan(clean.document, (plan) => ({
+    ...plan,
+    beam: {
+      ...without(plan.beam, 'current', 'chargeState', 'particlesPerSecond'),
+      ...startBeam(clean.document, kind),
+    },
+  }));
+  return { ...clean, document };
+}
+
 /** Beam of the run: how many particles, how they come. */
 export function BeamOfRun({ beam }: { beam: BeamSent }) {
-  const { edit, readOnly } = useEditing();
+  const { draft, edit, readOnly } = useEditing();
   const electric = beam.particlesPerSecond === undefined;
-  const choose = (kind: 'current' | 'particles') =>
-    edit('/runPlan/beam', (before) =>
-      takeValue(before, '/runPlan/beam/current', (document) =>
-        withPlan(document, (plan) => {
-          const { dutyFactor, energySpread } = plan.beam;
-          const kept = {
-            ...(dutyFactor !== undefined && { dutyFactor }),
-            ...(energySpread && { energySpread }),
-          };
-          const given =
-            kind === 'current'
-              ? { current: { value: 1, unit: 'nA' }, chargeState: 1 }
-              : { particlesPerSecond: 1e6 };
-          return { ...plan, beam: { ...kept, ...given } };
-        }),
-      ),
-    );
+  const neutral = chargeNumberOf(draft.document.projectile) === 0;
   return (
     <div className="flex flex-col gap-3">
-      <Segmented
-        label="How the beam is given"
-        value={electric ? 'current' : 'particles'}
-        choices={[
-          { value: 'current', label: 'electric current' },
-          { value: 'particles', label: 'particle rate' },
-        ]}
-        onChange={(kind) => !readOnly && choose(kind)}
-      />
+      {neutral && !electric ? (
+        <p className="text-sm text-muted">
+          The projectile carries no charge: its beam is given as a rate.
+        </p>
+      ) : (
+        <div>
+          <Segmented
+            label="How the beam is given"
+            value={electric ? 'current' : 'particles'}
+            choices={[
+              { value: 'current', label: 'electric current' },
+              { value: 'particles', label: 'particle rate' },
+            ]}
+            onChange={(kind) =>
+              !readOnly && edit(`/runPlan/beam ${kind}`, (before) => withBeam(before, kind))
+            }
+          />
+        </div>
+      )}
       {electric ? <Current beam={beam} /> : <Particles beam={beam} />}
-      <div className="grid grid-cols-2 gap-3">
+      <div className="grid items-start gap-3 @xs:grid-cols-2">
         <NumberField
           optional
           pointer="/runPlan/beam/dutyFactor"

@@ -1,10 +1,10 @@
 import type { ReactNode } from 'react';
-import { formatNumber, unitSymbol } from '#shared/units/format.ts';
+import { formatNumber } from '#shared/units/format.ts';
 import type { BudgetLine, PlannedDetector } from '#shared/contracts/run-plans.ts';
-import { Power } from '#src/components/figure.tsx';
 import { TableBox, bodyCell, headCell } from '../validity/panel.tsx';
 import { INPUT_NAMES } from './aim-of-run.tsx';
-import { percentText, rateText, timeText } from './model/numbers.ts';
+import { Amount, Time } from './amount.tsx';
+import { percentText, timeText } from './model/numbers.ts';
 
 const FACTOR_NAMES: Record<PlannedDetector['factors'][number]['name'], string> = {
   beamRate: 'beam particles per second',
@@ -15,23 +15,28 @@ const FACTOR_NAMES: Record<PlannedDetector['factors'][number]['name'], string> =
   efficiency: 'efficiency',
 };
 
-function Line({ name, text, sum }: { name: ReactNode; text: string; sum?: boolean }) {
+function Line({ name, children, sum }: { name: string; children: ReactNode; sum?: boolean }) {
   return (
     <tr className={sum ? 'border-t border-ink font-semibold' : 'border-t border-line'}>
       <th scope="row" className={`py-1 pr-3 text-left ${sum ? '' : 'font-normal'}`}>
         {name}
       </th>
-      <td className="py-1 text-right font-mono whitespace-nowrap">
-        <Power text={text} />
-      </td>
+      <td className="py-1 text-right font-mono whitespace-nowrap">{children}</td>
     </tr>
+  );
+}
+
+function Times({ by }: { by: number }) {
+  return (
+    <>
+      × <Amount value={by} unit="" digits={6} />
+    </>
   );
 }
 
 /** The product that anyone can check by hand, then what averaging and attenuation make of it. */
 export function Factors({ detector }: { detector: PlannedDetector }) {
   const { factors, product, averaging, trueRate } = detector;
-  const times = (value: number) => `× ${formatNumber(value, 6)}`;
   return (
     <table className="w-full text-sm">
       <caption className="mb-1 text-left font-semibold">
@@ -39,21 +44,25 @@ export function Factors({ detector }: { detector: PlannedDetector }) {
       </caption>
       <tbody>
         {factors.map(({ name, value, unit }) => (
-          <Line
-            key={name}
-            name={FACTOR_NAMES[name]}
-            text={`${formatNumber(value, 7)} ${unitSymbol(unit)}`.trim()}
-          />
+          <Line key={name} name={FACTOR_NAMES[name]}>
+            <Amount value={value} unit={unit === '1' ? '' : unit} digits={7} />
+          </Line>
         ))}
-        <Line
-          sum
-          name="product, at the central angle"
-          text={product ? `${formatNumber(product.value, 8)} /s` : '—'}
-        />
-        <Line name="mean over the opening against its centre" text={times(averaging.acceptance)} />
-        <Line name="mean over energies and depth" text={times(averaging.energies)} />
-        <Line name="what the target lets through" text={times(averaging.attenuation)} />
-        <Line sum name="true rate, before dead time" text={rateText(trueRate.value)} />
+        <Line sum name="product, at the central angle">
+          {product ? <Amount value={product.value} unit={product.unit} digits={8} /> : '—'}
+        </Line>
+        <Line name="mean over the opening against its centre">
+          <Times by={averaging.acceptance} />
+        </Line>
+        <Line name="mean over energies and depth">
+          <Times by={averaging.energies} />
+        </Line>
+        <Line name="what the target lets through">
+          <Times by={averaging.attenuation} />
+        </Line>
+        <Line sum name="true rate, before dead time">
+          <Amount value={trueRate.value} unit={trueRate.unit} digits={8} />
+        </Line>
       </tbody>
     </table>
   );
@@ -119,41 +128,6 @@ function Budget({ detector }: { detector: PlannedDetector }) {
   );
 }
 
-/** What would have to change to reach the aim in the time there is. */
-function Needed({ detector }: { detector: PlannedDetector }) {
-  const { needed } = detector;
-  if (!needed) return null;
-  if ('unavailable' in needed) return <p className="text-sm">{needed.reason}</p>;
-  const { current, particlesPerSecond, arealDensity, solidAngle, time, factor } = needed;
-  const amount = (value: number, unit: string) => `${formatNumber(value, 4)} ${unitSymbol(unit)}`;
-  const ways: [string, string][] = [
-    current
-      ? ['current', amount(current.value, current.unit)]
-      : ['beam', amount(particlesPerSecond.value, particlesPerSecond.unit)],
-    ['areal density', amount(arealDensity.value, arealDensity.unit)],
-    ['solid angle', typeof solidAngle === 'number' ? amount(solidAngle, 'sr') : solidAngle.reason],
-    ['time', timeText(time.value)],
-  ];
-  return (
-    <div>
-      <p className="text-sm font-semibold">
-        To reach the aim in the time there is: a signal{' '}
-        <span className="font-mono">{formatNumber(factor, 3)}</span> times what it is, by one of
-      </p>
-      <dl className="mt-1 flex flex-wrap gap-x-8 gap-y-1">
-        {ways.map(([name, text]) => (
-          <div key={name}>
-            <dt className="text-xs text-muted">{name}</dt>
-            <dd className="font-mono text-sm">
-              <Power text={text} />
-            </dd>
-          </div>
-        ))}
-      </dl>
-    </div>
-  );
-}
-
 /** One detector taken apart: product, averages, thresholds, budget and the inverse question. */
 export function DetectorDetail({ detector }: { detector: PlannedDetector }) {
   const { timeForPrecision: time, expectedCounts: counts } = detector;
@@ -165,18 +139,42 @@ export function DetectorDetail({ detector }: { detector: PlannedDetector }) {
         <p className="text-sm">{time.reason}</p>
       ) : (
         <p className="text-sm">
-          Count <span className="font-mono">{timeText(time.signal.value)}</span> with the sample and{' '}
-          <span className="font-mono">{timeText(time.blank.value)}</span> with the blank
+          Count{' '}
+          <span className="font-mono">
+            <Time seconds={time.signal.value} />
+          </span>{' '}
+          with the sample
+          {time.blank.value > 0 && (
+            <>
+              {' '}
+              and{' '}
+              <span className="font-mono">
+                <Time seconds={time.blank.value} />
+              </span>{' '}
+              with the blank
+            </>
+          )}
           {counts && (
             <>
-              : about <span className="font-mono">{formatNumber(counts.gross, 4)}</span> and{' '}
-              <span className="font-mono">{formatNumber(counts.blank, 3)}</span> counts
+              : about{' '}
+              <span className="font-mono">
+                <Amount value={counts.gross} unit="" digits={4} />
+              </span>
+              {time.blank.value > 0 && (
+                <>
+                  {' '}
+                  and{' '}
+                  <span className="font-mono">
+                    <Amount value={counts.blank} unit="" digits={3} />
+                  </span>
+                </>
+              )}{' '}
+              counts
             </>
           )}
           .
         </p>
       )}
-      <Needed detector={detector} />
       <Budget detector={detector} />
     </div>
   );

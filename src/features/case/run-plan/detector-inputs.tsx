@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { Plus, Trash2 } from 'lucide-react';
 import { Button, IconButton } from '#src/components/button.tsx';
+import { Select } from '#src/components/select.tsx';
 import { Segmented } from '#src/components/segmented.tsx';
 import { DEAD_TIME_MODELS, MAX_DETECTORS } from '#shared/contracts/run-plans.ts';
 import type { DetectorSent, RunPlanBody } from '#shared/contracts/run-plans.ts';
@@ -12,43 +13,42 @@ import { without } from '../model/without.ts';
 import {
   FIRST_DETECTOR,
   addDetector,
+  allLike,
   changeDetector,
   putInDetector,
+  removeDetector,
   withPlan,
 } from './model/plan.ts';
+import { withoutDetectorTexts, withoutTexts } from './model/texts.ts';
 import { SeriesDialog } from './series-dialog.tsx';
 import { TextOfPlan } from './text-of-plan.tsx';
 
+const OPENING_AND_COUNTER = /^\/runPlan\/detectors\/\d+\/(?!name$|angle$)/;
+/** 4π sr, rounded down so that what the field allows the engine allows. */
+const FULL_SPHERE = 12.56637061;
 const MODEL_NAMES = { nonParalysable: 'non-paralysable', paralysable: 'paralysable' } as const;
-
-/** Numbers of detectors move when one goes: texts that are no values yet go with them. */
-export function withoutDetectorTexts(draft: Draft): Draft {
-  const open = Object.entries(draft.open).filter(([key]) => !key.startsWith('/runPlan/detectors'));
-  const { entered } = draft.document;
-  const kept = Object.entries(entered ?? {}).filter(
-    ([key]) => !key.startsWith('/runPlan/detectors'),
-  );
-  const document = entered
-    ? { ...draft.document, entered: Object.fromEntries(kept) }
-    : draft.document;
-  return { ...draft, document, open: Object.fromEntries(open) };
-}
 
 function Opening({ detector, at, index }: { detector: DetectorSent; at: string; index: number }) {
   const { edit, readOnly } = useEditing();
   const bare = detector.solidAngle !== undefined;
   const choose = (kind: 'aperture' | 'solidAngle') =>
-    edit(`${at}/opening`, (before) => ({
-      ...before,
-      document: changeDetector(before.document, index, (one) => ({
-        ...without(one, 'distance', 'apertureRadius', 'solidAngle'),
-        ...(kind === 'aperture'
-          ? { distance: FIRST_DETECTOR.distance, apertureRadius: FIRST_DETECTOR.apertureRadius }
-          : { solidAngle: 1e-3 }),
-        name: one.name,
-        angle: one.angle,
-      })),
-    }));
+    edit(`${at}/opening ${kind}`, (before) => {
+      const clean = withoutTexts(
+        before,
+        new RegExp(`^${at}/(distance|apertureRadius|solidAngle)$`),
+      );
+      return {
+        ...clean,
+        document: changeDetector(clean.document, index, (one) => ({
+          ...without(one, 'distance', 'apertureRadius', 'solidAngle'),
+          ...(kind === 'aperture'
+            ? { distance: FIRST_DETECTOR.distance, apertureRadius: FIRST_DETECTOR.apertureRadius }
+            : { solidAngle: 1e-3 }),
+          name: one.name,
+          angle: one.angle,
+        })),
+      };
+    });
   return (
     <>
       <div className="col-span-full">
@@ -68,7 +68,12 @@ function Opening({ detector, at, index }: { detector: DetectorSent; at: string; 
           label="Solid angle"
           suffix="sr"
           value={detector.solidAngle}
-          rules={{ minimum: 0, exclusiveMinimum: true, maximum: 4 * Math.PI, what: 'It' }}
+          rules={{
+            minimum: 0,
+            exclusiveMinimum: true,
+            maximum: FULL_SPHERE,
+            what: 'The solid angle',
+          }}
           put={putInDetector(index, 'solidAngle')}
         />
       ) : (
@@ -144,64 +149,112 @@ function Counting({ detector, at, index }: { detector: DetectorSent; at: string;
   );
 }
 
-interface DetectorInputsProps {
+interface ListProps {
   plan: RunPlanBody;
   chosen: number;
   onChoose: (index: number) => void;
 }
 
-/** The detector that is chosen, and the way to more of them. */
-export function DetectorInputs({ plan, chosen, onChoose }: DetectorInputsProps) {
-  const { edit, readOnly } = useEditing();
+/** Which detector is looked at, and the way to more or fewer of them. */
+function DetectorList({ plan, chosen, onChoose }: ListProps) {
+  const { edit, readOnly, problems } = useEditing();
   const [asking, setAsking] = useState(false);
   const detector = plan.detectors[chosen];
-  const at = `/runPlan/detectors/${chosen}`;
-  const change = (next: (plan: RunPlanBody) => RunPlanBody) =>
-    edit('/runPlan/detectors', (before) => {
-      const clean = withoutDetectorTexts(before);
-      return { ...clean, document: withPlan(clean.document, next) };
-    });
+  const change = (step: string, next: (draft: Draft) => Draft) =>
+    edit(`/runPlan/detectors ${step}`, next);
+  const inPlan = (draft: Draft, next: (plan: RunPlanBody) => RunPlanBody): Draft => ({
+    ...draft,
+    document: withPlan(draft.document, next),
+  });
+  const faulty = (index: number) =>
+    problems.some(({ path }) => path.startsWith(`/runPlan/detectors/${index}/`));
   return (
-    <div className="flex flex-col gap-3">
-      <div className="flex flex-wrap items-center gap-2">
-        <Button
-          size="small"
-          disabled={readOnly || plan.detectors.length >= MAX_DETECTORS}
-          onClick={() => {
-            change(addDetector);
-            onChoose(plan.detectors.length);
-          }}
-        >
-          <Plus aria-hidden="true" className="size-4" /> Add a detector
-        </Button>
-        <Button size="small" disabled={readOnly} onClick={() => setAsking(true)}>
-          Angle series …
-        </Button>
-        {detector && plan.detectors.length > 1 && (
+    <div className="flex flex-wrap items-center gap-2">
+      {plan.detectors.length > 1 && (
+        <span className="w-36">
+          <Select
+            aria-label="Detector"
+            value={String(chosen)}
+            choices={plan.detectors.map(({ name }, index) => ({
+              value: String(index),
+              label: faulty(index) ? `${name}: needs mending` : name,
+            }))}
+            onChange={(index) => onChoose(Number(index))}
+          />
+        </span>
+      )}
+      <Button
+        size="small"
+        disabled={readOnly || plan.detectors.length >= MAX_DETECTORS}
+        onClick={() => {
+          change(`add ${plan.detectors.length}`, (before) => inPlan(before, addDetector));
+          onChoose(plan.detectors.length);
+        }}
+      >
+        <Plus aria-hidden="true" className="size-4" /> Add a detector
+      </Button>
+      <Button size="small" disabled={readOnly} onClick={() => setAsking(true)}>
+        Angle series …
+      </Button>
+      {detector && plan.detectors.length > 1 && (
+        <>
+          <Button
+            size="small"
+            disabled={readOnly}
+            onClick={() =>
+              change(`like ${chosen}`, (before) =>
+                inPlan(withoutTexts(before, OPENING_AND_COUNTER), (now) => allLike(now, chosen)),
+              )
+            }
+          >
+            All like {detector.name}
+          </Button>
           <IconButton
             label={`Remove ${detector.name}`}
             disabled={readOnly}
             onClick={() => {
-              change((before) => ({
-                ...before,
-                detectors: before.detectors.filter((_, i) => i !== chosen),
-              }));
+              change(`remove ${plan.detectors.length}`, (before) =>
+                inPlan(withoutDetectorTexts(before, chosen), (now) => removeDetector(now, chosen)),
+              );
               onChoose(Math.max(0, chosen - 1));
             }}
           >
             <Trash2 aria-hidden="true" className="size-4" />
           </IconButton>
-        )}
-      </div>
+        </>
+      )}
+      {asking && (
+        <SeriesDialog
+          onClose={() => setAsking(false)}
+          onMake={(next) => {
+            change('series', (before) =>
+              inPlan(withoutTexts(before, /^\/runPlan\/detectors\//), next),
+            );
+            onChoose(0);
+            setAsking(false);
+          }}
+        />
+      )}
+    </div>
+  );
+}
+
+/** The detector that is chosen: where it stands, what it sees through, how it counts. */
+export function DetectorInputs(props: ListProps) {
+  const { plan, chosen } = props;
+  const detector = plan.detectors[chosen];
+  const at = `/runPlan/detectors/${chosen}`;
+  return (
+    <div className="flex flex-col gap-3">
+      <DetectorList {...props} />
       {detector && (
-        <div className="grid grid-cols-2 gap-3 @lg:grid-cols-4">
+        <div className="grid items-start gap-3 @xs:grid-cols-2">
           <TextOfPlan
             pointer={`${at}/name`}
             label="Name"
             value={detector.name}
-            put={(document, name) =>
-              name ? putInDetector(chosen, 'name')(document, name) : document
-            }
+            longest={40}
+            put={putInDetector(chosen, 'name')}
           />
           <NumberField
             pointer={`${at}/angle`}
@@ -214,16 +267,6 @@ export function DetectorInputs({ plan, chosen, onChoose }: DetectorInputsProps) 
           <Opening detector={detector} at={at} index={chosen} />
           <Counting detector={detector} at={at} index={chosen} />
         </div>
-      )}
-      {asking && (
-        <SeriesDialog
-          onClose={() => setAsking(false)}
-          onMake={(next) => {
-            change(next);
-            onChoose(0);
-            setAsking(false);
-          }}
-        />
       )}
     </div>
   );

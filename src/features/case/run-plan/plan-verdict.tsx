@@ -1,10 +1,9 @@
 import { Chip } from '#src/components/chip.tsx';
 import type { Tone } from '#src/components/chip.tsx';
-import { formatNumber, unitSymbol } from '#shared/units/format.ts';
+import { formatNumber } from '#shared/units/format.ts';
 import type { RunPlan } from '#shared/contracts/run-plans.ts';
-import { Power } from '#src/components/figure.tsx';
 import { Item, Items } from '../validity/panel.tsx';
-import { timeText } from './model/numbers.ts';
+import { Amount, AmountOr, TimeOr } from './amount.tsx';
 
 const WORDS: Record<RunPlan['verdict'], { word: string; tone: Tone; sign: string }> = {
   feasible: { word: 'feasible', tone: 'sound', sign: '●' },
@@ -12,16 +11,6 @@ const WORDS: Record<RunPlan['verdict'], { word: string; tone: Tone; sign: string
   notFeasible: { word: 'not feasible', tone: 'fault', sign: '○' },
   singleScatteringNotValid: { word: 'single scattering not valid', tone: 'fault', sign: '○' },
 };
-
-type Maybe = { value: number; unit: string } | { unavailable: true; reason: string };
-
-function Amount({ of }: { of: Maybe }) {
-  if ('unavailable' in of) return <span className="font-sans">{of.reason}</span>;
-  return <Power text={`${formatNumber(of.value, 4)} ${unitSymbol(of.unit)}`} />;
-}
-
-const Time = ({ of }: { of: Maybe }) =>
-  'unavailable' in of ? <span className="font-sans">{of.reason}</span> : timeText(of.value);
 
 /** Can it be done, and what decides. */
 export function PlanVerdict({ plan }: { plan: RunPlan }) {
@@ -35,21 +24,29 @@ export function PlanVerdict({ plan }: { plan: RunPlan }) {
         </Chip>
         <p className="min-w-0 flex-1 basis-64">{plan.decidedBy.message}</p>
       </div>
+      <dl className="mt-3 flex flex-wrap gap-x-10 gap-y-2">
+        <div>
+          <dt className="text-sm text-muted">all detectors at once</dt>
+          <dd className="font-mono text-xl font-medium">
+            <TimeOr of={plan.totalTime} />
+          </dd>
+        </div>
+        <div>
+          <dt className="text-sm text-muted">one position after the other</dt>
+          <dd className="font-mono text-xl font-medium">
+            <TimeOr of={plan.totalTimeInTurn} />
+          </dd>
+        </div>
+      </dl>
       <Items>
-        <Item name="all detectors at once">
-          <Time of={plan.totalTime} />
-        </Item>
-        <Item name="one position after the other">
-          <Time of={plan.totalTimeInTurn} />
-        </Item>
         <Item name="beam">
-          <Amount of={plan.beamRate} />
+          <Amount value={plan.beamRate.value} unit={plan.beamRate.unit} />
         </Item>
         <Item name={`nuclei of ${plan.scatterer}`}>
-          <Amount of={plan.arealDensity} />
+          <Amount value={plan.arealDensity.value} unit={plan.arealDensity.unit} />
         </Item>
         <Item name="collisions per particle, n t σ">
-          <Power text={formatNumber(target.collisions, 3)} />
+          <Amount value={target.collisions} unit="" digits={3} />
           {target.collisionsBeyond !== undefined && (
             <span className="font-sans text-muted">
               {' '}
@@ -57,15 +54,14 @@ export function PlanVerdict({ plan }: { plan: RunPlan }) {
             </span>
           )}
         </Item>
-        <Item name="energy loss in the target">
-          <Amount of={target.energyLoss} />
-        </Item>
-        <Item name="multiple scattering, plane">
-          <Amount of={target.multipleScattering} />
-        </Item>
         <Item name="power of the beam">
-          <Amount of={target.beamPower} />
+          <Amount value={target.beamPower.value} unit={target.beamPower.unit} digits={3} />
         </Item>
+        {!('unavailable' in target.depositedPower) && (
+          <Item name="power left in the target">
+            <AmountOr of={target.depositedPower} digits={3} />
+          </Item>
+        )}
       </Items>
     </>
   );

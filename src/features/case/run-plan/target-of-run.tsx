@@ -1,10 +1,12 @@
 import { Segmented } from '#src/components/segmented.tsx';
 import type { FoilSent, GasSent, RunPlanBody } from '#shared/contracts/run-plans.ts';
+import { isArealMassUnit } from '#shared/units/vocabulary.ts';
 import { NumberField, QuantityField } from '../components/typed-fields.tsx';
 import { useEditing } from '../editing/editor-context.ts';
 import type { Draft } from '../model/editor.ts';
 import { without } from '../model/without.ts';
 import { putIn, withPlan } from './model/plan.ts';
+import { withoutTexts } from './model/texts.ts';
 import { TextOfPlan } from './text-of-plan.tsx';
 
 const Q = (value: number, unit: string) => ({ value, unit });
@@ -56,7 +58,7 @@ function Slab({ foil }: { foil: FoilSent }) {
 }
 
 function Areal({ foil }: { foil: FoilSent }) {
-  const byMass = foil.arealDensity?.unit.includes('g/') ?? false;
+  const byMass = foil.arealDensity !== undefined && isArealMassUnit(foil.arealDensity.unit);
   return (
     <>
       <QuantityField
@@ -73,14 +75,18 @@ function Areal({ foil }: { foil: FoilSent }) {
             : 'Of scatterers, along the normal of the foil.'
         }
       />
-      {byMass && (
-        <TextOfPlan
-          pointer="/runPlan/foil/formula"
-          label="Formula"
-          value={foil.formula}
-          put={putIn('foil', 'formula')}
-        />
-      )}
+      <TextOfPlan
+        optional={!byMass}
+        pointer="/runPlan/foil/formula"
+        label="Formula"
+        value={foil.formula}
+        put={putIn('foil', 'formula')}
+        hint={
+          byMass
+            ? 'Such as C, Au, CH2.'
+            : 'May be empty; names the matter, so that its loss and other elements are known.'
+        }
+      />
     </>
   );
 }
@@ -126,38 +132,38 @@ function Gas({ gas }: { gas: GasSent }) {
   );
 }
 
-/** Texts of the old kind of target belong to no field any more. */
+/** Another kind of target. Texts of the old one belong to no field any more. */
 function withTarget(draft: Draft, kind: Kind): Draft {
-  const open = Object.fromEntries(
-    Object.entries(draft.open).filter(([key]) => !/^\/runPlan\/(foil|gas)\//.test(key)),
-  );
-  const document = withPlan(draft.document, (plan) => ({
+  const clean = withoutTexts(draft, /^\/runPlan\/(foil|gas)(\/|$)/);
+  const document = withPlan(clean.document, (plan) => ({
     ...without(plan, 'foil', 'gas'),
     ...STARTS[kind],
   }));
-  return { ...draft, open, document };
+  return { ...clean, document };
 }
 
 /** Target of the run: how many nuclei stand in the way. */
 export function TargetOfRun({ plan }: { plan: RunPlanBody }) {
   const { edit, readOnly } = useEditing();
   const { foil, gas } = plan;
-  const kind: Kind = gas ? 'gas' : foil?.thickness ? 'slab' : 'areal';
+  const kind: Kind = gas ? 'gas' : foil?.arealDensity ? 'areal' : 'slab';
   return (
     <div className="flex flex-col gap-3">
-      <Segmented
-        label="How the target is given"
-        value={kind}
-        choices={[
-          { value: 'areal', label: 'areal density' },
-          { value: 'slab', label: 'foil' },
-          { value: 'gas', label: 'gas' },
-        ]}
-        onChange={(next) =>
-          !readOnly && edit('/runPlan/target', (before) => withTarget(before, next))
-        }
-      />
-      <div className="grid grid-cols-2 gap-3">
+      <div>
+        <Segmented
+          label="How the target is given"
+          value={kind}
+          choices={[
+            { value: 'areal', label: 'areal density' },
+            { value: 'slab', label: 'foil' },
+            { value: 'gas', label: 'gas' },
+          ]}
+          onChange={(next) =>
+            !readOnly && edit(`/runPlan/target ${next}`, (before) => withTarget(before, next))
+          }
+        />
+      </div>
+      <div className="grid items-start gap-3 @xs:grid-cols-2">
         {gas ? (
           <Gas gas={gas} />
         ) : kind === 'slab' ? (
@@ -180,10 +186,11 @@ export function TargetOfRun({ plan }: { plan: RunPlanBody }) {
         {(kind !== 'areal' || foil?.formula !== undefined) && (
           <TextOfPlan
             pointer={gas ? '/runPlan/gas/scatterer' : '/runPlan/foil/scatterer'}
+            optional
             label="Scatterer"
             value={gas ? gas.scatterer : foil?.scatterer}
             put={putIn(gas ? 'gas' : 'foil', 'scatterer')}
-            hint="The element of the formula that the case is about."
+            hint="The element of the formula that the case is about; empty where it is clear."
           />
         )}
       </div>

@@ -6,7 +6,7 @@ import type { Quantity } from '#shared/units/quantity.ts';
 import type { PlannedDetector, RunPlanBody } from '#shared/contracts/run-plans.ts';
 import { useEditing } from '../editing/editor-context.ts';
 import { putInDetector } from './model/plan.ts';
-import { withoutDetectorTexts } from './detector-inputs.tsx';
+import { takeValue } from '../model/typing.ts';
 
 const SIZE = 320;
 const CENTRE = SIZE / 2;
@@ -37,7 +37,7 @@ function place(plan: RunPlanBody, answered: readonly PlannedDetector[]): Placed[
   const largest = Math.max(0, ...distances.map((distance) => distance ?? 0));
   return plan.detectors.map(({ name, angle }, index) => {
     const distance = distances[index];
-    const half = answered.find((one) => one.name === name)?.halfAngle ?? 1;
+    const half = answered[index]?.name === name ? (answered[index]?.halfAngle ?? 1) : 1;
     const radius = distance && largest > 0 ? distance / largest : UNPLACED;
     return { index, name, angle, radius, halfAngle: half };
   });
@@ -81,7 +81,7 @@ interface MarkProps {
 
 /** One detector: its cone, and a slider along the circle. */
 function Mark({ placed, chosen, onChoose, onTurn, readOnly }: MarkProps) {
-  const { name, angle, radius, halfAngle } = placed;
+  const { index, name, angle, radius, halfAngle } = placed;
   const [x, y] = point(angle, radius);
   const half = Math.min(89, Math.max(halfAngle, 0.6));
   const edges = [angle - half, angle + half].map((at) =>
@@ -106,7 +106,7 @@ function Mark({ placed, chosen, onChoose, onTurn, readOnly }: MarkProps) {
       aria-valuenow={angle}
       aria-valuetext={`${formatNumber(angle, 6)} degrees`}
       aria-disabled={readOnly || undefined}
-      data-detector={name}
+      data-detector={index}
       onFocus={onChoose}
       onKeyDown={readOnly ? undefined : onKey}
       className={readOnly ? '' : 'cursor-grab'}
@@ -149,10 +149,11 @@ export function TopView({ plan, answered, chosen, onChoose }: TopViewProps) {
   const tilt = plan.foil?.tilt ?? 0;
 
   const turn = (index: number, angle: number) =>
-    edit(`/runPlan/detectors/${index}/angle`, (before) => {
-      const clean = withoutDetectorTexts(before);
-      return { ...clean, document: putInDetector(index, 'angle')(clean.document, angle) };
-    });
+    edit(`/runPlan/detectors/${index}/angle`, (before) =>
+      takeValue(before, `/runPlan/detectors/${index}/angle`, (document) =>
+        putInDetector(index, 'angle')(document, angle),
+      ),
+    );
   function angleAt(event: PointerEvent): number {
     const box = svg.current?.getBoundingClientRect();
     if (!box) return 0;
@@ -163,7 +164,7 @@ export function TopView({ plan, answered, chosen, onChoose }: TopViewProps) {
   }
   function onDown(event: PointerEvent): void {
     const mark = event.target instanceof Element ? event.target.closest('[data-detector]') : null;
-    const found = placed.find(({ name }) => name === mark?.getAttribute('data-detector'));
+    const found = placed[Number(mark?.getAttribute('data-detector') ?? -1)];
     if (!found) return;
     onChoose(found.index);
     if (readOnly) return;

@@ -9,8 +9,9 @@ import { estimateBody } from '../api.ts';
 import { useSettled } from '../editing/use-estimate.ts';
 
 const PAUSE_MS = 150;
+const NO_ERRORS: readonly FieldError[] = [];
 
-function runPlanQuery(document: CaseDocument) {
+function runPlanQuery(document: CaseDocument, wanted: boolean) {
   const { runPlan } = document;
   const body = { ...runPlan, estimate: estimateBody(document) };
   return queryOptions({
@@ -21,7 +22,7 @@ function runPlanQuery(document: CaseDocument) {
     staleTime: Infinity,
     gcTime: 60_000,
     retry: false,
-    enabled: runPlan !== undefined,
+    enabled: wanted && runPlan !== undefined,
   });
 }
 
@@ -34,25 +35,31 @@ function inDocument({ path, message }: FieldError): FieldError {
 export interface LiveRunPlan {
   plan: RunPlan | undefined;
   stale: boolean;
+  /** Pointers into the document. */
   errors: readonly FieldError[];
+  /** A failure that no field is to blame for. */
   failure: string | null;
   retry: () => void;
 }
 
-/** What the run yields, following the inputs. The last good answer stays while the next is on its way or refused. */
-export function useRunPlan(document: CaseDocument): LiveRunPlan {
+/**
+ * What the run yields, following the inputs. The last good answer stays while the next is on its way or refused.
+ * A result that was saved is shown as it was saved: nothing is computed then.
+ */
+export function useRunPlan(document: CaseDocument, saved: RunPlan | undefined): LiveRunPlan {
   const settled = useSettled(document, PAUSE_MS);
-  const query = useQuery(runPlanQuery(settled));
+  const query = useQuery(runPlanQuery(settled, saved === undefined));
   const [last, setLast] = useState<RunPlan | undefined>(query.data);
   if (query.data && query.data !== last) setLast(query.data);
   const { error } = query;
   const errors = useMemo(
-    () => (error instanceof ApiError ? error.errors.map(inDocument) : []),
+    () => (error instanceof ApiError ? error.errors.map(inDocument) : NO_ERRORS),
     [error],
   );
+  const waits = query.isPlaceholderData || query.data === undefined || settled !== document;
   return {
-    plan: query.data ?? last,
-    stale: query.isPlaceholderData || query.data === undefined || settled !== document,
+    plan: saved ?? query.data ?? last,
+    stale: saved === undefined && waits,
     errors,
     failure: error !== null && errors.length === 0 ? inWords(error) : null,
     retry: () => void query.refetch(),

@@ -1,28 +1,19 @@
+import { composedFactor } from '#shared/units/composed.ts';
+import type { Quantity } from '#shared/units/quantity.ts';
 import type { CaseDocument } from '#shared/contracts/cases.ts';
 import type { DetectorSent, RunPlanBody } from '#shared/contracts/run-plans.ts';
+import { chargeNumberOf } from '../../aids/model/charge-numbers.ts';
 import { without } from '../../model/without.ts';
 
 const Q = (value: number, unit: string) => ({ value, unit });
 
-/** Charge of the projectile, for the current of a beam that starts a plan; null where the browser does not know it. */
-const CHARGES: Record<string, number> = {
-  electron: -1,
-  positron: 1,
-  'muon-': -1,
-  'muon+': 1,
-  proton: 1,
-  neutron: 0,
-  deuteron: 1,
-  triton: 1,
-  helion: 2,
-  alpha: 2,
-};
-
-function startBeam({ projectile }: CaseDocument): RunPlanBody['beam'] {
-  const species = 'species' in projectile ? projectile.species : null;
-  const known = species === null ? undefined : CHARGES[species];
-  const charge = species === 'custom' && 'charge' in projectile ? projectile.charge : known;
-  if (charge === undefined || charge === 0) return { particlesPerSecond: 1e6 };
+/** A beam to begin with: an electric current where its particles carry charge, as far as the browser knows. */
+export function startBeam(
+  { projectile }: CaseDocument,
+  kind: 'current' | 'particles' = 'current',
+): RunPlanBody['beam'] {
+  const charge = chargeNumberOf(projectile);
+  if (kind === 'particles' || charge === null || charge === 0) return { particlesPerSecond: 1e6 };
   return { current: Q(1, 'nA'), chargeState: charge };
 }
 
@@ -33,12 +24,27 @@ export const FIRST_DETECTOR: DetectorSent = {
   apertureRadius: Q(5, 'mm'),
 };
 
-/** A plan to begin with. What a person must decide (efficiency, dead time, background) is left out, and the answer says so. */
-export function startPlan(document: CaseDocument): RunPlanBody {
+/** Collisions a particle meets in a target to begin with: single scattering holds with room to spare. */
+const FEW_COLLISIONS = 0.01;
+const PER_CM2 = 1e15;
+
+/** Scatterers per cm² that keep collisions few at this total cross section, a power of ten. */
+function startArealDensity(total: Quantity | null): number {
+  if (!total || !(total.value > 0)) return PER_CM2;
+  const area = total.value * composedFactor(total.unit, 'cm2');
+  const most = FEW_COLLISIONS / area;
+  return 10 ** Math.max(10, Math.min(20, Math.floor(Math.log10(most))));
+}
+
+/**
+ * A plan to begin with. What a person must decide (efficiency, dead time, background) is left out, and the answer says so.
+ * `total` is the elastic cross section where it is known: it decides how thin the first target is.
+ */
+export function startPlan(document: CaseDocument, total: Quantity | null): RunPlanBody {
   return {
     method: document.methods.includes('born1') ? 'born1' : (document.methods[0] ?? 'born1'),
     beam: startBeam(document),
-    foil: { arealDensity: Q(1e17, '1/cm2') },
+    foil: { arealDensity: Q(startArealDensity(total), '1/cm2') },
     detectors: [FIRST_DETECTOR],
     aim: { relativePrecision: 0.02 },
   };
@@ -54,13 +60,17 @@ export function withPlan(
 
 type Members = 'beam' | 'foil' | 'gas' | 'aim' | 'uncertainties';
 
+const EMPTY_MAY_GO: readonly Members[] = ['aim', 'uncertainties'];
+
 /** One value of a part of the plan put, or left out where it is undefined. */
 export function putIn<P extends Members>(part: P, key: keyof NonNullable<RunPlanBody[P]>) {
   return (document: CaseDocument, value: unknown): CaseDocument =>
     withPlan(document, (plan) => {
       const before: object = plan[part] ?? {};
+      if (value !== undefined) return { ...plan, [part]: { ...before, [key]: value } };
       const rest = without(before as Record<string, unknown>, String(key));
-      return { ...plan, [part]: value === undefined ? rest : { ...before, [key]: value } };
+      const nothing = Object.keys(rest).length === 0 && EMPTY_MAY_GO.includes(part);
+      return nothing ? without(plan, part as 'aim' | 'uncertainties') : { ...plan, [part]: rest };
     });
 }
 
@@ -103,6 +113,23 @@ export function addDetector(plan: RunPlanBody): RunPlanBody {
   };
 }
 
+/** The plan without one of its detectors; a monitor that goes is a monitor no more. */
+export function removeDetector(plan: RunPlanBody, index: number): RunPlanBody {
+  const gone = plan.detectors[index];
+  const rest = gone && plan.monitor === gone.name ? without(plan, 'monitor') : plan;
+  return { ...rest, detectors: plan.detectors.filter((_, i) => i !== index) };
+}
+
+/** All detectors with the opening and the counter of one of them; names and angles stay. */
+export function allLike(plan: RunPlanBody, index: number): RunPlanBody {
+  const model = plan.detectors[index];
+  if (!model) return plan;
+  return {
+    ...plan,
+    detectors: plan.detectors.map(({ name, angle }) => ({ ...model, name, angle })),
+  };
+}
+
 export interface Series {
   from: number;
   to: number;
@@ -118,5 +145,6 @@ export function withSeries(plan: RunPlanBody, { from, to, step }: Series): RunPl
     name: `D${i + 1}`,
     angle: Number((from + i * step).toPrecision(12)),
   }));
-  return { ...plan, detectors };
+  const named = detectors.some(({ name }) => name === plan.monitor);
+  return { ...(named ? plan : without(plan, 'monitor')), detectors };
 }
