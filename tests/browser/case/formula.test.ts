@@ -94,17 +94,20 @@ test('a name that left the formula keeps its value until it is removed', async (
   await settled(page);
 });
 
-test('a formula, its faults, and the dialog of a table: no violation in any view', async () => {
+test('a formula that is refused, and the whole page with the figures of before: no violation in any view', async () => {
   const page = await newFormula();
-  await expectSoundInEveryView(page);
   await retype(page, formula(page), 'V0*exp(-r)');
   await term(page).locator('mark').waitFor();
   // The fault is spoken of in full, and the figures are those of the last sound inputs.
   await page.getByText('the figures below are those of the last sound inputs').waitFor();
   await expectSoundInEveryView(page);
+});
+
+test('a formula, a table, and the dialog that reads it: no violation in any view', async () => {
+  const page = await newFormula();
+  await expectSoundInEveryView(page);
   await term(page).getByLabel('Form', { exact: true }).selectOption('tabulated');
   await settled(page);
-  await expectSoundInEveryView(page);
   await page.getByRole('button', { name: /the table …/ }).click();
   const rows = page.getByRole('textbox', { name: /^Rows of r and V/ });
   await rows.fill('r V\n0 -10\n1 oops\n2 -1\n1.5 -2');
