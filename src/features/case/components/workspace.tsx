@@ -2,6 +2,7 @@ import { useCallback, useMemo, useState } from 'react';
 import { useQuery } from '@tanstack/react-query';
 import { Failure } from '#src/components/failure.tsx';
 import type { CaseDetail } from '#shared/contracts/cases.ts';
+import { DEFAULT_UNITS } from '#shared/contracts/estimates.ts';
 import type { FormInfo } from '#shared/contracts/forms.ts';
 import { useSession } from '#src/lib/session.ts';
 import { formsQuery, massQuery } from '../api.ts';
@@ -62,7 +63,7 @@ export function Workspace({ subject, href, content, saved }: WorkspaceProps) {
   const forms = useQuery(formsQuery);
   const known = ownMass(document.projectile);
   const asked = useQuery({ ...massQuery(document.projectile), enabled: known === undefined });
-  const [areaUnit, setAreaUnit] = useAreaUnit(live.estimate?.units.area ?? 'angstrom2');
+  const [areaUnit, setAreaUnit] = useAreaUnit(document.units?.area ?? DEFAULT_UNITS.area);
   const [saving, setSaving] = useState(false);
   const duplicate = useDuplicate();
   const mass = known ?? asked.data;
