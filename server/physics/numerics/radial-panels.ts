@@ -1,4 +1,5 @@
 import { UNIT_ROUNDOFF } from './rounding.ts';
+import { addPowers, FIELD_STRIDE, FIT_POINTS, shiftedChebyshev } from './shifted-chebyshev.ts';
 
 /** Real functions of a radius that multiply a wave, all asked at once. */
 export interface RadialField {
@@ -40,7 +41,6 @@ export interface RadialPanels {
   missed: number;
 }
 
-export const FIELD_STRIDE = 18;
 export const POWER_STRIDE = 64;
 const MOST_PANELS = 12_000;
 /** Phase of the local wave on one panel. */
@@ -54,33 +54,6 @@ const PLATEAU = 16 * UNIT_ROUNDOFF;
 const LOST = 2 * UNIT_ROUNDOFF;
 /** Coefficients at the end that tell what a fit misses. */
 const LAST = 3;
-
-const NODES = Float64Array.from(
-  { length: FIELD_STRIDE },
-  (_, i) => (1 + Math.cos(((2 * i + 1) * Math.PI) / (2 * FIELD_STRIDE))) / 2,
-);
-/** 2/N cos(n(2i + 1) pi/2N), row by row in n. */
-const PROJECTION = Float64Array.from({ length: FIELD_STRIDE * FIELD_STRIDE }, (_, place) => {
-  const [n, i] = [Math.floor(place / FIELD_STRIDE), place % FIELD_STRIDE];
-  const turns = (n * (2 * i + 1)) % (4 * FIELD_STRIDE);
-  return ((n === 0 ? 1 : 2) / FIELD_STRIDE) * Math.cos((turns * Math.PI) / (2 * FIELD_STRIDE));
-});
-/** Powers of t in T_n(2t - 1): whole numbers, all of which a double holds. */
-const SHIFTED = powersOfShifted();
-function powersOfShifted(): Float64Array[] {
-  const rows = [Float64Array.of(1), Float64Array.of(-1, 2)];
-  for (let n = 2; n < FIELD_STRIDE; n++) {
-    const [before, last] = [rows[n - 2] ?? rows[0], rows[n - 1] ?? rows[0]];
-    const at = (row: Float64Array | undefined, i: number) => row?.[i] ?? 0;
-    rows.push(
-      Float64Array.from(
-        { length: n + 1 },
-        (_, i) => 4 * at(last, i - 1) - 2 * at(last, i) - at(before, i),
-      ),
-    );
-  }
-  return rows;
-}
 
 /** A field on one trial panel: its Chebyshev coefficients, how many count, and what they miss. */
 interface Trial {
@@ -113,7 +86,7 @@ function tryPanel(
   const sizes = new Float64Array(field.components);
   let finite = true;
   for (let i = 0; i < FIELD_STRIDE; i++) {
-    const x = from + width * (NODES[i] ?? 0);
+    const x = from + width * (FIT_POINTS[i] ?? 0);
     field.at(x, out);
     let size = 0;
     for (let c = 0; c < field.components; c++) {
@@ -132,7 +105,7 @@ function tryPanel(
   // One component may be the small difference of others: the largest value sets the rounding of all.
   let largest = 0;
   for (const f of values) for (const one of f) largest = Math.max(largest, Math.abs(one));
-  const chebyshev = finite ? values.map(coefficientsOf) : [];
+  const chebyshev = finite ? values.map(shiftedChebyshev) : [];
   for (const row of chebyshev) {
     let n = FIELD_STRIDE;
     while (n > 1 && Math.abs(row[n - 1] ?? 0) <= LOST * largest) n -= 1;
@@ -143,29 +116,6 @@ function tryPanel(
     if (tail > PLATEAU * largest) known = false;
   }
   return { chebyshev, length, residual, known, finite, phase: phase * width, allowed, size: sizes };
-}
-
-function coefficientsOf(f: Float64Array): Float64Array {
-  const row = new Float64Array(FIELD_STRIDE);
-  for (let n = 0; n < FIELD_STRIDE; n++) {
-    let sum = 0;
-    for (let i = 0; i < FIELD_STRIDE; i++) {
-      sum += (PROJECTION[n * FIELD_STRIDE + i] ?? 0) * (f[i] ?? 0);
-    }
-    row[n] = sum;
-  }
-  return row;
-}
-
-/** Powers of t from Chebyshev coefficients, times a factor, into a row of the result. */
-function toPowers(c: Float64Array, length: number, factor: number, out: number[]): void {
-  const first = out.length;
-  for (let m = 0; m < FIELD_STRIDE; m++) out.push(0);
-  for (let n = 0; n < length; n++) {
-    const row = SHIFTED[n] ?? c;
-    const share = factor * (c[n] ?? 0);
-    for (let m = 0; m <= n; m++) out[first + m] = (out[first + m] ?? 0) + share * (row[m] ?? 0);
-  }
 }
 
 /** 1/(c + t)² = Σ (-1)^m (m + 1) t^m/c^{m+2}, to its last digit. */
@@ -243,7 +193,7 @@ export function radialPanels(request: RadialPanelRequest): RadialPanels {
       continue;
     }
     const factor = at === 0 ? width : width * width;
-    trial.chebyshev.forEach((row, c) => toPowers(row, trial.length, factor, powers[c] ?? []));
+    trial.chebyshev.forEach((row, c) => addPowers(row, trial.length, factor, powers[c] ?? []));
     lengths.push(trial.length);
     inverseLengths.push(inversePowers(at > 0 ? at / width : Infinity, inverse));
     allowed.push(trial.allowed);

@@ -1,17 +1,17 @@
 import { describe, expect, test } from 'vitest';
 import type { RadialField } from '#server/physics/numerics/radial-panels.ts';
-import { FIELD_STRIDE, PanelError, radialPanels } from '#server/physics/numerics/radial-panels.ts';
-import type { PanelPowers, RadialWave } from '#server/physics/numerics/radial-steps.ts';
+import { PanelError, radialPanels } from '#server/physics/numerics/radial-panels.ts';
+import { stepAdded } from '#server/physics/numerics/radial-added.ts';
+import type { PanelPowers } from '#server/physics/numerics/radial-powers.ts';
+import { addBarrier, fieldPowers, panelPowers } from '#server/physics/numerics/radial-powers.ts';
+import type { RadialWave } from '#server/physics/numerics/radial-series.ts';
 import {
-  addBarrier,
-  fieldPowers,
-  panelPowers,
   squareOfLast,
-  stepAdded,
   stepComplex,
   stepFromOrigin,
   stepReal,
 } from '#server/physics/numerics/radial-steps.ts';
+import { FIELD_STRIDE } from '#server/physics/numerics/shifted-chebyshev.ts';
 import { expectRelative } from '#tests/support/expect-relative.ts';
 
 const field = (f: (x: number) => number): RadialField => ({

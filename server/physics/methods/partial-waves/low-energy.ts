@@ -4,11 +4,10 @@ import {
   type RadialPanels,
   radialPanels,
 } from '#server/physics/numerics/radial-panels.ts';
-import type { PanelPowers, RadialWave } from '#server/physics/numerics/radial-steps.ts';
+import type { PanelPowers } from '#server/physics/numerics/radial-powers.ts';
+import { addBarrier, fieldPowers, panelPowers } from '#server/physics/numerics/radial-powers.ts';
+import type { RadialWave } from '#server/physics/numerics/radial-series.ts';
 import {
-  addBarrier,
-  fieldPowers,
-  panelPowers,
   squareOfLast,
   stepComplex,
   stepFromOrigin,

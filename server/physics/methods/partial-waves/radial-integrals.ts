@@ -2,7 +2,7 @@ import { gaussRule } from '#server/physics/numerics/gauss-rule.ts';
 import type { RadialPanels } from '#server/physics/numerics/radial-panels.ts';
 import { riccatiBessel } from '#server/physics/numerics/riccati-bessel.ts';
 import type { RadialInteraction } from './interaction.ts';
-import { barrierExponent } from './radial-wave.ts';
+import { barrierExponent } from './wave-start.ts';
 
 /** (1/k) ∫ U F², U F G and U G² of every order, for each component of U. */
 export interface WaveIntegrals {

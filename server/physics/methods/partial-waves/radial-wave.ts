@@ -1,62 +1,24 @@
-import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import type { RadialPanels } from '#server/physics/numerics/radial-panels.ts';
-import { FIELD_STRIDE } from '#server/physics/numerics/radial-panels.ts';
-import type { PanelPowers, RadialWave } from '#server/physics/numerics/radial-steps.ts';
 import {
-  addBarrier,
   addedFromOrigin,
-  fieldPowers,
-  panelPowers,
   stepAdded,
   stepAddedReal,
-  stepComplex,
-  stepFromOrigin,
-  stepReal,
-} from '#server/physics/numerics/radial-steps.ts';
+} from '#server/physics/numerics/radial-added.ts';
+import type { PanelPowers } from '#server/physics/numerics/radial-powers.ts';
+import { addBarrier, fieldPowers, panelPowers } from '#server/physics/numerics/radial-powers.ts';
+import type { RadialWave } from '#server/physics/numerics/radial-series.ts';
+import { stepComplex, stepFromOrigin, stepReal } from '#server/physics/numerics/radial-steps.ts';
+import { FIELD_STRIDE } from '#server/physics/numerics/shifted-chebyshev.ts';
 import { riccatiRatio } from '#server/physics/numerics/riccati-bessel.ts';
 import type { RadialInteraction } from './interaction.ts';
-import type { Panels } from './panels.ts';
 import { CENTRAL_IM, CENTRAL_RE, SHORT, SPIN_IM, SPIN_RE } from './interaction.ts';
+import type { Matched, Outer } from './matched.ts';
+import { WaveStart } from './wave-start.ts';
 
-/** Reference functions at the end of the panels: dimensionless, slopes by k r. */
-export interface Outer {
-  F: number;
-  dF: number;
-  G: number;
-  dG: number;
-}
-
-/** u = alpha F + beta G at the end of the panels, up to a common factor. */
-export interface Matched {
-  alphaRe: number;
-  alphaIm: number;
-  betaRe: number;
-  betaIm: number;
-  /** k ∫ |u|² dr over |alpha - i beta|²: what a relative error of the energy does to the phase. */
-  delay: number;
-  /** What a relative error of u or u' at the end does to T. */
-  spread: number;
-  /** Panels the wave was carried over. */
-  panels: number;
-  /** Whether it was begun behind its barrier. */
-  begun: boolean;
-}
-
-/** Half the exponent by which what is forgotten must die out: exp(-40) is below 1e-17. */
-const FORGOTTEN = 20;
 const HUGE = 1e150;
-
-/** Exponent of what a free wave of order l gains from x to its turning point. */
-export function barrierExponent(l: number, x: number): number {
-  const nu = l + 0.5;
-  if (nu <= x) return 0;
-  const root = Math.sqrt((nu - x) * (nu + x));
-  return nu * Math.log((nu + root) / x) - root;
-}
 
 /** Carries waves of one interaction over its panels. */
 export class RadialSolver {
-  private first = 0;
   private readonly total = panelPowers();
   private readonly second = panelPowers();
   private readonly shiftedRe = new Float64Array(FIELD_STRIDE + 2);
@@ -65,64 +27,19 @@ export class RadialSolver {
   private readonly wave: RadialWave = { re: 0, im: 0, slopeRe: 0, slopeIm: 0 };
   private readonly free: RadialWave = { re: 0, im: 0, slopeRe: 0, slopeIm: 0 };
   private readonly jumps: Float64Array;
+  readonly starts: WaveStart;
 
   constructor(
     private readonly interaction: RadialInteraction,
     private readonly panels: RadialPanels,
     private readonly k: number,
   ) {
+    this.starts = new WaveStart(panels, k, interaction.charge);
     this.jumps = new Float64Array(panels.count + 1);
     for (const { radius, jump } of interaction.shells) {
       const edge = panels.edges.indexOf(radius);
       if (edge >= 0) this.jumps[edge] = (this.jumps[edge] ?? 0) + jump;
     }
-  }
-
-  /** Largest of r² (k² - U) on a panel, which l(l+1) must exceed to keep the wave out. */
-  private allowedOn(panel: number, factor: number): number {
-    const { allowed, size } = this.panels;
-    return (allowed[panel] ?? 0) + Math.abs(factor) * (size[SPIN_RE]?.[panel] ?? 0);
-  }
-
-  /** Whether what lies inside the edge cannot be felt by this wave outside. */
-  private isForgotten(edge: number, l: number, factor: number): boolean {
-    const { edges, count } = this.panels;
-    const barrier = l * (l + 1);
-    let exponent = 0;
-    for (let p = edge; p < count; p++) {
-      const room = barrier - this.allowedOn(p, factor);
-      if (room <= 0) return exponent >= FORGOTTEN;
-      exponent += Math.sqrt(room) * Math.log((edges[p + 1] ?? 1) / (edges[p] ?? 1));
-      if (exponent >= FORGOTTEN) return true;
-    }
-    const x = this.k * (edges[count] ?? 0);
-    return exponent + (this.interaction.charge === 0 ? barrierExponent(l, x) : 0) >= FORGOTTEN;
-  }
-
-  /** First panel of a wave; the count of panels where nothing is felt at all. Higher waves begin further out. */
-  start(l: number, factor: number): number {
-    const { count } = this.panels;
-    const barrier = l * (l + 1);
-    while (
-      this.first < count &&
-      l > 0 &&
-      barrier > this.allowedOn(this.first, factor) &&
-      this.isForgotten(this.first + 1, l, factor)
-    ) {
-      this.first += 1;
-    }
-    return this.first;
-  }
-
-  /** Highest l for which attraction opens a region inside its centrifugal barrier: resonances may lie up to it. */
-  pocketOrder(): number {
-    const { count, size, allowed } = this.panels;
-    let most = 0;
-    for (let p = 0; p < count; p++) {
-      const open = allowed[p] ?? 0;
-      if ((size[0]?.[p] ?? 0) > 0.1 * open) most = Math.max(most, open);
-    }
-    return Math.sqrt(most);
   }
 
   private shift(powers: PanelPowers, into: Float64Array): void {
@@ -170,7 +87,7 @@ export class RadialSolver {
    */
   match(l: number, factor: number, { F, dF, G, dG }: Outer): Matched | null {
     const { edges, count } = this.panels;
-    const from = this.start(l, factor);
+    const from = this.starts.at(l, factor);
     if (from >= count) return null;
     const { wave, total, second, k } = this;
     const { absorbs } = this.interaction;
@@ -239,7 +156,7 @@ export class RadialSolver {
    */
   matchWeak(l: number, factor: number, outer: Outer): Matched | null {
     const { edges, count } = this.panels;
-    const from = this.start(l, factor);
+    const from = this.starts.at(l, factor);
     if (from >= count) return null;
     const { k, wave: added, free, total, second } = this;
     const { absorbs } = this.interaction;
@@ -318,41 +235,4 @@ export class RadialSolver {
     added.slopeRe /= size;
     added.slopeIm /= size;
   }
-}
-
-/** T = beta/(alpha - i beta) of a matched wave, T = (S - 1)/2i, and 1 - |S|². */
-export function transitionOf({ alphaRe, alphaIm, betaRe, betaIm }: Matched) {
-  const [c, s] = [alphaRe + betaIm, alphaIm - betaRe];
-  const size = c * c + s * s;
-  return {
-    re: (betaRe * c + betaIm * s) / size,
-    im: (betaIm * c - betaRe * s) / size,
-    absorbed: (4 * (alphaRe * betaIm - alphaIm * betaRe)) / size,
-    eta: Math.hypot(alphaRe - betaIm, alphaIm + betaRe) / Math.sqrt(size),
-  };
-}
-
-/** What is lost of a wave that begins behind its barrier. */
-const LOST = 1e-17;
-
-/**
- * Bound of the error of T.
- *
- * @param x k times the radius of the match
- * @param weak whether the wave was carried beside a free one: its rounding is then relative to T
- * @param size |T|
- * @param panels with what their fit of U misses, and the strength of the interaction
- */
-export function errorOf(
-  { delay, spread, panels, begun }: Matched,
-  x: number,
-  weak: boolean,
-  size: number,
-  { all, strength }: Pick<Panels, 'all' | 'strength'>,
-): number {
-  const rounding = weak
-    ? (64 + 8 * panels + 2 * x) * size
-    : (16 + 2 * panels + x) * spread + 8 * delay;
-  const forgotten = begun ? LOST * Math.min(1, strength[0] ?? 0) : 0;
-  return UNIT_ROUNDOFF * rounding + forgotten + all.missed * Math.min(1, x);
 }

@@ -3,8 +3,9 @@ import { coulombPhases } from '#server/physics/numerics/coulomb-phase.ts';
 import type { Unavailable } from '../amplitude.ts';
 import type { RadialInteraction } from './interaction.ts';
 import { panelsOf, tooMany } from './panels.ts';
-import type { Outer } from './radial-wave.ts';
-import { RadialSolver, errorOf, transitionOf } from './radial-wave.ts';
+import type { Outer } from './matched.ts';
+import { errorOf, transitionOf } from './matched.ts';
+import { RadialSolver } from './radial-wave.ts';
 import type { Scattered, Transition } from './scatter.ts';
 import {
   IN_TURN,
@@ -81,14 +82,14 @@ export function scatterCharged(
   const { outer, error: outerError } = coulombOuter(eta, rho, bound);
   const { sigma, error: sigmaError } = coulombPhases(bound, eta);
   const waves: Transition[] = [];
-  const pocket = solver.pocketOrder();
+  const pocket = solver.starts.pocketOrder();
   let [sum, quiet, left, lMax] = [0, 0, 0, 0];
   for (let l = 0; l <= bound && quiet < IN_TURN; l++) {
     const edge = outer(l);
-    if (!edge || solver.start(l, spinFactor(l, 1)) >= inner.count) break;
+    if (!edge || solver.starts.at(l, spinFactor(l, 1)) >= inner.count) break;
     left = 0;
     let noise = 0;
-    const weak = isWeak(interaction, found, solver.start(l, spinFactor(l, 1)), l);
+    const weak = isWeak(interaction, found, solver.starts.at(l, spinFactor(l, 1)), l);
     for (const spin of spinsOf(interaction, l)) {
       const factor = spinFactor(l, spin);
       const matched = weak ? solver.matchWeak(l, factor, edge) : solver.match(l, factor, edge);

@@ -5,7 +5,8 @@ import type { RadialInteraction } from './interaction.ts';
 import { panelsOf, tooMany } from './panels.ts';
 import { tailOfSquare } from './power-tail.ts';
 import { innerIntegrals } from './radial-integrals.ts';
-import { RadialSolver, errorOf, transitionOf } from './radial-wave.ts';
+import { errorOf, transitionOf } from './matched.ts';
+import { RadialSolver } from './radial-wave.ts';
 import type { Scattered, Transition } from './scatter.ts';
 import {
   freeOuter,
@@ -139,7 +140,7 @@ export function scatterPowerTail(
   const waves: Transition[] = [];
   for (let l = 0; l <= last; l++) {
     const edge = outer(l);
-    const weak = isWeak(interaction, found, solver.start(l, spinFactor(l, 1)), l);
+    const weak = isWeak(interaction, found, solver.starts.at(l, spinFactor(l, 1)), l);
     const B = {
       re: (phases.re[l] ?? 0) + (within[0]?.[l] ?? 0),
       im: (phases.im[l] ?? 0) + (within[1]?.[l] ?? 0),

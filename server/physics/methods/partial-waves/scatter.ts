@@ -5,8 +5,9 @@ import type { Panels } from './panels.ts';
 import { panelsOf, tooMany } from './panels.ts';
 import type { WaveIntegrals } from './radial-integrals.ts';
 import { innerIntegrals, lastOrder, tailIntegrals } from './radial-integrals.ts';
-import type { Matched, Outer } from './radial-wave.ts';
-import { RadialSolver, errorOf, transitionOf } from './radial-wave.ts';
+import type { Matched, Outer } from './matched.ts';
+import { errorOf, transitionOf } from './matched.ts';
+import { RadialSolver } from './radial-wave.ts';
 
 /** T_l = (S_l - 1)/2i of one wave. */
 export interface Transition {
@@ -153,14 +154,14 @@ export function scatter(interaction: RadialInteraction, k: number): Scattered | 
   const outer = freeOuter(x, bound);
   const solver = new RadialSolver(interaction, inner, k);
   const waves: Transition[] = [];
-  const pocket = solver.pocketOrder();
+  const pocket = solver.starts.pocketOrder();
   let sum = 0;
   let quiet = 0;
   let lastExcess = 0;
   let lMax = 0;
   for (let l = 0; l <= bound && quiet < IN_TURN; l++) {
     const edge = outer(l);
-    if (!edge || solver.start(l, spinFactor(l, 1)) >= inner.count) break;
+    if (!edge || solver.starts.at(l, spinFactor(l, 1)) >= inner.count) break;
     const here = wavesOf({ interaction, found, solver, tail, x }, l, edge);
     if ('unavailable' in here) return here;
     waves.push(...here);
@@ -215,7 +216,7 @@ function wavesOf(
   edge: Outer,
 ): Transition[] | Unavailable {
   const waves: Transition[] = [];
-  const weak = isWeak(interaction, found, solver.start(l, spinFactor(l, 1)), l);
+  const weak = isWeak(interaction, found, solver.starts.at(l, spinFactor(l, 1)), l);
   for (const spin of spinsOf(interaction, l)) {
     const factor = spinFactor(l, spin);
     const matched = weak ? solver.matchWeak(l, factor, edge) : solver.match(l, factor, edge);
