@@ -102,7 +102,7 @@ export function secondBorn(input: MethodInput): MethodAmplitude | Unavailable {
   return {
     ...amplitudes(input, second),
     tail: { re: 0, im: 0 },
-    floor: Math.max(born.floor, second.largestError),
+    floor: born.floor + second.largestError,
     flip: null,
     absorption: absorption(input, second),
     conditions,

@@ -14,6 +14,10 @@ const TOO_WILD: Unavailable = {
   unavailable:
     'The eikonal phase turns too fast near the centre of the potential to be integrated: the potential is too strong or too singular there for this method.',
 };
+/** Phase up to which its turns are followed, rad. */
+const MOST_PHASE = 3000;
+/** An amplitude that is not known to this of its forward value is none. */
+const WORST = 1e-7;
 const NOTHING: Removed = { value: 0, error: 0 };
 
 /** What is integrated over impact parameters: its amplitude, and what it removes beyond first order. */
@@ -32,12 +36,20 @@ function integrated(
   if (edges.length === 0) return { amplitude: null, removed: NOTHING };
   const chi = eikonalPhase(active, input);
   if (chi === null) return TOO_WILD;
+  const largest = edges.slice(1).reduce((most, b) => Math.max(most, Math.abs(chi(b).re)), 0);
+  if (!(largest <= MOST_PHASE)) return tooStrong(largest);
   const { F, noise } = eta === 0 ? beyondFirstOrder(chi) : besideCharges(chi, eta, k);
   const source = impactPanels(F, edges, noise);
   if (source === null) return TOO_WILD;
   return {
     amplitude: impactAmplitude(source, k),
     removed: im === null ? NOTHING : removedBeyond(chi, source),
+  };
+}
+
+function tooStrong(phase: number): Unavailable {
+  return {
+    unavailable: `The eikonal phase reaches ${phase.toPrecision(2)} rad: at this energy the potential is far too strong for a straight path.`,
   };
 }
 
@@ -78,6 +90,14 @@ export function eikonal(input: MethodInput): MethodAmplitude | Unavailable {
   const first = (q: number, blur: number): Amplitude =>
     eta === 0 ? born.shortRange(q, blur) : { re: 0, im: 0, error: 0 };
   const shortRange = (q: number, blur = 0) => sum(first(q, blur), amplitude?.at(q, blur));
+  const lost = amplitude?.largestError ?? 0;
+  const forward = shortRange(0);
+  if (lost > WORST * Math.hypot(forward.re, forward.im)) {
+    return {
+      unavailable:
+        'The eikonal amplitude is lost in rounding: what is left of it is far smaller than first order, which it must cancel.',
+    };
+  }
   const charges = eta === 0 ? null : pointCharges(eta, k);
   return {
     amplitude: (q, blur = 0) => {
@@ -86,7 +106,7 @@ export function eikonal(input: MethodInput): MethodAmplitude | Unavailable {
     },
     shortRange,
     tail: born.tail,
-    floor: Math.max(born.floor, amplitude?.largestError ?? 0),
+    floor: born.floor + lost,
     flip: null,
     absorption: absorption(born.shortRange(0), removed, k),
     conditions: eikonalConditions(active, input),

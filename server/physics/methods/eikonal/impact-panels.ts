@@ -15,7 +15,7 @@ export interface ImpactPanels {
 const RULE = gaussRule(16);
 /** What may be left beyond the last panel, of ∫ b |F| db. */
 const CUT = 1e-17;
-const MOST_PANELS = 3000;
+const MOST_PANELS = 1200;
 
 /** ∫ g over a panel by its sixteen points. */
 export function sumOver(

@@ -307,6 +307,15 @@ describe('refusals, in words', () => {
     expect('unavailable' in found && words.test(found.unavailable)).toBe(true);
   });
 
+  test.each([
+    ['far too strong', form('gaussian', { V0: -1e6, W0: 0, a: 1 }), 0.01, /rad.*far too strong/],
+    ['all but black', form('squareWell', { V0: 0, W0: -1e7, R: 1 }), 0.001, /lost in rounding/],
+    ['singular', form('yukawa', { V0: 1700, a: 1 }), 0.5, /turns too fast/],
+  ])('%s', (_name, term, k, words) => {
+    const found = eikonal(inputOf([term], k));
+    expect('unavailable' in found ? found.unavailable : '').toMatch(words);
+  });
+
   test('no interaction scatters nothing', () => {
     const found = at([], 3);
     expect(found.amplitude(1)).toMatchObject({ re: 0, im: 0, error: 0 });
