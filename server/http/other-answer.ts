@@ -1,3 +1,5 @@
+import { Readable } from 'node:stream';
+import { pipeline } from 'node:stream/promises';
 import type { Response } from 'express';
 
 /** An answer that is no JSON document: a text of another type, or a stream. */
@@ -5,13 +7,17 @@ export class OtherAnswer {
   constructor(readonly send: (res: Response) => Promise<void> | void) {}
 }
 
-export function textAnswer(type: string, text: string, fileName?: string): OtherAnswer {
-  return new OtherAnswer((res) => {
+/** A text sent piece by piece: between two of them everyone else has a turn, and the client sets the pace. */
+export function textAnswer(type: string, pieces: Iterable<string>, fileName: string): OtherAnswer {
+  return new OtherAnswer(async (res) => {
     res.setHeader('Content-Type', `${type}; charset=utf-8`);
-    if (fileName !== undefined) {
-      res.setHeader('Content-Disposition', `attachment; filename="${fileName}"`);
+    res.setHeader('Content-Disposition', `attachment; filename="${fileName}"`);
+    try {
+      await pipeline(Readable.from(pieces), res);
+    } catch (fault) {
+      // A client that left needs no answer.
+      if (!res.destroyed) throw fault;
     }
-    res.status(200).send(text);
   });
 }
 

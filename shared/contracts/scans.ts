@@ -5,7 +5,7 @@ import { requiredTextSchema } from './text.ts';
 
 /** Points of one scan, and numbers of its result, at most. */
 export const MAX_SCAN_POINTS = 100_000;
-export const MAX_SCAN_VALUES = 500_000;
+export const MAX_SCAN_VALUES = 200_000;
 
 const number = z.number('Give a number.');
 const quantity = z.strictObject({

@@ -22,23 +22,40 @@ function flat(values: ScanResult['values']): Value[] {
   return all;
 }
 
-/** One line of names with units, then a line a point (with dcs, an angle) in order; empty where there is no value. */
-export function resultCsv({ axes, angles, values, output, unit }: ScanResult): string {
+const LINES_AT_ONCE = 2_000;
+
+/**
+ * One line of names with units, then a line a point (with dcs, an angle) in order; empty where there is no value. In pieces, so that
+ * whoever sends a long table can let others have their turn between them.
+ */
+export function* resultCsv(result: ScanResult): Generator<string> {
+  const { axes, angles, values, output, unit } = result;
   const names = columnNames(axes).map((name, i) => `${name} (${axes[i]?.unit ?? '1'})`);
   const theta = angles ? [`theta (${angles.unit})`] : [];
-  const header = [...names, ...theta, unit === null ? output : `${output} (${unit})`]
-    .map(cell)
-    .join(',');
-  const grid = [...axes.map((axis) => axis.values), ...(angles ? [angles.values] : [])];
-  const lines = flat(values).map((value, at) => {
-    let rest = at;
-    const place = grid.map(() => 0);
-    for (let i = grid.length - 1; i >= 0; i -= 1) {
-      const column = grid[i] ?? [];
-      place[i] = column[rest % column.length] ?? NaN;
-      rest = Math.floor(rest / column.length);
-    }
-    return [...place.map(String), value === null ? '' : String(value)].join(',');
-  });
-  return `${[header, ...lines].join('\n')}\n`;
+  const header = [...names, ...theta, unit === null ? output : `${output} (${unit})`];
+  yield `${header.map(cell).join(',')}\n`;
+
+  const columns = [...axes.map((axis) => axis.values), ...(angles ? [angles.values] : [])].map(
+    (column) => column.map(String),
+  );
+  const all = flat(values);
+  for (let start = 0; start < all.length; start += LINES_AT_ONCE) {
+    const lines = all
+      .slice(start, start + LINES_AT_ONCE)
+      .map((value, i) => `${placeOf(start + i, columns)},${value === null ? '' : value}\n`);
+    yield lines.join('');
+  }
+}
+
+/** Where a value stands on each axis, the last one running fastest. */
+function placeOf(at: number, columns: readonly string[][]): string {
+  let rest = at;
+  let place = '';
+  for (let i = columns.length - 1; i >= 0; i -= 1) {
+    const column = columns[i] ?? [];
+    const name = column[rest % column.length] ?? '';
+    place = place === '' ? name : `${name},${place}`;
+    rest = Math.floor(rest / column.length);
+  }
+  return place;
 }
