@@ -1,3 +1,4 @@
+import { rayOf } from './counting/aperture.ts';
 import { BEYOND_TOUCHING, closestApproach, nuclearReach } from './counting/closest-approach.ts';
 import { exitCosine } from './counting/slab.ts';
 import { labToCm } from './kinematics/frames.ts';
@@ -15,7 +16,7 @@ function grazing(result: RunPlanResult): Warning[] {
   return ofDetectors(
     result,
     ({ detector: { cone, side } }) =>
-      Math.abs(exitCosine(cone.theta, 0, side * target.tilt)) < Math.sin(DEGREE),
+      Math.abs(exitCosine(rayOf(cone), 0, side * target.tilt)) < Math.sin(DEGREE),
     (names, _, path) =>
       caution(
         'inPlaneOfFoil',
@@ -82,7 +83,7 @@ function nuclearForces(result: RunPlanResult): Warning[] {
   if (!(product > 0) || a1 === null || a2 === null) return [];
   const reach = nuclearReach(a1, a2);
   const nearest = ({ detector }: PlannedDetector) => {
-    const ways = labToCm(detector.cone.theta, collision.frame);
+    const ways = labToCm(rayOf(detector.cone), collision.frame);
     const furthest = Math.max(0, ...ways.map(({ thetaCm }) => thetaCm));
     return furthest > 0 ? closestApproach(product, collision.energyCm, furthest) : Infinity;
   };

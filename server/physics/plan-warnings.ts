@@ -1,3 +1,4 @@
+import { rayOf } from './counting/aperture.ts';
 import { spoken } from './counting/verdict.ts';
 import { detectorWarnings } from './plan-detector-warnings.ts';
 import { caution, degrees, info, ofDetectors, percent, targetPath } from './plan-words.ts';
@@ -68,7 +69,7 @@ function matter(result: RunPlanResult): Warning[] {
     ...ofDetectors(
       result,
       ({ detector: { cone } }) =>
-        space > Math.max(cone.halfAngle / OF_ACCEPTANCE, cone.theta / OF_ANGLE),
+        space > Math.max(cone.halfAngle / OF_ACCEPTANCE, rayOf(cone) / OF_ANGLE),
       (names, _, path) =>
         caution(
           'multipleScatteringAngle',

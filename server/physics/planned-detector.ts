@@ -1,3 +1,4 @@
+import { rayOf } from './counting/aperture.ts';
 import type { Averages } from './counting/averages.ts';
 import { angleSlope, attenuationSlope, averagesOf, energySlope } from './counting/averages.ts';
 import type { CurveAt } from './counting/curve.ts';
@@ -125,7 +126,7 @@ export function planDetector(shared: Shared, detector: PlanDetector): PlannedDet
     lines,
     combined,
     angleSlope: slope,
-    sameAngle: sameAngle(plan, detector.cone.theta),
+    sameAngle: sameAngle(plan, rayOf(detector.cone)),
   };
 }
 

@@ -1,3 +1,4 @@
+import { rayOf } from './counting/aperture.ts';
 import { energyNodes } from './counting/energies.ts';
 import type { Times } from './counting/times.ts';
 import { equalPrecision } from './counting/times.ts';
@@ -41,7 +42,7 @@ export const curvesOf = ({ problemAt, method }: PlannedCollision) =>
 
 /** The angle beyond which a collision counts where their number diverges, rad. */
 function smallestThatMatters(detectors: readonly PlanDetector[]): number {
-  const each = detectors.map(({ cone }) => Math.max(cone.halfAngle, cone.theta / SHARE_OF_ANGLE));
+  const each = detectors.map(({ cone }) => Math.max(cone.halfAngle, rayOf(cone) / SHARE_OF_ANGLE));
   return Math.min(Math.PI / 2, ...each);
 }
 

@@ -87,6 +87,11 @@ export const detectorSchema = z.strictObject({
     .max(180, 'A detector stands between -180 and 180 degrees.'),
   distance: positive('length', 'A distance').optional(),
   apertureRadius: positive('length', 'The radius of an aperture').optional(),
+  /** With apertureRadius: an annular detector, the beam or the central ray passing through its hole. */
+  innerRadius: positive('length', 'An inner radius').optional(),
+  /** A rectangular aperture in place of a radius: width in the plane of beam and detector, height across it. */
+  width: positive('length', 'A width').optional(),
+  height: positive('length', 'A height').optional(),
   /** sr, taken as a circular cone. */
   solidAngle: plain('A solid angle')
     .gt(0, 'A solid angle must be above zero.')
@@ -222,7 +227,7 @@ export const plannedDetectorSchema = z.object({
   name: z.string(),
   angle: z.number(),
   solidAngle: z.number(),
-  /** Half of the opening of the cone, degrees. */
+  /** Half of the opening of the cone, or of a cone of the same solid angle, degrees. */
   halfAngle: z.number(),
   /** Over acceptance, energies and depth; null where it diverges, with the reason. */
   averagedDcs: quantity.extend({ relativeError: z.number() }).nullable(),

@@ -6,50 +6,95 @@ import {
   halfAngleOfDisc,
   solidAngleOfCone,
 } from '#server/physics/counting/cone.ts';
+import type { Shape } from '#server/physics/counting/aperture.ts';
+import { solidAngleOfShape } from '#server/physics/counting/aperture.ts';
+import type { Cone } from '#server/physics/counting/cone.ts';
 import type { PlanDetector } from '#server/physics/plan.ts';
 
 const DEGREE = Math.PI / 180;
 
-/** Half of the opening, rad, and the solid angle, sr; null with faults. */
-function opening(
-  { solidAngle, distance, apertureRadius }: DetectorSent,
+type Opening = Pick<PlanDetector, 'solidAngle'> & Pick<Cone, 'halfAngle' | 'shape'>;
+
+function refuse(path: string, message: string, faults: Faults): null {
+  faults.add(path, message);
+  return null;
+}
+
+const ofShape = (shape: Shape): Opening => {
+  const solidAngle = solidAngleOfShape(shape);
+  return { solidAngle, halfAngle: halfAngleOfCone(solidAngle), shape };
+};
+
+function rectangle(
+  { width, height, apertureRadius, innerRadius }: DetectorSent,
+  distance: number,
   path: string,
   faults: Faults,
-): { halfAngle: number; solidAngle: number } | null {
+): Opening | null {
+  if (apertureRadius || innerRadius) {
+    const words = 'An aperture has a radius, or a width and a height, not both.';
+    return refuse(`${path}/width`, words, faults);
+  }
+  if (!width || !height) {
+    const missing = width ? 'height' : 'width';
+    const words = `A rectangular aperture needs its ${missing} too.`;
+    return refuse(`${path}/${missing}`, words, faults);
+  }
+  return ofShape({
+    kind: 'rectangle',
+    halfWidth: toInternal(width, 'length') / 2 / distance,
+    halfHeight: toInternal(height, 'length') / 2 / distance,
+  });
+}
+
+function round(
+  { apertureRadius, innerRadius }: DetectorSent,
+  distance: number,
+  path: string,
+  faults: Faults,
+): Opening | null {
+  if (!apertureRadius) return refuse(`${path}/apertureRadius`, NEEDED, faults);
+  const outer = halfAngleOfDisc(toInternal(apertureRadius, 'length'), distance);
+  if (!innerRadius) return { halfAngle: outer, solidAngle: solidAngleOfCone(outer) };
+  const inner = halfAngleOfDisc(toInternal(innerRadius, 'length'), distance);
+  if (inner < outer) return ofShape({ kind: 'annulus', inner, outer });
+  const words = 'The inner radius of an annular detector is smaller than its apertureRadius.';
+  return refuse(`${path}/innerRadius`, words, faults);
+}
+
+const NEEDED =
+  'A detector needs distance and apertureRadius (or width and height), or its solidAngle in steradian.';
+
+/** What a detector sees of the sphere; null with faults. */
+function opening(sent: DetectorSent, path: string, faults: Faults): Opening | null {
+  const { solidAngle, distance, apertureRadius, width, height } = sent;
+  const hasAperture = apertureRadius !== undefined || width !== undefined || height !== undefined;
   if (solidAngle !== undefined) {
-    if (distance && apertureRadius) {
-      faults.add(
-        `${path}/solidAngle`,
-        'Give the solid angle, or distance and apertureRadius, not both: one of them decides.',
-      );
-      return null;
-    }
-    return { halfAngle: halfAngleOfCone(solidAngle), solidAngle };
+    if (!hasAperture) return { halfAngle: halfAngleOfCone(solidAngle), solidAngle };
+    const words = 'Give the solid angle, or distance and aperture, not both: one of them decides.';
+    return refuse(`${path}/solidAngle`, words, faults);
   }
-  if (!distance || !apertureRadius) {
-    const missing = distance ? 'apertureRadius' : apertureRadius ? 'distance' : 'solidAngle';
-    faults.add(
-      `${path}/${missing}`,
-      'A detector needs distance and apertureRadius, or its solidAngle in steradian.',
-    );
-    return null;
+  if (!distance) {
+    const missing = hasAperture ? 'distance' : 'solidAngle';
+    return refuse(`${path}/${missing}`, NEEDED, faults);
   }
-  const halfAngle = halfAngleOfDisc(
-    toInternal(apertureRadius, 'length'),
-    toInternal(distance, 'length'),
-  );
-  return { halfAngle, solidAngle: solidAngleOfCone(halfAngle) };
+  const far = toInternal(distance, 'length');
+  return width || height ? rectangle(sent, far, path, faults) : round(sent, far, path, faults);
 }
 
 function toDetector(sent: DetectorSent, path: string, faults: Faults): PlanDetector | undefined {
   const found = opening(sent, path, faults);
   if (!found) return undefined;
-  const { halfAngle, solidAngle } = found;
+  const { halfAngle, solidAngle, shape } = found;
   return {
     name: sent.name,
     angle: sent.angle,
     side: sent.angle < 0 ? -1 : 1,
-    cone: { theta: Math.min(Math.abs(sent.angle) * DEGREE, Math.PI), halfAngle },
+    cone: {
+      theta: Math.min(Math.abs(sent.angle) * DEGREE, Math.PI),
+      halfAngle,
+      ...(shape && { shape }),
+    },
     solidAngle,
     efficiency: sent.efficiency ?? 1,
     deadTime: {

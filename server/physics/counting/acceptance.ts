@@ -1,14 +1,16 @@
 import { cmToLab } from '#server/physics/kinematics/frames.ts';
 import { integrate } from '#server/physics/numerics/quadrature.ts';
 import { cmRanges } from '#server/physics/observables/between-angles.ts';
+import type { Azimuths } from './aperture.ts';
+import { azimuthsOf, kinksOf, rayOf } from './aperture.ts';
 import type { Cone } from './cone.ts';
 import { halfAzimuth, ringsOf, solidAngleOfCone } from './cone.ts';
 import type { Curve, Dcs } from './curve.ts';
 
 /**
- * What a direction is worth, 0 to 1: the mean over the azimuths within `halfAzimuth` of the detector's plane at one polar angle of the lab.
+ * What a direction is worth, 0 to 1: the mean over the azimuths between two, counted from the detector's plane, at one polar angle of the lab.
  */
-export type RingWeight = (thetaLab: number, halfAzimuth: number) => number;
+export type RingWeight = (thetaLab: number, from: number, to: number) => number;
 
 /** Relative change of the sum between two refinements that is small enough. */
 const AIM = 1e-8;
@@ -75,36 +77,81 @@ function overRings(g: (x: number) => AcceptanceMean, a: number, b: number): Acce
   };
 }
 
-/** The whole acceptance with one weight for every direction, or a divergence. */
-function integralOver(curve: Curve, cone: Cone, weight: RingWeight | null): AcceptanceMean {
-  const { frame } = curve;
-  const ring = (isWhole: boolean) => (thetaCm: number) => {
-    const { thetaLab } = cmToLab(thetaCm, frame);
-    const azimuth = isWhole ? Math.PI : halfAzimuth(thetaLab, cone);
-    if (azimuth === 0) return { value: 0, weighted: 0, error: 0 };
+type Ring = (thetaCm: number) => AcceptanceMean;
+
+/** Directions of one polar angle of the centre of mass that enter, with their cross section and weight. */
+function ringOf(
+  curve: Curve,
+  weight: RingWeight | null,
+  azimuths: (thetaLab: number) => Azimuths,
+): Ring {
+  return (thetaCm) => {
+    const { thetaLab } = cmToLab(thetaCm, curve.frame);
+    const inside = azimuths(thetaLab);
+    if (inside.length === 0) return { value: 0, weighted: 0, error: 0 };
     const { value, error } = finite(curve.cm(thetaCm));
-    const share = weight === null ? 1 : weight(thetaLab, azimuth);
-    const size = 2 * azimuth * Math.sin(thetaCm);
-    return { value: size * value, weighted: size * value * share, error: size * error };
-  };
-  const { whole, cut } = ringsOf(cone);
-  const total: AcceptanceMean = { value: 0, weighted: 0, error: 0 };
-  const add = (part: AcceptanceMean) => {
-    for (const key of SUMS) total[key] += part[key];
-  };
-  for (const [low, high] of whole) {
-    if (curve.forwardDiverges && low === 0) throw new Divergence();
-    if (curve.backwardDiverges && high >= Math.PI) throw new Divergence();
-    for (const { from, to } of cmRanges(low, high, frame)) {
-      if (to > from) add(overRings(ring(true), from, to));
+    let width = 0;
+    let worth = 0;
+    for (const [from, to] of inside) {
+      width += to - from;
+      worth += (to - from) * (weight === null ? 1 : weight(thetaLab, from, to));
     }
-  }
-  if (cut) {
-    for (const { from, to } of cmRanges(cut[0], cut[1], frame)) {
-      if (to > from) add(overArc(ring(false), from, to));
+    const size = 2 * Math.sin(thetaCm);
+    return {
+      value: size * width * value,
+      weighted: size * worth * value,
+      error: size * width * error,
+    };
+  };
+}
+
+const WHOLE: Azimuths = [[0, Math.PI]];
+
+/** A sum over ranges of the lab, each turned into those of the centre of mass. */
+function sumOver(
+  curve: Curve,
+  ranges: readonly [number, number][],
+  over: (from: number, to: number) => AcceptanceMean,
+): AcceptanceMean {
+  const total: AcceptanceMean = { value: 0, weighted: 0, error: 0 };
+  for (const [low, high] of ranges) {
+    for (const { from, to } of cmRanges(low, high, curve.frame)) {
+      if (!(to > from)) continue;
+      const part = over(from, to);
+      for (const key of SUMS) total[key] += part[key];
     }
   }
   return total;
+}
+
+function overCone(curve: Curve, cone: Cone, weight: RingWeight | null): AcceptanceMean {
+  const { whole, cut } = ringsOf(cone);
+  const isAhead = whole.some(([low]) => low === 0);
+  const isBehind = whole.some(([, high]) => high >= Math.PI);
+  if ((curve.forwardDiverges && isAhead) || (curve.backwardDiverges && isBehind)) {
+    throw new Divergence();
+  }
+  const full = ringOf(curve, weight, () => WHOLE);
+  const partial = ringOf(curve, weight, (thetaLab) => {
+    const azimuth = halfAzimuth(thetaLab, cone);
+    return azimuth > 0 ? [[0, azimuth]] : [];
+  });
+  const rings = sumOver(curve, whole, (from, to) => overRings(full, from, to));
+  const arcs = sumOver(curve, cut ? [cut] : [], (from, to) => overArc(partial, from, to));
+  return {
+    value: rings.value + arcs.value,
+    weighted: rings.weighted + arcs.weighted,
+    error: rings.error + arcs.error,
+  };
+}
+
+function overShape(curve: Curve, cone: Cone, weight: RingWeight | null): AcceptanceMean {
+  const kinks = kinksOf(cone);
+  if (curve.forwardDiverges && kinks[0] === 0) throw new Divergence();
+  if (curve.backwardDiverges && (kinks.at(-1) ?? 0) >= Math.PI) throw new Divergence();
+  const ring = ringOf(curve, weight, (thetaLab) => azimuthsOf(thetaLab, cone));
+  const ranges = kinks.slice(1).map((to, i): [number, number] => [kinks[i] ?? to, to]);
+  return sumOver(curve, ranges, (from, to) => overRings(ring, from, to));
 }
 
 function alongTheRay(
@@ -114,11 +161,11 @@ function alongTheRay(
 ): AcceptanceMean | null {
   const { dcs, isOutOfReach } = curve.lab(theta);
   if (dcs === null) return isOutOfReach ? { value: 0, weighted: 0, error: 0 } : null;
-  return { ...dcs, weighted: dcs.value * (weight === null ? 1 : weight(theta, 0)) };
+  return { ...dcs, weighted: dcs.value * (weight === null ? 1 : weight(theta, 0, 0)) };
 }
 
 /**
- * Mean of dσ/dΩ over a circular acceptance, both branches of a heavy projectile included.
+ * Mean of dσ/dΩ over an acceptance, both branches of a heavy projectile included.
  *
  * Formula: (1/Ω) ∫ dσ/dΩ_cm · 2ψ(θ_lab(θ)) · w sin θ dθ over the angles of the centre of mass that lead into the cone; ψ is half the azimuth
  * inside it. In this variable the edge of a heavy projectile's cone is no singularity.
@@ -138,9 +185,10 @@ export function acceptanceAverage(
   cone: Cone,
   weight: RingWeight | null = null,
 ): AcceptanceMean | null {
-  if (cone.halfAngle < NARROW) return alongTheRay(curve, cone.theta, weight);
+  if (cone.halfAngle < NARROW) return alongTheRay(curve, rayOf(cone), weight);
   try {
-    const { value, weighted, error } = integralOver(curve, cone, weight);
+    const over = cone.shape ? overShape : overCone;
+    const { value, weighted, error } = over(curve, cone, weight);
     const solidAngle = solidAngleOfCone(cone.halfAngle);
     return {
       value: value / solidAngle,

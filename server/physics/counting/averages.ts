@@ -1,4 +1,5 @@
 import { acceptanceAverage } from './acceptance.ts';
+import { rayOf } from './aperture.ts';
 import type { Cone } from './cone.ts';
 import type { Curve, CurveAt, Dcs, LabDcs } from './curve.ts';
 import type { EnergyNode } from './energies.ts';
@@ -46,7 +47,7 @@ export function averagesOf(
   cone: Cone,
 ): Averages {
   const central = curveAt(energy);
-  const point = central.lab(cone.theta);
+  const point = central.lab(rayOf(cone));
   const plain = acceptanceAverage(central, cone, slabWeight(slab, null));
   if (plain === null) return { point, acceptance: null, averaged: null, attenuation: 1 };
   const [only, ...others] = nodes;

@@ -1,11 +1,14 @@
 import { DomainError } from '#shared/errors.ts';
+import type { Shape } from './aperture.ts';
 
-/** A circular cone of directions around a detector's central ray, seen from the target. */
+/** The directions a detector sees from the target: a circular cone around its central ray, or another shape with the same solid angle. */
 export interface Cone {
   /** Between beam and central ray, rad, 0 to pi. */
   theta: number;
-  /** rad, above 0, at most pi (the whole sphere). */
+  /** rad, above 0, at most pi (the whole sphere); of another shape that of a circle with its solid angle. */
   halfAngle: number;
+  /** Absent for a circular cone. */
+  shape?: Shape;
 }
 
 /**

@@ -74,10 +74,11 @@ export function slabWeight(slab: Slab, depth: number | null): RingWeight | null 
     return depth === null ? meanTransmission(slab, cosine) : transmissionAt(slab, depth, cosine);
   };
   if (slab.tilt === 0 || slab.kind === 'gas') return (theta) => at(theta, 0);
-  return (theta, halfAzimuth) => {
+  return (theta, from, to) => {
+    const middle = (from + to) / 2;
     let sum = 0;
     RULE.nodes.forEach((node, i) => {
-      sum += ((RULE.weights[i] ?? 0) / 2) * at(theta, (halfAzimuth * (1 + node)) / 2);
+      sum += ((RULE.weights[i] ?? 0) / 2) * at(theta, middle + ((to - from) / 2) * node);
     });
     return sum;
   };
