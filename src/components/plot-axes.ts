@@ -2,6 +2,9 @@ import { formatNumber } from '#shared/units/format.ts';
 import { fonts, type Palette } from '#src/styles/tokens.ts';
 import type { PlotAxis, PlotPicture, PlotSeries, Scale } from './plot-types.ts';
 
+/** A drawing carries it inside an attribute, which double quotes would end. */
+export const PLOT_FONT = fonts.sans.replaceAll('"', "'");
+
 /** Powers below the largest value that a logarithmic axis still shows: deep minima must not flatten the curve. */
 const DECADES = 14;
 
@@ -23,11 +26,11 @@ function axisLook(axis: PlotAxis, palette: Palette) {
   return {
     name: axis.title,
     nameLocation: 'middle' as const,
-    nameTextStyle: { color: palette.ink, fontFamily: fonts.sans, fontSize: 13.5 },
+    nameTextStyle: { color: palette.ink, fontFamily: PLOT_FONT, fontSize: 13.5 },
     axisLine: { show: true, onZero: false, lineStyle: { color: palette.edge } },
     axisTick: { lineStyle: { color: palette.edge } },
     splitLine: { show: true, lineStyle: { color: palette.line, width: 1 } },
-    axisLabel: { color: palette.muted, fontFamily: fonts.sans, fontSize: 12.5, hideOverlap: true },
+    axisLabel: { color: palette.muted, fontFamily: PLOT_FONT, fontSize: 12.5, hideOverlap: true },
   };
 }
 

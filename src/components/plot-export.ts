@@ -42,6 +42,7 @@ function exported(picture: PlotPicture) {
       right: 18,
       textStyle: { color: light.ink },
       itemWidth: 34,
+      itemGap: 18,
     },
   };
 }

@@ -1,6 +1,6 @@
 import type { EChartsCoreOption } from 'echarts/core';
-import { fonts, type Palette } from '#src/styles/tokens.ts';
-import { abscissaAxis, ordinateAxis } from './plot-axes.ts';
+import type { Palette } from '#src/styles/tokens.ts';
+import { PLOT_FONT, abscissaAxis, ordinateAxis } from './plot-axes.ts';
 import { crosshair, curve, guideLines, levelLine, markedBand } from './plot-curves.ts';
 import type { PlotPanel, PlotPicture } from './plot-types.ts';
 
@@ -61,7 +61,7 @@ export function plotOption(
   const ordinate = { axis: y, scale: yScale, series, hidden, grid: 0 };
   return {
     animation: false,
-    textStyle: { fontFamily: fonts.sans },
+    textStyle: { fontFamily: PLOT_FONT },
     grid: gridsOf(picture, margins),
     xAxis: [
       abscissaAxis(x, palette, 0, panel ? true : false),
