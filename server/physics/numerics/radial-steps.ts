@@ -32,9 +32,16 @@ export function stepReal(W: Float64Array, length: number, wave: RadialWave): num
   while (count < TERMS && quiet < QUIET) {
     const n = count - 2;
     const last = n < length ? n : length - 1;
+    // Two sums at once: one would wait for each addition.
     let sum = 0;
-    for (let m = 0; m <= last; m++) sum += (W[m] ?? 0) * (re[n - m] ?? 0);
-    const term = sum * (INVERSE[n] ?? 0);
+    let other = 0;
+    let m = 0;
+    for (; m < last; m += 2) {
+      sum += (W[m] ?? 0) * (re[n - m] ?? 0);
+      other += (W[m + 1] ?? 0) * (re[n - m - 1] ?? 0);
+    }
+    if (m === last) sum += (W[m] ?? 0) * (re[n - m] ?? 0);
+    const term = (sum + other) * (INVERSE[n] ?? 0);
     re[count] = term;
     count += 1;
     const weight = Math.abs(term) * count;
