@@ -1,22 +1,10 @@
 import { gaussRule } from '#server/physics/numerics/gauss-rule.ts';
-import {
-  PanelError,
-  type RadialPanels,
-  radialPanels,
-} from '#server/physics/numerics/radial-panels.ts';
-import type { PanelPowers } from '#server/physics/numerics/radial-powers.ts';
-import { addBarrier, fieldPowers, panelPowers } from '#server/physics/numerics/radial-powers.ts';
-import type { RadialWave } from '#server/physics/numerics/radial-series.ts';
-import {
-  squareOfLast,
-  stepComplex,
-  stepFromOrigin,
-  stepReal,
-} from '#server/physics/numerics/radial-steps.ts';
+import { PanelError, radialPanels } from '#server/physics/numerics/radial-panels.ts';
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import type { LowEnergy } from '../amplitude.ts';
 import type { RadialInteraction } from './interaction.ts';
-import { CENTRAL_IM, CENTRAL_RE } from './interaction.ts';
+import type { ZeroWave } from './zero-wave.ts';
+import { weakLength, zeroWave } from './zero-wave.ts';
 
 const NOTHING: LowEnergy = {
   scatteringLength: null,
@@ -30,84 +18,6 @@ const RULE = gaussRule(16);
 const DOUBLINGS = 60;
 /** Ranges after which the square of a tail that falls off as a power has no part in the scattering length. */
 const FAR = 1e4;
-const TINY = 1e-140;
-
-/** The wave of l = 0 at zero energy at the end of its panels. */
-interface ZeroWave {
-  R: number;
-  u: number;
-  uIm: number;
-  slope: number;
-  slopeIm: number;
-  /** ∫ u² */
-  square: number;
-  nodes: number;
-  panels: number;
-}
-
-function originPowers(powers: PanelPowers): Float64Array {
-  const shifted = new Float64Array(powers.length + 2);
-  for (let m = 0; m < powers.length; m++) shifted[m + 1] = powers.powers[m] ?? 0;
-  return shifted;
-}
-
-function rescale(wave: RadialWave): number {
-  const size = Math.max(Math.hypot(wave.re, wave.im), Math.hypot(wave.slopeRe, wave.slopeIm));
-  if (size > TINY && size < 1 / TINY) return 1;
-  wave.re /= size;
-  wave.im /= size;
-  wave.slopeRe /= size;
-  wave.slopeIm /= size;
-  return 1 / size;
-}
-
-function carry(interaction: RadialInteraction, panels: RadialPanels): ZeroWave {
-  const { absorbs, core, shells } = interaction;
-  const { edges, count } = panels;
-  const [total, second] = [panelPowers(), panelPowers()];
-  const wave: RadialWave = { re: 0, im: 0, slopeRe: 1, slopeIm: 0 };
-  let square = 0;
-  let nodes = 0;
-  for (let p = 0; p < count; p++) {
-    const width = (edges[p + 1] ?? 0) - (edges[p] ?? 0);
-    const before = wave.re;
-    const fromOrigin = p === 0 && core === 0;
-    fieldPowers(panels, p, CENTRAL_RE, 1, 0, 0, total);
-    if (absorbs) fieldPowers(panels, p, CENTRAL_IM, 1, 0, 0, second);
-    if (p > 0) {
-      const last = (edges[p] ?? 0) - (edges[p - 1] ?? 0);
-      square *= rescale(wave) ** 2;
-      wave.slopeRe *= width / last;
-      wave.slopeIm *= width / last;
-    }
-    if (fromOrigin) {
-      const imaginary = absorbs ? originPowers(second) : null;
-      const terms = stepFromOrigin(0, originPowers(total), imaginary, wave);
-      square += width * squareOfLast(terms, 1);
-    } else {
-      addBarrier(panels, p, 0, 0, total);
-      const terms = absorbs
-        ? stepComplex(total.powers, total.length, second.powers, second.length, wave)
-        : stepReal(total.powers, total.length, wave);
-      square += width * squareOfLast(terms, 0);
-    }
-    if (before * wave.re < 0) nodes += 1;
-    const jump = shells.find(({ radius }) => radius === edges[p + 1])?.jump ?? 0;
-    wave.slopeRe += width * jump * wave.re;
-    wave.slopeIm += width * jump * wave.im;
-  }
-  const last = (edges[count] ?? 0) - (edges[count - 1] ?? 0);
-  return {
-    R: edges[count] ?? 0,
-    u: wave.re,
-    uIm: wave.im,
-    slope: wave.slopeRe / last,
-    slopeIm: wave.slopeIm / last,
-    square,
-    nodes,
-    panels: count,
-  };
-}
 
 /**
  * What a tail beyond R adds to the scattering length, first order in the tail.
@@ -155,6 +65,9 @@ const NEARLY = (a: number, R: number): string =>
     a > 0 ? 'the last bound state is barely bound' : 'one more bound state is barely missed'
   }, and cross sections at low energy depend on the last digits of the strength.`;
 
+const LOST_RANGE =
+  'The effective range is lost in rounding: the potential is too weak for it to be told from nothing.';
+
 function noRange(fall: number): string {
   const tail = `The potential falls off as r^-${Number(fall.toPrecision(2))}`;
   return fall < 5.5
@@ -167,18 +80,19 @@ function sizeOf(interaction: RadialInteraction, R: number): number {
   return interaction.size > 0 ? Math.min(interaction.size, R) : R;
 }
 
-function evaluated(interaction: RadialInteraction, zero: ZeroWave): LowEnergy {
+function evaluated(interaction: RadialInteraction, zero: ZeroWave, weak: number | null): LowEnergy {
   const { R, u, slope, square, panels } = zero;
   const D = R * slope - u;
-  const inner = D / slope;
+  const inner = weak ?? D / slope;
   const lost = UNIT_ROUNDOFF * (16 + 4 * panels);
   const outer = interaction.power ? beyond(interaction, R, inner) : 0;
   const a = inner + outer;
   const off = lost * (Math.abs(u) + Math.abs(R * slope));
-  const error =
-    (off / Math.abs(slope)) * (1 + Math.abs(inner) / R) +
-    lost * Math.abs(outer) +
-    (outer / R) ** 2 * R;
+  const rounding =
+    weak === null
+      ? (off / Math.abs(slope)) * (1 + Math.abs(inner) / R)
+      : 16 * lost * Math.abs(weak);
+  const error = rounding + lost * Math.abs(outer) + (outer / R) ** 2 * R;
   const known = Number.isFinite(a) && error < Math.abs(a) + R;
   const nodes = zero.nodes + (inner > R ? 1 : 0);
   const size = sizeOf(interaction, R);
@@ -192,14 +106,15 @@ function evaluated(interaction: RadialInteraction, zero: ZeroWave): LowEnergy {
   const spread = parts.reduce((sum, part) => sum + Math.abs(part), 0);
   const rangeError = 2 * spread * lost * (1 + (Math.abs(u) + Math.abs(R * slope)) / Math.abs(D));
   const fall = interaction.power ? fallAt(interaction, R) : Infinity;
+  const hasRange =
+    fall === Infinity && Number.isFinite(range) && rangeError < 1e-3 * (Math.abs(range) + R);
   const remarks = [
     ...(known
       ? []
       : ['Bound state at zero energy to all digits: the scattering length is infinite.']),
     ...(known && Math.abs(a) > RESONANT * size ? [NEARLY(a, size)] : []),
-    ...(fall < Infinity ? [noRange(fall)] : []),
+    ...(fall < Infinity ? [noRange(fall)] : hasRange ? [] : [LOST_RANGE]),
   ];
-  const hasRange = fall === Infinity && Number.isFinite(range) && rangeError < Math.abs(range) + R;
   return {
     scatteringLength: known ? { value: a, error } : null,
     effectiveRange: hasRange ? { value: range, error: rangeError } : null,
@@ -237,11 +152,11 @@ export function lowEnergy(interaction: RadialInteraction): LowEnergy {
       end: core === reach ? reach * 1.5 : reach,
       breaks: [...breaks, ...shells.map(({ radius }) => radius)],
       wave: 0,
-      tolerance: 1e-17,
+      tolerance: 1e-24,
     });
-    const zero = carry(interaction, panels);
+    const zero = zeroWave(interaction, panels);
     if (interaction.absorbs) return { ...NOTHING, remark: complexLength(zero) };
-    return evaluated(interaction, zero);
+    return evaluated(interaction, zero, weakLength(interaction, panels));
   } catch (error) {
     if (!(error instanceof PanelError)) throw error;
     return {

@@ -50,9 +50,18 @@ describe('scattering length and effective range', () => {
     expectRelative(k / Math.tan(waves[0]?.delta ?? NaN), expansion, 1e-6);
   });
 
-  test('of the weakest well the scattering length is the first-order one', () => {
-    const { scatteringLength } = lowEnergyOf(1e-3);
-    expectRelative(scatteringLength?.value ?? NaN, -1e-6 / 3, 1e-6);
+  test('of the weakest wells it keeps its digits: -x²/3 - 2x⁴/15 - 17x⁶/315 - …', () => {
+    for (const x of [1e-6, 1e-3, 0.02]) {
+      const { scatteringLength: a } = lowEnergyOf(x);
+      const exact = -(x ** 2) / 3 - (2 * x ** 4) / 15 - (17 * x ** 6) / 315 - (62 * x ** 8) / 2835;
+      expectRelative(a?.value ?? NaN, exact, 1e-12);
+    }
+  });
+
+  test('an effective range that rounding has eaten is said to be', () => {
+    const { effectiveRange, remark } = lowEnergyOf(1e-4);
+    expect(effectiveRange).toBeNull();
+    expect(remark).toMatch(/effective range is lost in rounding/);
   });
 });
 
