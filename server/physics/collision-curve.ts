@@ -1,7 +1,7 @@
 import { DomainError } from '#shared/errors.ts';
 import { beyondFirstOrder } from './beyond-first-order.ts';
 import type { Curve, Dcs, LabDcs } from './counting/curve.ts';
-import { beyondAmplitude, scalesOf } from './estimate.ts';
+import { beyondAmplitude, scalesOf } from './problem-scales.ts';
 import type { ScatteringAmplitude } from './methods/amplitude.ts';
 import { firstBorn } from './methods/born1.ts';
 import { cmRanges, elasticBetween } from './observables/between-angles.ts';

@@ -1,8 +1,6 @@
 import type { Unavailable } from './methods/amplitude.ts';
 import type { FirstBorn } from './methods/born1.ts';
 import { firstBorn } from './methods/born1.ts';
-import { transform, transformWithoutTail } from './methods/transform.ts';
-import { exchangeDcs } from './methods/exchange.ts';
 import { labToCm } from './kinematics/frames.ts';
 import type { Assessment } from './observables/assess.ts';
 import { assess, unassessed } from './observables/assess.ts';
@@ -16,27 +14,12 @@ import type { CrossSections } from './observables/integrals.ts';
 import { crossSections } from './observables/cross-sections.ts';
 import type { Curve } from './observables/differential.ts';
 import { curveOf } from './observables/differential.ts';
-import type { GoldenRule } from './observables/golden-rule.ts';
-import { goldenRule } from './observables/golden-rule.ts';
 import type { PotentialCurve } from './observables/potential-curve.ts';
 import { potentialCurve } from './observables/potential-curve.ts';
-import type { Window } from './observables/window.ts';
-import { goldenRuleWindow } from './observables/window.ts';
-import { finalStates } from './kinematics/final-states.ts';
-import { leptonFactor } from './lepton-factor.ts';
+import type { GoldenRuleSheet } from './golden-rule-sheet.ts';
+import { goldenRuleSheet } from './golden-rule-sheet.ts';
+import { beyondAmplitude, scalesOf } from './problem-scales.ts';
 import type { Problem } from './problem.ts';
-
-/** A factor that stands after the golden rule, and the cross section with it and all before. */
-export interface FactorAfter {
-  name: 'exchange' | 'spin' | 'mckinleyFeshbach' | 'incoherent';
-  dcs: number;
-}
-
-export interface GoldenRuleSheet extends GoldenRule {
-  window: Window;
-  /** The cross section after each further factor, angstrom²/sr, one upon the other. */
-  factorsAfter: FactorAfter[];
-}
 
 export interface FirstBornResult {
   differential: Curve;
@@ -56,26 +39,6 @@ export interface EstimateResult {
   assessment: Assessment;
 }
 
-export const RANGES_IN_A_BOX = 1000;
-const FORWARD: Unavailable = {
-  unavailable:
-    'The matrix element of a 1/r potential diverges in the forward direction; choose an angle above zero.',
-};
-
-const isActive = ({ strength }: { strength: { re: number; im: number } }) =>
-  strength.re !== 0 || strength.im !== 0;
-
-/** Lengths that decide how finely amplitudes are sampled. */
-export function scalesOf({ terms }: Pick<Problem, 'terms'>): Scales {
-  const active = terms.filter(isActive);
-  return {
-    range: Math.max(0, ...active.map((term) => term.range ?? 0)),
-    edge: Math.max(0, ...active.flatMap((term) => term.breakpoints)),
-    terms: Math.max(1, active.length),
-    kinks: active.flatMap((term) => term.kinks ?? []),
-  };
-}
-
 /** The middle angle in the centre of mass; a lab angle by its forward branch. */
 function middleAngle({ angles, frame, collision }: Problem): number {
   const middle = angles[(angles.length - 1) >> 1] ?? Math.PI / 2;
@@ -83,85 +46,11 @@ function middleAngle({ angles, frame, collision }: Problem): number {
   return labToCm(middle, collision.frame)[0]?.thetaCm ?? middle;
 }
 
-/** What stands after the square of the amplitude. */
-export function beyondAmplitude(problem: Problem) {
-  const lepton = leptonFactor(problem);
-  return {
-    factor: lepton && (lepton.corrected ?? lepton.plain),
-    incoherent: incoherentOf(problem),
-  };
-}
-
-const incoherentOf = ({ terms }: Problem): number =>
-  terms.reduce((sum, { incoherent = 0 }) => sum + incoherent, 0);
-
 /** The first-order curve of a problem, in the frame it is asked in. */
 export function differential(problem: Problem, born: FirstBorn): Curve {
   const { angles, frame, exchangeSpin, collision } = problem;
   const input = { born, k: collision.k, exchangeSpin, ...beyondAmplitude(problem) };
   return curveOf(input, angles, frame, collision.frame);
-}
-
-function exchangedDcs(problem: Problem, born: FirstBorn, theta: number): number | null {
-  if (problem.exchangeSpin === null) return null;
-  const { k } = problem.collision;
-  const direct = born.amplitude(2 * k * Math.sin(theta / 2));
-  const exchanged = born.amplitude(theta === Math.PI ? 0 : 2 * k * Math.cos(theta / 2));
-  if (direct === null || exchanged === null) return null;
-  return exchangeDcs(direct, exchanged, problem.exchangeSpin).value;
-}
-
-/** What the curve holds beyond the chain, factor by factor. */
-function factorsAfter(
-  problem: Problem,
-  born: FirstBorn,
-  theta: number,
-  plain: number,
-): FactorAfter[] {
-  const exchanged = exchangedDcs(problem, born, theta);
-  if (problem.exchangeSpin !== null) {
-    return exchanged === null ? [] : [{ name: 'exchange', dcs: exchanged }];
-  }
-  const lepton = leptonFactor(problem);
-  const found: FactorAfter[] = [];
-  if (lepton) found.push({ name: 'spin', dcs: plain * lepton.plain(theta).value });
-  if (lepton?.corrected) {
-    found.push({ name: 'mckinleyFeshbach', dcs: plain * lepton.corrected(theta).value });
-  }
-  const incoherent = incoherentOf(problem);
-  if (incoherent > 0) {
-    found.push({ name: 'incoherent', dcs: (found.at(-1)?.dcs ?? plain) + incoherent });
-  }
-  return found;
-}
-
-function goldenRuleSheet(
-  problem: Problem,
-  born: FirstBorn,
-  theta: number,
-  { range }: Scales,
-  samples: ConeSamples | null,
-): GoldenRuleSheet | Unavailable {
-  const { terms, collision, goldenRule: asked } = problem;
-  const hasTail = born.tail.re !== 0 || born.tail.im !== 0;
-  if (hasTail && theta === 0) return FORWARD;
-  const box = asked.boxSide ?? (range > 0 ? RANGES_IN_A_BOX * range : asked.boxWithoutRange);
-  const route = hasTail ? transform : transformWithoutTail;
-  const sheet = goldenRule(terms, collision, theta, box, route);
-  if (sheet === null) return FORWARD;
-  const window = goldenRuleWindow({
-    theta,
-    k: collision.k,
-    energyCm: collision.energyCm,
-    finalState: finalStates(problem.projectile.mass, problem.target.mass, problem),
-    strength: (q) => {
-      const f = born.amplitude(q);
-      return f === null ? null : f.re * f.re + f.im * f.im;
-    },
-    range,
-    totalRate: samples === null ? null : 8 * Math.PI * samples.moments[0] * sheet.flux,
-  });
-  return { ...sheet, window, factorsAfter: factorsAfter(problem, born, theta, sheet.dcs) };
 }
 
 /** An interaction without first order (a hard sphere): what the exact curve, the potential and the kinematics still say. */

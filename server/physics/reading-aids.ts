@@ -1,4 +1,5 @@
-import { differential, scalesOf } from './estimate.ts';
+import { differential } from './estimate.ts';
+import { scalesOf } from './problem-scales.ts';
 import { chargeProductOf, leptonFactor } from './lepton-factor.ts';
 import type { Unavailable } from './methods/amplitude.ts';
 import { firstBorn } from './methods/born1.ts';

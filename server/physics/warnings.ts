@@ -1,6 +1,6 @@
 import { COULOMB_EV_ANGSTROM, BOHR } from './constants/codata2022.ts';
 import type { EstimateResult } from './estimate.ts';
-import { scalesOf } from './estimate.ts';
+import { scalesOf } from './problem-scales.ts';
 import { leptonWarnings } from './lepton-warnings.ts';
 import { methodWarnings } from './method-warnings.ts';
 import { tableResolution } from './table-warnings.ts';

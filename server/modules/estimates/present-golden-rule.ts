@@ -1,5 +1,6 @@
 import type { Estimate, GoldenRule } from '#shared/contracts/estimates.ts';
-import type { EstimateResult, GoldenRuleSheet } from '#server/physics/estimate.ts';
+import type { EstimateResult } from '#server/physics/estimate.ts';
+import type { GoldenRuleSheet } from '#server/physics/golden-rule-sheet.ts';
 import type { MatrixElement } from '#server/physics/observables/golden-rule.ts';
 import type { AnswerUnits } from './answer-units.ts';
 import { errorOf, finite } from './answer-units.ts';
