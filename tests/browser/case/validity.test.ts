@@ -1,7 +1,8 @@
+import { readFile } from 'node:fs/promises';
 import type { Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, describe, expect, test } from 'vitest';
 import type { Account } from '#server/modules/users/account.entity.ts';
-import { expectSoundInEveryView } from '#tests/browser/support/accessibility.ts';
+import { expectAccessible, expectSoundInEveryView } from '#tests/browser/support/accessibility.ts';
 import { saveCase } from '#tests/browser/support/case-factory.ts';
 import { openStage, type Stage } from '#tests/browser/support/stage.ts';
 import { expectRelative } from '#tests/support/expect-relative.ts';
@@ -230,10 +231,11 @@ describe('planes and waves', () => {
   test.each([
     ['All methods', 'Numbers with units', /-methods\.csv$/],
     ['All methods', 'Drawing', /-methods\.svg$/],
+    ['Every wave within the circle', 'Drawing', /-unitarity\.svg$/],
     ['The amplitude in its plane', 'Picture', /-amplitude\.png$/],
     ['Phase shifts', 'Numbers with units', /-phase-shifts\.csv$/],
   ])('%s is taken as a file: %s', async (name, item, file) => {
-    const { page, goTo } = await stage.visitor(owner);
+    const { context, page, goTo } = await stage.visitor(owner);
     await goTo(`/cases/${id}?section=validity`);
     await compared(page);
     await part(page, name).getByRole('button', { name: 'Export' }).click();
@@ -242,6 +244,23 @@ describe('planes and waves', () => {
       page.getByRole('menuitem', { name: item }).click(),
     ]);
     expect(download.suggestedFilename()).toMatch(file);
+    const content = await readFile(await download.path());
+    if (item === 'Picture') expect(content.subarray(1, 4).toString()).toBe('PNG');
+    if (item === 'Numbers with units') {
+      // As many columns in every row, names and units first.
+      const rows = content.toString().trim().split('\r\n');
+      const columns = new Set(rows.map((row) => row.split(',').length));
+      expect(rows.length).toBeGreaterThan(10);
+      expect(columns.size).toBe(1);
+    }
+    if (item !== 'Drawing') return;
+    // A page of its own: that of the application allows no styles in markup, which a drawing has.
+    const blank = await context.newPage();
+    const wrong = await blank.evaluate(
+      (text) => new DOMParser().parseFromString(text, 'image/svg+xml').querySelector('parsererror'),
+      content.toString(),
+    );
+    expect(wrong).toBeNull();
   });
 });
 
@@ -302,7 +321,7 @@ describe('states', () => {
     const alert = page.getByRole('alert');
     await alert.getByText('The methods could not be held against each other.').waitFor();
     expect(await part(page, 'Verdict').count()).toBe(0);
-    await expectSoundInEveryView(page);
+    await expectAccessible(page);
     broken = false;
     await alert.getByRole('button', { name: 'Try again' }).click();
     await compared(page);
