@@ -1,7 +1,7 @@
 import type { Station } from '#src/components/station-glyph.tsx';
 import { useEditing } from '../editing/editor-context.ts';
 import { problemsByStation } from '../model/problems.ts';
-import { STATIONS } from '../model/stations.ts';
+import { STATIONS, isOfPlan } from '../model/stations.ts';
 import type { StationSummary } from '../model/stations.ts';
 import { BeamInputs } from './beam-inputs.tsx';
 import { DetectorsInputs } from './detectors-inputs.tsx';
@@ -33,7 +33,8 @@ interface InputsPanelProps {
 /** All inputs, in the order of the beam line, beside every section. */
 export function InputsPanel({ summaries, closed, onToggle, onEnter }: InputsPanelProps) {
   const { problems } = useEditing();
-  const faults = problemsByStation(problems);
+  // Fields of the run plan stand in a section of their own.
+  const faults = problemsByStation(problems.filter(({ path }) => !isOfPlan(path)));
   return (
     <form
       aria-label="Inputs"

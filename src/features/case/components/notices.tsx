@@ -1,3 +1,4 @@
+import { Link } from 'react-router-dom';
 import { Button } from '#src/components/button.tsx';
 import { Notice } from '#src/components/notice.tsx';
 import type { Station } from '#src/components/station-glyph.tsx';
@@ -5,8 +6,9 @@ import type { VersionHead } from '#shared/contracts/cases.ts';
 import type { FieldError } from '#shared/errors.ts';
 import type { Work } from '../editing/use-work.ts';
 import { momentText } from '../model/moments.ts';
-import { stationOf } from '../model/stations.ts';
+import { isOfPlan, stationOf } from '../model/stations.ts';
 import { STATION_NAMES } from './inputs-panel.tsx';
+import { useSectionAddress } from './section-tabs.tsx';
 
 /** What became of unsaved work. */
 export function WorkNotices({ work, newest }: { work: Work; newest: VersionHead | null }) {
@@ -65,6 +67,7 @@ interface ProblemSummaryProps {
 
 /** All that is wrong in one place, each with the way to its station. */
 export function ProblemSummary({ problems, onOpen }: ProblemSummaryProps) {
+  const addressOf = useSectionAddress();
   if (problems.length === 0) return null;
   return (
     <Notice
@@ -77,13 +80,23 @@ export function ProblemSummary({ problems, onOpen }: ProblemSummaryProps) {
           const station = stationOf(path);
           return (
             <li key={`${path} ${message}`}>
-              <button
-                type="button"
-                className="rounded text-left underline underline-offset-3"
-                onClick={() => onOpen(station)}
-              >
-                {STATION_NAMES[station]}
-              </button>
+              {isOfPlan(path) ? (
+                <Link
+                  to={addressOf('run-plan')}
+                  state={{ keepFocus: true }}
+                  className="rounded underline underline-offset-3"
+                >
+                  Run plan
+                </Link>
+              ) : (
+                <button
+                  type="button"
+                  className="rounded text-left underline underline-offset-3"
+                  onClick={() => onOpen(station)}
+                >
+                  {STATION_NAMES[station]}
+                </button>
+              )}
               : {message}
             </li>
           );

@@ -10,11 +10,31 @@ export type StationKey = (typeof STATIONS)[number];
 
 /** The station whose inputs a JSON Pointer into the document belongs to. */
 export function stationOf(pointer: string): StationKey {
-  const [, root = ''] = pointer.split('/');
+  const [, root = '', part = ''] = pointer.split('/');
+  if (root === 'runPlan') {
+    if (part === 'beam') return 'beam';
+    return part === 'foil' || part === 'gas' || part === 'contributions' ? 'target' : 'detectors';
+  }
   if (root === 'projectile' || root === 'energy' || root === 'kinematics') return 'beam';
   if (root === 'target' || root === 'identical') return 'target';
   return root === 'interaction' || root === 'corrections' ? 'interaction' : 'detectors';
 }
+
+/** Whether a pointer belongs to the run plan, whose fields stand in a section of their own. */
+export const isOfPlan = (pointer: string): boolean => pointer.startsWith('/runPlan');
+
+/** The detectors of a plan in a few words. */
+function planText(plan: NonNullable<CaseDocument['runPlan']>): string {
+  const angles = plan.detectors.map(({ angle }) => angle);
+  const [least, most] = [Math.min(...angles), Math.max(...angles)];
+  const where = least === most ? degrees(least) : `${degrees(least)} to ${degrees(most)}`;
+  const [only, ...more] = plan.detectors;
+  return more.length === 0
+    ? `run: ${only?.name ?? ''} at ${where}`
+    : `run: ${angles.length} detectors, ${where}`;
+}
+
+const degrees = (angle: number): string => `${String(angle).replace('-', '−')}°`;
 
 export interface StationSummary {
   main: string;
@@ -89,7 +109,10 @@ export function summarise(
     },
     detectors: {
       main: anglesText(angles),
-      detail: document.frame === 'lab' ? 'lab angles' : 'centre of mass',
+      detail: [
+        document.frame === 'lab' ? 'lab angles' : 'centre of mass',
+        ...(document.runPlan ? [planText(document.runPlan)] : []),
+      ].join(' · '),
     },
   };
 }

@@ -1,24 +1,16 @@
 import type { RunPlanBody } from '#shared/contracts/run-plans.ts';
-import type { UncertainInput } from '#shared/contracts/run-plans.ts';
 import { UNCERTAIN_INPUTS } from '#shared/contracts/run-plans.ts';
 import type { Method } from '#shared/contracts/estimates.ts';
 import { METHODS } from '#shared/contracts/estimates.ts';
 import { ChoiceField } from '../components/choice-field.tsx';
 import { NumberField, QuantityField } from '../components/typed-fields.tsx';
 import { useEditing } from '../editing/editor-context.ts';
+import { without } from '../model/without.ts';
 import { METHOD_NAMES } from '../model/words.ts';
+import { KindOfUncertainty } from './kind-of-uncertainty.tsx';
 import { putIn, withPlan } from './model/plan.ts';
-
-export const INPUT_NAMES: Record<UncertainInput, string> = {
-  current: 'current',
-  thickness: 'thickness',
-  density: 'density',
-  efficiency: 'efficiency',
-  solidAngle: 'solid angle',
-  background: 'background',
-  energy: 'energy',
-  angle: 'angle',
-};
+import { putUncertainty } from './model/uncertainties.ts';
+import { INPUT_NAMES } from './model/words.ts';
 
 /** What the run is to reach, and by which cross section. */
 export function AimOfRun({ plan }: { plan: RunPlanBody }) {
@@ -58,19 +50,38 @@ export function AimOfRun({ plan }: { plan: RunPlanBody }) {
         put={putIn('aim', 'beamTime')}
         hint="Sample and blank together."
       />
+      {plan.detectors.length > 1 && (
+        <ChoiceField<string>
+          pointer="/runPlan/monitor"
+          label="Monitor"
+          value={plan.monitor ?? ''}
+          choices={[
+            { value: '', label: 'none' },
+            ...plan.detectors.map(({ name }) => ({ value: name, label: name })),
+          ]}
+          hint="Counts are divided by its counts: current, thickness and density cancel."
+          onChange={(name) =>
+            editDocument('/runPlan/monitor', (document) =>
+              withPlan(document, (before) => ({
+                ...without(before, 'monitor'),
+                ...(name !== '' && { monitor: name }),
+              })),
+            )
+          }
+        />
+      )}
     </div>
   );
 }
 
-/** Relative standard uncertainties of the inputs. */
+/** Relative standard uncertainties of the inputs, and how each of them is known. */
 export function UncertaintiesOfRun({ plan }: { plan: RunPlanBody }) {
+  const stated = UNCERTAIN_INPUTS.filter((input) => plan.uncertainties?.[input] !== undefined);
   return (
     <details className="rounded border border-line px-3 py-2">
       <summary className="cursor-pointer text-sm font-semibold">
         Uncertainties of the inputs
-        <span className="ml-2 font-normal text-muted">
-          {Object.keys(plan.uncertainties ?? {}).length} stated
-        </span>
+        <span className="ml-2 font-normal text-muted">{stated.length} stated</span>
       </summary>
       <div className="mt-3 grid items-start gap-3 @xs:grid-cols-2 @xl:grid-cols-4">
         {UNCERTAIN_INPUTS.map((input) => (
@@ -86,10 +97,13 @@ export function UncertaintiesOfRun({ plan }: { plan: RunPlanBody }) {
               maximum: input === 'angle' ? 10 : 1,
               what: `The uncertainty of the ${INPUT_NAMES[input]}`,
             }}
-            put={putIn('uncertainties', input)}
+            put={putUncertainty(input)}
           />
         ))}
       </div>
+      {stated.map((input) => (
+        <KindOfUncertainty key={input} input={input} kind={plan.uncertaintyKinds?.[input]} />
+      ))}
     </details>
   );
 }

@@ -2,8 +2,9 @@ import type { ReactNode } from 'react';
 import { formatNumber } from '#shared/units/format.ts';
 import type { BudgetLine, PlannedDetector } from '#shared/contracts/run-plans.ts';
 import { TableBox, bodyCell, headCell } from '../validity/panel.tsx';
-import { INPUT_NAMES } from './aim-of-run.tsx';
 import { Amount, Time } from './amount.tsx';
+import { INPUT_NAMES } from './model/words.ts';
+import { SameAngle } from './target-checks.tsx';
 import { percentText, timeText } from './model/numbers.ts';
 
 const FACTOR_NAMES: Record<PlannedDetector['factors'][number]['name'], string> = {
@@ -83,12 +84,20 @@ function BudgetRow({ line }: { line: BudgetLine }) {
         {absolute ? `${percentText(line.sensitivity)} per °` : formatNumber(line.sensitivity, 4)}
       </td>
       <td className={`${bodyCell} font-mono`}>{percentText(line.contribution)}</td>
+      <td className={bodyCell}>
+        {line.type}, {line.distribution}
+        {line.freedom !== null && (
+          <span className="font-mono"> ν = {formatNumber(line.freedom, 3)}</span>
+        )}
+      </td>
+      <td className={bodyCell}>{line.shared ? 'all detectors' : 'this one'}</td>
     </tr>
   );
 }
 
 function Budget({ detector }: { detector: PlannedDetector }) {
   const { uncertaintyBudget: lines, combined, combinedWithCounting, usefulTime } = detector;
+  const { expanded, combinedOfRatio } = detector;
   if (lines.length === 0) {
     return (
       <p className="text-sm text-muted">
@@ -103,11 +112,17 @@ function Budget({ detector }: { detector: PlannedDetector }) {
         <table className="w-full text-sm">
           <thead>
             <tr>
-              {['input', 'uncertainty', 'sensitivity', 'contribution'].map((head, i) => (
-                <th key={head} scope="col" className={`${headCell} ${i === 0 ? 'text-left!' : ''}`}>
-                  {head}
-                </th>
-              ))}
+              {['input', 'uncertainty', 'sensitivity', 'contribution', 'type', 'shared by'].map(
+                (head, i) => (
+                  <th
+                    key={head}
+                    scope="col"
+                    className={`${headCell} ${i === 0 ? 'text-left!' : ''}`}
+                  >
+                    {head}
+                  </th>
+                ),
+              )}
             </tr>
           </thead>
           <tbody>
@@ -119,7 +134,17 @@ function Budget({ detector }: { detector: PlannedDetector }) {
       </TableBox>
       <p className="mt-1.5 text-sm">
         Together <span className="font-mono">{percentText(combined)}</span>, with counting{' '}
-        <span className="font-mono">{percentText(combinedWithCounting)}</span>.
+        <span className="font-mono">{percentText(combinedWithCounting)}</span>; expanded for{' '}
+        {percentText(expanded.coverage, 2)} coverage{' '}
+        <span className="font-mono">{percentText(expanded.relative)}</span> (k ={' '}
+        <span className="font-mono">{formatNumber(expanded.coverageFactor, 4)}</span>).
+        {combinedOfRatio !== undefined && (
+          <>
+            {' '}
+            Of the ratio to the monitor{' '}
+            <span className="font-mono">{percentText(combinedOfRatio)}</span>, inputs alone.
+          </>
+        )}
         {'unavailable' in usefulTime
           ? ''
           : ` Beyond ${timeText(usefulTime.value)} the inputs outweigh the counts: more beam is useless.`}
@@ -176,6 +201,7 @@ export function DetectorDetail({ detector }: { detector: PlannedDetector }) {
         </p>
       )}
       <Budget detector={detector} />
+      <SameAngle detector={detector} />
     </div>
   );
 }

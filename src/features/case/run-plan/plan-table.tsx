@@ -1,11 +1,15 @@
 import type { PlannedDetector, RunPlan } from '#shared/contracts/run-plans.ts';
 import { composedFactor } from '#shared/units/composed.ts';
 import { formatNumber, unitSymbol } from '#shared/units/format.ts';
+import { Download } from 'lucide-react';
+import { Button } from '#src/components/button.tsx';
+import { download } from '#src/components/plot-export.ts';
 import { Power } from '#src/components/figure.tsx';
 import { TakeRows } from '../aids/take-rows.tsx';
 import { useEditing } from '../editing/editor-context.ts';
 import { TableBox } from '../validity/panel.tsx';
 import { percentText, roughPercent, timeText } from './model/numbers.ts';
+import { planJson } from './model/json.ts';
 import { planRows } from './model/rows.ts';
 import { Cell, HeadCells, NameCell } from './table-cells.tsx';
 
@@ -30,7 +34,6 @@ function Row({ detector, area, chosen, onChoose }: RowProps) {
     roughPercent(detector.deadTimeFraction),
     'unavailable' in limit ? 'none' : formatNumber(limit.value, 3),
     dcs ? formatNumber(dcs.value * composedFactor(dcs.unit, `${area}/sr`), 4) : '—',
-    formatNumber(detector.solidAngle * 1e3, 4),
   ];
   return (
     <tr className={chosen ? 'bg-barn-soft' : 'even:bg-soft/60'}>
@@ -62,7 +65,11 @@ interface PlanTableProps {
 
 /** What every detector sees, and how long it takes. */
 export function PlanTable({ plan, fileName, chosen, onChoose }: PlanTableProps) {
-  const { areaUnit } = useEditing();
+  const { areaUnit, draft } = useEditing();
+  function takeJson(): void {
+    const text = planJson(draft.document, plan);
+    download(`${fileName}-run-plan.json`, new Blob([text], { type: 'application/json' }));
+  }
   return (
     <div className="flex flex-col gap-2">
       <TableBox label="Table of detectors">
@@ -78,7 +85,6 @@ export function PlanTable({ plan, fileName, chosen, onChoose }: PlanTableProps) 
               ['dead', 'time loss'],
               ['detectable', 's⁻¹'],
               ['⟨dσ/dΩ⟩ lab', `${unitSymbol(areaUnit)}/sr`],
-              ['ΔΩ', 'msr'],
             ]}
           />
           <tbody>
@@ -99,9 +105,12 @@ export function PlanTable({ plan, fileName, chosen, onChoose }: PlanTableProps) 
           Times are for sample and blank together, statistics of counting alone; the detectable rate
           is the ISO 11929 detection limit for these times.
         </span>
-        <span data-screen-only>
+        <div className="flex flex-wrap gap-2" data-screen-only>
           <TakeRows fileName={`${fileName}-run-plan`} rows={() => planRows(plan, areaUnit)} />
-        </span>
+          <Button size="small" onClick={takeJson}>
+            <Download aria-hidden="true" className="size-4" /> JSON
+          </Button>
+        </div>
       </div>
     </div>
   );

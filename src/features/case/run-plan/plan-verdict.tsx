@@ -3,7 +3,7 @@ import type { Tone } from '#src/components/chip.tsx';
 import { formatNumber } from '#shared/units/format.ts';
 import type { RunPlan } from '#shared/contracts/run-plans.ts';
 import { Item, Items } from '../validity/panel.tsx';
-import { Amount, AmountOr, TimeOr } from './amount.tsx';
+import { Amount, TimeOr } from './amount.tsx';
 
 const WORDS: Record<RunPlan['verdict'], { word: string; tone: Tone; sign: string }> = {
   feasible: { word: 'feasible', tone: 'sound', sign: '●' },
@@ -54,14 +54,6 @@ export function PlanVerdict({ plan }: { plan: RunPlan }) {
             </span>
           )}
         </Item>
-        <Item name="power of the beam">
-          <Amount value={target.beamPower.value} unit={target.beamPower.unit} digits={3} />
-        </Item>
-        {!('unavailable' in target.depositedPower) && (
-          <Item name="power left in the target">
-            <AmountOr of={target.depositedPower} digits={3} />
-          </Item>
-        )}
       </Items>
     </>
   );

@@ -10,12 +10,17 @@ import { Panel } from '../validity/panel.tsx';
 import { RunCautions } from './cautions.tsx';
 import { DetectorDetail } from './detector-detail.tsx';
 import { DetectorInputs } from './detector-inputs.tsx';
+import { ContributionsPanel } from './contributions-panel.tsx';
+import { NeededPanel } from './needed-panel.tsx';
 import { NoPlan } from './no-plan.tsx';
 import { PlanFaults } from './plan-faults.tsx';
+import { PlanInWords } from './plan-in-words.tsx';
 import { PlanTable } from './plan-table.tsx';
 import { PlanVerdict } from './plan-verdict.tsx';
 import { PlanWarnings } from './plan-warnings.tsx';
 import { RunInputs } from './run-inputs.tsx';
+import { RunSheet } from './run-sheet.tsx';
+import { TargetChecks } from './target-checks.tsx';
 import { TopView } from './top-view.tsx';
 import { useRunPlan } from './use-run-plan.ts';
 import type { LiveRunPlan } from './use-run-plan.ts';
@@ -62,6 +67,10 @@ function Answer(props: PartProps & { answer: RunPlan }) {
           <DetectorDetail detector={detector} />
         </Panel>
       )}
+      <NeededPanel plan={answer} />
+      <RunSheet plan={answer} fileName={fileName} />
+      <ContributionsPanel plan={props.plan} answer={answer} />
+      <TargetChecks plan={answer} />
       <PlanWarnings warnings={answer.warnings} />
     </div>
   );
@@ -126,6 +135,7 @@ function Planned({ plan, saved, fileName }: PlannedProps) {
         <div className="print:hidden">
           <RunInputs plan={plan} />
         </div>
+        <PlanInWords plan={plan} />
         <Detectors {...parts} />
         {answer && <Answer {...parts} answer={answer} />}
         <RunCautions />

@@ -5,6 +5,7 @@ import { NumberField, QuantityField } from '../components/typed-fields.tsx';
 import { useEditing } from '../editing/editor-context.ts';
 import type { Draft } from '../model/editor.ts';
 import { without } from '../model/without.ts';
+import { IsotopesField } from './isotopes-field.tsx';
 import { putIn, withPlan } from './model/plan.ts';
 import { withoutTexts } from './model/texts.ts';
 import { TextOfPlan } from './text-of-plan.tsx';
@@ -192,6 +193,9 @@ export function TargetOfRun({ plan }: { plan: RunPlanBody }) {
             put={putIn(gas ? 'gas' : 'foil', 'scatterer')}
             hint="The element of the formula that the case is about; empty where it is clear."
           />
+        )}
+        {(gas ?? foil)?.formula !== undefined && (
+          <IsotopesField part={gas ? 'gas' : 'foil'} value={(gas ?? foil)?.isotopes} />
         )}
       </div>
     </div>

@@ -27,13 +27,15 @@ export const FIRST_DETECTOR: DetectorSent = {
 /** Collisions a particle meets in a target to begin with: single scattering holds with room to spare. */
 const FEW_COLLISIONS = 0.01;
 const PER_CM2 = 1e15;
+/** A milligram of carbon has 5e19 nuclei: a target to begin with is not much thicker. */
+const MOST_EXPONENT = 20;
 
 /** Scatterers per cm² that keep collisions few at this total cross section, a power of ten. */
 function startArealDensity(total: Quantity | null): number {
   if (!total || !(total.value > 0)) return PER_CM2;
   const area = total.value * composedFactor(total.unit, 'cm2');
   const most = FEW_COLLISIONS / area;
-  return 10 ** Math.max(10, Math.min(20, Math.floor(Math.log10(most))));
+  return 10 ** Math.max(0, Math.min(MOST_EXPONENT, Math.floor(Math.log10(most))));
 }
 
 /**
