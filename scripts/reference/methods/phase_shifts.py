@@ -395,6 +395,8 @@ def main():
         rows.append(charged(f"woodsSaxon beside a charge, eta = {eta}", [wood(-8.0, 5.0, 0.6)], 1.0, 50, eta))
     rows.append(charged("woodsSaxon with absorption beside a charge, eta = 4", [wood(-8.0, 5.0, 0.6, W0=-3.0)], 1.0, 54, 4.0))
     rows.append(charged("woodsSaxon beside a charge, eta = -0.25, kR = 20", [wood(-32.0, 5.0, 0.6)], 4.0, 140, -0.25))
+    rows.append(charged("woodsSaxon beside a strong charge, eta = 16, kR = 20", [wood(-160.0, 5.0, 0.6)], 4.0, 120, 16.0))
+    rows.append(charged("woodsSaxon with absorption beside a strong charge, eta = -8, kR = 10", [wood(-16.0, 5.0, 0.6, W0=-8.0)], 2.0, 90, -8.0))
     for k in (0.2, 1.0, 4.0):
         rows.append(entry(f"squareWell, kR = {5 * k:g}", [{"form": "squareWell", "values": well}], k, closed(square_well(k, **well)), 0.0))
         rows.append(entry(f"barrier, kR = {5 * k:g}", [{"form": "squareWell", "values": {"V0": 24.0, "R": 5.0}}], k, closed(square_well(k, 24.0, 5.0)), 0.0))
