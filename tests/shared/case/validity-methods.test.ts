@@ -104,6 +104,7 @@ describe('ratios', () => {
     expect(names?.slice(-2)).toEqual(['ratio first Born to exact', 'ratio eikonal to exact']);
     expect(unitRow?.slice(-2)).toEqual(['1', '1']);
     expect(rows.map((row) => row.at(-2))).toEqual(['', '0.5', '', '1.25']);
+    expect(rows.map((row) => row.at(-5))).toEqual(['', '2e-12', '3e-12', '5e-12']);
     for (const row of rows) expect(row).toHaveLength(names?.length ?? 0);
   });
 

@@ -1,3 +1,4 @@
+import { Fragment } from 'react';
 import { Copy } from 'lucide-react';
 import { Button } from '#src/components/button.tsx';
 import { formatNumber, fullDigits, unitSymbol } from '#shared/units/format.ts';
@@ -30,18 +31,21 @@ function Row({ curves, index }: { curves: readonly Curve[]; index: number }) {
       </th>
       <td className={cell}>{first.q === null ? '—' : formatNumber(first.q, 6)}</td>
       {curves.map(({ key, points }) => {
-        const { dcs = null, reason = '—' } = points[index] ?? {};
-        return dcs === null ? (
-          <td key={key} className="px-3 py-0.5 text-right font-sans text-muted">
+        const point = points[index];
+        const { dcs = null, reason = '—' } = point ?? {};
+        return dcs === null || !point ? (
+          <td key={key} colSpan={2} className="px-3 py-0.5 text-right font-sans text-muted">
             {reason}
           </td>
         ) : (
-          <td key={key} className={cell} title={fullDigits(dcs)}>
-            {dcs.toExponential(6).replace(/e\+?/, ' e')}
-          </td>
+          <Fragment key={key}>
+            <td className={cell} title={fullDigits(dcs)}>
+              {dcs.toExponential(6).replace(/e\+?/, ' e')}
+            </td>
+            <td className={`${cell} text-muted`}>{errorOf(point)}</td>
+          </Fragment>
         );
       })}
-      <td className={`${cell} text-muted`}>{errorOf(first)}</td>
     </tr>
   );
 }
@@ -77,13 +81,15 @@ export function NumbersTable({ curves, units }: NumbersTableProps) {
                 q ({unitSymbol(units.wavenumber)})
               </th>
               {curves.map(({ key, name }) => (
-                <th key={key} scope="col" className={head}>
-                  {name} ({unitSymbol(units.dcs)})
-                </th>
+                <Fragment key={key}>
+                  <th scope="col" className={head}>
+                    {name} ({unitSymbol(units.dcs)})
+                  </th>
+                  <th scope="col" className={head}>
+                    numerics
+                  </th>
+                </Fragment>
               ))}
-              <th scope="col" className={head}>
-                numerics
-              </th>
             </tr>
           </thead>
           <tbody>

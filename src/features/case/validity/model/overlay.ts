@@ -2,7 +2,7 @@ import type { PlotAxis, PlotPanel, PlotSeries, Scale } from '#src/components/plo
 import { fullDigits } from '#shared/units/format.ts';
 import type { Estimate, Method } from '#shared/contracts/estimates.ts';
 import { abscissaOf } from '../../model/curves.ts';
-import type { Abscissa, Curve } from '../../model/curves.ts';
+import type { Abscissa, Curve, CurvePoint } from '../../model/curves.ts';
 import { curvesRows } from '../../model/csv.ts';
 import type { TableUnits } from '../../model/csv.ts';
 import { referenceName, referenceOf } from './methods.ts';
@@ -101,21 +101,36 @@ export function ratioPanel(
   return { y, yScale, series, level: 1 };
 }
 
-/** The table of the curves with the ratios behind it. */
+/** What a point may be off by, in its unit. */
+function errorOf({ dcs, relativeError, absoluteError }: CurvePoint): string {
+  if (absoluteError !== undefined) return fullDigits(absoluteError);
+  if (relativeError === undefined || dcs === null) return '';
+  return fullDigits(relativeError * Math.abs(dcs));
+}
+
+/** The table of the curves, behind it what each number may be off by, and the ratios. */
 export function overlayRows(
   curves: readonly Curve[],
   ratios: Ratios | null,
   units: TableUnits,
 ): string[][] {
   const [names = [], unitRow = [], ...rows] = curvesRows(curves, units);
-  if (!ratios) return [names, unitRow, ...rows];
-  const over = referenceName(ratios.reference);
+  const over = ratios === null ? '' : referenceName(ratios.reference);
+  const divided = ratios?.curves ?? [];
   return [
-    [...names, ...ratios.curves.map(({ name }) => `ratio ${name} to ${over}`)],
-    [...unitRow, ...ratios.curves.map(() => '1')],
+    [
+      ...names,
+      ...curves.map(({ name }) => `numerical error ${name}`),
+      ...divided.map(({ name }) => `ratio ${name} to ${over}`),
+    ],
+    [...unitRow, ...curves.map(() => units.dcs), ...divided.map(() => '1')],
     ...rows.map((row, place) => [
       ...row,
-      ...ratios.curves.map(({ values }) => {
+      ...curves.map(({ points }) => {
+        const point = points[place];
+        return point ? errorOf(point) : '';
+      }),
+      ...divided.map(({ values }) => {
         const value = values[place];
         return typeof value === 'number' ? fullDigits(value) : '';
       }),
