@@ -1,7 +1,8 @@
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import type { Amplitude } from '../amplitude.ts';
-import type { Scattered, Transition } from './scatter.ts';
-import { weightOf } from './scatter.ts';
+import type { Scattered } from './scatter.ts';
+import type { Transition } from './transition.ts';
+import { weightOf } from './transition.ts';
 import type { ScatteredCharge } from './scatter-charged.ts';
 import { flipSum, waveSum } from './wave-sum.ts';
 

@@ -19,7 +19,7 @@ export interface Panels {
 }
 
 /** What is left of the interaction beyond the followed panels may be this strong: its square is lost in rounding. */
-const LEFT = 4e-9;
+const LEFT = 2e-8;
 /** Radians of the wave over which it is followed at most, and panels times waves. */
 const MOST_PHASE = 8000;
 const MOST_STEPS = 5e6;

@@ -15,8 +15,10 @@ import type { Coefficients } from './assemble.ts';
 import type { RadialInteraction } from './interaction.ts';
 import { radialInteraction } from './interaction.ts';
 import { lowEnergy } from './low-energy.ts';
-import type { Scattered, Transition } from './scatter.ts';
-import { scatter, weightOf } from './scatter.ts';
+import type { Scattered } from './scatter.ts';
+import { scatter } from './scatter.ts';
+import type { Transition } from './transition.ts';
+import { weightOf } from './transition.ts';
 import { scatterCharged } from './scatter-charged.ts';
 import { scatterPowerTail } from './scatter-power-tail.ts';
 

@@ -6,17 +6,10 @@ import { panelsOf, tooMany } from './panels.ts';
 import type { Outer } from './matched.ts';
 import { errorOf, transitionOf } from './matched.ts';
 import { RadialSolver } from './radial-wave.ts';
-import type { Scattered, Transition } from './scatter.ts';
-import {
-  IN_TURN,
-  isWeak,
-  NEGLIGIBLE,
-  spinFactor,
-  spinsOf,
-  tooNarrow,
-  UNRESOLVED,
-  weightOf,
-} from './scatter.ts';
+import type { Scattered } from './scatter.ts';
+import { IN_TURN, isWeak, tooNarrow, UNRESOLVED } from './scatter.ts';
+import type { Transition } from './transition.ts';
+import { spinFactor, spinsOf, weightOf } from './transition.ts';
 
 /** Sommerfeld's parameter up to which Coulomb functions are asked for. */
 const LARGEST_ETA = 1e4;
@@ -47,6 +40,16 @@ function coulombOuter(eta: number, rho: number, lMax: number) {
     return { F: f[l] ?? 0, dF: df[l] ?? 0, G: g[l] ?? 0, dG: dg[l] ?? 0 };
   };
   return { outer, error };
+}
+
+/** Share of Σ (2l+1)|T_l| at which the sum ends: nothing closes it. */
+const UNCLOSED = 1e-16;
+const MOST_LIKE_IT = 100;
+
+/** What waves beyond the last add up to, falling as the last two do. */
+function restOf(last: number, before: number): number {
+  const fall = last / before;
+  return last * (fall < 1 ? Math.min(MOST_LIKE_IT, 1 / (1 - fall)) : MOST_LIKE_IT);
 }
 
 /**
@@ -83,10 +86,11 @@ export function scatterCharged(
   const { sigma, error: sigmaError } = coulombPhases(bound, eta);
   const waves: Transition[] = [];
   const pocket = solver.starts.pocketOrder();
-  let [sum, quiet, left, lMax] = [0, 0, 0, 0];
+  let [sum, quiet, left, lMax, before] = [0, 0, 0, 0, 0];
   for (let l = 0; l <= bound && quiet < IN_TURN; l++) {
     const edge = outer(l);
     if (!edge || solver.starts.at(l, spinFactor(l, 1)) >= inner.count) break;
+    before = left;
     left = 0;
     let noise = 0;
     const weak = isWeak(interaction, found, solver.starts.at(l, spinFactor(l, 1)), l);
@@ -106,7 +110,7 @@ export function scatterCharged(
     }
     sum += left;
     lMax = l;
-    quiet = left <= Math.max(NEGLIGIBLE * sum, noise / 64) && l > pocket ? quiet + 1 : 0;
+    quiet = left <= Math.max(UNCLOSED * sum, noise / 64) && l > pocket ? quiet + 1 : 0;
   }
-  return { ...none, waves, lMax, left, sigma, sigmaError };
+  return { ...none, waves, lMax, left: restOf(left, before), sigma, sigmaError };
 }

@@ -7,16 +7,10 @@ import { tailOfSquare } from './power-tail.ts';
 import { innerIntegrals } from './radial-integrals.ts';
 import { errorOf, transitionOf } from './matched.ts';
 import { RadialSolver } from './radial-wave.ts';
-import type { Scattered, Transition } from './scatter.ts';
-import {
-  freeOuter,
-  isWeak,
-  spinFactor,
-  spinsOf,
-  tooNarrow,
-  UNRESOLVED,
-  weightOf,
-} from './scatter.ts';
+import type { Scattered } from './scatter.ts';
+import { freeOuter, isWeak, tooNarrow, UNRESOLVED } from './scatter.ts';
+import type { Transition } from './transition.ts';
+import { spinFactor, spinsOf, weightOf } from './transition.ts';
 
 /** Radians of the wave where the asymptotic treatment of the tail begins at the earliest. */
 const NEAREST = 80;

@@ -1,5 +1,6 @@
 import { riccatiBessel } from '#server/physics/numerics/riccati-bessel.ts';
 import type { Unavailable } from '../amplitude.ts';
+import { farWaves } from './far-waves.ts';
 import type { RadialInteraction } from './interaction.ts';
 import type { Panels } from './panels.ts';
 import { panelsOf, tooMany } from './panels.ts';
@@ -7,21 +8,9 @@ import type { WaveIntegrals } from './radial-integrals.ts';
 import { innerIntegrals, lastOrder, tailIntegrals } from './radial-integrals.ts';
 import type { Matched, Outer } from './matched.ts';
 import { errorOf, transitionOf } from './matched.ts';
+import type { Transition } from './transition.ts';
+import { spinFactor, spinsOf, weightOf } from './transition.ts';
 import { RadialSolver } from './radial-wave.ts';
-
-/** T_l = (S_l - 1)/2i of one wave. */
-export interface Transition {
-  l: number;
-  /** 2 (j - l): 1 or -1 with a spin-orbit term, 0 without one. */
-  spin: -1 | 0 | 1;
-  re: number;
-  im: number;
-  eta: number;
-  /** 1 - |S|² */
-  absorbed: number;
-  /** Bound of the error of T. */
-  error: number;
-}
 
 export interface Scattered {
   waves: Transition[];
@@ -32,24 +21,13 @@ export interface Scattered {
   left: number;
 }
 
-export const NEGLIGIBLE = 1e-16;
+/** Share of Σ (2l+1)|T_l| that a wave may have beyond what closes the sum. */
+export const NEGLIGIBLE = 3e-15;
 /** Waves that must in turn be negligible. */
 export const IN_TURN = 3;
 const WEAK = 0.2;
 /** A phase known no better than this is no phase. */
 export const UNRESOLVED = 1e-8;
-
-export const weightOf = ({ l, spin }: Pick<Transition, 'l' | 'spin'>): number =>
-  spin === 0 ? 2 * l + 1 : spin === 1 ? l + 1 : l;
-
-export function spinsOf({ spinOrbit }: RadialInteraction, l: number): (-1 | 0 | 1)[] {
-  if (!spinOrbit) return [0];
-  return l === 0 ? [1] : [1, -1];
-}
-
-/** l·sigma */
-export const spinFactor = (l: number, spin: -1 | 0 | 1): number =>
-  spin === 0 ? 0 : spin === 1 ? l : -(l + 1);
 
 /** Whether a wave that begins at an edge stays close to a free one. */
 export function isWeak(
@@ -99,30 +77,6 @@ function bornOf(inner: Float64Array[], tail: WaveIntegrals, lMax: number) {
       (_, l) => -((inner[c]?.[l] ?? 0) + (tail.FF[c]?.[l] ?? 0)),
     );
   return { re: row(0), im: row(1) };
-}
-
-/** Waves beyond the last that was followed, by first order. */
-function beyondFollowed(
-  { spinOrbit }: RadialInteraction,
-  tail: WaveIntegrals,
-  born: { re: Float64Array; im: Float64Array },
-  l: number,
-): Transition[] {
-  return spinsOf({ spinOrbit } as RadialInteraction, l).map((spin) => {
-    const factor = spinFactor(l, spin);
-    const re = (born.re[l] ?? 0) - factor * (tail.FF[2]?.[l] ?? 0);
-    const im = (born.im[l] ?? 0) - factor * (tail.FF[3]?.[l] ?? 0);
-    const size = Math.hypot(re, im);
-    return {
-      l,
-      spin,
-      re,
-      im,
-      eta: 1 - 2 * im,
-      absorbed: 4 * im,
-      error: size * (size + 1e-13),
-    };
-  });
 }
 
 export function tooNarrow(l: number, error: number): Unavailable {
@@ -176,30 +130,12 @@ export function scatter(interaction: RadialInteraction, k: number): Scattered | 
     lastExcess = excess;
     lMax = l;
   }
-  for (let l = lMax + 1; l <= bound; l++) waves.push(...beyondFollowed(interaction, tail, born, l));
-  const left = leftBeyond(born, lMax, bound, quiet === IN_TURN ? lastExcess : null);
-  return { waves, born, lMax, left };
-}
-
-/**
- * What waves beyond the last may have beyond first order: their phases squared, in the proportion of the last one; where the rest
- * feels nothing at all, no more than their first order.
- */
-function leftBeyond(
-  { re, im }: { re: Float64Array; im: Float64Array },
-  lMax: number,
-  bound: number,
-  excess: number | null,
-): number {
-  const size = (l: number) => Math.hypot(re[l] ?? 0, im[l] ?? 0);
-  let [sum, squares] = [0, 0];
-  for (let l = lMax + 1; l <= bound; l++) {
-    sum += (2 * l + 1) * size(l);
-    squares += (2 * l + 1) * size(l) ** 2;
-  }
-  if (excess === null) return sum;
-  const last = (2 * lMax + 1) * size(lMax) ** 2;
-  return last > 0 ? Math.min(sum + excess, (excess * squares) / last) : excess;
+  const far = farWaves(interaction, tail, born, {
+    lMax,
+    bound,
+    excess: quiet === IN_TURN ? lastExcess : null,
+  });
+  return { waves: [...waves, ...far.waves], born, lMax, left: far.left };
 }
 
 interface Setting {
