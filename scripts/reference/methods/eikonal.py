@@ -1,4 +1,4 @@
-"""Eikonal amplitudes to 16 digits and more: square well, exponential, Yukawa, Woods-Saxon, a uniform charge, and the functions K0, K1 they need.
+"""Eikonal amplitudes to 16 digits and more: square well, exponential, Yukawa, Woods-Saxon, a uniform charge, delta shells, and the functions K0, K1 they need.
 
 Run:  python3 scripts/reference/methods/eikonal.py        (Debian package: python3-mpmath)
 Writes tests/reference/methods/eikonal.json.
@@ -12,7 +12,7 @@ A value is kept as two doubles, high + low.
 import json
 import pathlib
 
-from mpmath import besselj, besselk, cosh, exp, expm1, log, mp, mpc, mpf, pi, quad, sqrt
+from mpmath import besselj, besselk, cosh, exp, expint, expm1, log, mp, mpc, mpf, pi, quad, sqrt
 
 mp.dps = 20
 OUT = pathlib.Path(__file__).resolve().parents[3] / "tests" / "reference" / "methods"
@@ -112,6 +112,29 @@ def uniform_charge():
                 yield {"eta": eta, "R": 1.0, "k": k, "q": q, "re": split(f.real), "im": split(f.imag)}
 
 
+def delta_shells():
+    """U = g delta(r - R): chi = -A/y, A = gR/k, y = sqrt(R^2 - b^2). With s = 1/y the path is turned into the complex plane, where exp(-iAs) falls."""
+    R = mpf(1)
+    for g in [0.5, -6.0, 80.0]:
+        for k in [2.0, 15.0]:
+            A = mpf(g) * R / k
+            turn = mpc(0, -1) if A > 0 else mpc(0, 1)
+            for share in [0.0, 0.05, 0.4]:
+                q = mpf(share * 2 * k)
+
+                def turning(x):
+                    s = 1 / R + turn * x
+                    return turn * s**-3 * besselj(0, q * sqrt(R * R - s**-2)) * exp(-1j * A * s)
+
+                disc = R * besselj(1, q * R) / q if q else R * R / 2
+                scale = 1 / abs(A)
+                tail = quad(turning, [0, scale / 4, scale, 4 * scale, 16 * scale, 60 * scale]) + quad(turning, [60 * scale, 120 * scale])
+                f = -mpc(0, 1) * k * (tail - disc)
+                if share == 0:
+                    assert abs(tail / (R * R * expint(3, mpc(0, 1) * A / R)) - 1) < mpf(10) ** -15
+                yield {"g": g, "R": 1.0, "k": k, "q": float(q), "re": split(f.real), "im": split(f.imag)}
+
+
 def modified_bessel():
     for x in [1e-12, 1e-6, 0.01, 0.3, 1.0, 2.7, 15.0, 120.0, 690.0]:
         integral = quad(lambda t: exp(-mpf(x) * (cosh(t) - 1)), [0, 1, 4, 16, 40]) * exp(-mpf(x))
@@ -120,7 +143,7 @@ def modified_bessel():
 
 
 def main():
-    tables = {"shortRange": list(short_range()), "uniformCharge": list(uniform_charge()), "modifiedBessel": list(modified_bessel())}
+    tables = {"shortRange": list(short_range()), "uniformCharge": list(uniform_charge()), "deltaShell": list(delta_shells()), "modifiedBessel": list(modified_bessel())}
     head = {
         "generator": "scripts/reference/methods/eikonal.py",
         "quantity": "eikonal amplitudes in angstrom of U = u s(r) in 1/angstrom^2; lengths in angstrom, k and q in 1/angstrom; value = high + low",

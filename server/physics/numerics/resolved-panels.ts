@@ -58,23 +58,32 @@ function look(fs: readonly RealFunction[], a: number, b: number, options: Resolv
   let size = 0;
   let missed = 0;
   let noisy = true;
+  let blur = 0;
   for (const f of fs) {
     const values = RULE.nodes.map((x) => f(middle + half * x));
-    let largest = 0;
+    let [largest, lowest, highest] = [0, Infinity, -Infinity];
     let tail = 0;
-    for (const value of values) largest = Math.max(largest, Math.abs(value));
+    for (const value of values) {
+      largest = Math.max(largest, Math.abs(value));
+      lowest = Math.min(lowest, value);
+      highest = Math.max(highest, value);
+    }
     for (const row of LAST) {
       let c = 0;
       for (let i = 0; i < COUNT; i++) c += (row[i] ?? 0) * (values[i] ?? 0);
       tail += Math.abs(c);
     }
     // Sums of sixteen values carry their noise into every coefficient.
-    noisy &&= tail <= 24 * (noise * largest + besides);
+    // On a narrow panel far out the rounding of x itself is a part of the width.
+    const ofArgument =
+      ((4 * UNIT_ROUNDOFF * Math.max(Math.abs(a), Math.abs(b))) / (b - a)) * (highest - lowest);
+    noisy &&= tail <= 24 * (noise * largest + besides + ofArgument);
+    blur = Math.max(blur, ofArgument);
     size = Math.max(size, largest);
     missed = Math.max(missed, tail);
   }
   const factor = (b - a) * weight(a, b);
-  return { a, b, size: size * factor, missed: missed * factor, noisy };
+  return { a, b, size: size * factor, missed: (noisy ? blur : missed) * factor, noisy };
 }
 
 /**
@@ -116,7 +125,7 @@ export function resolvePanels(
 
 function finish(panels: Panel[], resolved: boolean): ResolvedPanels {
   panels.sort((x, y) => x.a - y.a);
-  const missed = panels.reduce((sum, panel) => sum + (panel.noisy ? 0 : panel.missed), 0);
+  const missed = panels.reduce((sum, panel) => sum + panel.missed, 0);
   return {
     edges: [...panels.slice(0, 1).map(({ a }) => a), ...panels.map(({ b }) => b)],
     missed,

@@ -4,15 +4,15 @@ import { localPotential } from '../local-potential.ts';
 import type { MethodInput } from '../method-input.ts';
 import { eikonalConditions } from './conditions.ts';
 import { impactAmplitude, type ImpactAmplitude } from './impact-amplitude.ts';
-import { impactPanels } from './impact-panels.ts';
 import { eikonalPhase } from './phase.ts';
 import { pointCharges } from './point-charges.ts';
 import { whyNoEikonal } from './refusals.ts';
+import { eikonalShells, transmissionOnPanels } from './shells.ts';
 import { beyondFirstOrder, besideCharges, removedBeyond, type Removed } from './transmission.ts';
 
 const TOO_WILD: Unavailable = {
   unavailable:
-    'The eikonal phase turns too fast near the centre of the potential to be integrated: the potential is too strong or too singular there for this method.',
+    'The eikonal phase turns too fast near the centre of the potential, or the rim of a shell, to be integrated: the potential is too strong or too singular there for this method.',
 };
 /** Phase up to which its turns are followed, rad. */
 const MOST_PHASE = 3000;
@@ -32,18 +32,20 @@ function integrated(
   eta: number,
 ): Integrated | Unavailable {
   const { k, twoMuOverHbar2 } = input;
-  const { edges, im } = localPotential(active, twoMuOverHbar2);
+  const potential = localPotential(active, twoMuOverHbar2);
+  const { edges } = potential;
   if (edges.length === 0) return { amplitude: null, removed: NOTHING };
-  const chi = eikonalPhase(active, input);
-  if (chi === null) return TOO_WILD;
-  const largest = edges.slice(1).reduce((most, b) => Math.max(most, Math.abs(chi(b).re)), 0);
+  const smooth = eikonalPhase(active, input);
+  if (smooth === null) return TOO_WILD;
+  const largest = edges.slice(1).reduce((most, b) => Math.max(most, Math.abs(smooth(b).re)), 0);
   if (!(largest <= MOST_PHASE)) return tooStrong(largest);
-  const { F, noise } = eta === 0 ? beyondFirstOrder(chi) : besideCharges(chi, eta, k);
-  const source = impactPanels(F, edges, noise);
+  const shells = eikonalShells(potential, k);
+  const transmission = eta === 0 ? beyondFirstOrder : besideCharges(eta, k);
+  const source = transmissionOnPanels(potential, shells, smooth, transmission, eta, k);
   if (source === null) return TOO_WILD;
   return {
     amplitude: impactAmplitude(source, k),
-    removed: im === null ? NOTHING : removedBeyond(chi, source),
+    removed: potential.im === null ? NOTHING : removedBeyond(smooth, source),
   };
 }
 

@@ -1,3 +1,4 @@
+import besselj0 from '@stdlib/math-base-special-besselj0';
 import { chebyshevInterpolant } from '#server/physics/numerics/chebyshev-panels.ts';
 import { hankelTransform } from '#server/physics/numerics/hankel-panels.ts';
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
@@ -17,6 +18,20 @@ function edgesOf(k: number, { moments }: ImpactPanels): number[] {
   return [...edges, 2 * k];
 }
 
+/** ∫ b J0(qb) F db over panels and points. */
+function transformOf({ panels, points }: ImpactPanels) {
+  const ofPanels = hankelTransform(panels);
+  return (q: number) => {
+    const sum = ofPanels(q);
+    for (const { b, re, im } of points) {
+      const wave = besselj0(q * b);
+      sum.re += wave * re;
+      sum.im += wave * im;
+    }
+    return sum;
+  };
+}
+
 export interface ImpactAmplitude {
   at: (q: number, blur?: number) => Amplitude;
   /** Largest error at any angle, angstrom. */
@@ -33,12 +48,12 @@ export interface ImpactAmplitude {
  * @returns amplitude, angstrom, with a bound of its error, that of q (and `blur`, relative) included
  */
 export function impactAmplitude(source: ImpactPanels, k: number): ImpactAmplitude {
-  const { panels, missed, moments } = source;
+  const { missed, moments } = source;
   const [plain, first, third] = moments;
   // |x J1(x)| is at most x²/2 and 0.6 x.
   const slope = (q: number) => Math.min(0.6 * q * first, (q * q * third) / 2);
   const tolerance = (q: number) => INTERPOLATION * plain + (Q_ALLOWANCE / 2) * slope(q);
-  const interpolant = chebyshevInterpolant(hankelTransform(panels), edgesOf(k, source), tolerance);
+  const interpolant = chebyshevInterpolant(transformOf(source), edgesOf(k, source), tolerance);
   const fixed = SUM_ROUNDING * plain + missed;
   return {
     at: (q, blur = 0) => {

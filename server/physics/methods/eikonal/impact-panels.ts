@@ -3,9 +3,17 @@ import type { HankelPanel } from '#server/physics/numerics/hankel-panels.ts';
 import { resolvePanels } from '#server/physics/numerics/resolved-panels.ts';
 import type { Complex } from '#server/physics/potentials/types.ts';
 
+/** Share of one impact parameter in ∫ b J0(qb) F db. */
+export interface WeightedPoint extends Complex {
+  b: number;
+}
+
 /** A function of the impact parameter on panels, and what its errors add up to. */
 export interface ImpactPanels {
   panels: HankelPanel[];
+  /** Points instead of panels, and those of ∫ b g db for any g there. */
+  points: WeightedPoint[];
+  measure: { b: number; weight: number }[];
   /** Bound of ∫ b |error of F| db: noise, and what panels and cut leave out. */
   missed: number;
   /** ∫ b |F| db, ∫ b² |F| db and ∫ b³ |F| db. */
@@ -92,7 +100,21 @@ export function impactPanels(
   const moment = (n: 0 | 1 | 2) => panels.reduce((sum, { parts }) => sum + parts[n], 0);
   return {
     panels,
+    points: [],
+    measure: [],
     missed: found.missed + beyond + ofNoise,
+    moments: [moment(0), moment(1), moment(2)],
+  };
+}
+
+/** One after the other. */
+export function joined(parts: readonly ImpactPanels[]): ImpactPanels {
+  const moment = (n: 0 | 1 | 2) => parts.reduce((sum, { moments }) => sum + moments[n], 0);
+  return {
+    panels: parts.flatMap(({ panels }) => panels),
+    points: parts.flatMap(({ points }) => points),
+    measure: parts.flatMap(({ measure }) => measure),
+    missed: parts.reduce((sum, { missed }) => sum + missed, 0),
     moments: [moment(0), moment(1), moment(2)],
   };
 }

@@ -14,11 +14,11 @@ interface Part {
 }
 
 /**
- * Eikonal phase of a sum of terms without their Coulomb tails.
+ * Eikonal phase of a sum of terms without their Coulomb tails and without delta shells.
  *
  * Formula: chi(b) = -(1/2k) ∫ U(√(b² + z²)) dz = -(1/hbar v) ∫ V dz.
  *
- * @param terms local, none of them a shell
+ * @param terms local ones
  * @returns phase, kept for every b at which it was asked; null where a term cannot be followed
  *
  * Source: R. J. Glauber, in Lectures in Theoretical Physics, vol. 1 (1959), 315.
@@ -30,8 +30,8 @@ export function eikonalPhase(
   const factor = -twoMuOverHbar2 / (2 * k);
   const parts: Part[] = [];
   for (const term of terms) {
-    // A bare point charge is all tail.
-    if (term.coulombTail !== 0 && term.norm === 0) continue;
+    // A bare point charge is all tail, and a shell is no function of r.
+    if ((term.coulombTail !== 0 && term.norm === 0) || term.v === null) continue;
     const line = lineOf(term);
     if (line === null) return null;
     parts.push({ re: factor * term.strength.re, im: factor * term.strength.im, line });

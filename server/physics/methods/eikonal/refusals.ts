@@ -11,11 +11,8 @@ export function whyNoEikonal(term: Term): string | null {
   if (term.tail === 'point') {
     return 'The contact interaction is made for first order alone: it has no phase along a straight line.';
   }
-  if (term.form === 'deltaShell') {
-    return 'The eikonal phase of a delta shell grows without bound towards its rim, where the path no longer is a straight line; take partial waves.';
-  }
   if (term.noBorn !== undefined) return term.noBorn;
-  if (term.v === null) {
+  if (term.v === null && term.form !== 'deltaShell') {
     return term.noFunction ?? `The ${term.form} form has no potential as a function of r.`;
   }
   return null;

@@ -19,6 +19,7 @@ interface Row extends Value {
 interface Table {
   shortRange: Row[];
   uniformCharge: (Value & { eta: number; R: number })[];
+  deltaShell: (Value & { g: number; R: number })[];
 }
 const TABLE = readReference<Table>('methods/eikonal.json');
 
@@ -49,6 +50,15 @@ describe('against the integral over impact parameters as it stands (mpmath)', ()
     ).toBeLessThanOrEqual(f?.error ?? NaN);
     expect(f?.error).toBeLessThan(1e-11 * forward);
     expect(found.floor).toBeLessThan(1e-11 * forward);
+  });
+
+  test.each(TABLE.deltaShell)('delta shell, g = $g, k = $k, q = $q', (row) => {
+    const found = at([form('deltaShell', { g: row.g / FACTOR, R: row.R })], row.k);
+    const f = found.amplitude(row.q);
+    const forward = modulus(found.shortRange(0));
+    const deviation = Math.hypot((f?.re ?? NaN) - row.re.high, (f?.im ?? NaN) - row.im.high);
+    expect(deviation).toBeLessThanOrEqual(f?.error ?? NaN);
+    expect(f?.error).toBeLessThan(1e-11 * forward);
   });
 
   test.each(TABLE.uniformCharge)('uniform charge, eta = $eta, k = $k, q = $q', (row) => {
@@ -270,6 +280,61 @@ describe('two point charges', () => {
   });
 });
 
+describe('delta shells', () => {
+  const shell = (g: number, R: number) => form('deltaShell', { g, R });
+
+  test('two of one radius are one of both strengths', () => {
+    for (const q of [0, 3, 11]) {
+      const [two, one] = [[shell(2, 1), shell(-0.5, 1)], [shell(1.5, 1)]].map((terms) =>
+        at(terms, 12).amplitude(q),
+      );
+      const { re, im, error } = difference(two ?? null, one ?? null);
+      expect(Math.hypot(re, im)).toBeLessThanOrEqual(error);
+    }
+  });
+
+  test('a thin square shell comes near, as its thickness', () => {
+    const k = 12;
+    const exact = at([shell(0.8, 1)], k);
+    const off = (thickness: number) => {
+      const depth = 0.8 / thickness;
+      const thin = [
+        form('squareWell', { V0: depth, W0: 0, R: 1 + thickness / 2 }),
+        form('squareWell', { V0: -depth, W0: 0, R: 1 - thickness / 2 }),
+      ];
+      return modulus(difference(at(thin, k).amplitude(2), exact.amplitude(2)));
+    };
+    // Linear in it once the phase at the inner rim is large, A²/R below 1e-3.
+    const [wide, narrow] = [off(4e-4), off(4e-5)];
+    expect(narrow).toBeLessThan(wide / 3);
+    expect(narrow).toBeLessThan(0.002 * modulus(exact.shortRange(0)));
+  });
+
+  test('beside a black disc of the same radius: what the disc lets through', () => {
+    const k = 50;
+    const disc = form('squareWell', { V0: 0, W0: -4e5, R: 1 });
+    const [both, alone] = [[disc, shell(3, 1)], [disc]].map((terms) => at(terms, k));
+    const [f, g] = [both?.shortRange(0), alone?.shortRange(0)];
+    if (!f || !g || !both || !alone) throw new Error('two amplitudes are needed');
+    expect(modulus(difference(f, g))).toBeLessThan(1e-3 * modulus(g));
+    if ('divergent' in both.absorption || 'divergent' in alone.absorption)
+      throw new Error('finite');
+    expectRelative(both.absorption.value, alone.absorption.value, 1e-10);
+  });
+
+  test('several, with absorption: what scatters and what is lost make the total', () => {
+    const k = 40;
+    const terms = [shell(30, 1), shell(-20, 0.6), form('gaussian', { V0: 0, W0: -60, a: 1 })];
+    const found = at(terms, k);
+    if ('divergent' in found.absorption) throw new Error('absorption is finite');
+    // A shell throws far: what lies beyond 2k is missing from the integral.
+    const scattered = elastic((q) => found.shortRange(q), k);
+    const total = ((4 * Math.PI) / k) * found.shortRange(0).im;
+    expect(scattered + found.absorption.value).toBeLessThan(total);
+    expectRelative(scattered + found.absorption.value, total, 0.05);
+  });
+});
+
 describe('conditions', () => {
   const conditionsAt = (terms: Term[], k: number) =>
     Object.fromEntries(at(terms, k).conditions.map((one) => [one.name, one]));
@@ -300,7 +365,6 @@ describe('conditions', () => {
 describe('refusals, in words', () => {
   test.each([
     ['contact', form('contact', { b: 1e-5 }), /first order alone/],
-    ['deltaShell', form('deltaShell', { g: 1, R: 1 }), /rim/],
     ['hardSphere', form('hardSphere', { R: 1 }), /infinitely hard/],
   ])('%s', (_name, term, words) => {
     const found = eikonal({ ...inputOf([], 5), terms: [term] });
