@@ -68,6 +68,7 @@ const SPHERE = 'Fast neutrons on a hard sphere: the shadow';
 const WELL = 'Slow neutrons on a well near its first bound state';
 const LEAD = '100 MeV neutrons on lead: straight paths with absorption';
 const POLARISED = 'Protons polarised by Ca-40';
+const SHIFT = 'A shift of alphas on a gold foil, four positions';
 
 function methodOf({ methods }: Estimate, name: 'eikonal' | 'partialWaves') {
   const found = methods[name];
@@ -84,6 +85,18 @@ const elasticBy = (name: 'eikonal' | 'partialWaves') => (estimate: Estimate) => 
 const exactElastic = elasticBy('partialWaves');
 const length = (estimate: Estimate) =>
   methodOf(estimate, 'partialWaves').lowEnergy?.scatteringLength?.value ?? NaN;
+/** What a run plan of a worked case answers at one of its detectors. */
+function planned(title: string, index: number) {
+  const { runPlan, ...estimate } = versionOf(title, 1).document;
+  if (!runPlan) throw new Error(`${title} has no run plan`);
+  const detector = ENGINE.runPlan({ ...runPlan, estimate }).detectors[index];
+  if (!detector) throw new Error(`no detector ${index}`);
+  return detector;
+}
+const timeAt = (title: string, index: number) => {
+  const { timeForPrecision: time } = planned(title, index);
+  return 'unavailable' in time ? Infinity : time.total.value;
+};
 const strongest = (estimate: Estimate) =>
   methodOf(estimate, 'partialWaves').differential.reduce((best, point) =>
     (point.analysingPower ?? 0) > (best.analysingPower ?? 0) ? point : best,
@@ -130,6 +143,9 @@ const FIGURES: [string, number, string, (estimate: Estimate) => number][] = [
     '5',
     (estimate) => 100 - (100 * elasticBy('eikonal')(estimate)) / exactElastic(estimate),
   ],
+  [SHIFT, 1, '1.8', () => timeAt(SHIFT, 0)],
+  [SHIFT, 1, '324', () => timeAt(SHIFT, 3)],
+  [SHIFT, 1, '32.4', () => planned(SHIFT, 3).trueRate.value],
   [POLARISED, 1, '38.5', (estimate) => strongest(estimate).theta],
   [POLARISED, 1, '1', (estimate) => strongest(estimate).analysingPower ?? NaN],
 ];

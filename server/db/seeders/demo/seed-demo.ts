@@ -12,6 +12,7 @@ import { FORMULA_CASES } from './formula-cases.ts';
 import { HELIUM_CASES } from './helium-cases.ts';
 import { ION_CASES } from './ion-cases.ts';
 import { EXACT_CASES } from './exact-cases.ts';
+import { RUN_CASES } from './run-cases.ts';
 import { LIBRARY_CASES, seedLibrary } from './library-demo.ts';
 import { LIGHT_ION_CASES } from './light-ion-cases.ts';
 import { NEUTRON_CASES } from './neutron-cases.ts';
@@ -36,6 +37,7 @@ export const DEMO_CASES: readonly DemoCase[] = [
   ...FORMULA_CASES,
   ...LIBRARY_CASES,
   ...EXACT_CASES,
+  ...RUN_CASES,
 ];
 
 export interface SeedContext {
