@@ -45,6 +45,8 @@ export interface PlanDetector {
   deadTime: DeadTime;
   /** Counts a second without the target, after efficiency. */
   background: number;
+  /** The part of it that the beam brings, which grows with the current. */
+  beamBackground: number;
 }
 
 /** The collision of an estimate at any energy (eV), by one of its methods. */

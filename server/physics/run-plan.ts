@@ -1,4 +1,5 @@
 import { rayOf } from './counting/aperture.ts';
+import type { Dcs } from './counting/curve.ts';
 import { energyNodes } from './counting/energies.ts';
 import type { Times } from './counting/times.ts';
 import { equalPrecision } from './counting/times.ts';
@@ -28,10 +29,28 @@ export interface RunPlanResult {
 /** Small deflections matter once they are a fifth of the scattering angle or leave the acceptance. */
 const SHARE_OF_ANGLE = 5;
 
+/** Angles whose cross section is kept: those of every detector, its averages and their slopes. */
+const MOST_KEPT = 20_000;
+
+/** A curve that computes no angle twice. */
+function remembering(curve: CollisionCurve): CollisionCurve {
+  const known = new Map<number, Dcs | null>();
+  return {
+    ...curve,
+    cm(thetaCm) {
+      const kept = known.get(thetaCm);
+      if (kept !== undefined) return kept;
+      const found = curve.cm(thetaCm);
+      if (known.size < MOST_KEPT) known.set(thetaCm, found);
+      return found;
+    },
+  };
+}
+
 const once = (curveAt: (energy: number) => CollisionCurve) => {
   const known = new Map<number, CollisionCurve>();
   return (energy: number) => {
-    const curve = known.get(energy) ?? curveAt(energy);
+    const curve = known.get(energy) ?? remembering(curveAt(energy));
     known.set(energy, curve);
     return curve;
   };

@@ -101,6 +101,8 @@ export const detectorSchema = z.strictObject({
   deadTime: notNegative('time', 'A dead time').optional(),
   deadTimeModel: z.enum(DEAD_TIME_MODELS).optional(),
   backgroundRate: notNegative('rate', 'A background rate').optional(),
+  /** Counted without the target while the beam of this plan is on, beside backgroundRate: it grows with the charge, not with time. */
+  beamBackgroundRate: notNegative('rate', 'A background rate').optional(),
 });
 export type DetectorSent = z.infer<typeof detectorSchema>;
 export const MAX_DETECTORS = 200;
@@ -171,6 +173,10 @@ export const runPlanBodySchema = z.strictObject({
         .optional(),
       /** Beam time there is, sample and blank together. */
       beamTime: positive('time', 'A beam time').optional(),
+      /** Without beam, before every position: moving, pumping, checking. */
+      setupTime: notNegative('time', 'A setup time').optional(),
+      /** Length of a shift; 8 h where it is left out. */
+      shift: positive('time', 'A shift').optional(),
     })
     .optional(),
   uncertainties: uncertaintiesSchema.optional(),
@@ -178,6 +184,8 @@ export const runPlanBodySchema = z.strictObject({
   uncertaintyKinds: uncertaintyKindsSchema.optional(),
   /** A detector whose counts the others are divided by: current, thickness and density then cancel. */
   monitor: name.optional(),
+  /** Asks for the recorded rate of every detector against the current, for a page that is offline. */
+  rateTable: z.boolean().optional(),
 });
 export type RunPlanBody = z.infer<typeof runPlanBodySchema>;
 
@@ -274,6 +282,18 @@ export const plannedDetectorSchema = z.object({
   /** Relative change of the signal rate per degree that the detector stands further out. */
   angleSensitivity: z.number().nullable(),
   sameAngle: z.array(kineticPartnerSchema),
+  /** Only with rateTable. */
+  rateAgainstCurrent: z
+    .array(
+      z.object({
+        /** Of the planned current. */
+        factor: z.number(),
+        particlesPerSecond: z.number(),
+        observedRate: z.number(),
+        deadTimeFraction: z.number(),
+      }),
+    )
+    .optional(),
   /** What would reach the precision within the beam time; only with aim.beamTime. */
   needed: z
     .union([
@@ -281,7 +301,10 @@ export const plannedDetectorSchema = z.object({
         /** The signal rate to have, and what it is multiplied by. */
         trueRate: quantity,
         factor: z.number(),
+        /** The same for the current, where the beam brings background of its own. */
+        factorOfCurrent: z.union([z.number(), unavailable]),
         current: quantity.optional(),
+        /** By factorOfCurrent; where that is unavailable, of a beam without background of its own. */
         particlesPerSecond: quantity,
         arealDensity: quantity,
         solidAngle: z.union([z.number(), unavailable]),
@@ -339,6 +362,27 @@ export const runPlanSchema = z
         unavailable,
       ])
       .optional(),
+    /** Positions measured in turn, ordered by angle so that moves are short. */
+    runSheet: z.union([
+      z.object({
+        positions: z.array(
+          z.object({
+            name: z.string(),
+            angle: z.number(),
+            start: quantity,
+            setup: quantity,
+            signal: quantity,
+            blank: quantity,
+            /** Shift in which it begins, from 1. */
+            shift: z.int(),
+          }),
+        ),
+        total: quantity,
+        shifts: z.int(),
+        shift: quantity,
+      }),
+      unavailable,
+    ]),
     aim: z.object({ relativePrecision: z.number(), beamTime: quantity.optional() }),
     verdict: z.enum(VERDICTS_OF_A_PLAN),
     decidedBy: z.object({

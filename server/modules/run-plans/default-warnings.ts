@@ -48,7 +48,11 @@ export function defaultWarnings({ beam, detectors, aim }: RunPlanRequest): Warni
     found.push(assumed('dutyFactorAssumed', '/beam/dutyFactor', words));
   }
   for (const { key, code, words } of DEFAULTS) {
-    const without = detectors.filter((one) => one[key] === undefined);
+    const without = detectors.filter(
+      (one) =>
+        one[key] === undefined &&
+        !(key === 'backgroundRate' && one.beamBackgroundRate !== undefined),
+    );
     const [first] = without;
     if (!first) continue;
     const path = `/detectors/${detectors.indexOf(first)}/${key}`;

@@ -24,6 +24,8 @@ const because = (reason: string) => ({ unavailable: true as const, reason });
 const perSecond = (value: number): Quantity => ({ value: finite(value), unit: '1/s' });
 const seconds = (value: number): Quantity => ({ value: finite(value), unit: 's' });
 const perArea = (value: number): Quantity => ({ value: finite(value * PER_CM2), unit: '1/cm2' });
+const AT_ITS_LIMIT =
+  'no current, thickness or solid angle reaches this precision in this time: the counter is at its largest rate, or the background grows alike.';
 /** A ratio of two numbers of which the second may be nothing. */
 const ratio = (a: number, b: number) => (b > 0 ? finite(a / b) : 1);
 
@@ -116,27 +118,55 @@ function neededOf(
   const { rates, detector, times } = planned;
   if (times === null) return { needed: because(silence(planned)) };
   const factor = neededFor(rates, precision, beamTime);
-  if (factor === null) {
-    return {
-      needed: because(
-        'no current, thickness or solid angle reaches this precision in this time: the counter is at its largest rate.',
-      ),
-    };
-  }
+  if (factor === null) return { needed: because(AT_ITS_LIMIT) };
+  // Other elements of the target scatter with the beam, as its own background does.
+  const growing = rates.background - (detector.background - detector.beamBackground);
+  const byCurrent = neededFor(rates, precision, beamTime, growing);
   const { current } = request.beam;
   const solidAngle = detector.solidAngle * factor;
   return {
     needed: {
       trueRate: perSecond(rates.signal * factor),
       factor: finite(factor),
-      ...(current && { current: { value: finite(current.value * factor), unit: current.unit } }),
-      particlesPerSecond: perSecond(plan.beam.rate * factor),
+      factorOfCurrent: byCurrent === null ? because(AT_ITS_LIMIT) : finite(byCurrent),
+      ...(current &&
+        byCurrent !== null && {
+          current: { value: finite(current.value * byCurrent), unit: current.unit },
+        }),
+      particlesPerSecond: perSecond(plan.beam.rate * (byCurrent ?? factor)),
       arealDensity: perArea(plan.target.scatterers * factor),
       solidAngle:
         solidAngle <= 4 * Math.PI ? solidAngle : because('more than the whole sphere is needed'),
       time: seconds(times.signal + times.blank),
     },
   };
+}
+
+/** Quarters of a decade from a hundredth of the planned current to ten times it. */
+const FACTORS = Array.from({ length: 13 }, (_, i) => 10 ** ((i - 8) / 4));
+
+/** Recorded rates against the current: the signal and what the beam brings grow with it, the rest of the background does not. */
+function rateTableOf(
+  { rates, detector }: Planned,
+  { plan }: RunPlanResult,
+): NonNullable<PlannedDetector['rateAgainstCurrent']> {
+  // Other elements of the target scatter with the beam.
+  const growing = rates.background - (detector.background - detector.beamBackground);
+  return FACTORS.map((factor) => {
+    const changed = {
+      ...rates,
+      signal: rates.signal * factor,
+      background: rates.background + growing * (factor - 1),
+    };
+    const all = changed.signal + changed.background;
+    const { gross } = recordedOf(changed);
+    return {
+      factor,
+      particlesPerSecond: finite(plan.beam.rate * factor),
+      observedRate: finite(gross),
+      deadTimeFraction: all > 0 ? Math.max(0, 1 - gross / all) : 0,
+    };
+  });
 }
 
 function sameAngleOf(
@@ -227,5 +257,6 @@ export function presentDetector(
     angleSensitivity: planned.angleSlope === null ? null : finite(planned.angleSlope * DEGREE),
     sameAngle: sameAngleOf(planned, result, units),
     ...neededOf(planned, result, request),
+    ...(request.rateTable === true && { rateAgainstCurrent: rateTableOf(planned, result) }),
   };
 }

@@ -1,6 +1,6 @@
 import type { PlannedDetector, RunPlan, RunPlanRequest } from '#shared/contracts/run-plans.ts';
 import type { Quantity } from '#shared/units/quantity.ts';
-import { fromInternal } from '#shared/units/quantity.ts';
+import { fromInternal, toInternal } from '#shared/units/quantity.ts';
 import { AnswerUnits, finite } from '#server/modules/estimates/answer-units.ts';
 import { beamPower } from '#server/physics/counting/beam.ts';
 import { planWarnings } from '#server/physics/plan-warnings.ts';
@@ -11,6 +11,9 @@ import { presentDetector } from './present-detector.ts';
 
 /** 1/angstrom² in 1/cm². */
 const PER_CM2 = 1e16;
+/** Eight hours, s. */
+const SHIFT = 28_800;
+const MOST_SHIFTS = 1e9;
 const because = (reason: string) => ({ unavailable: true as const, reason });
 
 const perSecond = (value: number): Quantity => ({ value: finite(value), unit: '1/s' });
@@ -60,6 +63,39 @@ function equalPrecisionOf({ equalPrecision, plan }: RunPlanResult): RunPlan['equ
   };
 }
 
+/** Positions in turn, by angle, each with its overhead; shifts are counted through. */
+function runSheetOf({ detectors }: RunPlanResult, request: RunPlanRequest): RunPlan['runSheet'] {
+  const { setupTime, shift } = request.aim ?? {};
+  const setup = setupTime ? toInternal(setupTime, 'time') : 0;
+  const length = shift ? toInternal(shift, 'time') : SHIFT;
+  const known = detectors.flatMap(({ detector, times }) => (times ? [{ detector, times }] : []));
+  if (known.length < detectors.length) return because(NO_TIME);
+  known.sort((a, b) => a.detector.angle - b.detector.angle);
+  let clock = 0;
+  const positions = known.map(({ detector, times }) => {
+    const start = clock;
+    clock += setup + times.signal + times.blank;
+    return {
+      name: detector.name,
+      angle: detector.angle,
+      start: seconds(start),
+      setup: seconds(setup),
+      signal: seconds(times.signal),
+      blank: seconds(times.blank),
+      shift: Math.floor(start / length) + 1,
+    };
+  });
+  if (!(clock / length < MOST_SHIFTS)) {
+    return because('The run takes longer than shifts can be counted.');
+  }
+  return {
+    positions,
+    total: seconds(clock),
+    shifts: Math.ceil(clock / length),
+    shift: seconds(length),
+  };
+}
+
 /** The answer in units of counting; cross sections in the unit of area of the estimate. Every number is finite. */
 export function presentRunPlan(result: RunPlanResult, request: RunPlanRequest): RunPlan {
   const { plan, totalTime, totalTimeInTurn, decision } = result;
@@ -84,6 +120,7 @@ export function presentRunPlan(result: RunPlanResult, request: RunPlanRequest): 
     totalTime: time(totalTime),
     totalTimeInTurn: time(totalTimeInTurn),
     ...(aim.beamTime !== null && { equalPrecision: equalPrecisionOf(result) }),
+    runSheet: runSheetOf(result, request),
     aim: {
       relativePrecision: aim.precision,
       ...(aim.beamTime !== null && { beamTime: seconds(aim.beamTime) }),

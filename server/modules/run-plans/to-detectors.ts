@@ -1,4 +1,5 @@
 import type { DetectorSent } from '#shared/contracts/run-plans.ts';
+import type { Quantity } from '#shared/units/quantity.ts';
 import { toInternal } from '#shared/units/quantity.ts';
 import type { Faults } from '#server/modules/estimates/faults.ts';
 import {
@@ -82,6 +83,8 @@ function opening(sent: DetectorSent, path: string, faults: Faults): Opening | nu
   return width || height ? rectangle(sent, far, path, faults) : round(sent, far, path, faults);
 }
 
+const rateOf = (sent: Quantity | undefined): number => (sent ? toInternal(sent, 'rate') : 0);
+
 function toDetector(sent: DetectorSent, path: string, faults: Faults): PlanDetector | undefined {
   const found = opening(sent, path, faults);
   if (!found) return undefined;
@@ -101,7 +104,8 @@ function toDetector(sent: DetectorSent, path: string, faults: Faults): PlanDetec
       tau: sent.deadTime ? toInternal(sent.deadTime, 'time') : 0,
       model: sent.deadTimeModel ?? 'nonParalysable',
     },
-    background: sent.backgroundRate ? toInternal(sent.backgroundRate, 'rate') : 0,
+    background: rateOf(sent.backgroundRate) + rateOf(sent.beamBackgroundRate),
+    beamBackground: rateOf(sent.beamBackgroundRate),
   };
 }
 
