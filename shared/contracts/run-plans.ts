@@ -363,28 +363,26 @@ export const runPlanSchema = z
       ])
       .optional(),
     /** Positions measured in turn, ordered by angle so that moves are short. */
-    runSheet: z
-      .union([
-        z.object({
-          positions: z.array(
-            z.object({
-              name: z.string(),
-              angle: z.number(),
-              start: quantity,
-              setup: quantity,
-              signal: quantity,
-              blank: quantity,
-              /** Shift in which it begins, from 1. */
-              shift: z.int(),
-            }),
-          ),
-          total: quantity,
-          shifts: z.int(),
-          shift: quantity,
-        }),
-        unavailable,
-      ])
-      .optional(),
+    runSheet: z.union([
+      z.object({
+        positions: z.array(
+          z.object({
+            name: z.string(),
+            angle: z.number(),
+            start: quantity,
+            setup: quantity,
+            signal: quantity,
+            blank: quantity,
+            /** Shift in which it begins, from 1. */
+            shift: z.int(),
+          }),
+        ),
+        total: quantity,
+        shifts: z.int(),
+        shift: quantity,
+      }),
+      unavailable,
+    ]),
     aim: z.object({ relativePrecision: z.number(), beamTime: quantity.optional() }),
     verdict: z.enum(VERDICTS_OF_A_PLAN),
     decidedBy: z.object({
