@@ -143,6 +143,16 @@ def polarization(alpha, d):
     return form
 
 
+def surface(Vso, R, a):
+    """r² times the spin-orbit shape (2 fm²) (1/r) d/dr f, without l·sigma."""
+
+    def series(c, n):
+        slope = step(c, n + 1, REAL(R), REAL(a))[1:] * np.arange(1, n + 1)
+        return REAL(TWO_MU) * REAL(Vso) * REAL(2e-10) * product(power_of_r(c, n, 1), slope)
+
+    return Form("spinOrbit", {"Vso": Vso, "R": R, "a": a}, series, R + 50 * a, lambda c: float(np.hypot(c - R, np.pi * a)))
+
+
 # The radial equation
 
 
@@ -153,29 +163,35 @@ def total(forms, k, c, n, charge):
     return out + power_of_r(c, n, charge, -REAL(k) ** 2)
 
 
-def march(forms, k, lmax, end, order, share, charge):
-    """u and u' at `end` for all l, each pair up to a factor."""
+def march(forms, k, lmax, end, order, share, charge, spin=None):
+    """u and u' at `end` for all l, each pair up to a factor; `spin` is a form that stands times l·sigma, and 2(j - l)."""
     l = np.arange(lmax + 1).astype(REAL)
+    turned = (l if spin[1] > 0 else -(l + 1)) if spin else 0 * l
+
+    def field(c):
+        w = np.zeros((order + 1, lmax + 1), dtype=COMPLEX)
+        w[:] = total(forms, k, c, order + 1, charge)[:, None]
+        return w + spin[0].series(c, order + 1)[:, None] * turned if spin else w
+
     centrifugal = l * (l + 1)
     radius = lambda c: min(form.radius(c) for form in forms)
     r = REAL(min(share * radius(0.0), 2 / k, float(end)))
-    w = total(forms, k, REAL(0), order + 1, charge)
+    w = field(REAL(0))
     c = np.zeros((order + 1, lmax + 1), dtype=COMPLEX)
     c[0] = 1
     for n in range(1, order + 1):
-        c[n] = np.tensordot(w[1 : n + 1], c[n - 1 :: -1] if n > 1 else c[:1], axes=(0, 0)) / (n * (n + 2 * l + 1))
+        c[n] = np.sum(w[1 : n + 1] * (c[n - 1 :: -1] if n > 1 else c[:1]), axis=0) / (n * (n + 2 * l + 1))
     powers = r ** np.arange(order + 1).astype(REAL)
     u = np.tensordot(powers, c, axes=(0, 0))
     du = np.tensordot(powers, c * (np.arange(order + 1)[:, None] + l + 1), axes=(0, 0)) / r
     while r < end:
-        w = total(forms, k, r, order + 1, charge)
-        local = float(np.sqrt(max(abs(w[0]) / r**2, k * k)))
+        w = field(r)
+        local = float(np.sqrt(max(np.max(np.abs(w[0])) / r**2, k * k)))
         h = REAL(min(share * radius(float(r)), share * float(r), 4 * share / local * 2))
         h = end - r if r + 1.2 * h > end else h
         size = np.abs(u) + np.abs(du) * r
         c[0], c[1] = u / size, du / size
-        base = np.zeros((order + 1, lmax + 1), dtype=COMPLEX)
-        base[:] = w[:, None]
+        base = w
         base[0] = base[0] + centrifugal
         for n in range(2, order + 1):
             m = n - 2
@@ -235,14 +251,14 @@ def beyond(form, k, l, T, r):
     return -square / k
 
 
-def waves(forms, k, lmax, charge=0.0, coulomb=None):
+def waves(forms, k, lmax, charge=0.0, coulomb=None, spin=None):
     """T_l by two settings."""
     answers = []
     power = any(form.reach is None for form in forms)
     reach = 240.0 / k if power else max(form.reach for form in forms)
     for order, share, far in ((48, 0.22, 1.0), (36, 0.16, 1.07)):
         end = REAL(float(reach * far))
-        u, du = march(forms, k, lmax, end, order, share, charge)
+        u, du = march(forms, k, lmax, end, order, share, charge, spin)
         row = []
         x = mpf(k) * mpf(float(end))
         functions = coulomb(x) if coulomb else [riccati(l, x) for l in range(lmax + 1)]
@@ -359,6 +375,26 @@ def smooth(name, forms, k, lmax, sums=True, look=(0, 1)):
     return entry(name, terms, k, T, difference, sums=sums)
 
 
+def spinning(name, forms, so, k, lmax):
+    """T of j = l + 1/2 and of j = l - 1/2; f = Σ ((l+1) T+ + l T-) P_l/k and |g| = |Σ (T+ - T-) sin(theta) P_l'|/k."""
+    (up, first), (down, second) = (waves(forms, k, lmax, spin=(so, sign)) for sign in (1, -1))
+    assert abs(up[-1]) < 1e-15 > abs(down[-1]), name
+    rows = []
+    for share in Q_OF_2K:
+        x, k_ = 1 - 2 * mpf(share) ** 2, mpf(k)
+        f, g, p, before, slope, slope_before = mpc(0), mpc(0), mpf(1), mpf(0), mpf(0), mpf(0)
+        for l in range(lmax + 1):
+            f += ((l + 1) * up[l] + l * down[l]) * p
+            g += (up[l] - down[l]) * sqrt(1 - x * x) * slope
+            slope_before, slope = slope, slope_before + (2 * l + 1) * p
+            before, p = p, ((2 * l + 1) * x * p - l * before) / (l + 1)
+        rows.append([2 * k * share, *written(f / k_), float(abs(g / k_))])
+    terms = [{"form": form.key, "values": form.values} for form in [*forms, so]]
+    print(name, lmax + 1, "waves, difference", max(first, second), flush=True)
+    out = {"name": name, "terms": terms, "twoMuOverHbar2": TWO_MU, "k": k, "difference": max(first, second)}
+    return {**out, "up": [written(t) for t in up], "down": [written(t) for t in down], "f": rows}
+
+
 def charged(name, forms, k, lmax, eta):
     """A point charge beside a short-range form; the strength of the term is 2 eta k / twoMuOverHbar2 over r, as an expression."""
     charge = REAL(2) * REAL(eta) * REAL(k)
@@ -405,13 +441,18 @@ def main():
     rows.append(entry("deltaShell that repels, kR = 12", [{"form": "deltaShell", "values": {"g": 20.0, "R": 3.0}}], 4.0, closed(delta_shell(4.0, 20.0, 3.0)), 0.0))
     for k in (1e-3, 0.1, 1.0, 5.0, 10.0, 50.0):
         rows.append(entry(f"hardSphere, kR = {k:g}", [{"form": "hardSphere", "values": {"R": 1.0}}], k, closed(hard_sphere(k, 1.0)), 0.0))
+    turning = [
+        spinning("woodsSaxon and spinOrbit, kR = 5", [wood(-16.0, 5.0, 0.6)], surface(2e11, 5.0, 0.6), 1.0, 44),
+        spinning("woodsSaxon with absorption and spinOrbit, kR = 10", [wood(-24.0, 5.0, 0.6, W0=-6.0)], surface(1e11, 4.5, 0.5), 2.0, 74),
+    ]
     head = {
         "generator": "scripts/reference/methods/phase_shifts.py",
-        "quantity": "T[l] = (S_l - 1)/2i, nuclear S_l where there is a charge, real and imaginary part; f = [q in 1/angstrom, Re f, Im f in angstrom]; with eta a term coulomb of strength 2 eta k/twoMuOverHbar2 stands beside the others",
+        "quantity": "T[l] = (S_l - 1)/2i, nuclear S_l where there is a charge, real and imaginary part; f = [q in 1/angstrom, Re f, Im f in angstrom]; with eta a term coulomb of strength 2 eta k/twoMuOverHbar2 stands beside the others; spinOrbit: up and down are T of j = l + 1/2 and l - 1/2, f = [q, Re f, Im f, |g|]",
     }
     lines = ",\n    ".join(json.dumps(row, allow_nan=False) for row in rows)
+    spins = ",\n    ".join(json.dumps(row, allow_nan=False) for row in turning)
     OUT.mkdir(parents=True, exist_ok=True)
-    (OUT / "phase-shifts.json").write_text(json.dumps(head, indent=2, ensure_ascii=False)[:-2] + ',\n  "rows": [\n    ' + lines + "\n  ]\n}\n")
+    (OUT / "phase-shifts.json").write_text(json.dumps(head, indent=2, ensure_ascii=False)[:-2] + ',\n  "rows": [\n    ' + lines + '\n  ],\n  "spinOrbit": [\n    ' + spins + "\n  ]\n}\n")
 
 
 main()

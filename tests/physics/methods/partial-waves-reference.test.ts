@@ -22,14 +22,24 @@ interface Row {
   T: Pair[];
   f?: (readonly [q: number, re: number, im: number])[];
 }
-const { rows } = readReference<{ rows: Row[] }>('methods/phase-shifts.json');
+interface SpinRow extends Omit<Row, 'T' | 'f'> {
+  /** T_l of j = l + 1/2 and of j = l - 1/2. */
+  up: Pair[];
+  down: Pair[];
+  f: (readonly [q: number, re: number, im: number, flip: number])[];
+}
+const { rows, spinOrbit } = readReference<{ rows: Row[]; spinOrbit: SpinRow[] }>(
+  'methods/phase-shifts.json',
+);
 const find = (name: string) => {
   const row = rows.find((entry) => entry.name === name);
   if (!row) throw new Error(`no reference called ${name}`);
   return row;
 };
 
-function termsOf({ terms, eta, k, twoMuOverHbar2 }: Row): Term[] {
+type Problem = Pick<Row, 'terms' | 'eta' | 'k' | 'twoMuOverHbar2'>;
+
+function termsOf({ terms, eta, k, twoMuOverHbar2 }: Problem): Term[] {
   const list = terms.map(({ form, values }) => build(form, values));
   if (eta === undefined) return list;
   // U = 2 eta k/r exactly, not by way of alpha and hbar c.
@@ -37,11 +47,11 @@ function termsOf({ terms, eta, k, twoMuOverHbar2 }: Row): Term[] {
   return [{ ...charge, strength: { re: (2 * eta * k) / twoMuOverHbar2, im: 0 } }, ...list];
 }
 
-function solved(row: Row): PartialWaves {
+function solved(row: Problem): PartialWaves {
   const { k, twoMuOverHbar2 } = row;
   const terms = termsOf(row);
   const born = firstBorn(terms, twoMuOverHbar2);
-  const found = partialWaves({ terms, born, k, twoMuOverHbar2, projectileSpin: null });
+  const found = partialWaves({ terms, born, k, twoMuOverHbar2, projectileSpin: 0.5 });
   if ('unavailable' in found) throw new Error(found.unavailable);
   return found;
 }
@@ -100,6 +110,36 @@ describe.each(rows.filter(({ f }) => f !== undefined))('amplitudes, $name', (row
       const off = distance([x, y], [re, im]);
       expect(off, `q = ${q}`).toBeLessThanOrEqual(error + 4e-16 * Math.hypot(re, im));
       expect(off, `q = ${q}`).toBeLessThan(1e-11 * Math.max(forward, Math.hypot(re, im)));
+    }
+  });
+});
+
+describe.each(spinOrbit)('$name', (row) => {
+  const found = solved(row);
+
+  it('both waves of every l lie within their errors', () => {
+    expect(row.difference).toBeLessThan(1e-15);
+    for (const wave of found.waves) {
+      const exact = ((wave.j ?? NaN) > wave.l ? row.up : row.down)[wave.l];
+      if (!exact) continue;
+      const off = distance(transition(wave), exact);
+      expect(off, `l = ${wave.l}, j = ${wave.j}`).toBeLessThanOrEqual(wave.error + 2e-16);
+      expect(wave.error).toBeLessThan(1e-9);
+    }
+    expect(found.waves.length).toBeGreaterThan(row.up.length);
+  });
+
+  it('so do both amplitudes, to 1e-11 of the forward one', () => {
+    const forward = Math.hypot(row.f[0]?.[1] ?? NaN, row.f[0]?.[2] ?? NaN);
+    for (const [q, re, im, flip] of row.f) {
+      const f = found.amplitude(q);
+      const g = found.flip?.(q);
+      if (!f || !g) throw new Error('no amplitude');
+      const off = distance([f.re, f.im], [re, im]);
+      const flipOff = Math.abs(Math.hypot(g.re, g.im) - flip);
+      expect(off).toBeLessThanOrEqual(f.error + 4e-16 * forward);
+      expect(flipOff).toBeLessThanOrEqual(g.error + 4e-16 * forward);
+      expect(Math.max(off, flipOff)).toBeLessThan(1e-11 * forward);
     }
   });
 });
