@@ -35,14 +35,14 @@ function addUp(
   weigh: (wave: Transition) => number,
   closed: boolean,
 ): Coefficients {
-  const { waves, born, lMax, left } = scattered;
-  const re = new Float64Array(lMax + 1);
-  const im = new Float64Array(lMax + 1);
+  const { waves, born, summed, left } = scattered;
+  const re = new Float64Array(summed + 1);
+  const im = new Float64Array(summed + 1);
   let square = 0;
   let size = 0;
   for (const wave of waves) {
     const { l } = wave;
-    if (l > lMax) continue;
+    if (l > summed) continue;
     const weight = weigh(wave) / k;
     const { c, s, error } = turnOf(scattered, l);
     const first = closed ? (born?.re[l] ?? 0) : 0;

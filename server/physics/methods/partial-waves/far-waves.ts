@@ -1,7 +1,7 @@
 import type { RadialInteraction } from './interaction.ts';
 import type { WaveIntegrals } from './radial-integrals.ts';
 import type { Transition } from './transition.ts';
-import { spinFactor, spinsOf } from './transition.ts';
+import { ofPhase, spinFactor, spinsOf } from './transition.ts';
 
 interface BornPhases {
   re: Float64Array;
@@ -13,7 +13,7 @@ interface End {
   lMax: number;
   /** Last order that first order knows. */
   bound: number;
-  /** (2l+1) |T_l - first order| of the last wave; null where higher waves stay outside of all that was followed. */
+  /** (2l+1) |T_l - e^{i delta} sin(delta)| of the last wave; null where higher waves stay outside of all that was followed. */
   excess: number | null;
 }
 
@@ -21,12 +21,14 @@ interface End {
 const QUADRATURE = 1e-13;
 /** Second order falls with l as the square of first order does, to a factor. */
 const ALLOWANCE = 4;
+/** Least proportion of the two that is believed. */
+const LEAST = 0.25;
 
 /**
- * Waves beyond the last that was followed, by first order.
+ * Waves beyond the last that was followed, with the phase of first order.
  *
- * Formula: what they have beyond it is their phase squared, in the proportion of the last wave that was followed; where they stay outside
- *   of all that was followed, no more than first order itself.
+ * Formula: T = e^{i delta} sin(delta), delta the first-order phase. What is missing falls as its square, in the proportion of the last wave
+ *   that was followed; where they stay outside of all that was followed it is no more than first order itself.
  *
  * @param tail integrals beyond the followed panels
  * @param born first-order phases of the central terms
@@ -52,11 +54,15 @@ export function farWaves(
       const re = (born.re[l] ?? 0) - factor * (tail.FF[2]?.[l] ?? 0);
       const im = (born.im[l] ?? 0) - factor * (tail.FF[3]?.[l] ?? 0);
       const phase = Math.hypot(re, im);
-      const second = ALLOWANCE * Math.max(1, proportion) * phase * phase;
+      const second = ALLOWANCE * Math.max(LEAST, proportion) * phase * phase;
       const error = second + QUADRATURE * phase + split;
-      waves.push({ l, spin, re, im, eta: 1 - 2 * im, absorbed: 4 * im, error });
+      const T = ofPhase(re, im);
+      const absorbed = interaction.absorbs ? 4 * (T.im - T.re * T.re - T.im * T.im) : 0;
+      const eta = interaction.absorbs ? Math.hypot(1 - 2 * T.im, 2 * T.re) : 1;
+      waves.push({ l, spin, ...T, eta, absorbed, error });
     }
   }
   if (excess === null) return { waves, left: sum };
+  // A share of the squares stays out of the sum of waves besides, but that is some 1e-13 of all.
   return { waves, left: last > 0 ? Math.min(sum + excess, proportion * squares) : excess };
 }

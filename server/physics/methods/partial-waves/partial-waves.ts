@@ -45,11 +45,11 @@ function waveOf({ l, spin, re, im, eta, error }: Transition, { born }: Scattered
   };
 }
 
-function absorptionOf({ waves, born, lMax }: Scattered, k: number, forward: Amplitude) {
+function absorptionOf({ waves, born, summed }: Scattered, k: number, forward: Amplitude) {
   let sum = 0;
   let square = 0;
   for (const wave of waves) {
-    if (wave.l > lMax) continue;
+    if (wave.l > summed) continue;
     const weight = weightOf(wave);
     sum += weight * (wave.absorbed - 4 * (born?.im[wave.l] ?? 0));
     square += (4 * weight * wave.error) ** 2;
@@ -74,7 +74,7 @@ function conditionsOf(scattered: Scattered, k: number, size: number): Condition[
       'lMax',
       scattered.lMax,
       scattered.born
-        ? 'Highest wave whose radial equation was solved; beyond it first order stands.'
+        ? 'Highest wave whose radial equation was solved; beyond it phases of first order stand.'
         : 'Highest wave whose radial equation was solved; higher ones are not scattered.',
     ),
     reported('waves', scattered.waves.length, 'Waves with a phase shift of their own.'),

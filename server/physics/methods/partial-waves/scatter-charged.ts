@@ -69,7 +69,7 @@ export function scatterCharged(
   const reason = refusal(interaction, k);
   if (reason !== null) return { unavailable: reason };
   const eta = interaction.charge / (2 * k);
-  const none = { waves: [], born: null, lMax: 0, left: 0, eta };
+  const none = { waves: [], born: null, lMax: 0, summed: 0, left: 0, eta };
   if (!(interaction.reach > 0)) {
     const { sigma, error } = coulombPhases(0, eta);
     return { ...none, sigma, sigmaError: error };
@@ -112,5 +112,5 @@ export function scatterCharged(
     lMax = l;
     quiet = left <= Math.max(UNCLOSED * sum, noise / 64) && l > pocket ? quiet + 1 : 0;
   }
-  return { ...none, waves, lMax, left: restOf(left, before), sigma, sigmaError };
+  return { ...none, waves, lMax, summed: lMax, left: restOf(left, before), sigma, sigmaError };
 }

@@ -10,7 +10,7 @@ import { RadialSolver } from './radial-wave.ts';
 import type { Scattered } from './scatter.ts';
 import { freeOuter, isWeak, tooNarrow, UNRESOLVED } from './scatter.ts';
 import type { Transition } from './transition.ts';
-import { spinFactor, spinsOf, weightOf } from './transition.ts';
+import { spinFactor, spinsOf, turned, weightOf } from './transition.ts';
 
 /** Radians of the wave where the asymptotic treatment of the tail begins at the earliest. */
 const NEAREST = 80;
@@ -40,19 +40,6 @@ function lastWave(interaction: RadialInteraction, k: number, from: number, sum: 
   let l = Math.max(16, from);
   while (left(l) > LEFT * sum && l < MOST_WAVES) l = Math.ceil(1.1 * l);
   return Math.min(l, MOST_WAVES);
-}
-
-/** T after a phase (re + i im) more: T + S e^{i phase} sin(phase). */
-function turned(T: { re: number; im: number }, re: number, im: number) {
-  const fall = Math.exp(-2 * im);
-  // e^{2i phase} - 1, without cancellation for small phases
-  const [x, y] = [
-    Math.expm1(-2 * im) * Math.cos(2 * re) - 2 * Math.sin(re) ** 2,
-    fall * Math.sin(2 * re),
-  ];
-  const [tRe, tIm] = [y / 2, -x / 2];
-  const [sRe, sIm] = [1 - 2 * T.im, 2 * T.re];
-  return { re: T.re + sRe * tRe - sIm * tIm, im: T.im + sRe * tIm + sIm * tRe };
 }
 
 /**
@@ -166,5 +153,5 @@ export function scatterPowerTail(
     }
   }
   const size = waves.reduce((sum, wave) => sum + weightOf(wave) * Math.hypot(wave.re, wave.im), 0);
-  return { waves, born: phases, lMax, left: LEFT * size + beyond / 30 };
+  return { waves, born: phases, lMax, summed: lMax, left: LEFT * size + beyond / 30 };
 }

@@ -9,20 +9,24 @@ import { innerIntegrals, lastOrder, tailIntegrals } from './radial-integrals.ts'
 import type { Matched, Outer } from './matched.ts';
 import { errorOf, transitionOf } from './matched.ts';
 import type { Transition } from './transition.ts';
-import { spinFactor, spinsOf, weightOf } from './transition.ts';
+import { ofPhase, spinFactor, spinsOf, weightOf } from './transition.ts';
 import { RadialSolver } from './radial-wave.ts';
 
 export interface Scattered {
   waves: Transition[];
   /** First-order phases by l; null where the sum is not closed with them. */
   born: { re: Float64Array; im: Float64Array } | null;
+  /** Highest wave that was followed, and the highest in the sum. */
   lMax: number;
-  /** Bound of Σ (2l+1) |T_l - first order| beyond lMax. */
+  summed: number;
+  /** Bound of what the sum leaves out: Σ (2l+1) |T_l - first order|. */
   left: number;
 }
 
 /** Share of Σ (2l+1)|T_l| that a wave may have beyond what closes the sum. */
 export const NEGLIGIBLE = 3e-15;
+/** Share of Σ (2l+1)|T_l|² that is left to first order, which is not unitary. */
+const UNSUMMED = 1e-13;
 /** Waves that must in turn be negligible. */
 export const IN_TURN = 3;
 const WEAK = 0.2;
@@ -102,9 +106,9 @@ export function scatter(interaction: RadialInteraction, k: number): Scattered | 
   const bound = lastOrder(interaction, all, k);
   const refused = tooMany(found, bound);
   if (refused) return refused;
-  const first = innerIntegrals(interaction, inner, inner.count, found.below, k, bound);
+  const within = innerIntegrals(interaction, inner, inner.count, found.below, k, bound);
   const tail = tailIntegrals(interaction, all, inner.count, k, bound);
-  const born = bornOf(first, tail, bound);
+  const born = bornOf(within, tail, bound);
   const outer = freeOuter(x, bound);
   const solver = new RadialSolver(interaction, inner, k);
   const waves: Transition[] = [];
@@ -119,23 +123,35 @@ export function scatter(interaction: RadialInteraction, k: number): Scattered | 
     const here = wavesOf({ interaction, found, solver, tail, x }, l, edge);
     if ('unavailable' in here) return here;
     waves.push(...here);
+    const first = ofPhase(born.re[l] ?? 0, born.im[l] ?? 0);
     let [excess, noise] = [0, 0];
     for (const wave of here) {
       sum += weightOf(wave) * Math.hypot(wave.re, wave.im);
       noise += weightOf(wave) * wave.error;
-      const [re, im] = [wave.re - (born.re[l] ?? 0), wave.im - (born.im[l] ?? 0)];
-      excess += weightOf(wave) * Math.hypot(re, im);
+      excess += weightOf(wave) * Math.hypot(wave.re - first.re, wave.im - first.im);
     }
     quiet = excess <= Math.max(NEGLIGIBLE * sum, noise / 64) && l > pocket ? quiet + 1 : 0;
     lastExcess = excess;
     lMax = l;
   }
-  const far = farWaves(interaction, tail, born, {
-    lMax,
-    bound,
-    excess: quiet === IN_TURN ? lastExcess : null,
-  });
-  return { waves: [...waves, ...far.waves], born, lMax, left: far.left };
+  const end = { lMax, bound, excess: quiet === IN_TURN ? lastExcess : null };
+  const far = farWaves(interaction, tail, born, end);
+  const everyWave = [...waves, ...far.waves];
+  return { waves: everyWave, born, lMax, summed: lastSummed(everyWave, lMax), left: far.left };
+}
+
+/** Highest l whose square still counts among those of all waves. */
+function lastSummed(waves: readonly Transition[], lMax: number): number {
+  const square = (wave: Transition) => weightOf(wave) * (wave.re * wave.re + wave.im * wave.im);
+  const total = waves.reduce((sum, wave) => sum + square(wave), 0);
+  let left = 0;
+  for (let i = waves.length - 1; i >= 0; i--) {
+    const wave = waves[i];
+    if (!wave || wave.l <= lMax) break;
+    left += square(wave);
+    if (left > UNSUMMED * total) return wave.l;
+  }
+  return lMax;
 }
 
 interface Setting {

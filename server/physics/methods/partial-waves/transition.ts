@@ -25,3 +25,19 @@ export function spinsOf({ spinOrbit }: RadialInteraction, l: number): (-1 | 0 | 
 /** l·sigma */
 export const spinFactor = (l: number, spin: -1 | 0 | 1): number =>
   spin === 0 ? 0 : spin === 1 ? l : -(l + 1);
+
+/** T after a phase (re + i im) more: T + S e^{i phase} sin(phase). */
+export function turned(T: { re: number; im: number }, re: number, im: number) {
+  const fall = Math.exp(-2 * im);
+  // e^{2i phase} - 1, without cancellation for small phases
+  const [x, y] = [
+    Math.expm1(-2 * im) * Math.cos(2 * re) - 2 * Math.sin(re) ** 2,
+    fall * Math.sin(2 * re),
+  ];
+  const [tRe, tIm] = [y / 2, -x / 2];
+  const [sRe, sIm] = [1 - 2 * T.im, 2 * T.re];
+  return { re: T.re + sRe * tRe - sIm * tIm, im: T.im + sRe * tIm + sIm * tRe };
+}
+
+/** T of a phase (re + i im) alone: of a real one, unitary. */
+export const ofPhase = (re: number, im: number) => turned({ re: 0, im: 0 }, re, im);
