@@ -24,6 +24,8 @@ interface Fit {
 interface Panel {
   a: number;
   b: number;
+  /** Tail of the panel that was cut. */
+  before: number;
   fit: Fit | null;
   halves: [Panel, Panel] | null;
 }
@@ -40,6 +42,11 @@ const PROJECTION = Array.from({ length: ORDER }, (_, n) =>
 );
 /** Coefficients at the end whose size says what is missing. */
 const LAST = 3;
+/** A tail that a cut has not made smaller than this share, and that is not far above the tolerance, is noise. */
+const STUCK = 0.25;
+const NEAR = 1000;
+/** Tails to the error: what the coefficients leave, or their noise. */
+const SAFETY = 4;
 
 const project = (values: Float64Array): Float64Array =>
   Float64Array.from(PROJECTION, (row) =>
@@ -71,12 +78,17 @@ function fitOn(f: (x: number) => ComplexNumber, a: number, b: number): Fit {
   return { re, im, tail: tailOf(re) + tailOf(im) };
 }
 
-function halvesOf(panel: Panel): [Panel, Panel] {
+function halvesOf(panel: Panel, before: number): [Panel, Panel] {
   const middle = panel.a + (panel.b - panel.a) / 2;
   return (panel.halves ??= [
-    { a: panel.a, b: middle, fit: null, halves: null },
-    { a: middle, b: panel.b, fit: null, halves: null },
+    { a: panel.a, b: middle, before, fit: null, halves: null },
+    { a: middle, b: panel.b, before, fit: null, halves: null },
   ]);
+}
+
+function isGood({ fit, before }: Panel, tolerance: number): boolean {
+  const tail = fit?.tail ?? Infinity;
+  return tail <= tolerance || (tail > STUCK * before && tail <= NEAR * tolerance);
 }
 
 /** Index of the panel that holds x. */
@@ -98,7 +110,7 @@ function find(panels: readonly Panel[], x: number): number {
  *
  * @param f finite on every interval between edges
  * @param edges ascending, the first and the last the ends of the domain
- * @param tolerance absolute, for arguments up to x; not below the noise of f
+ * @param tolerance absolute, for arguments up to x; where cuts no longer help, the noise of f is met and said in the error
  * @param mostCalls calls of f to be spent on panels
  *
  * Source: textbook; L. N. Trefethen, Approximation Theory and Approximation Practice (2013).
@@ -107,12 +119,12 @@ export function chebyshevInterpolant(
   f: (x: number) => ComplexNumber,
   edges: readonly number[],
   tolerance: (x: number) => number,
-  mostCalls = 20_000,
+  mostCalls = 10_000,
 ): ChebyshevInterpolant {
   let evaluations = 0;
   const pieces = edges
     .slice(1)
-    .map((b, i): Panel => ({ a: edges[i] ?? b, b, fit: null, halves: null }));
+    .map((b, i): Panel => ({ a: edges[i] ?? b, b, before: Infinity, fit: null, halves: null }));
   return {
     evaluations: () => evaluations,
     at: (x) => {
@@ -126,11 +138,11 @@ export function chebyshevInterpolant(
         }
         const { re, im, tail } = panel.fit;
         const half = (b - a) / 2;
-        if (tail <= tolerance(b)) {
+        if (isGood(panel, tolerance(b))) {
           const t = (x - a - half) / half;
-          return { re: clenshaw(re, t), im: clenshaw(im, t), error: 2 * tail };
+          return { re: clenshaw(re, t), im: clenshaw(im, t), error: SAFETY * tail };
         }
-        panel = halvesOf(panel)[x <= a + half ? 0 : 1];
+        panel = halvesOf(panel, tail)[x <= a + half ? 0 : 1];
       }
       evaluations += 1;
       return { ...f(x), error: 0 };

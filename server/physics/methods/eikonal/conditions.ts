@@ -10,13 +10,16 @@ const SHALLOW = 0.1;
 function meanDepth(terms: readonly Term[], range: number, { k, twoMuOverHbar2 }: MethodInput) {
   let re = 0;
   let im = 0;
+  let found = false;
   for (const { strength, lineIntegral, coulombTail } of terms) {
     if (coulombTail !== 0) continue;
     const line = lineIntegral(1 / k);
     if (line === null) return null;
     re += strength.re * line;
     im += strength.im * line;
+    found = true;
   }
+  if (!found) return null;
   return (twoMuOverHbar2 * Math.hypot(re, im)) / range / (k * k);
 }
 

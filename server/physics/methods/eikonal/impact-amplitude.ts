@@ -4,16 +4,20 @@ import { hankelTransform } from '#server/physics/numerics/hankel-panels.ts';
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import { Q_ALLOWANCE } from '#server/physics/potentials/transform-error.ts';
 import type { Amplitude } from '../amplitude.ts';
-import type { ImpactPanels } from './impact-panels.ts';
+import type { ImpactPanels, Moments } from './impact-panels.ts';
 
 /** Roundings of the sums over panels, and the share of ∫ b |F| db to which they are interpolated in q. */
 const SUM_ROUNDING = 16 * UNIT_ROUNDOFF;
 const INTERPOLATION = 3e-15;
+/** Tolerances that the error of the interpolant may reach. */
+const MOST_TAILS = 4;
+/** Step in q by which its slope is seen. */
+const PROBE = 2 ** -20;
 
 /** Intervals of q that double from the inverse of the mean impact parameter on. */
-function edgesOf(k: number, { moments }: ImpactPanels): number[] {
+function edgesOf(k: number, { size }: ImpactPanels): number[] {
   const edges = [0];
-  const mean = moments[0] > 0 ? moments[1] / moments[0] : 0;
+  const mean = size[1] > 0 ? size[3] / size[1] : 0;
   if (mean > 0) for (let q = 2 / mean; q < 2 * k; q *= 2) edges.push(q);
   return [...edges, 2 * k];
 }
@@ -32,6 +36,14 @@ function transformOf({ panels, points }: ImpactPanels) {
   };
 }
 
+/** Bound of ∫ b |J0(qb)| g db: |J0(x)| is at most 1 and sqrt(2/(πx)). */
+const seenBy = (q: number, [half, one]: Moments): number =>
+  Math.min(one, Math.sqrt(2 / (Math.PI * q)) * half);
+
+/** Bound of |q d/dq| of the same: |x J1(x)| is at most x²/2, 0.6 x and sqrt(x). */
+const slopeOf = (q: number, [, , threeHalves, two, three]: Moments): number =>
+  Math.min((q * q * three) / 2, 0.6 * q * two, Math.sqrt(q) * threeHalves);
+
 export interface ImpactAmplitude {
   at: (q: number, blur?: number) => Amplitude;
   /** Largest error at any angle, angstrom. */
@@ -48,20 +60,24 @@ export interface ImpactAmplitude {
  * @returns amplitude, angstrom, with a bound of its error, that of q (and `blur`, relative) included
  */
 export function impactAmplitude(source: ImpactPanels, k: number): ImpactAmplitude {
-  const { missed, moments } = source;
-  const [plain, first, third] = moments;
-  // |x J1(x)| is at most x²/2 and 0.6 x.
-  const slope = (q: number) => Math.min(0.6 * q * first, (q * q * third) / 2);
-  const tolerance = (q: number) => INTERPOLATION * plain + (Q_ALLOWANCE / 2) * slope(q);
-  const interpolant = chebyshevInterpolant(transformOf(source), edgesOf(k, source), tolerance);
-  const fixed = SUM_ROUNDING * plain + missed;
+  const { missed, size, noise } = source;
+  const interpolant = chebyshevInterpolant(
+    transformOf(source),
+    edgesOf(k, source),
+    (q) => INTERPOLATION * seenBy(q, size),
+  );
+  const errorAt = (q: number) => missed + SUM_ROUNDING * seenBy(q, size) + seenBy(q, noise);
+  const last = 2 * k;
   return {
     at: (q, blur = 0) => {
-      const { re, im, error } = interpolant.at(Math.min(q, 2 * k));
-      const ofQ = (Q_ALLOWANCE + blur) * slope(q);
+      const { re, im, error } = interpolant.at(Math.min(q, last));
+      const beside = interpolant.at(Math.min(q, last) * (1 - PROBE));
+      const slope = Math.hypot(beside.re - re, beside.im - im) / PROBE;
+      const ofQ = (Q_ALLOWANCE + blur) * slope;
       // -i (re + i im)
-      return { re: k * im, im: -k * re, error: k * (fixed + error + ofQ) };
+      return { re: k * im, im: -k * re, error: k * (errorAt(q) + error + ofQ) };
     },
-    largestError: k * (fixed + 2 * tolerance(2 * k) + Q_ALLOWANCE * slope(2 * k)),
+    largestError:
+      k * (errorAt(0) + MOST_TAILS * INTERPOLATION * size[1] + Q_ALLOWANCE * slopeOf(last, size)),
   };
 }

@@ -14,16 +14,27 @@ export interface ImpactPanels {
   /** Points instead of panels, and those of ∫ b g db for any g there. */
   points: WeightedPoint[];
   measure: { b: number; weight: number }[];
-  /** Bound of ∫ b |error of F| db: noise, and what panels and cut leave out. */
+  /** Bound of ∫ b |error of F| db from what panels and cut leave out. */
   missed: number;
-  /** ∫ b |F| db, ∫ b² |F| db and ∫ b³ |F| db. */
-  moments: [number, number, number];
+  /** Moments of |F|. */
+  size: Moments;
+  /** Moments of the error of F that is noise. */
+  noise: Moments;
+}
+
+/** ∫ b^p g db for p = 1/2, 1, 3/2, 2 and 3. */
+export type Moments = [number, number, number, number, number];
+
+const POWERS = [0.5, 1, 1.5, 2, 3] as const;
+
+export function momentsOf(each: (g: (b: number) => number) => number): Moments {
+  return POWERS.map((power) => each((b) => b ** power)) as Moments;
 }
 
 const RULE = gaussRule(16);
 /** What may be left beyond the last panel, of ∫ b |F| db. */
 const CUT = 1e-17;
-const MOST_PANELS = 1200;
+const MOST_PANELS = 2500;
 
 /** ∫ g over a panel by its sixteen points. */
 export function sumOver(
@@ -36,15 +47,6 @@ export function sumOver(
     sum += half * (RULE.weights[i] ?? 0) * g(a + half + half * (RULE.nodes[i] ?? 0), i);
   }
   return sum;
-}
-
-function momentsOf(panel: HankelPanel): [number, number, number] {
-  const size = (i: number) => Math.hypot(panel.re[i] ?? 0, panel.im[i] ?? 0);
-  return [
-    sumOver(panel, (x, i) => x * size(i)),
-    sumOver(panel, (x, i) => x * x * size(i)),
-    sumOver(panel, (x, i) => x ** 3 * size(i)),
-  ];
 }
 
 /**
@@ -73,48 +75,52 @@ export function impactPanels(
     maxPanels: MOST_PANELS,
   });
   if (!found.resolved) return null;
-  const all = found.edges
-    .slice(1)
-    .map((b, i): HankelPanel & { parts: [number, number, number] } => {
-      const a = found.edges[i] ?? b;
-      const half = (b - a) / 2;
-      const values = Array.from(RULE.nodes, (x) => at(a + half + half * x));
-      const panel = {
-        a,
-        b,
-        re: Float64Array.from(values, ({ re }) => re),
-        im: Float64Array.from(values, ({ im }) => im),
-      };
-      return { ...panel, parts: momentsOf(panel) };
-    });
-  const total = all.reduce((sum, { parts }) => sum + parts[0], 0);
+  const all = found.edges.slice(1).map((b, i): HankelPanel & { part: number } => {
+    const a = found.edges[i] ?? b;
+    const half = (b - a) / 2;
+    const values = Array.from(RULE.nodes, (x) => at(a + half + half * x));
+    const panel = {
+      a,
+      b,
+      re: Float64Array.from(values, ({ re }) => re),
+      im: Float64Array.from(values, ({ im }) => im),
+    };
+    return { ...panel, part: sumOver(panel, (x, j) => x * sizeAt(panel, j)) };
+  });
+  const total = all.reduce((sum, { part }) => sum + part, 0);
   let beyond = 0;
   let count = all.length;
   for (; count > 1; count--) {
-    const part = all[count - 1]?.parts[0] ?? 0;
+    const part = all[count - 1]?.part ?? 0;
     if (beyond + part > CUT * total) break;
     beyond += part;
   }
   const panels = all.slice(0, count);
-  const ofNoise = panels.reduce((sum, panel) => sum + sumOver(panel, (b) => b * noise(b)), 0);
-  const moment = (n: 0 | 1 | 2) => panels.reduce((sum, { parts }) => sum + parts[n], 0);
+  const over = (g: (panel: HankelPanel, b: number, i: number) => number) =>
+    panels.reduce((sum, panel) => sum + sumOver(panel, (b, i) => g(panel, b, i)), 0);
   return {
     panels,
     points: [],
     measure: [],
-    missed: found.missed + beyond + ofNoise,
-    moments: [moment(0), moment(1), moment(2)],
+    missed: found.missed + beyond,
+    size: momentsOf((power) => over((panel, b, i) => power(b) * sizeAt(panel, i))),
+    noise: momentsOf((power) => over((_panel, b) => power(b) * noise(b))),
   };
 }
 
+const sizeAt = ({ re, im }: HankelPanel, i: number): number => Math.hypot(re[i] ?? 0, im[i] ?? 0);
+
+const added = (parts: readonly Moments[]): Moments =>
+  POWERS.map((_, n) => parts.reduce((sum, part) => sum + (part[n] ?? 0), 0)) as Moments;
+
 /** One after the other. */
 export function joined(parts: readonly ImpactPanels[]): ImpactPanels {
-  const moment = (n: 0 | 1 | 2) => parts.reduce((sum, { moments }) => sum + moments[n], 0);
   return {
     panels: parts.flatMap(({ panels }) => panels),
     points: parts.flatMap(({ points }) => points),
     measure: parts.flatMap(({ measure }) => measure),
     missed: parts.reduce((sum, { missed }) => sum + missed, 0),
-    moments: [moment(0), moment(1), moment(2)],
+    size: added(parts.map(({ size }) => size)),
+    noise: added(parts.map(({ noise }) => noise)),
   };
 }

@@ -2,7 +2,7 @@ import { gaussRule } from '#server/physics/numerics/gauss-rule.ts';
 import { UNIT_ROUNDOFF } from '#server/physics/numerics/rounding.ts';
 import { resolvePanels } from '#server/physics/numerics/resolved-panels.ts';
 import type { Complex } from '#server/physics/potentials/types.ts';
-import type { ImpactPanels, WeightedPoint } from './impact-panels.ts';
+import { momentsOf, type ImpactPanels, type WeightedPoint } from './impact-panels.ts';
 
 /** A shell and what is known of the transmission about its rim; chi = -A/y there, y = √(R² - b²). */
 export interface Rim {
@@ -141,8 +141,10 @@ export function shellRim(
     ...found.edges.slice(1).flatMap((to, i) => pointsOn(R, found.edges[i] ?? to, to, weighted)),
     { b: R, weight: 0, ...end },
   ];
-  const moment = (n: number) =>
-    points.reduce((sum, { b, re, im }) => sum + Math.hypot(re, im) * b ** n, 0);
+  // Points carry one power of b already.
+  const sizes = momentsOf((power) =>
+    points.reduce((sum, { b, re, im }) => sum + (Math.hypot(re, im) * power(b)) / b, 0),
+  );
   const [near, last] = [O(at(y0)), O(R)];
   const change = Math.hypot(near.re - last.re, near.im - last.im) + (largestQ * y0 * y0) / (2 * R);
   const left = (y0 ** 3 / size) * (change + 1e-14);
@@ -153,7 +155,8 @@ export function shellRim(
     panels: [],
     points: gathered(points, at(y1), R),
     measure: points,
-    missed: found.missed + left + ofNoise,
-    moments: [moment(0), moment(1), moment(2)],
+    missed: found.missed + left,
+    size: sizes,
+    noise: momentsOf((power) => (ofNoise * power(R)) / R),
   };
 }

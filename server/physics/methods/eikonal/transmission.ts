@@ -56,10 +56,10 @@ export interface Removed {
  */
 export function removedBeyond(
   chi: (b: number) => Phase,
-  { panels, measure, missed }: ImpactPanels,
+  { panels, measure, missed, noise }: ImpactPanels,
 ): Removed {
   let value = 0;
-  let error = 4 * missed;
+  let error = 4 * (missed + noise[1]);
   for (const panel of panels) {
     const part = sumOver(panel, (b) => b * removedBeyondFirst(chi(b).im));
     value += part;

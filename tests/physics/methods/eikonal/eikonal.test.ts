@@ -356,6 +356,13 @@ describe('conditions', () => {
     expect(deep['fastParticles']?.holds).toBe(false);
   });
 
+  test('charges have eta, and no mean depth', () => {
+    const term = form('extendedCharge', { chargeProduct: 2, kind: 'uniformSphere', radius: 1 });
+    const found = conditionsAt([term], 9);
+    expectRelative(found['eta']?.value ?? NaN, (FACTOR * 2 * 14.39964546860267) / 18, 1e-8);
+    expect(found['fastParticles']).toBeUndefined();
+  });
+
   test('a potential known to some momentum only says where that ends', () => {
     const found = conditionsAt([form('atomicElectron', { element: 'C' })], 40);
     expect(found['momentumTransfer']).toMatchObject({ value: 80, holds: false });
