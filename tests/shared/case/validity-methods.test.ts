@@ -6,7 +6,12 @@ import { without } from '#src/features/case/model/without.ts';
 import { amplitudeCurves, amplitudeRows } from '#src/features/case/validity/model/amplitudes.ts';
 import { deviationFigures, offBy } from '#src/features/case/validity/model/deviations.ts';
 import { referenceOf } from '#src/features/case/validity/model/methods.ts';
-import { overlayRows, ratioPanel, ratiosOf } from '#src/features/case/validity/model/overlay.ts';
+import {
+  leavesPicture,
+  overlayRows,
+  ratioPanel,
+  ratiosOf,
+} from '#src/features/case/validity/model/overlay.ts';
 import { expectRelative } from '#tests/support/expect-relative.ts';
 
 const area = (value: number) => ({ value, unit: 'angstrom2', relativeError: 1e-12 });
@@ -114,7 +119,10 @@ describe('ratios', () => {
       partialWaves: methodOf([at(30, 1), at(60, 1e-9), at(90, 50)]),
     });
     const own = curvesOf(wild, 'angstrom2', { sums: true });
-    const panel = ratioPanel(ratiosOf(wild, own), own, 'theta');
+    const parted = ratiosOf(wild, own);
+    expect(parted && leavesPicture(parted)).toBe(true);
+    expect(ratios && leavesPicture(ratios)).toBe(false);
+    const panel = ratioPanel(parted, own, 'theta');
     expect(panel?.yScale).toBe('log');
     expect(panel?.series[0]?.points.map(([, y]) => y)).toEqual([1, 1000, 0.02]);
   });

@@ -11,8 +11,9 @@ import { abscissaOf, curvesOf } from '../model/curves.ts';
 import type { Abscissa, Curve } from '../model/curves.ts';
 import type { TableUnits } from '../model/csv.ts';
 import { numericsText } from '../model/verdict.ts';
+import { METHOD_NAMES } from '../model/words.ts';
 import { referenceName } from './model/methods.ts';
-import { overlayRows, ratioPanel, ratiosOf } from './model/overlay.ts';
+import { leavesPicture, overlayRows, ratioPanel, ratiosOf } from './model/overlay.ts';
 import type { Ratios } from './model/overlay.ts';
 import { Item, Items, Panel } from './panel.tsx';
 import { ScaleSwitches, useScales } from './scales.tsx';
@@ -80,6 +81,17 @@ function MethodReadout({ curves, ratios, place, units }: ReadoutProps) {
   );
 }
 
+function saysOf(ratios: Ratios): string {
+  const by =
+    ratios.reference === 'partialWaves'
+      ? 'the exact one'
+      : `${METHOD_NAMES[ratios.reference]}, for there is no exact curve here`;
+  const edge = leavesPicture(ratios)
+    ? ' A ratio above 1000 or below 0.001 is drawn at the edge; the row below the plot has its value.'
+    : '';
+  return `Below on the same abscissa: each method divided by ${by}.${edge}`;
+}
+
 interface MethodCurvesProps {
   estimate: Estimate;
   dimmed: boolean;
@@ -115,14 +127,7 @@ export function MethodCurves({ estimate, dimmed, fileName }: MethodCurvesProps) 
     })
     .join(', ');
   return (
-    <Panel
-      title="All methods"
-      says={
-        ratios
-          ? `Below on the same abscissa: each method divided by ${ratios.reference === 'partialWaves' ? 'the exact one' : 'first Born, for there is no exact curve here'}.`
-          : undefined
-      }
-    >
+    <Panel title="All methods" says={ratios ? saysOf(ratios) : undefined}>
       <Plot
         label={`Differential cross section of every method against ${ABSCISSA_WORDS[abscissa]}`}
         series={series}

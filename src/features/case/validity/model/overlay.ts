@@ -40,6 +40,13 @@ export function ratiosOf(estimate: Estimate, curves: readonly Curve[]): Ratios |
 /** Ratios beyond these are drawn at the edge of the picture: a minimum of one curve must not flatten all else. */
 const MOST = 1e3;
 
+/** Whether some ratio is drawn at the edge instead of where it is. */
+export function leavesPicture({ curves }: Ratios): boolean {
+  return curves.some(({ values }) =>
+    values.some((value) => value !== null && (value > MOST || value < 1 / MOST)),
+  );
+}
+
 function ticked(low: number, high: number): PlotAxis {
   const rough = (high - low) / 3;
   const power = 10 ** Math.floor(Math.log10(rough));
