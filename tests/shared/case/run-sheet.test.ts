@@ -66,6 +66,7 @@ function plan(detectors: Detector[], beamTime?: number): RunPlan {
     detectors,
     totalTime: none,
     totalTimeInTurn: none,
+    runSheet: none,
     aim: { relativePrecision: 0.01, ...(beamTime !== undefined && { beamTime: s(beamTime) }) },
     verdict: 'feasible',
     decidedBy: { factor: 'time', message: '' },

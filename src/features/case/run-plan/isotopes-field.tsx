@@ -20,7 +20,7 @@ export function IsotopesField({ part, value }: IsotopesFieldProps) {
       label="Isotopes"
       hint="Mole fractions such as Li-6 0.95, Li-7 0.05; empty is the natural mixture."
       error={problemAt(problems, pointer)}
-      className="@xs:col-span-2"
+      className="@[21rem]:col-span-2"
     >
       {(control) => (
         <TextInput

@@ -26,8 +26,8 @@ export function KindOfUncertainty({ input, kind = {} }: KindOfUncertaintyProps) 
         label={`Type, ${name}`}
         value={kind.type ?? 'B'}
         choices={[
-          { value: 'A', label: 'A: from repeated readings' },
-          { value: 'B', label: 'B: from other knowledge' },
+          { value: 'A', label: 'A: readings' },
+          { value: 'B', label: 'B: otherwise' },
         ]}
         onChange={choose('type')}
       />

@@ -41,10 +41,12 @@ function Row({ name, needed }: Pick<PlannedDetector, 'name' | 'needed'>) {
       </tr>
     );
   }
-  const { factor, current, particlesPerSecond, arealDensity, solidAngle, time } = needed;
+  const { factor, factorOfCurrent, current, particlesPerSecond: rate } = needed;
+  const { arealDensity, solidAngle, time } = needed;
+  const beam = typeof factorOfCurrent === 'number' ? (current ?? rate) : null;
   const texts = [
     factor <= 1 ? `enough, × ${formatNumber(factor, 3)}` : `× ${formatNumber(factor, 3)}`,
-    formatNumber((current ?? particlesPerSecond).value, 4),
+    beam ? formatNumber(beam.value, 4) : 'none',
     formatNumber(arealDensity.value, 4),
     typeof solidAngle === 'number' ? formatNumber(solidAngle * 1e3, 4) : 'none',
     timeText(time.value),
@@ -72,7 +74,7 @@ export function NeededPanel({ plan }: { plan: RunPlan }) {
       title="What would it take?"
       says={
         beamTime &&
-        `Any one of these, the rest as it is, reaches ${percentText(relativePrecision)} at a position within ${timeText(beamTime.value)}, sample and blank together.`
+        `Any one of these, the rest as it is, reaches ${percentText(relativePrecision)} at a position within ${timeText(beamTime.value)}, sample and blank together. Attenuation and the mean over the opening are taken as they are now: put the new value in and see.`
       }
     >
       {beamTime ? (

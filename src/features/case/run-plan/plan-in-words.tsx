@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react';
 import type { DetectorSent, RunPlanBody } from '#shared/contracts/run-plans.ts';
-import { formatQuantity } from '#shared/units/format.ts';
 import type { Quantity } from '#shared/units/quantity.ts';
+import { typedForm as exactly } from '../model/typing.ts';
 import { METHOD_NAMES } from '../model/words.ts';
 import { INPUT_NAMES } from './model/words.ts';
 import { isotopesText } from './model/isotopes.ts';
@@ -9,8 +9,7 @@ import { percentText } from './model/numbers.ts';
 
 type Line = [string, ReactNode];
 const said = (name: string, text: ReactNode): Line[] => (text === undefined ? [] : [[name, text]]);
-const quantity = (name: string, q: Quantity | undefined): Line[] =>
-  said(name, q && formatQuantity(q, 17));
+const quantity = (name: string, q: Quantity | undefined): Line[] => said(name, q && exactly(q));
 
 function linesOf(plan: RunPlanBody): Line[] {
   const { beam, foil, gas, aim, uncertainties = {} } = plan;
@@ -40,6 +39,8 @@ function linesOf(plan: RunPlanBody): Line[] {
       aim?.relativePrecision === undefined ? undefined : percentText(aim.relativePrecision),
     ),
     ...quantity('Beam time', aim?.beamTime),
+    ...quantity('Set-up at each position', aim?.setupTime),
+    ...quantity('Shift', aim?.shift),
     ...Object.entries(INPUT_NAMES).flatMap(([input, name]) => {
       const value = uncertainties[input as keyof typeof INPUT_NAMES];
       if (value === undefined) return [];
@@ -52,12 +53,16 @@ function linesOf(plan: RunPlanBody): Line[] {
 function detectorText(one: DetectorSent): string {
   const parts = [
     `${one.angle}°`,
-    one.distance && `at ${formatQuantity(one.distance, 17)}`,
-    one.apertureRadius && `radius ${formatQuantity(one.apertureRadius, 17)}`,
+    one.distance && `at ${exactly(one.distance)}`,
+    one.apertureRadius && `radius ${exactly(one.apertureRadius)}`,
+    one.innerRadius && `hole ${exactly(one.innerRadius)}`,
+    one.width && `width ${exactly(one.width)}`,
+    one.height && `height ${exactly(one.height)}`,
     one.solidAngle === undefined ? undefined : `${one.solidAngle} sr`,
     one.efficiency === undefined ? undefined : `efficiency ${one.efficiency}`,
-    one.deadTime && `dead time ${formatQuantity(one.deadTime, 17)}`,
-    one.backgroundRate && `background ${formatQuantity(one.backgroundRate, 17)}`,
+    one.deadTime && `dead time ${exactly(one.deadTime)}`,
+    one.backgroundRate && `background ${exactly(one.backgroundRate)}`,
+    one.beamBackgroundRate && `background of the beam ${exactly(one.beamBackgroundRate)}`,
   ];
   return parts.filter((part) => part !== undefined).join(', ');
 }

@@ -43,10 +43,10 @@ const dimmed = ({ stale, answer }: PartProps) => ({
 function Detectors({ plan, answer, chosen, onChoose }: PartProps) {
   const choose = { plan, chosen, onChoose };
   return (
-    <Panel title="Detectors">
+    <Panel title="Detectors of the run">
       <div className="grid grid-cols-[minmax(0,1fr)] items-start gap-x-6 gap-y-4 @2xl:grid-cols-[minmax(0,1fr)_minmax(0,1.25fr)]">
         <TopView {...choose} answered={answer?.detectors ?? []} />
-        <section aria-label="Detectors of the run" className="@container min-w-0 print:hidden">
+        <section aria-label="The chosen detector" className="@container min-w-0 print:hidden">
           <DetectorInputs {...choose} />
         </section>
       </div>
@@ -68,7 +68,7 @@ function Answer(props: PartProps & { answer: RunPlan }) {
         </Panel>
       )}
       <NeededPanel plan={answer} />
-      <RunSheet plan={answer} fileName={fileName} />
+      <RunSheet plan={props.plan} answer={answer} fileName={fileName} />
       <ContributionsPanel plan={props.plan} answer={answer} />
       <TargetChecks plan={answer} />
       <PlanWarnings warnings={answer.warnings} />

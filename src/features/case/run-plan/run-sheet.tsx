@@ -1,62 +1,69 @@
 import { useState } from 'react';
 import { Segmented } from '#src/components/segmented.tsx';
 import { Field, TextInput } from '#src/components/field.tsx';
-import type { RunPlan } from '#shared/contracts/run-plans.ts';
+import type { RunPlan, RunPlanBody } from '#shared/contracts/run-plans.ts';
 import { formatNumber } from '#shared/units/format.ts';
+import type { Quantity } from '#shared/units/quantity.ts';
+import { UNITS } from '#shared/units/vocabulary.ts';
 import { Power } from '#src/components/figure.tsx';
 import { TakeRows } from '../aids/take-rows.tsx';
+import { QuantityField } from '../components/typed-fields.tsx';
+import { useEditing } from '../editing/editor-context.ts';
 import { readPlainNumber } from '../model/typing.ts';
 import type { NumberRules } from '../model/typing.ts';
 import { Panel, TableBox } from '../validity/panel.tsx';
 import { Time } from './amount.tsx';
+import { putIn } from './model/plan.ts';
 import { percentText, timeText } from './model/numbers.ts';
 import { sheetInTime, sheetToAim } from './model/run-sheet.ts';
-import type { Sheet, SheetRules } from './model/run-sheet.ts';
+import type { Sheet } from './model/run-sheet.ts';
 import { clockText, sheetRows, shiftText } from './model/sheet-rows.ts';
 import { Cell, HeadCells, NameCell } from './table-cells.tsx';
 
-type Key = 'shift' | 'lostInShift' | 'setUp';
+const LOST: NumberRules = { minimum: 0, what: 'The time lost' };
+const DEFAULT_SHIFT = 8 * 3600;
 
-const FIELDS: readonly { key: Key; label: string; rules: NumberRules; seconds: number }[] = [
-  {
-    key: 'shift',
-    label: 'Length of a shift (h)',
-    rules: { minimum: 0, exclusiveMinimum: true, maximum: 168, what: 'The shift' },
-    seconds: 3600,
-  },
-  {
-    key: 'lostInShift',
-    label: 'Lost in each shift (min)',
-    rules: { minimum: 0, what: 'The time lost' },
-    seconds: 60,
-  },
-  {
-    key: 'setUp',
-    label: 'Set-up at each position (min)',
-    rules: { minimum: 0, what: 'The set-up' },
-    seconds: 60,
-  },
-];
+const secondsOf = (q: Quantity | undefined): number | undefined =>
+  q && q.value * (UNITS.time[q.unit] ?? 1);
 
-type Texts = Record<Key, string>;
+/** Shifts and set-up of the plan, saved with it, and what each shift loses, for this sheet alone. */
+function readLost(text: string, shift: number): { seconds: number } | { problem: string } {
+  const reading = readPlainNumber(text, LOST);
+  if (!('value' in reading)) return { problem: 'problem' in reading ? reading.problem : '' };
+  const seconds = 60 * reading.value;
+  return seconds < shift ? { seconds } : { problem: 'More is lost than a shift has.' };
+}
 
-/** The rules typed, and what is wrong with each; null rules until all of them hold. */
-function readRules(texts: Texts): { rules: SheetRules | null; problems: Partial<Texts> } {
-  const problems: Partial<Texts> = {};
-  const values: Partial<Record<Key, number>> = {};
-  for (const { key, rules, seconds } of FIELDS) {
-    const reading = readPlainNumber(texts[key], rules);
-    if ('value' in reading) values[key] = reading.value * seconds;
-    else if ('problem' in reading) problems[key] = reading.problem;
-  }
-  const { shift, lostInShift, setUp } = values;
-  if (shift !== undefined && lostInShift !== undefined && !(lostInShift < shift)) {
-    problems.lostInShift = 'More is lost than a shift has.';
-  }
-  const sound = Object.keys(problems).length === 0;
-  return sound && shift !== undefined && lostInShift !== undefined && setUp !== undefined
-    ? { rules: { shift, lostInShift, setUp }, problems }
-    : { rules: null, problems };
+function Overheads({ plan }: { plan: RunPlanBody }) {
+  const above = { minimum: 0, unit: 's' };
+  return (
+    <>
+      <QuantityField
+        optional
+        pointer="/runPlan/aim/shift"
+        label="Length of a shift"
+        name="the shift"
+        dimension="time"
+        value={plan.aim?.shift}
+        fallbackUnit="h"
+        rules={{ ...above, exclusiveMinimum: true, what: 'The shift' }}
+        put={putIn('aim', 'shift')}
+        hint="8 h where it is left empty."
+      />
+      <QuantityField
+        optional
+        pointer="/runPlan/aim/setupTime"
+        label="Set-up at each position"
+        name="the set-up"
+        dimension="time"
+        value={plan.aim?.setupTime}
+        fallbackUnit="min"
+        rules={{ ...above, what: 'The set-up' }}
+        put={putIn('aim', 'setupTime')}
+        hint="Moving, pumping, checking."
+      />
+    </>
+  );
 }
 
 function Lines({ sheet }: { sheet: Sheet }) {
@@ -119,47 +126,60 @@ function SheetBody({ sheet, fileName }: { sheet: Sheet; fileName: string }) {
   );
 }
 
+interface RunSheetProps {
+  plan: RunPlanBody;
+  answer: RunPlan;
+  fileName: string;
+}
+
 /** Positions in the order of the shortest way, when each begins, and in which shift. */
-export function RunSheet({ plan, fileName }: { plan: RunPlan; fileName: string }) {
-  const [texts, setTexts] = useState<Texts>({ shift: '8', lostInShift: '30', setUp: '10' });
+export function RunSheet({ plan, answer, fileName }: RunSheetProps) {
+  const { readOnly } = useEditing();
+  const [lostText, setLostText] = useState('0');
   const [wish, setWish] = useState<'time' | 'aim'>('time');
-  const { rules, problems } = readRules(texts);
-  const inTime = plan.aim.beamTime !== undefined && wish === 'time';
-  const sheet = rules && (inTime ? sheetInTime(plan, rules) : sheetToAim(plan, rules));
+  const shift = secondsOf(plan.aim?.shift) ?? DEFAULT_SHIFT;
+  const lost = readLost(lostText, shift);
+  const inTime = answer.aim.beamTime !== undefined && wish === 'time';
+  const lay = inTime ? sheetInTime : sheetToAim;
+  const setUp = secondsOf(plan.aim?.setupTime) ?? 0;
+  const sheet = 'problem' in lost ? null : lay(answer, { shift, lostInShift: lost.seconds, setUp });
   return (
     <Panel
       title="Run sheet"
-      says="One position after the other, in one sweep of the angle; sample and blank at each stop. The overheads are for this sheet alone and are not saved."
+      says="One position after the other, in one sweep of the angle; sample and blank at each stop."
     >
       <div className="flex flex-col gap-3">
-        {plan.aim.beamTime && (
+        {answer.aim.beamTime && (
           <div data-screen-only>
             <Segmented
               label="What the sheet is for"
               value={wish}
               choices={[
-                { value: 'time', label: 'equal precision in the beam time' },
-                { value: 'aim', label: 'the precision aimed at' },
+                { value: 'time', label: 'the time there is' },
+                { value: 'aim', label: 'the precision' },
               ]}
               onChange={setWish}
             />
           </div>
         )}
-        <div className="grid items-start gap-3 @xs:grid-cols-3" data-screen-only>
-          {FIELDS.map(({ key, label }) => (
-            <Field key={key} label={label} error={problems[key]}>
-              {(control) => (
-                <TextInput
-                  {...control}
-                  inputMode="decimal"
-                  autoComplete="off"
-                  className="font-mono"
-                  value={texts[key]}
-                  onChange={(event) => setTexts({ ...texts, [key]: event.target.value })}
-                />
-              )}
-            </Field>
-          ))}
+        <div className="grid items-start gap-3 @lg:grid-cols-3" data-screen-only>
+          <Overheads plan={plan} />
+          <Field
+            label="Lost in each shift (min)"
+            hint={readOnly ? undefined : 'For this sheet alone, not saved.'}
+            error={'problem' in lost ? lost.problem : undefined}
+          >
+            {(control) => (
+              <TextInput
+                {...control}
+                inputMode="decimal"
+                autoComplete="off"
+                className="font-mono"
+                value={lostText}
+                onChange={(event) => setLostText(event.target.value)}
+              />
+            )}
+          </Field>
         </div>
         {sheet &&
           ('reason' in sheet ? (

@@ -164,7 +164,7 @@ export function TargetOfRun({ plan }: { plan: RunPlanBody }) {
           }
         />
       </div>
-      <div className="grid items-start gap-3 @xs:grid-cols-2">
+      <div className="grid items-start gap-3 @[21rem]:grid-cols-2">
         {gas ? (
           <Gas gas={gas} />
         ) : kind === 'slab' ? (

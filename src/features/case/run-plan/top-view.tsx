@@ -228,8 +228,12 @@ export function TopView({ plan, answered, chosen, onChoose }: TopViewProps) {
         <Scale plan={plan} />
       </svg>
       <figcaption className="text-center text-xs text-muted">
-        From above, to scale; the beam comes from the left. Drag a detector, or move it with the
-        arrow keys (with Shift by 0.1°).
+        From above, to scale; the beam comes from the left.{' '}
+        {!readOnly && (
+          <span data-screen-only>
+            Drag a detector, or move it with the arrow keys (with Shift by 0.1°).
+          </span>
+        )}
       </figcaption>
     </figure>
   );
