@@ -9,13 +9,15 @@ import { computeScanPoint } from '#server/modules/scans/compute-scan-point.ts';
 import type { ScanPart, ScanPointTask } from '#server/modules/scans/compute-scan-point.ts';
 import type { RunPlan, RunPlanRequest } from '#shared/contracts/run-plans.ts';
 import { computeRunPlan } from '#server/modules/run-plans/compute-run-plan.ts';
+import { drawReport } from '#server/reports/draw-report.ts';
+import type { ReportInput } from '#server/reports/report-input.ts';
 import { computeRunPlanTrials } from '#server/modules/run-plans/compute-run-plan-trials.ts';
 import type {
   RunPlanTrialsTask,
   TrialsPart,
 } from '#server/modules/run-plans/compute-run-plan-trials.ts';
 
-/** What the engine can be asked, with what goes in and what comes out: plain JSON both ways. */
+/** What the engine can be asked, with what goes in and what comes out: plain JSON both ways, but for the bytes of a report. */
 export interface EngineKinds {
   estimate: { input: EstimateTask; output: Estimate };
   /** The same collision in a material. */
@@ -28,6 +30,8 @@ export interface EngineKinds {
   scanPoint: { input: ScanPointTask; output: ScanPart };
   /** What the Reference shows of a form: V(r), its transform, remarks. */
   formSheet: { input: EstimateRequest; output: FormSheet };
+  /** A saved version on paper. */
+  report: { input: ReportInput; output: Uint8Array };
 }
 export type EngineKind = keyof EngineKinds;
 
@@ -40,4 +44,5 @@ export const ENGINE: {
   runPlanTrials: computeRunPlanTrials,
   scanPoint: computeScanPoint,
   formSheet: drawForm,
+  report: drawReport,
 };

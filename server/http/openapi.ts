@@ -27,15 +27,16 @@ function refusalsOf(route: Route): Set<ErrorCode> {
 const TEXT = { type: 'string' };
 
 function responsesOf(route: Route, schemas: JsonSchemas): JsonSchema {
-  const done = route.response
-    ? {
-        description: 'Done.',
-        content: {
-          'application/json': { schema: schemas.of(route.response, 'output') },
-          ...Object.fromEntries(route.otherTypes.map((type) => [type, { schema: TEXT }])),
-        },
-      }
-    : { description: 'Done; nothing to answer.' };
+  const content = {
+    ...(route.response && {
+      'application/json': { schema: schemas.of(route.response, 'output') },
+    }),
+    ...Object.fromEntries(route.otherTypes.map((type) => [type, { schema: TEXT }])),
+  };
+  const done =
+    Object.keys(content).length > 0
+      ? { description: 'Done.', content }
+      : { description: 'Done; nothing to answer.' };
   const problem = { schema: schemas.of(problemSchema, 'output') };
   const refused = [...groupBy(refusalsOf(route), (code) => STATUS_OF[code])].map(
     ([status, codes]) => [

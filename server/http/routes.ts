@@ -9,6 +9,7 @@ import { jobRoutes } from '#server/modules/jobs/jobs.routes.ts';
 import { libraryRoutes } from '#server/modules/library/library.routes.ts';
 import { materialAidRoutes } from '#server/modules/material-aids/material-aids.routes.ts';
 import { referenceRoutes } from '#server/modules/reference/reference.routes.ts';
+import { reportRoutes } from '#server/modules/reports/reports.routes.ts';
 import { scanRoutes } from '#server/modules/scans/scans.routes.ts';
 import { runPlanRoutes } from '#server/modules/run-plans/run-plans.routes.ts';
 import { searchRoutes } from '#server/modules/search/search.routes.ts';
@@ -26,6 +27,7 @@ export const ROUTES: readonly Route[] = [
   ...campaignRoutes,
   ...caseRoutes,
   ...versionRoutes,
+  ...reportRoutes,
   ...estimateRoutes,
   ...materialAidRoutes,
   ...runPlanRoutes,

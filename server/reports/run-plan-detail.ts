@@ -1,0 +1,121 @@
+import type { PlannedDetector, RunPlan } from '#shared/contracts/run-plans.ts';
+import type { Paper } from './paper.ts';
+import { drawTable } from './table.ts';
+import type { Column } from './table.ts';
+import { amount, number, percent, short } from './words.ts';
+
+const FACTORS: Record<PlannedDetector['factors'][number]['name'], string> = {
+  beamRate: 'beam rate',
+  arealDensity: 'areal density',
+  slant: 'slant of the target',
+  dcs: 'dσ/dΩ at the centre',
+  solidAngle: 'solid angle',
+  efficiency: 'efficiency',
+};
+const INPUTS: Record<PlannedDetector['uncertaintyBudget'][number]['input'], string> = {
+  current: 'current',
+  thickness: 'thickness',
+  density: 'density',
+  efficiency: 'efficiency',
+  solidAngle: 'solid angle',
+  background: 'background',
+  energy: 'energy',
+  angle: 'angle',
+};
+const right = { align: 'right' } as const;
+
+/** The product that anyone can check by hand, and what averaging makes of it. */
+export function drawFactors(paper: Paper, { detectors }: RunPlan): void {
+  const names = Object.keys(FACTORS).filter((name) =>
+    detectors.some(({ factors }) => factors.some((factor) => factor.name === name)),
+  );
+  const unitOf = (name: string) =>
+    detectors.flatMap(({ factors }) => factors).find((factor) => factor.name === name)?.unit ?? '1';
+  const columns: Column[] = [
+    { head: 'Detector', share: 1.3 },
+    ...names.map((name) => ({
+      head: headOf(FACTORS[name as keyof typeof FACTORS], unitOf(name)),
+      share: 1.3,
+      ...right,
+    })),
+    { head: 'product (1/s)', share: 1.3, ...right },
+    { head: '× acceptance', share: 1.2, ...right },
+    { head: '× energies', share: 1.1, ...right },
+    { head: '× attenuation', share: 1.3, ...right },
+  ];
+  paper.heading('Rates, factor by factor', 2);
+  paper.text('The product of the factors, then what the average multiplies it by.');
+  drawTable(
+    paper,
+    columns,
+    detectors.map((one) => [
+      one.name,
+      ...names.map((name) => {
+        const factor = one.factors.find((known) => known.name === name);
+        return factor ? number(factor.value) : '—';
+      }),
+      one.product ? number(one.product.value) : '—',
+      number(one.averaging.acceptance),
+      number(one.averaging.energies),
+      number(one.averaging.attenuation),
+    ]),
+  );
+}
+
+function headOf(name: string, unit: string): string {
+  const symbol = unit === '1' ? '' : amount({ value: 1, unit }).replace(/^[\d.]+\s/, '');
+  return symbol === '' ? name : `${name} (${symbol})`;
+}
+
+/** Where the uncertainty of each detector comes from. */
+export function drawBudget(paper: Paper, { detectors }: RunPlan): void {
+  paper.heading('Uncertainty budget', 2);
+  const lines = detectors.flatMap((one) => [
+    ...one.uncertaintyBudget.map((line) => [
+      one.name,
+      INPUTS[line.input],
+      line.input === 'angle'
+        ? `${short(line.relativeStandardUncertainty)}°`
+        : percent(line.relativeStandardUncertainty),
+      line.input === 'angle' ? `${short(line.sensitivity)} /°` : short(line.sensitivity),
+      percent(line.contribution),
+      `${line.type}, ${line.distribution}`,
+      line.freedom === null ? '∞' : short(line.freedom),
+      line.shared ? 'all detectors' : 'this one',
+    ]),
+    combinedRow(one),
+  ]);
+  drawTable(
+    paper,
+    [
+      { head: 'Detector', share: 1.3 },
+      { head: 'Input', share: 1.8 },
+      { head: 'std. uncertainty', share: 1.2, ...right },
+      { head: 'sensitivity', share: 1.2, ...right },
+      { head: 'contribution', share: 1.2, ...right },
+      { head: 'type, distribution', share: 1.5 },
+      { head: 'freedom', share: 0.9, ...right },
+      { head: 'shared by', share: 1.2 },
+    ],
+    lines,
+  );
+}
+
+function combinedRow({
+  name,
+  combined,
+  combinedWithCounting,
+  expanded,
+}: PlannedDetector): string[] {
+  const { coverageFactor, relative, coverage, freedom } = expanded;
+  return [
+    name,
+    `combined ${percent(combined)}`,
+    '',
+    'with counting',
+    percent(combinedWithCounting),
+    `k = ${short(coverageFactor)}: ${percent(relative)}`,
+    freedom === null ? '∞' : short(freedom),
+    `${percent(coverage)} coverage`,
+  ];
+}
