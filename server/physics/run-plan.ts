@@ -10,6 +10,7 @@ import { collisionCurve, removalOf } from './collision-curve.ts';
 import type { Plan, PlanDetector, PlannedCollision } from './plan.ts';
 import type { PlannedDetector } from './planned-detector.ts';
 import { planDetector, silence, slabFor } from './planned-detector.ts';
+import { DomainError } from '#shared/errors.ts';
 import type { TargetChecks } from './target-checks.ts';
 import { targetChecks } from './target-checks.ts';
 
@@ -59,6 +60,20 @@ const once = (curveAt: (energy: number) => CollisionCurve) => {
 export const curvesOf = ({ problemAt, method }: PlannedCollision) =>
   once((energy) => collisionCurve(problemAt(energy), method));
 
+/** Refusals of a contribution are told at its place. */
+function placedAt<T>(path: string, curveAt: (energy: number) => T): (energy: number) => T {
+  return (energy) => {
+    try {
+      return curveAt(energy);
+    } catch (fault) {
+      if (!(fault instanceof DomainError) || fault.code !== 'invalidInput') throw fault;
+      const inner = fault.details.errors ?? [{ path: '', message: fault.message }];
+      const errors = inner.map((one) => ({ ...one, path: `${path}${one.path}` }));
+      throw new DomainError(fault.code, fault.message, { errors });
+    }
+  };
+}
+
 /** The angle beyond which a collision counts where their number diverges, rad. */
 function smallestThatMatters(detectors: readonly PlanDetector[]): number {
   const each = detectors.map(({ cone }) => Math.max(cone.halfAngle, rayOf(cone) / SHARE_OF_ANGLE));
@@ -103,7 +118,10 @@ export function runPlan(plan: Plan): RunPlanResult {
   const { problem, target, beam, detectors } = plan;
   const slant = 1 / Math.cos(target.tilt);
   const curveAt = curvesOf(plan);
-  const others = plan.contributions.map((one) => ({ ...one, curveAt: curvesOf(one) }));
+  const others = plan.contributions.map((one, i) => ({
+    ...one,
+    curveAt: placedAt(`/contributions/${i}`, curvesOf(one)),
+  }));
   const beyond = smallestThatMatters(detectors);
   const removals = [{ ...target, curveAt }, ...others].map((one) => ({
     scatterers: one.scatterers,

@@ -31,6 +31,27 @@ describe('the cross section of a plan', () => {
     expectRelative(valueOf(other), dcs / 100, 1e-12);
   });
 
+  test.each(['partialWaves', 'eikonal', 'born2'] as const)('by %s too', (method) => {
+    const estimate = { ...YUKAWA, methods: [method], angles: { values: [40] } };
+    const found = answer(estimate).methods[method];
+    if (!found || 'unavailable' in found) throw new Error(`${method} did not answer`);
+    const one = only(plan(thinPlan({ method })));
+    expectRelative(valueOf(one.pointDcs), found.differential[0]?.dcs ?? NaN, 1e-12);
+    expect(one.trueRate.value).not.toBe(only(plan(thinPlan())).trueRate.value);
+  });
+
+  test('what a method does not allow is refused at its place', () => {
+    const bare = { ...ALPHA_ON_GOLD, methods: ['born2'] };
+    const foil = { formula: 'CH2', scatterer: 'C', arealDensity: Q(1e-10, 'g/cm2') };
+    const alpha = {
+      ...bare,
+      interaction: { terms: [{ form: 'yukawa', V0: Q(1, 'eV'), a: Q(1, 'pm') }] },
+    };
+    const other = { scatterer: 'H', estimate: bare, method: 'born2' };
+    const sent = thinPlan({ estimate: alpha, foil, method: 'born1', contributions: [other] });
+    expect(faultsOf(sent).map(({ path }) => path)).toEqual(['/contributions/0/method']);
+  });
+
   test('both branches of a heavy projectile count', () => {
     const estimate = {
       projectile: { species: 'alpha' },
