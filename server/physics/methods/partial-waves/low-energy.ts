@@ -52,16 +52,23 @@ function fallAt({ field }: RadialInteraction, R: number): number {
   return Math.log2(near / (out[0] ?? NaN));
 }
 
+const FERMI = 1e-5;
+/** Nuclei are measured in fm, atoms in angstrom. */
+const scaleOf = (size: number): [number, string] =>
+  size < 100 * FERMI ? [FERMI, 'fm'] : [1, 'angstrom'];
+
 function complexLength({ R, u, uIm, slope, slopeIm }: ZeroWave): string {
   const size = slope * slope + slopeIm * slopeIm;
   const re = R - (u * slope + uIm * slopeIm) / size;
   const im = -(uIm * slope - u * slopeIm) / size;
   const sign = im < 0 ? '-' : '+';
-  return `Complex depths: the scattering length is ${Number(re.toPrecision(8))} ${sign} ${Number(Math.abs(im).toPrecision(8))}i angstrom; bound states are not counted.`;
+  const [unit, name] = scaleOf(Math.hypot(re, im));
+  const text = (part: number) => Number((part / unit).toPrecision(6));
+  return `Complex depths: the scattering length is ${text(re)} ${sign} ${text(Math.abs(im))}i ${name}; bound states are not counted.`;
 }
 
 const NEARLY = (a: number, R: number): string =>
-  `Resonance at zero energy: the scattering length, ${Number(a.toPrecision(4))} angstrom, is ${Math.round(Math.abs(a) / R)} times the reach of the potential; ${
+  `Resonance at zero energy: the scattering length is ${Math.round(Math.abs(a) / R)} times the reach of the potential; ${
     a > 0 ? 'the last bound state is barely bound' : 'one more bound state is barely missed'
   }, and cross sections at low energy depend on the last digits of the strength.`;
 
