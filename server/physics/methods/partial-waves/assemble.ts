@@ -91,33 +91,3 @@ export function flipAmplitude({ re, im, error }: Coefficients, k: number, q: num
   const rounding = UNIT_ROUNDOFF * (8 + 2 * re.length) * size;
   return { re: sum.re, im: sum.im, error: error * re.length + rounding };
 }
-
-/**
- * Amplitude of a point charge.
- *
- * Formula: f = -(eta/2k t²) exp(-i eta ln t² + 2i sigma_0), t = sin(theta/2) = q/2k.
- *
- * @returns null at q = 0, where it diverges
- *
- * Source: W. Gordon, Z. Phys. 48 (1928) 180.
- */
-export function coulombAmplitude(
-  { eta, sigma, sigmaError }: ScatteredCharge,
-  k: number,
-  q: number,
-  blur: number,
-): Amplitude | null {
-  const t = q / (2 * k);
-  const size = -eta / (2 * k * t * t);
-  if (!(q > 0 && Number.isFinite(size))) return null;
-  const turn = 2 * eta * Math.log(t);
-  const phase = 2 * (sigma[0] ?? 0) - turn;
-  const known =
-    UNIT_ROUNDOFF * (8 + 4 * Math.abs(turn) + 2 * Math.abs(phase)) + 2 * (sigmaError[0] ?? 0);
-  const slope = (Q_ALLOWANCE + blur) * 2 * Math.hypot(1, eta);
-  return {
-    re: size * Math.cos(phase),
-    im: size * Math.sin(phase),
-    error: Math.abs(size) * (known + slope),
-  };
-}

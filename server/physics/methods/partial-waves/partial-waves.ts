@@ -2,9 +2,9 @@ import type { Term } from '#server/physics/potentials/types.ts';
 import type { Amplitude, Condition, PartialWaves, Unavailable, Wave } from '../amplitude.ts';
 import type { FirstBorn } from '../born1.ts';
 import { firstBorn } from '../born1.ts';
+import { coulombAmplitude } from '../coulomb-amplitude.ts';
 import type { MethodInput } from '../method-input.ts';
 import {
-  coulombAmplitude,
   directCoefficients,
   directSum,
   flipAmplitude,
@@ -149,10 +149,11 @@ export function partialWaves(input: PartialWaveInput): PartialWaves | Unavailabl
     const first = closing(q, blur);
     return { re: first.re + sum.re, im: first.im + sum.im, error: first.error + sum.error };
   };
+  const pointCharges = isCharged(scattered) ? coulombAmplitude(scattered.eta, k) : null;
   const amplitude = (q: number, blur = 0): Amplitude | null => {
     const rest = shortRange(q, blur);
-    if (!isCharged(scattered)) return rest;
-    const point = coulombAmplitude(scattered, k, q, blur);
+    if (!pointCharges) return rest;
+    const point = pointCharges(q, blur);
     return (
       point && { re: point.re + rest.re, im: point.im + rest.im, error: point.error + rest.error }
     );
