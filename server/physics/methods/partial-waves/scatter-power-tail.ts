@@ -10,7 +10,7 @@ import { RadialSolver } from './radial-wave.ts';
 import type { Scattered } from './scatter.ts';
 import { freeOuter, isWeak, tooNarrow, UNRESOLVED } from './scatter.ts';
 import type { Transition } from './transition.ts';
-import { spinFactor, spinsOf, turned, weightOf } from './transition.ts';
+import { spinFactor, spinsOf, turned } from './transition.ts';
 
 /** Radians of the wave where the asymptotic treatment of the tail begins at the earliest. */
 const NEAREST = 80;
@@ -33,13 +33,17 @@ function matchAt(interaction: RadialInteraction, k: number): number {
   return R;
 }
 
-/** Last order whose phase squared counts; a phase of order l is about U(b) b/k at b = l/k. */
-function lastWave(interaction: RadialInteraction, k: number, from: number, sum: number): number {
+/**
+ * Last order whose phase squared counts, and Σ (2l+1) delta² beyond it; a phase of order l is about U(b) b/k at b = l/k, and falls at
+ * least as the cube of l.
+ */
+function lastWave(interaction: RadialInteraction, k: number, from: number, sum: number) {
   const out = new Float64Array(interaction.field.components);
   const left = (l: number) => (l * sizeAt(interaction, out, l / k) * (l / k)) ** 2 / k ** 2;
   let l = Math.max(16, from);
   while (left(l) > LEFT * sum && l < MOST_WAVES) l = Math.ceil(1.1 * l);
-  return Math.min(l, MOST_WAVES);
+  const lMax = Math.min(l, MOST_WAVES);
+  return { lMax, left: left(lMax) };
 }
 
 /**
@@ -112,7 +116,7 @@ export function scatterPowerTail(
   const refused = tooMany(found, last);
   if (refused) return refused;
   const forward = Math.abs(k * born.shortRange(0).re);
-  const lMax = lastWave(interaction, k, last, forward);
+  const { lMax, left } = lastWave(interaction, k, last, forward);
   const phases = projectedBorn(born, k, lMax);
   const within = innerIntegrals(interaction, inner, inner.count, below, k, last);
   const square = tailOfSquare(interaction.field, k, R, last);
@@ -152,6 +156,5 @@ export function scatterPowerTail(
       waves.push(waveOf(interaction, l, spin, T, 1e-18 * forward));
     }
   }
-  const size = waves.reduce((sum, wave) => sum + weightOf(wave) * Math.hypot(wave.re, wave.im), 0);
-  return { waves, born: phases, lMax, summed: lMax, left: LEFT * size + beyond / 30 };
+  return { waves, born: phases, lMax, summed: lMax, left: left + beyond / 30 };
 }

@@ -62,6 +62,14 @@ describe.each(CASES)('%s %j at k = %s', (form, values, k) => {
 });
 
 describe('limits and symmetries', () => {
+  test('a potential far too weak for its square to be seen keeps the optical theorem', () => {
+    const [k, V0] = [6, -1e-7];
+    const found = wavesOf([build('gaussian', { V0, a: 2 })], k);
+    const f = found.amplitude(0);
+    expect(f?.im).toBeLessThan(1e-6 * (f?.re ?? NaN));
+    expectRelative(((4 * Math.PI) / k) * (f?.im ?? NaN), overAngle(found, k), 1e-9);
+  });
+
   test.each(['gaussian', 'exponential', 'yukawa', 'woodsSaxon'])(
     'a weak %s is first order, and differs from it by second order',
     (form) => {
