@@ -94,12 +94,14 @@ function Counted({ contribution, index }: { contribution: Contribution; index: n
         )}
       </div>
       {!readOnly && (
-        <IconButton
-          label={`Count ${scatterer} no longer`}
-          onClick={() => change(`remove ${index}`, (list) => list.filter((_, i) => i !== index))}
-        >
-          <Trash2 aria-hidden="true" className="size-4" />
-        </IconButton>
+        <span data-screen-only>
+          <IconButton
+            label={`Count ${scatterer} no longer`}
+            onClick={() => change(`remove ${index}`, (list) => list.filter((_, i) => i !== index))}
+          >
+            <Trash2 aria-hidden="true" className="size-4" />
+          </IconButton>
+        </span>
       )}
     </li>
   );
@@ -180,7 +182,12 @@ export function ContributionsPanel({ plan, answer }: { plan: RunPlanBody; answer
             ))}
           </ul>
         )}
-        {left.length > 0 && !readOnly && <AddElement names={left} />}
+        {left.length > 0 && <p className="hidden print:block">Not counted: {left.join(', ')}.</p>}
+        {left.length > 0 && !readOnly && (
+          <div data-screen-only>
+            <AddElement names={left} />
+          </div>
+        )}
       </div>
     </Panel>
   );

@@ -3,6 +3,7 @@ import { formatNumber } from '#shared/units/format.ts';
 import type { BudgetLine, PlannedDetector } from '#shared/contracts/run-plans.ts';
 import { TableBox, bodyCell, headCell } from '../validity/panel.tsx';
 import { Amount, Time } from './amount.tsx';
+import { DetectorCounts } from './detector-counts.tsx';
 import { INPUT_NAMES } from './model/words.ts';
 import { SameAngle } from './target-checks.tsx';
 import { percentText, timeText } from './model/numbers.ts';
@@ -200,6 +201,7 @@ export function DetectorDetail({ detector }: { detector: PlannedDetector }) {
           .
         </p>
       )}
+      <DetectorCounts detector={detector} />
       <Budget detector={detector} />
       <SameAngle detector={detector} />
     </div>

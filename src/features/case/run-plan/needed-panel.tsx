@@ -21,9 +21,11 @@ function Asking() {
         angle or time would reach the precision.
       </p>
       {!readOnly && (
-        <Button size="small" onClick={ask}>
-          Ask for 24 h of beam
-        </Button>
+        <span data-screen-only>
+          <Button size="small" onClick={ask}>
+            Ask for 24 h of beam
+          </Button>
+        </span>
       )}
     </div>
   );

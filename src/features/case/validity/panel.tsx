@@ -51,7 +51,7 @@ export const bodyCell = 'px-3 py-0.5 text-right whitespace-nowrap';
 export function TableBox({ label, children }: { label: string; children: ReactNode }) {
   return (
     <div
-      className="relative max-h-96 overflow-auto rounded border border-line"
+      className="relative max-h-96 overflow-auto rounded border border-line print:max-h-none print:overflow-visible"
       tabIndex={0}
       role="region"
       aria-label={label}
