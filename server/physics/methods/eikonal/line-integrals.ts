@@ -38,6 +38,7 @@ function closedLine(term: Term): LineIntegral | null {
  * r(z) = √(b² + z²) has its branch points at z = ±ib.
  */
 function crossings(b: number, radii: readonly number[]): number[] {
+  if (!(b > 0)) throw new RangeError(`a line integral is asked at b = ${b}; it needs b > 0`);
   const points = [0];
   let at = 0;
   for (const r of radii) {

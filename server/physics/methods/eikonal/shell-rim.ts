@@ -23,6 +23,7 @@ const ASYMPTOTIC = 500;
 const MOST_PHASE = 2e4;
 const TERMS = 8;
 const MOST_PANELS = 6000;
+const CENTRE = 1e-12;
 /** Points that are left for J0. */
 const FEW = 24;
 
@@ -117,7 +118,8 @@ export function shellRim(
   const steady = (UNIT_ROUNDOFF * 1000 * Math.min(size, R) ** 2 * size * 2 * R) / largestQ;
   const y0 = Math.min(size / ASYMPTOTIC, y1 / 2, steady ** 0.2);
   if (!(size / y0 <= MOST_PHASE)) return null;
-  const at = (y: number) => Math.sqrt((R - y) * (R + y));
+  // At the centre itself singular potentials have no phase.
+  const at = (y: number) => Math.max(Math.sqrt((R - y) * (R + y)), CENTRE * R);
   const weighted = (y: number): Complex => {
     const { re, im } = F(at(y), -A / y);
     return { re: y * re, im: y * im };

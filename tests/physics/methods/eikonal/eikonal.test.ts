@@ -310,6 +310,17 @@ describe('delta shells', () => {
     expect(narrow).toBeLessThan(0.002 * modulus(exact.shortRange(0)));
   });
 
+  test('at long waves the rim reaches the centre, where a singular term has no phase', () => {
+    const k = 0.8;
+    const terms = [shell(0.3, 1), form('hulthen', { V0: 0.2, a: 0.3 })];
+    const [f, g] = [at(terms, k).shortRange(0), at([...terms].reverse(), k).shortRange(0)];
+    expect(modulus(difference(f, g))).toBeLessThanOrEqual(f.error + g.error);
+    // f - f1 = (ik/2) ∫ b chi² db to lowest order: imaginary, positive, and smaller.
+    const beyond = difference(f, inputOf(terms, k).born.amplitude(0));
+    expect(beyond.im).toBeGreaterThan(Math.abs(beyond.re));
+    expect(modulus(beyond)).toBeLessThan(0.5 * modulus(f));
+  });
+
   test('beside a black disc of the same radius: what the disc lets through', () => {
     const k = 50;
     const disc = form('squareWell', { V0: 0, W0: -4e5, R: 1 });
