@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import type { RadialField } from '#server/physics/numerics/radial-panels.ts';
+import type { RadialField } from '#server/physics/numerics/radial-trial.ts';
 import { PanelError, radialPanels } from '#server/physics/numerics/radial-panels.ts';
 import { stepAdded } from '#server/physics/numerics/radial-added.ts';
 import type { PanelPowers } from '#server/physics/numerics/radial-powers.ts';

@@ -1,6 +1,6 @@
 import type { Unavailable } from '../amplitude.ts';
 import type { MethodInput } from '../method-input.ts';
-import type { RadialField } from '#server/physics/numerics/radial-panels.ts';
+import type { RadialField } from '#server/physics/numerics/radial-trial.ts';
 import type { Term } from '#server/physics/potentials/types.ts';
 
 /** Components of the field: central part and what multiplies l·sigma. */

@@ -1,5 +1,5 @@
 import { riccatiBessel } from '#server/physics/numerics/riccati-bessel.ts';
-import type { RadialField } from '#server/physics/numerics/radial-panels.ts';
+import type { RadialField } from '#server/physics/numerics/radial-trial.ts';
 
 /** Points on [-1, 1] where a smooth function is differentiated, and the matrix that does it. */
 const COUNT = 14;
