@@ -4,6 +4,7 @@ import { join } from 'node:path';
 import process from 'node:process';
 import { findChromium } from './lib/chromium.mjs';
 import { installDebianPackages } from './lib/debian.mjs';
+import { hasPoppler } from './lib/poppler.mjs';
 import { checkNode, prepareClone } from './lib/prepare.mjs';
 import { findBinaries } from './lib/postgres/binaries.mjs';
 import { startTestCluster } from './lib/postgres/test-cluster.mjs';
@@ -26,6 +27,7 @@ async function installWhatIsMissing(shutdown) {
   const missing = [
     ...(findBinaries().length === 0 ? ['postgresql'] : []),
     ...(findChromium() === undefined ? ['chromium', 'fonts-liberation'] : []),
+    ...(hasPoppler() ? [] : ['poppler-utils']),
   ];
   await installDebianPackages(shutdown, missing);
 }

@@ -64,6 +64,7 @@ function drawOnePage(paper: Paper, input: ReportInput, height: number): void {
   drawHead(paper, input);
   drawVerdict(paper, input);
   drawTotals(paper, input);
+  drawUnavailable(paper, input);
   if (height > 0) drawCrossSection(paper, input, height);
   if (planned) {
     drawPlanInBrief(paper, planned);
