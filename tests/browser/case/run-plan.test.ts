@@ -7,6 +7,7 @@ import { saveCase } from '#tests/browser/support/case-factory.ts';
 import { openStage, type Stage } from '#tests/browser/support/stage.ts';
 import { expectRelative } from '#tests/support/expect-relative.ts';
 import type { Agent } from '#tests/support/test-app.ts';
+import { startWorker } from '#tests/server/jobs/scan-requests.ts';
 import { retype, tabTo } from './case-steps.ts';
 
 let stage: Stage;
@@ -342,6 +343,42 @@ describe('the run sheet', () => {
     const counting = rows.slice(2).reduce((sum, row) => sum + Number(row.split(',')[5]), 0);
     // 40 h but for the set-up of two positions of ten minutes each, and half an hour of five shifts.
     expectRelative(counting, 40 * 3600 - 2 * 600 - 5 * 1800, 1e-9);
+  });
+});
+
+describe('Monte Carlo', () => {
+  test('is drawn by a worker, held against the budget, and forgotten with its inputs', async () => {
+    const worker = await startWorker(stage.app);
+    try {
+      const { page, goTo } = await stage.visitor(owner);
+      await openPlan(page, goTo);
+      const drawn = part(page, 'Monte Carlo');
+      await drawn.getByRole('button', { name: 'Draw the inputs a million times' }).click();
+      const table = drawn.getByRole('region', { name: 'Monte Carlo beside the budget' });
+      await table.waitFor({ timeout: 60_000 });
+      const [spread = ''] = await cellsOf(table, 'Monte Carlo, symmetric');
+      const [budget = ''] = await cellsOf(table, 'budget');
+      // 2 % of the current and 3 % of the efficiency: a product of two normal factors.
+      expectRelative(numberIn(budget), 100 * Math.hypot(0.02, 0.03), 2e-3);
+      expectRelative(numberIn(spread), 100 * Math.hypot(0.02, 0.03), 5e-3);
+      await expectSoundInEveryView(page);
+      await field(page, 'Thickness').fill('0.002 nm');
+      await sized(page);
+      expect(await table.count()).toBe(0);
+    } finally {
+      await worker.stop();
+    }
+  });
+
+  test('is cancelled while no worker has taken it', async () => {
+    const { page, goTo } = await stage.visitor(owner);
+    await openPlan(page, goTo);
+    const drawn = part(page, 'Monte Carlo');
+    await drawn.getByRole('button', { name: 'Draw the inputs a million times' }).click();
+    await drawn.getByText(/no worker runs/).waitFor();
+    await drawn.getByRole('button', { name: 'Cancel' }).click();
+    await drawn.getByText('Cancelled.').waitFor();
+    await drawn.getByRole('button', { name: 'Draw the inputs a million times' }).waitFor();
   });
 });
 

@@ -15,6 +15,7 @@ import {
   withSeries,
 } from '#src/features/case/run-plan/model/plan.ts';
 import { isotopesText, readIsotopes } from '#src/features/case/run-plan/model/isotopes.ts';
+import { OPENINGS, openingOf, withOpening } from '#src/features/case/run-plan/model/openings.ts';
 import { timeText } from '#src/features/case/run-plan/model/numbers.ts';
 import { withoutDetectorTexts, withoutTexts } from '#src/features/case/run-plan/model/texts.ts';
 import { putKind, putUncertainty } from '#src/features/case/run-plan/model/uncertainties.ts';
@@ -107,6 +108,25 @@ describe('detectors', () => {
       undefined,
     ]);
     expect(putInDetector(1, 'efficiency')(put, undefined).runPlan).toEqual(three);
+  });
+});
+
+describe('openings', () => {
+  const [detector] = PLAN.detectors;
+  if (!detector) throw new Error('A plan to begin with has a detector.');
+  const far = { ...detector, distance: { value: 2, unit: 'm' }, efficiency: 0.5 };
+
+  test.each(OPENINGS)('%s: known by its sides, a distance is kept, the counter stays', (kind) => {
+    const changed = withOpening(far, kind);
+    expect(openingOf(changed)).toBe(kind);
+    expect(changed.efficiency).toBe(0.5);
+    expect(changed.distance).toEqual(kind === 'solidAngle' ? undefined : far.distance);
+    expect(runPlanBodySchema.safeParse({ ...PLAN, detectors: [changed] }).success).toBe(true);
+  });
+
+  test('there and back leaves no side of another kind', () => {
+    const back = withOpening(withOpening(withOpening(far, 'annular'), 'rectangle'), 'round');
+    expect(Object.keys(back).sort()).toEqual(Object.keys(far).sort());
   });
 });
 

@@ -5,6 +5,7 @@ import { TableBox, bodyCell, headCell } from '../validity/panel.tsx';
 import { Amount, Time } from './amount.tsx';
 import { DetectorCounts } from './detector-counts.tsx';
 import { INPUT_NAMES } from './model/words.ts';
+import { MonteCarlo } from './monte-carlo.tsx';
 import { SameAngle } from './target-checks.tsx';
 import { percentText, timeText } from './model/numbers.ts';
 
@@ -203,6 +204,7 @@ export function DetectorDetail({ detector }: { detector: PlannedDetector }) {
       )}
       <DetectorCounts detector={detector} />
       <Budget detector={detector} />
+      <MonteCarlo detector={detector} />
       <SameAngle detector={detector} />
     </div>
   );
