@@ -348,7 +348,7 @@ describe('the run sheet', () => {
 
 describe('Monte Carlo', () => {
   test('is drawn by a worker, held against the budget, and forgotten with its inputs', async () => {
-    const worker = await startWorker(stage.app);
+    const worker = startWorker(stage.app);
     try {
       const { page, goTo } = await stage.visitor(owner);
       await openPlan(page, goTo);
