@@ -11,6 +11,9 @@ const BESIDE = 1e-6;
 
 const isActive = ({ strength }: Term) => strength.re !== 0 || strength.im !== 0;
 
+const OF_SPIN = 'A spin-orbit term acts on l·σ: V(r) alone is not drawn for it.';
+const isCentral = ({ v, spinOrbit }: Term) => v !== null && spinOrbit !== true;
+
 function potentialAt(terms: readonly Term[], r: number): Complex {
   let re = 0;
   let im = 0;
@@ -45,10 +48,14 @@ function outerRadius(terms: readonly Term[], largest: number): number {
  * @returns about 200 points, angstrom and eV, or why V is no function
  */
 export function potentialCurve(terms: readonly Term[], wavelength: number): PotentialCurve {
-  const drawn = terms.filter((term) => term.v !== null);
-  const missing = terms.filter((term) => term.v === null);
+  const drawn = terms.filter(isCentral);
+  const missing = terms.filter((term) => !isCentral(term));
   if (drawn.length === 0) {
-    const reasons = new Set(missing.map((term) => term.noFunction ?? 'V(r) is no function.'));
+    const reasons = new Set(
+      missing.map(({ spinOrbit, noFunction }) =>
+        spinOrbit ? OF_SPIN : (noFunction ?? 'V(r) is no function.'),
+      ),
+    );
     return { unavailable: [...reasons].join(' ') };
   }
   const active = drawn.some(isActive) ? drawn.filter(isActive) : drawn;
@@ -75,8 +82,9 @@ export function potentialCurve(terms: readonly Term[], wavelength: number): Pote
 }
 
 function noteOn(missing: readonly Term[], infinite: boolean): string | null {
-  if (missing.length > 0) {
-    return `Not drawn: ${missing.map(({ form }) => form).join(', ')}, where V(r) is no function.`;
-  }
+  const told = missing.map(({ form, spinOrbit }) =>
+    spinOrbit ? `${form}, which acts on l·σ` : `${form}, where V(r) is no function`,
+  );
+  if (told.length > 0) return `Not drawn: ${told.join('; ')}.`;
   return infinite ? 'Not drawn where V(r) is infinite.' : null;
 }
