@@ -1,6 +1,7 @@
 import { describeTerm } from '#server/documents/describe-interaction.ts';
 import { plainQuantity } from '#server/documents/plain-quantity.ts';
 import { summarise } from '#server/documents/summarise.ts';
+import { unitSymbol } from '#shared/units/format.ts';
 import { drawPairs, drawTable } from './table.ts';
 import type { Paper } from './paper.ts';
 import type { ReportInput } from './report-input.ts';
@@ -77,7 +78,7 @@ export function drawGoldenRule(paper: Paper, { version }: ReportInput): void {
       ['momentum transfer q', amount(goldenRule.q), '—'],
       [
         'matrix element times volume',
-        `${number(element.re)}${imaginary} ${amount({ value: 1, unit: element.unit }).slice(2)}`,
+        `${number(element.re)}${imaginary} ${unitSymbol(element.unit)}`,
         numericsOf(element),
       ],
       ['density of final states', amount(goldenRule.densityOfStates), '—'],

@@ -2,6 +2,7 @@ import { summarise } from '#server/documents/summarise.ts';
 import { BARN, INK, LINE, MUTED } from './paper.ts';
 import type { Paper } from './paper.ts';
 import type { ReportInput } from './report-input.ts';
+import { MISSING } from './typeface.ts';
 import { utcText } from './words.ts';
 
 const STATIONS = [
@@ -20,6 +21,15 @@ export function drawHead(paper: Paper, { kind, caseNumber, version }: ReportInpu
   paper.text(`Tallybarn · ${what}`, { size: 8, colour: BARN, after: 1 });
   const proposal = kind === 'proposal';
   paper.text(title, { face: 'bold', size: title.length > LONG_TITLE ? 11 : proposal ? 14 : 18 });
+  if (paper.written(title).includes(MISSING) && !title.includes(MISSING)) {
+    paper.text(
+      `${MISSING} stands for a sign that this typeface lacks; the title in the file has it.`,
+      {
+        size: 7.5,
+        colour: MUTED,
+      },
+    );
+  }
   paper.text(
     `Case ${caseNumber}, version ${n} (${status === 'inReview' ? 'in review' : status}) · ${author.name} · saved ${utcText(createdAt)} · computed by ${engine.name} ${engine.version}`,
     { size: 8.5, colour: MUTED, after: 0, ...(proposal && { lines: 2 }) },

@@ -1,7 +1,7 @@
 import type { PlannedDetector, RunPlan } from '#shared/contracts/run-plans.ts';
+import { unitSymbol } from '#shared/units/format.ts';
 import type { Paper } from './paper.ts';
 import { drawTable } from './table.ts';
-import type { Column } from './table.ts';
 import { amount, number, percent, short } from './words.ts';
 
 const FACTORS: Record<PlannedDetector['factors'][number]['name'], string> = {
@@ -24,33 +24,40 @@ const INPUTS: Record<PlannedDetector['uncertaintyBudget'][number]['input'], stri
 };
 const right = { align: 'right' } as const;
 
+type Factor = PlannedDetector['factors'][number];
+
+/** Factors of the beam and the target are those of every detector. */
+const COMMON: readonly Factor['name'][] = ['beamRate', 'arealDensity', 'slant'];
+const OWN: readonly Factor['name'][] = ['dcs', 'solidAngle', 'efficiency'];
+
+function factorText({ name, value, unit }: Factor): string {
+  return `${FACTORS[name]} ${unit === '1' ? number(value) : amount({ value, unit })}`;
+}
+
 /** The product that anyone can check by hand, and what averaging makes of it. */
 export function drawFactors(paper: Paper, { detectors }: RunPlan): void {
-  const names = Object.keys(FACTORS).filter((name) =>
-    detectors.some(({ factors }) => factors.some((factor) => factor.name === name)),
-  );
-  const unitOf = (name: string) =>
+  const [first] = detectors;
+  if (!first) return;
+  const common = first.factors.filter(({ name }) => COMMON.includes(name));
+  const unitOf = (name: Factor['name']) =>
     detectors.flatMap(({ factors }) => factors).find((factor) => factor.name === name)?.unit ?? '1';
-  const columns: Column[] = [
-    { head: 'Detector', share: 1.3 },
-    ...names.map((name) => ({
-      head: headOf(FACTORS[name as keyof typeof FACTORS], unitOf(name)),
-      share: 1.3,
-      ...right,
-    })),
-    { head: 'product (1/s)', share: 1.3, ...right },
-    { head: '× acceptance', share: 1.2, ...right },
-    { head: '× energies', share: 1.1, ...right },
-    { head: '× attenuation', share: 1.3, ...right },
-  ];
   paper.heading('Rates, factor by factor', 2);
-  paper.text('The product of the factors, then what the average multiplies it by.');
+  paper.text(
+    `Common to all detectors: ${common.map(factorText).join(', ')}. The product is that of these and the three factors of the detector; the average multiplies it by what stands right of it.`,
+  );
   drawTable(
     paper,
-    columns,
+    [
+      { head: 'Detector', share: 1.3 },
+      ...OWN.map((name) => ({ head: headOf(FACTORS[name], unitOf(name)), share: 1.3, ...right })),
+      { head: 'product (1/s)', share: 1.3, ...right },
+      { head: '× acceptance', share: 1.2, ...right },
+      { head: '× energies', share: 1.2, ...right },
+      { head: '× attenuation', share: 1.2, ...right },
+    ],
     detectors.map((one) => [
       one.name,
-      ...names.map((name) => {
+      ...OWN.map((name) => {
         const factor = one.factors.find((known) => known.name === name);
         return factor ? number(factor.value) : '—';
       }),
@@ -63,8 +70,7 @@ export function drawFactors(paper: Paper, { detectors }: RunPlan): void {
 }
 
 function headOf(name: string, unit: string): string {
-  const symbol = unit === '1' ? '' : amount({ value: 1, unit }).replace(/^[\d.]+\s/, '');
-  return symbol === '' ? name : `${name} (${symbol})`;
+  return unit === '1' ? name : `${name} (${unitSymbol(unit)})`;
 }
 
 /** Where the uncertainty of each detector comes from. */

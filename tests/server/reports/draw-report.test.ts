@@ -5,8 +5,9 @@ import { drawReport } from '#server/reports/draw-report.ts';
 import { REPORT_KINDS } from '#server/reports/report-input.ts';
 import type { ReportKind } from '#server/reports/report-input.ts';
 import type { CaseDocument, VersionDetail } from '#shared/contracts/cases.ts';
+import { expectRelative } from '#tests/support/expect-relative.ts';
 import { yukawaDocument } from '../documents/sample-documents.ts';
-import { readPdf } from './read-pdf.ts';
+import { readPdf } from '#tests/support/read-pdf.ts';
 import { coulombDocument, hardSphereDocument, runPlanOf, savedVersion } from './saved-versions.ts';
 
 const paper = (version: VersionDetail, kind: ReportKind) =>
@@ -95,6 +96,8 @@ describe.each(REPORT_KINDS)('the %s report', (kind) => {
     );
     expect(flow).toContain('page 1 of ');
     expect(flow).toContain('First Born here');
+    const lacking = /[\u0590-\u07ff]|\p{Extended_Pictographic}/u.test(title);
+    expect(flow.includes('□ stands for a sign')).toBe(lacking);
   });
 
   test('one version always gives one file', () => {
@@ -151,11 +154,26 @@ describe('the full report', () => {
     for (const { message } of warnings) expect(flow).toContain(message.replace(/\s+/g, ' '));
   });
 
+  test('the golden rule ends in the cross section, each step with its unit', async () => {
+    const { goldenRule } = plain.result.estimate;
+    if ('unavailable' in goldenRule) throw new Error('A Yukawa well has a first order.');
+    const { matrixElementTimesVolume: element, dcs } = goldenRule;
+    const { flow } = await paper(plain, 'full');
+    expect(flow).toContain(`matrix element times volume ${six(element.re)} eV Å³`);
+    expect(flow).toContain(`dσ/dΩ = rate / flux ${six(dcs.value)} Å²/sr`);
+  });
+
   test('the factors of a detector multiply to the product beside them', async () => {
     const { flow } = await paper(planned, 'full');
     const [first] = planned.result.runPlan?.detectors ?? [];
     if (!first?.product) throw new Error('The sample has a product.');
-    const row = [...first.factors.map(({ value }) => value), first.product.value].map(six);
-    expect(flow).toContain(row.join(' '));
+    const [beam, areal, ...own] = first.factors.map(({ value }) => value);
+    expect(flow).toContain(
+      `beam rate ${six(beam ?? 0)} s⁻¹, areal density ${six(areal ?? 0)} cm⁻²`,
+    );
+    expect(flow).toContain([...own, first.product.value].map(six).join(' '));
+    const product = first.factors.reduce((whole, { value }) => whole * value, 1);
+    // The areal density is per cm², the cross section in Å².
+    expectRelative(product * 1e-16, first.product.value, 1e-12);
   });
 });

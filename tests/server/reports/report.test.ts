@@ -5,7 +5,7 @@ import { createTestApp } from '#tests/support/test-app.ts';
 import type { Agent, TestApp } from '#tests/support/test-app.ts';
 import { fileCase, read, save } from '../cases/case-requests.ts';
 import { yukawaDocument } from '../documents/sample-documents.ts';
-import { readPdf } from './read-pdf.ts';
+import { readPdf } from '#tests/support/read-pdf.ts';
 import { runPlanOf } from './saved-versions.ts';
 
 let app: TestApp;
