@@ -7,6 +7,7 @@ import { Skeleton, Waiting } from '#src/components/skeleton.tsx';
 import type { CaseDetail, VersionHead } from '#shared/contracts/cases.ts';
 import { versionsQuery } from '../api.ts';
 import { momentText } from '../model/moments.ts';
+import { ReportLinks } from './report-links.tsx';
 import { VersionDifferences } from './version-differences.tsx';
 import { VersionResult } from './version-result.tsx';
 import { Withdraw } from './withdraw.tsx';
@@ -31,6 +32,7 @@ function VersionRow({ caseId, head }: { caseId: string; head: VersionHead }) {
         </span>
       </div>
       {head.note && <p className="mt-1 whitespace-pre-line">{head.note}</p>}
+      <ReportLinks caseId={caseId} n={head.n} />
       <details className="mt-1" onToggle={(event) => setOpen(event.currentTarget.open)}>
         <summary className="w-fit rounded text-sm text-muted hover:text-ink">
           Result as stored
