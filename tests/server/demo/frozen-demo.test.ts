@@ -6,9 +6,16 @@ import { keyDigits, movedDigits } from './key-digits.ts';
 import type { KeyDigits } from './key-digits.ts';
 import first from './frozen-0.1.0.json' with { type: 'json' };
 import second from './frozen-0.2.0.json' with { type: 'json' };
+import third from './frozen-0.3.0.json' with { type: 'json' };
 
-/** Rounding of sin, exp and log may differ between machines. Criteria come from quadratures that are not asked for more. */
-const toleranceOf = (name: string): number => (name.startsWith('criterion') ? 1e-8 : 1e-12);
+/**
+ * Rounding of sin, exp and log may differ between machines. Criteria come from quadratures that are not asked for more; what
+ * partial waves add up to at a wide angle is small against its terms, whose floor is 1e-11 of the forward value.
+ */
+const toleranceOf = (name: string): number => {
+  if (name.startsWith('criterion')) return 1e-8;
+  return /^(born2|eikonal|partialWaves):/.test(name) ? 1e-7 : 1e-12;
+};
 
 interface Moved {
   why: string;
@@ -82,6 +89,7 @@ const FROZEN: readonly Frozen[] = [
     moved: SINCE_0_2_0,
     knownSince: KNOWN_SINCE_0_3_0,
   },
+  { version: third.engine.version, records: third.records, moved: {}, knownSince: [] },
 ];
 const versions = DEMO_CASES.flatMap(({ title, versions }) =>
   versions.map(({ document }, index) => ({ name: `${title}, version ${index + 1}`, document })),
@@ -110,7 +118,7 @@ describe.each(FROZEN)(
 );
 
 it('every worked case is frozen in the newest file', () => {
-  expect(Object.keys(second.records)).toEqual(versions.map(({ name }) => name));
+  expect(Object.keys(third.records)).toEqual(versions.map(({ name }) => name));
 });
 
 it('the curve of the electrons moved by the Mott factor and by nothing else', () => {

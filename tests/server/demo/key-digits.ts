@@ -10,9 +10,10 @@ function sampled(length: number): number[] {
   return [...new Set([0, 0.25, 0.5, 0.75, 1].map((part) => Math.round(part * (length - 1))))];
 }
 
-function digitsOfMethod(estimate: Estimate): KeyDigits {
-  const method = estimate.methods.born1;
-  if (!method || 'unavailable' in method) return { born1: 'unavailable' };
+type Method = NonNullable<Estimate['methods']['born1']>;
+
+function digitsOfMethod(method: Method | undefined): KeyDigits {
+  if (!method || 'unavailable' in method) return { curve: 'unavailable' };
   const digits: KeyDigits = {};
   for (const name of INTEGRALS) {
     const integral = method[name];
@@ -31,13 +32,42 @@ function digitsOfMethod(estimate: Estimate): KeyDigits {
   return digits;
 }
 
+function digitsOfWaves(method: Method): KeyDigits {
+  if ('unavailable' in method) return {};
+  const first = (method.phaseShifts ?? []).slice(0, 4);
+  return Object.fromEntries(
+    first.flatMap(({ l, j, delta, eta }) => {
+      const wave = j === undefined ? `l = ${l}` : `l = ${l}, j = ${j}`;
+      return [
+        [`delta of ${wave}`, delta],
+        [`|S| of ${wave}`, eta],
+      ];
+    }),
+  );
+}
+
+/** First order under the bare names, every other method under its own. */
+function digitsOfMethods({ methods }: Estimate): KeyDigits {
+  const { born1, ...others } = methods;
+  const digits = digitsOfMethod(born1);
+  if (digits['curve'] !== undefined) {
+    delete digits['curve'];
+    digits['born1'] = 'unavailable';
+  }
+  for (const [name, method] of Object.entries(others)) {
+    const all = { ...digitsOfMethod(method), ...digitsOfWaves(method) };
+    for (const [key, value] of Object.entries(all)) digits[`${name}: ${key}`] = value;
+  }
+  return digits;
+}
+
 export function keyDigits(estimate: Estimate): KeyDigits {
   const { kinematics, goldenRule, validity, warnings } = estimate;
   return {
     k: kinematics.k.value,
     beta: kinematics.beta,
     energyCm: kinematics.energyCm.value,
-    ...digitsOfMethod(estimate),
+    ...digitsOfMethods(estimate),
     ...('unavailable' in goldenRule
       ? { goldenRule: 'unavailable' }
       : { rate: goldenRule.rate.value, densityOfStates: goldenRule.densityOfStates.value }),
