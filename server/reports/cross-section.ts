@@ -70,6 +70,10 @@ export function drawTotals(paper: Paper, { version }: ReportInput): void {
       integralText(result.momentumTransfer),
     ]),
   );
+  const reasons = methods.flatMap(({ result: { elastic } }) =>
+    'divergent' in elastic ? [elastic.reason] : [],
+  );
+  for (const reason of new Set(reasons)) paper.text(`Divergent: ${reason}`, { size: 8 });
 }
 
 /** Every integral with its error, or that it diverges and why. */

@@ -59,6 +59,12 @@ function targetText({ sent, plan }: Planned): string {
 
 const VERDICT_SIZE = 11;
 
+function timesOf({ totalTime, totalTimeInTurn }: RunPlan): [string, string][] {
+  if ('unavailable' in totalTime) return [['Beam time', durationOr(totalTime)]];
+  const atOnce = `${duration(totalTime)} with all detectors at once`;
+  return [['Beam time', `${atOnce}; one position after the other: ${durationOr(totalTimeInTurn)}`]];
+}
+
 /** Verdict, beam, target and times of a plan: what both kinds of report say. */
 export function drawPlanInBrief(paper: Paper, planned: Planned): void {
   const { plan } = planned;
@@ -72,10 +78,7 @@ export function drawPlanInBrief(paper: Paper, planned: Planned): void {
     ['Beam of the run', beamText(planned)],
     ['Target of the run', targetText(planned)],
     ['Aim', `${precision} standard uncertainty of the net counts${asked}`],
-    [
-      'Beam time',
-      `${durationOr(plan.totalTime)} with all detectors at once, ${durationOr(plan.totalTimeInTurn)} one position after the other`,
-    ],
+    ...timesOf(plan),
   ]);
   paper.skip(3);
 }
