@@ -5,6 +5,7 @@ import { createTestApp } from '#tests/support/test-app.ts';
 import type { Agent, TestApp } from '#tests/support/test-app.ts';
 import { fileCase, read, save } from '../cases/case-requests.ts';
 import { yukawaDocument } from '../documents/sample-documents.ts';
+import { citing, publish } from '../library/library-requests.ts';
 import { readPdf } from '#tests/support/read-pdf.ts';
 import { runPlanOf } from './saved-versions.ts';
 
@@ -86,4 +87,20 @@ test('who may not read the version gets not found, as for a version that is not 
   await app.anonymous().get(path('1')).expect(401);
   await agent.get(path('2')).expect(404);
   await agent.get(path('0')).expect(404);
+});
+
+test('an interaction from the library is named with its version and where it was taken from', async () => {
+  const { published } = await publish(await app.signedIn('theorist'));
+  const { filed } = await fileCase(agent, { document: citing(published, 1) });
+  const { bytes } = await fileWith(agent, `/api/cases/${filed.id}/versions/1/report.pdf`);
+  const { flow } = await readPdf(bytes);
+  expect(flow).toContain(`library: ${published.name}, version 1; source: Lab note 7 of the tests`);
+});
+
+test('the description of the API says that a file is answered, and no JSON', async () => {
+  const { paths } = await read<{
+    paths: Record<string, { get: { responses: Record<string, { content: object }> } }>;
+  }>(agent, '/api/openapi.json');
+  const { responses } = paths['/api/cases/{id}/versions/{n}/report.pdf']?.get ?? {};
+  expect(Object.keys(responses?.['200']?.content ?? {})).toEqual(['application/pdf']);
 });
