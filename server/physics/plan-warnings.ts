@@ -114,7 +114,7 @@ function otherElements(result: RunPlanResult): Warning[] {
   return [
     caution(
       'otherElements',
-      `${left.join(', ')} of the target scatter too and are not counted: add them as contributions, or see whether the detector tells their energies apart (sameAngle).`,
+      `${left.join(', ')} of the target scatter too and are not counted: add them as contributions, or see whether the detector tells their energies apart.`,
       '/contributions',
     ),
   ];
