@@ -10,6 +10,7 @@ const BASE_URL = process.env.BASE_URL ?? 'http://127.0.0.1:4780';
 const FOLDER = 'src/public/pictures';
 const CREDENTIALS = { email: 'experimentalist@lowmoor.example', password: 'lowmoor-demo' };
 const SHOWN_CASE = 'Forward cone of 1 keV electrons on carbon';
+const PLANNED_CASE = 'A shift of alphas on a gold foil, four positions';
 
 interface Picture {
   name: string;
@@ -58,10 +59,13 @@ const browser = await chromium.launch({
 try {
   mkdirSync(FOLDER, { recursive: true });
   const shown = `/cases/${await idOf(browser, SHOWN_CASE)}`;
+  const planned = `/cases/${await idOf(browser, PLANNED_CASE)}`;
   const wide = { width: 1440, height: 1000 };
   const pictures: Picture[] = [
     { name: 'case-light', path: shown, theme: 'light', ...wide },
     { name: 'golden-rule-dark', path: `${shown}?section=golden-rule`, theme: 'dark', ...wide },
+    { name: 'validity-light', path: `${shown}?section=validity`, theme: 'light', ...wide },
+    { name: 'run-plan-light', path: `${planned}?section=run-plan`, theme: 'light', ...wide },
     { name: 'cases-light', path: '/cases', theme: 'light', ...wide },
     { name: 'case-narrow', path: shown, theme: 'light', width: 390, height: 844 },
   ];

@@ -163,7 +163,7 @@ function hopeless({ totalTime, plan }: RunPlanResult): Warning[] {
 
 const PLANNING_ONLY: Warning = info(
   'planningOnly',
-  'These figures are for planning counts only, not for shielding, dose, interlock or activation decisions: local radiation-protection rules and the responsible officer decide. Nuclear reactions, bremsstrahlung and activation are not part of them.',
+  'These figures are for planning counts only, not for shielding, dose, interlock or activation decisions: local radiation-protection rules and the licensed officer decide. Nuclear reactions, bremsstrahlung and activation are not part of them.',
 );
 
 /** What a run plan leaves out, rests on, or should be asked, in words. */
