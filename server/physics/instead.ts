@@ -40,8 +40,8 @@ export function insteadOf({ problem, beyond, assessment }: EstimateResult): stri
   }
   if (exact) {
     return verdict === 'usable'
-      ? 'Use the curve of partial waves beside it, or state the deviation with the number.'
-      : 'Use the curve of partial waves beside it; it is exact for this potential.';
+      ? 'The curve of partial waves beside it; or state the deviation with the number.'
+      : 'The curve of partial waves beside it, which is exact for this potential.';
   }
-  return basis === 'criteria' ? 'Ask for partial waves: the exact curve decides then.' : null;
+  return basis === 'criteria' ? 'Partial waves, where they can be had: the exact curve decides then.' : null;
 }
