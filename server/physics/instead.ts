@@ -43,5 +43,7 @@ export function insteadOf({ problem, beyond, assessment }: EstimateResult): stri
       ? 'The curve of partial waves beside it; or state the deviation with the number.'
       : 'The curve of partial waves beside it, which is exact for this potential.';
   }
-  return basis === 'criteria' ? 'Partial waves, where they can be had: the exact curve decides then.' : null;
+  return basis === 'criteria'
+    ? 'Partial waves, where they can be had: the exact curve decides then.'
+    : null;
 }
