@@ -73,7 +73,7 @@ function sum(one: Amplitude, other: Amplitude | undefined): Amplitude {
  * Validity: k times the range far above one, |V| far below the energy, small angles; q = 2k sin(theta/2) is taken across the mean
  * direction, so that the point charges are exact.
  *
- * Source: R. J. Glauber, in Lectures in Theoretical Physics, vol. 1 (1959), 315; S. J. Wallace, Ann. Phys. 78 (1973) 190.
+ * Source: R. J. Glauber, High-Energy Collision Theory (Interscience, 1959), 315; S. J. Wallace, Ann. Phys. 78 (1973) 190.
  */
 export function eikonal(input: MethodInput): MethodAmplitude | Unavailable {
   const { terms, born, k } = input;

@@ -133,7 +133,7 @@ function withError(line: LineIntegral, noise: LineIntegral, relative: number): L
  * @param term local, with a radial function; a Coulomb tail is taken away from it
  * @returns null where the shape cannot be followed
  *
- * Source: textbook; R. J. Glauber, in Lectures in Theoretical Physics, vol. 1 (1959), 315; integrals: I. S. Gradshteyn and I. M. Ryzhik,
+ * Source: textbook; R. J. Glauber, High-Energy Collision Theory (Interscience, 1959), 315; integrals: I. S. Gradshteyn and I. M. Ryzhik,
  * 3.387, 3.389.
  */
 export function lineOf(term: Term): Line | null {

@@ -21,7 +21,7 @@ interface Part {
  * @param terms local ones
  * @returns phase, kept for every b at which it was asked; null where a term cannot be followed
  *
- * Source: R. J. Glauber, in Lectures in Theoretical Physics, vol. 1 (1959), 315.
+ * Source: R. J. Glauber, High-Energy Collision Theory (Interscience, 1959), 315.
  */
 export function eikonalPhase(
   terms: readonly Term[],

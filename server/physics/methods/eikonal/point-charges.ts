@@ -14,7 +14,7 @@ import type { Amplitude } from '../amplitude.ts';
  * @param k wave number, 1/angstrom
  * @returns amplitude, angstrom, for q > 0 (1/angstrom), with a bound of its error, that of q (and `blur`, relative) included
  *
- * Source: R. J. Glauber, in Lectures in Theoretical Physics, vol. 1 (1959), 315; DLMF 10.22.43, 33.2.10.
+ * Source: R. J. Glauber, High-Energy Collision Theory (Interscience, 1959), 315; DLMF 10.22.43, 33.2.10.
  */
 export function pointCharges(eta: number, k: number): (q: number, blur?: number) => Amplitude {
   const gamma = logGamma(1, eta);
