@@ -72,6 +72,11 @@ const TABLE: Record<string, Row> = {
     request: (agent, { filed }) => agent.get(`/api/cases/${filed.id}/versions/1`),
     expected: readers,
   },
+  'get /api/cases/:id/versions/:n/report.pdf': {
+    request: (agent, { filed }) =>
+      agent.get(`/api/cases/${filed.id}/versions/1/report.pdf?kind=proposal`),
+    expected: readers,
+  },
   'post /api/cases/:id/versions': {
     request: (agent, { filed, etag }) =>
       agent
