@@ -48,6 +48,8 @@ export default defineConfig({
           fileParallelism: false,
           testTimeout: 120_000,
           hookTimeout: 180_000,
+          // A browser shares its machine with everything else: what fails there must fail twice.
+          retry: 1,
           sequence: { groupOrder: 3 },
         },
       },
