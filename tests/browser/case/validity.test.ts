@@ -217,7 +217,7 @@ describe('planes and waves', () => {
     await expect.poll(spoken(slider)).toMatch(/^θ = 1°: first Born .* \+ 0 i Å, .*exact/);
     await plane.getByText(/The amplitudes as a table/).click();
     const table = page.getByRole('region', { name: 'Table of amplitudes' });
-    expect(await table.getByRole('row').count()).toBe(1 + 181);
+    await expect.poll(() => table.getByRole('row').count()).toBe(1 + 181);
 
     const waves = part(page, 'Phase shifts').getByRole('slider');
     await waves.focus();
